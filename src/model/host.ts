@@ -1,0 +1,20 @@
+/**
+ * A task that can run anywhere: the name of a registered pure function and its plain-data argument.
+ * The engine hands over lists of them; the host may run them in place or on worker threads.
+ */
+export interface Task {
+  readonly name: string;
+  readonly argument: unknown;
+}
+
+/** Runs every task and gives the results in the same order, whatever the number of workers. */
+export type TaskMapper = (tasks: readonly Task[], onDone?: (done: number) => void) => Promise<unknown[]>;
+
+/** Told what is being done, and how far it is (0 to 1). */
+export type Progress = (step: string, fraction: number) => void;
+
+/** What the engine needs from outside. */
+export interface Host {
+  readonly map: TaskMapper;
+  readonly progress: Progress;
+}

@@ -1,0 +1,10 @@
+import { defineConfig } from 'vitest/config';
+
+export default defineConfig({
+  test: {
+    include: ['test/browser/**/*.test.ts'],
+    testTimeout: 180_000,
+    hookTimeout: 180_000,
+    fileParallelism: false,
+  },
+});
