@@ -4,12 +4,7 @@ import type { ShellKind } from './odd-shells.js';
 
 /** A stream of its own for each purpose, so that one more draw for one purpose changes nothing in another. */
 export function stream(seed: number, ...labels: number[]): Random {
-  let hash = Math.imul(seed ^ 0x9e3779b9, 0x85ebca6b);
-  for (const label of labels) {
-    hash = Math.imul(hash ^ (hash >>> 15) ^ Math.imul(label + 1, 0xc2b2ae35), 0x27d4eb2f);
-    hash ^= hash >>> 13;
-  }
-  return createRandom(hash >>> 0);
+  return labels.reduce((random, label) => random.fork(label), createRandom(seed));
 }
 
 /** The values in an order drawn at random. */
