@@ -57,4 +57,6 @@ export interface ClockData {
   readonly shells: readonly ClockShell[];
   readonly beds: readonly ClockBed[];
   readonly scatter: Scatter;
+  /** Slope taken out of the bed means along the gradient; 0 without one. Shells' x still hold it. */
+  readonly slope: number;
 }

@@ -1,0 +1,12 @@
+export { averageAnalyses } from './averaging.js';
+export type { Averages } from './averaging.js';
+export { bedKey, clockData } from './clock-data.js';
+export type { ClockDataInput } from './clock-data.js';
+export { fisherIndex, inverseSquareRoot } from './fisher-index.js';
+export type { FisherIndex, IndexShare } from './fisher-index.js';
+export { clockLogRatio } from './log-ratios.js';
+export type { Imputation } from './log-ratios.js';
+export { logSummary } from './log-summary.js';
+export type { LogSummary } from './log-summary.js';
+export { ASSUMED_SCATTER, FEWEST_DEGREES_OF_FREEDOM, pooledScatter } from './scatter.js';
+export type { PublishedScatter } from './scatter.js';

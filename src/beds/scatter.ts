@@ -1,0 +1,39 @@
+import type { Scatter } from '../model/index.js';
+
+/** Scatter assumed where the clock has too few repeated shells: shells of one bed differ by 5 to 10 % (common practice). */
+export const ASSUMED_SCATTER = 0.07;
+
+/** Degrees of freedom under which the scatter is assumed, not estimated. */
+export const FEWEST_DEGREES_OF_FREEDOM = 4;
+
+/** A published standard deviation of log ratios between `n` shells. */
+export interface PublishedScatter {
+  readonly sd: number;
+  readonly n: number;
+}
+
+/**
+ * Pooled standard deviation of log ratios between the shells of one bed: s² = Σ SS / Σ (n − 1) (design 7.1).
+ * @param beds log ratios of the shells of each bed
+ * @param published standard deviations that published summaries give, pooled with n − 1
+ * @returns the scatter, its degrees of freedom, and whether 0.07 was assumed because those are fewer than 4
+ * @example
+ * pooledScatter([[-1.1, -1.0, -0.9], [-2.05, -1.95, -2, -2]]).df // => 5
+ */
+export function pooledScatter(beds: readonly (readonly number[])[], published: readonly PublishedScatter[] = []): Scatter {
+  let sumOfSquares = 0;
+  let df = 0;
+  for (const values of beds) {
+    if (values.length < 2) continue;
+    const mean = values.reduce((sum, value) => sum + value, 0) / values.length;
+    for (const value of values) sumOfSquares += (value - mean) ** 2;
+    df += values.length - 1;
+  }
+  for (const { sd, n } of published) {
+    if (n < 2) continue;
+    sumOfSquares += sd ** 2 * (n - 1);
+    df += n - 1;
+  }
+  if (df < FEWEST_DEGREES_OF_FREEDOM) return { s: ASSUMED_SCATTER, df, assumed: true };
+  return { s: Math.sqrt(sumOfSquares / df), df, assumed: false };
+}

@@ -1,0 +1,52 @@
+/** Probability under which a bed's best zone is said to straddle. */
+export const STRADDLE = 0.9;
+
+/** What assignment needs to know of the zones in use. */
+export interface ZonePriors {
+  /** Mean log ratio of each zone, youngest first. */
+  readonly means: readonly number[];
+  /** Standard error of each mean. */
+  readonly se: readonly number[];
+  /** Share of the beds in each zone. */
+  readonly weights: readonly number[];
+  /** Spread between beds of one zone. */
+  readonly tau: number;
+}
+
+/** Most and second most probable zone (0 is the youngest). */
+export interface Assignment {
+  readonly probabilities: readonly number[];
+  readonly zone: number;
+  readonly probability: number;
+  /** null with one zone. */
+  readonly second: number | null;
+  readonly secondProbability: number | null;
+  readonly straddles: boolean;
+}
+
+/**
+ * Posterior probability of each zone for a log ratio with a known error: π_k N(x; μ_k, tau² + error² + se(μ_k)²)
+ * (design 7.5). The error of a bed is that of its mean, that of a shell the scatter.
+ * @example
+ * assignZone(-1.6, 0.05, { means: [-2, -1.6], se: [0, 0], weights: [0.5, 0.5], tau: 0 }).zone // => 1
+ */
+export function assignZone(x: number, error: number, { means, se, weights, tau }: ZonePriors): Assignment {
+  const logs = means.map((mean, j) => {
+    const variance = Math.max(tau ** 2 + error ** 2 + se[j] ** 2, 1e-18);
+    return Math.log(Math.max(weights[j], 1e-300)) - 0.5 * Math.log(variance) - (0.5 * (x - mean) ** 2) / variance;
+  });
+  const largest = Math.max(...logs);
+  const raw = logs.map((value) => Math.exp(value - largest));
+  const sum = raw.reduce((total, value) => total + value, 0);
+  const probabilities = raw.map((value) => value / sum);
+  const ranked = probabilities.map((_, j) => j).sort((a, b) => probabilities[b] - probabilities[a] || a - b);
+  const [zone, second] = ranked;
+  return {
+    probabilities,
+    zone,
+    probability: probabilities[zone],
+    second: second ?? null,
+    secondProbability: second === undefined ? null : probabilities[second],
+    straddles: probabilities[zone] < STRADDLE,
+  };
+}

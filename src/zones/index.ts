@@ -1,0 +1,15 @@
+export { equalOverlap, smallestRankP, testNeighbours, TOUCHING_OVERLAP } from './adjacent-zones.js';
+export type { NeighbourOptions, NeighbourTest, ZoneForTest } from './adjacent-zones.js';
+export { assignZone, STRADDLE } from './assignment.js';
+export type { Assignment, ZonePriors } from './assignment.js';
+export { fitContinuum } from './continuum.js';
+export type { Continuum } from './continuum.js';
+export { bic, fitMixture } from './mixture.js';
+export type { Mixture, MixtureOptions } from './mixture.js';
+export { chooseModel, FEWEST_BEDS, MOST_ZONES } from './model-choice.js';
+export type { ModelChoice } from './model-choice.js';
+export { partition } from './partition.js';
+export { unbiasedSpread, zoneErrors } from './zone-errors.js';
+export type { ZoneErrors } from './zone-errors.js';
+export { bestLabels, findZones } from './zoning.js';
+export type { Zoning, ZoningOptions } from './zoning.js';

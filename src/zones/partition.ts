@@ -1,0 +1,82 @@
+/**
+ * The exact partition of values on a line into k groups with the least weighted sum of squares about the group means:
+ * dynamic programming over the sorted values (Fisher 1958, doi:10.1080/01621459.1958.10501479; Wang and Song 2011,
+ * doi:10.32614/RJ-2011-015), each row filled by divide and conquer, O(k n log n).
+ * @param values numbers, any order
+ * @param weights one positive weight a value
+ * @param k number of groups, 1 to the number of values
+ * @returns for each value its group, 0 for the smallest values
+ * @throws RangeError when k is no whole number from 1 to the number of values
+ * @example
+ * partition([1, 5, 1.1, 5.2, 9], [1, 1, 1, 1, 1], 3) // => [0, 1, 0, 1, 2]
+ */
+export function partition(values: readonly number[], weights: readonly number[], k: number): number[] {
+  const n = values.length;
+  if (!(Number.isInteger(k) && k >= 1 && k <= n)) {
+    throw new RangeError(`partition wants a whole number of groups from 1 to ${n}, got ${k}`);
+  }
+  const order = values.map((_, index) => index).sort((a, b) => values[a] - values[b] || a - b);
+  const cost = segmentCosts(order, values, weights);
+  let previous = Float64Array.from({ length: n }, (_, last) => cost(0, last));
+  const cuts: Int32Array[] = [new Int32Array(n)];
+  for (let group = 1; group < k; group++) {
+    const current = new Float64Array(n).fill(Number.POSITIVE_INFINITY);
+    const cut = new Int32Array(n);
+    fillRow(previous, current, cut, cost, group, group, n - 1, group, n - 1);
+    cuts.push(cut);
+    previous = current;
+  }
+  const labels = new Array<number>(n);
+  let last = n - 1;
+  for (let group = k - 1; group >= 0; group--) {
+    const first = group === 0 ? 0 : cuts[group][last];
+    for (let at = first; at <= last; at++) labels[order[at]] = group;
+    last = first - 1;
+  }
+  return labels;
+}
+
+/** Weighted sum of squares of the sorted values from `first` to `last`, by running sums about the mean of all. */
+function segmentCosts(order: readonly number[], values: readonly number[], weights: readonly number[]) {
+  const n = order.length;
+  const centre = values.reduce((sum, value) => sum + value, 0) / n;
+  const sumW = new Float64Array(n + 1);
+  const sumX = new Float64Array(n + 1);
+  const sumXX = new Float64Array(n + 1);
+  order.forEach((index, at) => {
+    const x = values[index] - centre;
+    sumW[at + 1] = sumW[at] + weights[index];
+    sumX[at + 1] = sumX[at] + weights[index] * x;
+    sumXX[at + 1] = sumXX[at] + weights[index] * x * x;
+  });
+  return (first: number, last: number): number => {
+    const w = sumW[last + 1] - sumW[first];
+    const x = sumX[last + 1] - sumX[first];
+    return Math.max(0, sumXX[last + 1] - sumXX[first] - (x * x) / w);
+  };
+}
+
+/** Best start of the last group for every end in low..high; the best start never moves left as the end moves right. */
+function fillRow(
+  previous: Float64Array,
+  current: Float64Array,
+  cut: Int32Array,
+  cost: (first: number, last: number) => number,
+  group: number,
+  low: number,
+  high: number,
+  startLow: number,
+  startHigh: number,
+): void {
+  if (low > high) return;
+  const middle = (low + high) >> 1;
+  for (let start = Math.max(group, startLow); start <= Math.min(middle, startHigh); start++) {
+    const candidate = previous[start - 1] + cost(start, middle);
+    if (candidate < current[middle]) {
+      current[middle] = candidate;
+      cut[middle] = start;
+    }
+  }
+  fillRow(previous, current, cut, cost, group, low, middle - 1, startLow, cut[middle]);
+  fillRow(previous, current, cut, cost, group, middle + 1, high, cut[middle], startHigh);
+}

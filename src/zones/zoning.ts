@@ -1,0 +1,132 @@
+import type { ClockData, ClockVerdict } from '../model/index.js';
+import type { Random } from '../statistics/index.js';
+import { type NeighbourTest, testNeighbours, type ZoneForTest } from './adjacent-zones.js';
+import type { ZonePriors } from './assignment.js';
+import { fitMixture, type Mixture } from './mixture.js';
+import { chooseModel, type ModelChoice } from './model-choice.js';
+import { unbiasedSpread, zoneErrors } from './zone-errors.js';
+
+/** What a zoning is asked for. */
+export interface ZoningOptions {
+  readonly alpha: number;
+  /** Number of zones to force; null lets the data choose. */
+  readonly zones: number | null;
+  readonly random: Random;
+  /** Parameters counted in every BIC beside the model's own, such as a slope. Default 0. */
+  readonly extraParameters?: number;
+  /** Repeats behind intervals of overlaps. Default 999. */
+  readonly simulations?: number;
+}
+
+/** The zones of one clock. Beds are those of ClockData that have a mean, in its order. */
+export interface Zoning {
+  /** Indices into ClockData.beds of the beds that were zoned. */
+  readonly beds: readonly number[];
+  readonly choice: ModelChoice;
+  readonly fit: Mixture;
+  readonly priors: ZonePriors;
+  /** Degrees of freedom of each zone mean's error. */
+  readonly df: readonly number[];
+  /** What the data support. */
+  readonly verdict: ClockVerdict;
+  readonly forced: boolean;
+  /** Zones after choice by BIC, before neighbours were joined. */
+  readonly zonesBeforeJoining: number;
+  /** Spread tau between beds of a zone; null where a continuum leaves it without meaning. */
+  readonly spread: number | null;
+  /** Tests between neighbours, the youngest pair first. */
+  readonly neighbours: readonly NeighbourTest[];
+  /** Most probable zone of each bed in `beds`, 0 the youngest. */
+  readonly labels: readonly number[];
+}
+
+/**
+ * Finds the zones of one clock (design 7.3): mixtures and the continuum are compared by BIC; neighbours that the overlap
+ * test calls `not distinct` are joined, the least distinct first, until none is left. With `zones` forced, that many are
+ * fitted and none joined; `verdict` keeps saying what the data support.
+ * @returns null when no bed has a mean
+ */
+export function findZones(data: ClockData, options: ZoningOptions): Zoning | null {
+  const beds = data.beds.flatMap((bed, index) => (bed.n > 0 ? [index] : []));
+  if (beds.length === 0) return null;
+  const values = beds.map((index) => data.beds[index].mean);
+  const errors = beds.map((index) => data.beds[index].se);
+  const choice = chooseModel(values, errors, options.extraParameters ?? 0);
+  const supported = choice.verdict === 'zones' ? choice.bestZones : 1;
+  const joined = joinNeighbours(data, beds, choice.mixtures[supported - 1], options);
+  const verdict = choice.verdict === 'zones' && joined.fit.k === 1 ? 'one zone' : choice.verdict;
+  const forced = options.zones !== null;
+  let { fit, neighbours } = joined;
+  if (forced) {
+    const k = Math.min(options.zones!, beds.length);
+    fit = choice.mixtures[k - 1] ?? fitMixture(values, errors, k);
+    neighbours = testAll(data, beds, fit, options);
+  }
+  const { se, df } = zoneErrors(fit, errors, data.scatter.df);
+  const ageMayDiffer = fit.k === 1 && verdict !== 'one zone';
+  return {
+    beds,
+    choice,
+    fit,
+    priors: { means: fit.means, se, weights: fit.weights, tau: fit.tau },
+    df,
+    verdict,
+    forced,
+    zonesBeforeJoining: supported,
+    spread: ageMayDiffer ? null : unbiasedSpread(fit, beds.length),
+    neighbours,
+    labels: bestLabels(fit, beds.length),
+  };
+}
+
+function joinNeighbours(data: ClockData, beds: readonly number[], start: Mixture, options: ZoningOptions) {
+  const values = beds.map((index) => data.beds[index].mean);
+  const errors = beds.map((index) => data.beds[index].se);
+  let fit = start;
+  for (;;) {
+    const neighbours = testAll(data, beds, fit, options);
+    const joinable = neighbours.flatMap((test, at) => (test.verdict === 'not distinct' ? [at] : []));
+    if (joinable.length === 0) return { fit, neighbours };
+    const at = joinable.reduce((most, next) => (neighbours[next].overlap > neighbours[most].overlap ? next : most));
+    const labels = bestLabels(fit, beds.length).map((label) => (label > at ? label - 1 : label));
+    fit = fitMixture(values, errors, fit.k - 1, { start: labels });
+  }
+}
+
+function testAll(data: ClockData, beds: readonly number[], fit: Mixture, options: ZoningOptions): NeighbourTest[] {
+  if (fit.k === 1) return [];
+  const errors = beds.map((index) => data.beds[index].se);
+  const { se, df } = zoneErrors(fit, errors, data.scatter.df);
+  const labels = bestLabels(fit, beds.length);
+  const zones = fit.means.map((mean, j): ZoneForTest => {
+    const members = beds.filter((_, at) => labels[at] === j).map((index) => data.beds[index]);
+    const shells = members.flatMap((bed) =>
+      bed.shells
+        .map((at) => data.shells[at])
+        .filter((shell) => !shell.setAside)
+        .map((shell) => shell.x - data.slope * data.beds[shell.bed].gradient),
+    );
+    return { mean, se: se[j], df: df[j], shells, count: members.reduce((sum, bed) => sum + bed.n, 0) };
+  });
+  const shellSd = Math.hypot(data.scatter.s, fit.tau);
+  return fit.means.slice(1).map((_, j) =>
+    testNeighbours(zones[j + 1], zones[j], {
+      alpha: options.alpha,
+      shellSd,
+      scatterDf: data.scatter.df,
+      random: options.random.fork(j),
+      simulations: options.simulations,
+    }),
+  );
+}
+
+/** Most probable zone of each bed. */
+export function bestLabels(fit: Mixture, beds: number): number[] {
+  return Array.from({ length: beds }, (_, bed) => {
+    let best = 0;
+    for (let j = 1; j < fit.k; j++) {
+      if (fit.responsibilities[bed * fit.k + j] > fit.responsibilities[bed * fit.k + best]) best = j;
+    }
+    return best;
+  });
+}
