@@ -10,6 +10,13 @@ export { chiSquaredCdf, chiSquaredQuantile, chiSquaredUpperTail } from './chi-sq
 // Judging chains of draws
 export { type ChainOptions, effectiveSampleSize } from './effective-sample-size.js';
 export { fCdf, fUpperTail } from './f-distribution.js';
+// Under an order
+export { isotonicRegression } from './isotonic-regression.js';
+// Comparing groups
+export { type MannWhitney, mannWhitney, smallestMannWhitneyP } from './mann-whitney.js';
+// Networks
+export { type Arcs, maximumFlow } from './maximum-flow.js';
+export { type MinimumCut, minimumCut } from './minimum-cut.js';
 // Distributions
 export { logNormalDensity, normalCdf, normalQuantile } from './normal.js';
 export { overlapOfNormals } from './overlap-of-normals.js';
