@@ -1,0 +1,25 @@
+import type { ScreeningLimits, ScreeningMark, Shell } from '../model/index.js';
+
+/** A screening rule: looks at all shells of a survey at once and marks the odd ones. A rule never drops a shell. */
+export type ScreeningRule = (shells: readonly Shell[], limits: ScreeningLimits) => ScreeningMark[];
+
+/** Fewest shells of one taxon and fraction from which a rule learns what is usual. */
+export const FEWEST_SHELLS = 10;
+
+/**
+ * Indices of the shells of each taxon and fraction: what is usual differs between taxa and fractions, so rules that learn
+ * from the survey learn within one group.
+ */
+export function groupsOfShells(shells: readonly Shell[]): number[][] {
+  const groups = new Map<string, number[]>();
+  shells.forEach((shell, index) => {
+    const key = JSON.stringify([shell.taxon, shell.fraction]);
+    const group = groups.get(key);
+    if (group === undefined) groups.set(key, [index]);
+    else group.push(index);
+  });
+  return [...groups.values()];
+}
+
+/** A number as evidence shows it: at most 3 significant digits. */
+export const shown = (value: number): string => String(Number(value.toPrecision(3)));
