@@ -1,0 +1,68 @@
+import { readFileSync, statSync } from 'node:fs';
+import { join } from 'node:path';
+import type { Findings } from '../model/index.js';
+import { VERSION } from '../version.js';
+import { FINDINGS_FIELDS } from './findings-fields.js';
+import { codeOf, refused } from './folder/output-error.js';
+import { placesOf } from './folder/places.js';
+import { recoverFolder } from './folder/recover.js';
+
+/**
+ * Reads the findings of an earlier run. What a killed run left is put right first.
+ *
+ * @param folder Results folder, or its results.json.
+ * @throws OutputError, with what to do, when there are none, they are broken, or another major version wrote them.
+ */
+export function readResults(folder: string): Findings {
+  const path = locate(folder);
+  const findings = parse(path, readText(path, folder));
+  const major = (version: string) => version.split('.')[0];
+  if (major(findings.version) !== major(VERSION)) {
+    throw refused(
+      `${path} was written by bedorder ${findings.version}, and this is ${VERSION}. ` +
+        'Run the survey again with this version, or use the version that wrote it.',
+    );
+  }
+  for (const [name, shape] of Object.entries(FINDINGS_FIELDS)) {
+    const value = (findings as unknown as Record<string, unknown>)[name];
+    const fits = shape.type === 'list' ? Array.isArray(value) : value !== undefined;
+    if (!fits) throw refused(`${path} is broken: ${name} is missing. Run the survey again.`);
+  }
+  return findings;
+}
+
+function locate(folder: string): string {
+  const found = statSync(folder, { throwIfNoEntry: false });
+  if (found && !found.isDirectory()) return folder;
+  try {
+    recoverFolder(placesOf(folder));
+  } catch {
+    // what can't be put right is told of below, by what is missing
+  }
+  return join(folder, 'results.json');
+}
+
+function readText(path: string, folder: string): string {
+  try {
+    return readFileSync(path, 'utf8');
+  } catch (error) {
+    if (codeOf(error) === 'ENOENT' || codeOf(error) === 'ENOTDIR') {
+      throw refused(`${folder} holds no results (${path} is not there). Give the folder that \`bedorder run\` wrote.`);
+    }
+    throw refused(`${path} can't be read (${codeOf(error) || (error as Error).message}).`);
+  }
+}
+
+function parse(path: string, text: string): Findings {
+  let parsed: unknown;
+  try {
+    parsed = JSON.parse(text);
+  } catch (error) {
+    throw refused(`${path} is broken: ${(error as Error).message}. Run the survey again.`);
+  }
+  const findings = parsed as Findings | null;
+  if (findings?.program !== 'bedorder' || typeof findings.version !== 'string') {
+    throw refused(`${path} was not written by bedorder. Give the folder that \`bedorder run\` wrote.`);
+  }
+  return findings;
+}

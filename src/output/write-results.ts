@@ -1,0 +1,70 @@
+import { createHash } from 'node:crypto';
+import { closeSync, mkdirSync, openSync, writeSync } from 'node:fs';
+import { dirname, join } from 'node:path';
+import type { Findings } from '../model/index.js';
+import { type CsvColumn, csvPieces } from './csv.js';
+import { dataPackage, type WrittenFile } from './data-package.js';
+import { MARKER } from './folder/inspect.js';
+import { geoJson } from './geojson.js';
+import { resultsPieces } from './results-json.js';
+import { tableColumns } from './table-columns.js';
+import { TABLES } from './tables/index.js';
+
+/** What is drawn of the findings elsewhere, and only stored here. */
+export interface Drawings {
+  /** The page, report.html. */
+  readonly report: string;
+  /** The figures; `name` without `.svg`. */
+  readonly figures: readonly { readonly name: string; readonly svg: string }[];
+}
+
+/**
+ * Writes every file of the results into an empty folder; datapackage.json, which lists the others, comes last.
+ * Between files the program may hear of signals.
+ *
+ * @returns The files in the order in which datapackage.json lists them.
+ */
+export async function writeResults(findings: Findings, drawings: Drawings, folder: string): Promise<WrittenFile[]> {
+  const files: WrittenFile[] = [];
+  const write = async (
+    path: string,
+    title: string,
+    pieces: Iterable<string>,
+    columns?: readonly CsvColumn<never>[],
+  ) => {
+    files.push({ path, title, ...writePieces(join(folder, path), pieces), columns });
+    await new Promise(setImmediate);
+  };
+  for (const table of TABLES) {
+    const columns = tableColumns(table, findings);
+    const rows = findings[table.name] as readonly never[];
+    const path = `${table.name}.csv`;
+    await write(path, table.description, csvPieces<never>(path, columns, rows), columns);
+  }
+  await write('results.json', 'Everything that was found, for programs', resultsPieces(findings));
+  await write('deposits.geojson', 'Beds with coordinates, for a map', [geoJson(findings)]);
+  await write('report.html', 'The report', [drawings.report]);
+  for (const { name, svg } of drawings.figures) {
+    await write(`figures/${name}.svg`, `Figure: ${name.replaceAll('-', ' ')}`, [svg]);
+  }
+  writePieces(join(folder, MARKER), [dataPackage(files)]);
+  return files;
+}
+
+function writePieces(path: string, pieces: Iterable<string>): { readonly bytes: number; readonly sha256: string } {
+  mkdirSync(dirname(path), { recursive: true });
+  const hash = createHash('sha256');
+  const file = openSync(path, 'wx');
+  let bytes = 0;
+  try {
+    for (const piece of pieces) {
+      const buffer = Buffer.from(piece, 'utf8');
+      hash.update(buffer);
+      for (let done = 0; done < buffer.length; ) done += writeSync(file, buffer, done);
+      bytes += buffer.length;
+    }
+  } finally {
+    closeSync(file);
+  }
+  return { bytes, sha256: hash.digest('hex') };
+}
