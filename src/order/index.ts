@@ -1,0 +1,10 @@
+export { gibbsChain } from './gibbs-chain.js';
+export type { GibbsChain, OrderModel } from './gibbs-chain.js';
+export { samplePosterior } from './posterior.js';
+export type { OrderPosterior, PosteriorOptions } from './posterior.js';
+export { probabilityOlder, rankBeds } from './ranking.js';
+export type { Ranking } from './ranking.js';
+export { relationGraph } from './relation-graph.js';
+export type { RelationGraph } from './relation-graph.js';
+export { heightOf, sectionRelations } from './section-relations.js';
+export type { PlacedBed } from './section-relations.js';
