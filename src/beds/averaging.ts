@@ -57,9 +57,7 @@ function averageShell(rows: readonly Analysis[]): Shell {
   const preparations = groupPreparations(rows);
   const replicates = preparations.map((injections) => meanOf(injections.map((row) => row.ratios)));
   const ratios = meanOf(replicates);
-  const concentrations = meanOf(
-    preparations.map((injections) => meanOf(injections.map((row) => row.concentrations))),
-  );
+  const concentrations = meanOf(preparations.map((injections) => meanOf(injections.map((row) => row.concentrations))));
   return {
     section: first.section,
     bed: first.bed,

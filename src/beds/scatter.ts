@@ -20,7 +20,10 @@ export interface PublishedScatter {
  * @example
  * pooledScatter([[-1.1, -1.0, -0.9], [-2.05, -1.95, -2, -2]]).df // => 5
  */
-export function pooledScatter(beds: readonly (readonly number[])[], published: readonly PublishedScatter[] = []): Scatter {
+export function pooledScatter(
+  beds: readonly (readonly number[])[],
+  published: readonly PublishedScatter[] = [],
+): Scatter {
   let sumOfSquares = 0;
   let df = 0;
   for (const values of beds) {

@@ -1,10 +1,11 @@
-export { gibbsChain } from './gibbs-chain.js';
 export type { GibbsChain, OrderModel } from './gibbs-chain.js';
-export { samplePosterior } from './posterior.js';
+export { gibbsChain } from './gibbs-chain.js';
+export { MOST_BEDS_IN_PAIRS, orderRows, pairRows } from './order-rows.js';
 export type { OrderPosterior, PosteriorOptions } from './posterior.js';
-export { probabilityOlder, rankBeds } from './ranking.js';
+export { samplePosterior } from './posterior.js';
 export type { Ranking } from './ranking.js';
-export { relationGraph } from './relation-graph.js';
+export { probabilityOlder, rankBeds } from './ranking.js';
 export type { RelationGraph } from './relation-graph.js';
-export { heightOf, sectionRelations } from './section-relations.js';
+export { relationGraph } from './relation-graph.js';
 export type { PlacedBed } from './section-relations.js';
+export { heightOf, sectionRelations } from './section-relations.js';

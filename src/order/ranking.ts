@@ -30,7 +30,9 @@ export function rankBeds(posterior: OrderPosterior, tied: readonly number[]): Ra
     rankLow.push(own[tail]);
     rankHigh.push(own[draws - 1 - tail]);
   }
-  const sequence = rankMean.map((_, bed) => bed).sort((a, b) => rankMean[a] - rankMean[b] || tied[a] - tied[b] || a - b);
+  const sequence = rankMean
+    .map((_, bed) => bed)
+    .sort((a, b) => rankMean[a] - rankMean[b] || tied[a] - tied[b] || a - b);
   const rank = new Array<number>(beds);
   sequence.forEach((bed, at) => {
     const before = at > 0 ? sequence[at - 1] : -1;

@@ -41,7 +41,13 @@ export function fitMixture(
   const variances = Float64Array.from(errors, (se) => se * se);
   const floor = varianceFloor(values);
   const starts = options.start === undefined ? [] : [options.start];
-  starts.push(partition(values, Array.from(variances, (v) => 1 / Math.max(v, floor)), k));
+  starts.push(
+    partition(
+      values,
+      Array.from(variances, (v) => 1 / Math.max(v, floor)),
+      k,
+    ),
+  );
   const flat = partition(values, new Array<number>(values.length).fill(1), k);
   if (flat.some((label, bed) => label !== starts[starts.length - 1][bed])) starts.push(flat);
   let best: Mixture | null = null;

@@ -1,0 +1,2 @@
+export { correlationTable } from './correlation-table.js';
+export { sectionOrder } from './section-order.js';

@@ -1,0 +1,70 @@
+import type { AdjacentZonesRow, ClockData, ZoneCountRow, ZoneRow } from '../model/index.js';
+import { studentTQuantile } from '../statistics/index.js';
+import type { Zoning } from './zoning.js';
+
+/** Name of a zone in tables: Z1 is the youngest. */
+export const zoneName = (zone: number): string => `Z${zone + 1}`;
+
+/** Rows of zones.csv for one clock, the youngest zone first. Stability comes from a bootstrap, null without one. */
+export function zoneRows(data: ClockData, zoning: Zoning, stability: readonly (number | null)[] = []): ZoneRow[] {
+  const { fit, priors, df } = zoning;
+  const shellSd = Math.hypot(data.scatter.s, fit.tau);
+  return fit.means.map((mean, j) => {
+    const members = zoning.beds.filter((_, at) => zoning.labels[at] === j);
+    const half = studentTQuantile(0.975, Math.max(1, df[j])) * priors.se[j];
+    return {
+      clock: data.clock.name,
+      zone: zoneName(j),
+      beds: members.length,
+      shells: members.reduce((sum, bed) => sum + data.beds[bed].n, 0),
+      dl_mean: Math.exp(mean),
+      dl_low: Math.exp(mean - half),
+      dl_high: Math.exp(mean + half),
+      shell_low: Math.exp(mean - shellSd),
+      shell_high: Math.exp(mean + shellSd),
+      stability: stability[j] ?? null,
+    };
+  });
+}
+
+/** Gap statistic and silhouette of each number of zones, beside BIC. */
+export interface CountCriteria {
+  readonly gap: number | null;
+  readonly gap_se: number | null;
+  readonly silhouette: number | null;
+}
+
+/** Rows of zone_counts.csv for one clock: every mixture, then the continuum. `chosen` marks the model of lowest BIC. */
+export function zoneCountRows(
+  data: ClockData,
+  zoning: Zoning,
+  criteria: ReadonlyMap<number, CountCriteria> = new Map(),
+): ZoneCountRow[] {
+  const { choice, verdict } = zoning;
+  const none: CountCriteria = { gap: null, gap_se: null, silhouette: null };
+  const chosen = verdict === 'zones' || choice.verdict === 'zones' ? choice.bestZones : 1;
+  const rows: ZoneCountRow[] = choice.mixtures.map((fit, at) => ({
+    clock: data.clock.name,
+    model: String(fit.k),
+    log_likelihood: fit.logLikelihood,
+    bic: choice.bics[at],
+    ...(criteria.get(fit.k) ?? none),
+    chosen: verdict !== 'continuum' && fit.k === chosen,
+  }));
+  rows.push({
+    clock: data.clock.name,
+    model: 'continuum',
+    log_likelihood: choice.continuum.logLikelihood,
+    bic: choice.continuumBic,
+    ...none,
+    chosen: verdict === 'continuum',
+  });
+  return rows;
+}
+
+/** Rows of adjacent_zones.csv for one clock, the oldest pair first. */
+export function adjacentZonesRows(data: ClockData, zoning: Zoning): AdjacentZonesRow[] {
+  return zoning.neighbours
+    .map((test, j) => ({ clock: data.clock.name, older: zoneName(j + 1), younger: zoneName(j), ...test }))
+    .reverse();
+}
