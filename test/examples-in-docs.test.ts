@@ -95,7 +95,7 @@ describe('examples on pages', () => {
       cpSync(join(ROOT, 'examples'), join(folder, 'examples'), { recursive: true });
       const lines = example.code.split('\n').filter((line) => line.trim() !== '' && !line.startsWith('#'));
       for (const line of lines) {
-        const words = line.trim().split(/\s+/);
+        const words = [...line.matchAll(/"([^"]*)"|(\S+)/g)].map((match) => match[1] ?? match[2]);
         expect(words[0], `${example.where}: only bedorder commands are run`).toBe('bedorder');
         const done = spawnSync(process.execPath, [program, ...words.slice(1)], { cwd: folder, encoding: 'utf8' });
         expect(done.status, `${line}\n${done.stdout}${done.stderr}`).toBe(0);

@@ -27,7 +27,7 @@ export function examplesOfSource(path: string, text: string): Example[] {
 
 /** Fenced blocks of a page whose info string is `lang run`, for example "```ts run". */
 export function examplesOfPage(path: string, text: string, language: string): Example[] {
-  const pattern = new RegExp(`^\`\`\`${language} run\\n([\\s\\S]*?)^\`\`\`$`, 'gm');
+  const pattern = new RegExp(`^ *\`\`\`${language} run\\n([\\s\\S]*?)^ *\`\`\`$`, 'gm');
   return [...text.matchAll(pattern)].map((match) => ({
     where: `${path}:${text.slice(0, match.index).split('\n').length}`,
     code: match[1],
