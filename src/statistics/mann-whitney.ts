@@ -2,6 +2,7 @@ import type { Numbers } from './check.js';
 import { requireNumbers, requireThat } from './check.js';
 import { normalCdf } from './normal.js';
 import { midranks, tieSizes } from './ranks.js';
+import { waysToDeal } from './ways-to-deal.js';
 
 /** Up to this product of the two group sizes the exact distribution is worked out. */
 const EXACT_UP_TO = 2500;
@@ -86,30 +87,6 @@ function exactTails(ranks: readonly number[], n1: number, n2: number, u: number)
   }
   const all = below + above - ways[at];
   return own ? { pLess: below / all, pGreater: above / all } : { pLess: above / all, pGreater: below / all };
-}
-
-/** How many choices of `size` of the sorted whole numbers have the sum t above the smallest possible sum. */
-function waysToDeal(sorted: readonly number[], size: number): Float64Array {
-  const n = sorted.length;
-  const widths: number[] = [0];
-  for (let j = 1; j <= size; j++) widths.push(widths[j - 1] + sorted[n - j] - sorted[j - 1]);
-  const ways = widths.map((width) => new Float64Array(width + 1));
-  ways[0][0] = 1;
-  // Largest sum above the smallest reached so far, for each number of values chosen.
-  const reached = new Array<number>(size + 1).fill(-1);
-  reached[0] = 0;
-  for (let k = 0; k < n; k++) {
-    for (let j = Math.min(size, k + 1); j >= 1; j--) {
-      if (reached[j - 1] < 0) continue;
-      const shift = sorted[k] - sorted[j - 1];
-      const from = ways[j - 1];
-      const to = ways[j];
-      const top = Math.min(reached[j - 1], to.length - 1 - shift);
-      for (let t = 0; t <= top; t++) to[t + shift] += from[t];
-      reached[j] = Math.max(reached[j], top + shift);
-    }
-  }
-  return ways[size];
 }
 
 function normalTails(pooled: Float64Array, n1: number, u: number): { pLess: number; pGreater: number } {
