@@ -1,0 +1,65 @@
+import type { BedRow, Findings } from '../model/index.js';
+
+/** One bed of one clock as planning sees it. */
+export interface BedOnClock {
+  /** `section/bed`. */
+  readonly key: string;
+  readonly section: string;
+  /** Shells behind the mean. */
+  readonly shells: number;
+  readonly mean: number;
+  /** Variance of the mean that more shells lessen, s²/n, and the rest (conversion, laboratory offset). */
+  readonly shellVariance: number;
+  readonly otherVariance: number;
+  readonly row: BedRow;
+}
+
+/** One main clock as planning sees it. */
+export interface ClockInView {
+  readonly clock: string;
+  /** s: standard deviation between shells of one bed. */
+  readonly scatter: number;
+  /** 2 tau² between two beds of different sections; 0 within a section, whose beds share one temperature history. */
+  readonly spreadVariance: (a: BedOnClock, b: BedOnClock) => number;
+  /** Degrees of freedom of the scatter: shells kept minus beds. */
+  readonly df: number;
+  /** Beds with a mean. */
+  readonly beds: readonly BedOnClock[];
+}
+
+/** Name of a bed in tables. */
+export const bedKey = (row: { readonly section: string; readonly bed: string }): string => `${row.section}/${row.bed}`;
+
+/** The main clocks of a run, with their beds that have a mean. */
+export function clocksInView(findings: Findings): ClockInView[] {
+  return findings.clocks
+    .filter((row) => row.main)
+    .map(({ clock, scatter, spread }) => {
+      const beds = findings.beds.flatMap((row): BedOnClock[] => {
+        if (row.clock !== clock || row.log_mean === null || row.log_se === null || !(row.shells > 0)) return [];
+        const shellVariance = (scatter * scatter) / row.shells;
+        const otherVariance = Math.max(0, row.log_se * row.log_se - shellVariance);
+        // se and scatter are written to 6 digits: a remainder of that size is rounding
+        return [
+          {
+            key: bedKey(row),
+            section: row.section,
+            shells: row.shells,
+            mean: row.log_mean,
+            shellVariance,
+            otherVariance: otherVariance < 1e-4 * shellVariance ? 0 : otherVariance,
+            row,
+          },
+        ];
+      });
+      const shells = beds.reduce((sum, bed) => sum + bed.shells, 0);
+      const between = 2 * (spread ?? 0) ** 2;
+      return {
+        clock,
+        scatter,
+        spreadVariance: (a: BedOnClock, b: BedOnClock) => (a.section === b.section ? 0 : between),
+        df: Math.max(1, shells - beds.length),
+        beds,
+      };
+    });
+}
