@@ -1,0 +1,140 @@
+import type {
+  AdjacentZonesRow,
+  BedRow,
+  BedSite,
+  ClockRow,
+  Findings,
+  GradientFinding,
+  OrderRow,
+  RelationRow,
+  ShellRow,
+  ZoneCountRow,
+  ZoneRow,
+} from '../model/index.js';
+import { NO_ZONE, type ZoneInk, zoneInks } from './palette.js';
+
+/** One bed on one clock with all that figures say of it. */
+export interface BedView {
+  /** `section/bed`. */
+  readonly key: string;
+  /** Number of the bed in the whole survey: what ties figures, tables and script together. */
+  readonly id: number;
+  readonly row: BedRow;
+  readonly site: BedSite | null;
+  readonly order: OrderRow | null;
+  /** Index of its zone, 0 the youngest; -1 without one. */
+  readonly zone: number;
+  readonly shells: readonly ShellView[];
+}
+
+/** One shell with its number in findings.shells. */
+export interface ShellView {
+  readonly id: number;
+  readonly row: ShellRow;
+}
+
+/** One main clock with its zones, beds and relations, ready to draw. */
+export interface ClockView {
+  readonly clock: ClockRow;
+  /** Number of the clock among the main ones. */
+  readonly index: number;
+  /** Added to the names of its figures; empty when there is one main clock. */
+  readonly suffix: string;
+  /** Added to the titles of its figures. */
+  readonly heading: string;
+  /** The youngest first. */
+  readonly zones: readonly ZoneRow[];
+  readonly inks: readonly ZoneInk[];
+  readonly adjacent: readonly AdjacentZonesRow[];
+  readonly counts: readonly ZoneCountRow[];
+  /** In section and place order, lowest first, sections in coast order. */
+  readonly beds: readonly BedView[];
+  readonly byKey: ReadonlyMap<string, BedView>;
+  /** Sections with beds of this clock, in coast order. */
+  readonly sections: readonly string[];
+  readonly relations: readonly RelationRow[];
+  readonly gradient: GradientFinding | null;
+  /** Whether the clock's beds are grouped into zones that the data support or that were asked for. */
+  readonly zoned: boolean;
+}
+
+/** `section/bed` of a row. */
+export const bedKey = (row: { readonly section: string; readonly bed: string }) => `${row.section}/${row.bed}`;
+
+/** Every bed of the survey by `section/bed`, with its number: sites first, then beds no site is known of. */
+export function bedNumbers(findings: Findings): Map<string, number> {
+  const numbers = new Map<string, number>();
+  for (const row of [...findings.sites, ...findings.beds])
+    if (!numbers.has(bedKey(row))) numbers.set(bedKey(row), numbers.size);
+  return numbers;
+}
+
+/** The main clocks of the findings, each with what its figures draw. */
+export function clockViews(findings: Findings): ClockView[] {
+  const mains = findings.clocks.filter((clock) => clock.main);
+  const numbers = bedNumbers(findings);
+  const sites = new Map(findings.sites.map((site) => [bedKey(site), site]));
+  return mains.map((clock, index) => {
+    const own = <Row extends { readonly clock: string }>(rows: readonly Row[]) =>
+      rows.filter((row) => row.clock === clock.clock);
+    const zones = [...own(findings.zones)].sort((a, b) => zoneNumber(a.zone) - zoneNumber(b.zone));
+    const zoneIndex = new Map(zones.map((zone, i) => [zone.zone, i]));
+    const orders = new Map(own(findings.order).map((row) => [bedKey(row), row]));
+    const shells = new Map<string, ShellView[]>();
+    findings.shells.forEach((row, id) => {
+      if (row.clock !== clock.clock) return;
+      const key = bedKey(row);
+      const list = shells.get(key);
+      if (list === undefined) shells.set(key, [{ id, row }]);
+      else list.push({ id, row });
+    });
+    const beds = own(findings.beds)
+      .map((row): BedView => {
+        const key = bedKey(row);
+        return {
+          key,
+          id: numbers.get(key)!,
+          row,
+          site: sites.get(key) ?? null,
+          order: orders.get(key) ?? null,
+          zone: row.zone === null ? -1 : (zoneIndex.get(row.zone) ?? -1),
+          shells: shells.get(key) ?? [],
+        };
+      })
+      .sort((a, b) => a.id - b.id);
+    const present = new Set(beds.map((bed) => bed.row.section));
+    const listed = findings.section_order.filter((section) => present.has(section));
+    return {
+      clock,
+      index,
+      suffix: mains.length > 1 ? `-${slug(clock.clock)}-${index + 1}` : '',
+      heading: mains.length > 1 ? `, ${clock.clock}` : '',
+      zones,
+      inks: zoneInks(Math.max(1, zones.length)),
+      adjacent: own(findings.adjacent_zones),
+      counts: own(findings.zone_counts),
+      beds,
+      byKey: new Map(beds.map((bed) => [bed.key, bed])),
+      sections: [...listed, ...[...present].filter((section) => !listed.includes(section))],
+      relations: own(findings.relations),
+      gradient: findings.gradients.find((gradient) => gradient.clock === clock.clock) ?? null,
+      zoned: zones.length > 1,
+    };
+  });
+}
+
+/** Ink of a zone by its index; the plain one where there is none. */
+export const inkOf = (view: ClockView, zone: number): ZoneInk => view.inks[zone] ?? NO_ZONE;
+
+/** Value of `data-z` of a zone: the clock's number and the zone's. */
+export const zoneTag = (view: ClockView, zone: number): string | undefined =>
+  zone < 0 ? undefined : `${view.index}.${zone}`;
+
+const zoneNumber = (zone: string) => Number.parseInt(zone.replace(/^\D+/, ''), 10) || 0;
+
+const slug = (name: string) =>
+  name
+    .toLowerCase()
+    .replace(/[^a-z0-9]+/g, '-')
+    .replace(/^-+|-+$/g, '')
+    .slice(0, 40) || 'clock';

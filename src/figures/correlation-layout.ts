@@ -1,0 +1,183 @@
+import { median } from '../statistics/index.js';
+import type { BedView, ClockView } from './clock-view.js';
+
+/** A bed's slice of its column: y grows downwards, in units, before the section is shifted. */
+export interface Slice {
+  readonly bed: BedView;
+  readonly top: number;
+  readonly bottom: number;
+  /** Part of the column's width, for beds at one and the same place: 0 to 1. */
+  readonly left: number;
+  readonly right: number;
+  /** False for a bed with no place in its section. */
+  readonly placed: boolean;
+}
+
+/** One section as a column of slices, the lowest bed first. */
+export interface SectionColumn {
+  readonly section: string;
+  readonly slices: readonly Slice[];
+  /** Whether thickness follows metres. */
+  readonly metric: boolean;
+  /** How far the section is moved down so that its zones line up with its neighbours'. */
+  readonly shift: number;
+  readonly top: number;
+  readonly bottom: number;
+}
+
+/** Thickness of a bed without metres, and the least a bed may have. */
+const EVEN = 21;
+const LEAST = 15;
+const TALLEST = 250;
+
+/** Units a metre at which every bed keeps the least thickness and no section grows too tall; null where there is none. */
+export function metreScale(view: ClockView): number | null {
+  const gaps: number[] = [];
+  const spans: number[] = [];
+  for (const section of view.sections) {
+    const heights = metricHeights(view.beds.filter((bed) => bed.row.section === section));
+    if (heights === null || heights.length < 2) continue;
+    for (let i = 1; i < heights.length; i++) gaps.push(heights[i] - heights[i - 1]);
+    spans.push(heights[heights.length - 1] - heights[0]);
+  }
+  if (gaps.length === 0) return null;
+  const need = LEAST / Math.min(...gaps);
+  return need * Math.max(...spans) + EVEN <= TALLEST ? Math.max(need, EVEN / median(gaps)) : null;
+}
+
+// Distinct heights above the lowest bed, ascending; null unless every placed bed has metres.
+function metricHeights(beds: readonly BedView[]): number[] | null {
+  const heights = beds.map((bed) => bedHeight(bed));
+  if (heights.length === 0 || heights.some((height) => height === null)) return null;
+  return [...new Set(heights as number[])].sort((a, b) => a - b);
+}
+
+/** Height in metres, growing upwards; null for levels and for beds without a place. */
+export function bedHeight(bed: BedView): number | null {
+  const place = bed.site?.place ?? null;
+  if (place === null || place.kind === 'level') return null;
+  return place.kind === 'height_m' ? place.value : -place.value;
+}
+
+// Upwards within the section whatever the kind of place.
+const upwards = (bed: BedView): number | null => {
+  const place = bed.site?.place ?? null;
+  return place === null ? null : place.kind === 'depth_m' ? -place.value : place.value;
+};
+
+/** Lays every section out as a column, and shifts the columns so that zones run as level as they can. */
+export function layColumns(view: ClockView): SectionColumn[] {
+  const scale = metreScale(view);
+  const raw = view.sections.map((section) =>
+    layColumn(
+      section,
+      view.beds.filter((bed) => bed.row.section === section),
+      scale,
+    ),
+  );
+  return align(raw, view.zones.length);
+}
+
+function layColumn(section: string, beds: readonly BedView[], scale: number | null): SectionColumn {
+  const placed = beds.filter((bed) => upwards(bed) !== null);
+  const floating = beds.filter((bed) => upwards(bed) === null);
+  const steps = [...new Set(placed.map((bed) => upwards(bed)!))].sort((a, b) => a - b);
+  const metric = scale !== null && metricHeights(placed) !== null && steps.length > 0;
+  const slices: Slice[] = [];
+  let y = 0;
+  steps.forEach((step, i) => {
+    const last = i === steps.length - 1;
+    const thick = metric && !last ? Math.max((steps[i + 1] - step) * scale, LEAST) : EVEN;
+    const here = placed.filter((bed) => upwards(bed) === step);
+    here.forEach((bed, k) => {
+      slices.push({
+        bed,
+        top: y - thick,
+        bottom: y,
+        left: k / here.length,
+        right: (k + 1) / here.length,
+        placed: true,
+      });
+    });
+    y -= thick;
+  });
+  // Beds without a place stand apart, below the column.
+  let below = steps.length > 0 ? 8 : 0;
+  for (const bed of floating) {
+    slices.push({ bed, top: below, bottom: below + EVEN - 3, left: 0, right: 1, placed: false });
+    below += EVEN;
+  }
+  return { section, slices, metric, shift: 0, top: y, bottom: Math.max(0, below) };
+}
+
+/*
+ * Each zone gets a level, the mean of where it stands in the sections; each section moves to fit its zones to those
+ * levels; and again, until both have settled. Sections keep their own heights: only the whole column moves.
+ */
+function align(columns: readonly SectionColumn[], zones: number): SectionColumn[] {
+  const centres = columns.map((column) =>
+    Array.from({ length: zones }, (_, zone) => {
+      const own = column.slices.filter((slice) => slice.bed.zone === zone && slice.placed);
+      return own.length === 0 ? null : own.reduce((sum, slice) => sum + (slice.top + slice.bottom) / 2, 0) / own.length;
+    }),
+  );
+  const levels = Array.from({ length: zones }, (_, zone) => zone * EVEN * 1.6);
+  const shifts = columns.map((column) => -(column.top + column.bottom) / 2);
+  for (let pass = 0; pass < 30; pass++) {
+    centres.forEach((own, c) => {
+      const wants = own.flatMap((centre, zone) => (centre === null ? [] : [levels[zone] - centre]));
+      if (wants.length > 0) shifts[c] = wants.reduce((a, b) => a + b, 0) / wants.length;
+    });
+    for (let zone = 0; zone < zones; zone++) {
+      const at = centres.flatMap((own, c) => (own[zone] === null ? [] : [own[zone]! + shifts[c]]));
+      if (at.length > 0) levels[zone] = at.reduce((a, b) => a + b, 0) / at.length;
+    }
+  }
+  return columns.map((column, c) => ({ ...column, shift: Math.round(shifts[c]) }));
+}
+
+/** A stretch of neighbouring beds of one zone in a column. */
+export interface Run {
+  readonly zone: number;
+  readonly top: number;
+  readonly bottom: number;
+}
+
+/** Stretches of one zone in a column, from the lowest up, shift included. */
+export function runsOf(column: SectionColumn): Run[] {
+  const runs: Run[] = [];
+  for (const slice of column.slices) {
+    if (slice.bed.zone < 0 || !slice.placed) continue;
+    const last = runs[runs.length - 1];
+    const [top, bottom] = [slice.top + column.shift, slice.bottom + column.shift];
+    if (last !== undefined && last.zone === slice.bed.zone)
+      runs[runs.length - 1] = { ...last, top: Math.min(last.top, top) };
+    else runs.push({ zone: slice.bed.zone, top, bottom });
+  }
+  return runs;
+}
+
+/** Where a zone that a section lacks would lie in it. */
+export interface Contact {
+  readonly y: number;
+  /** `between` beds of older and younger zones; else `above` or `below` all that is exposed. */
+  readonly where: 'between' | 'above' | 'below';
+}
+
+/** Finds the contact of a missing zone: the cut with the fewest beds on the wrong side. */
+export function contactOf(column: SectionColumn, zone: number): Contact | null {
+  const runs = runsOf(column);
+  if (runs.length === 0) return null;
+  let best = 0;
+  let fewest = Number.POSITIVE_INFINITY;
+  for (let cut = 0; cut <= runs.length; cut++) {
+    const wrong = runs.filter((run, i) => (i < cut ? run.zone < zone : run.zone > zone)).length;
+    if (wrong < fewest) {
+      fewest = wrong;
+      best = cut;
+    }
+  }
+  if (best === 0) return { y: runs[0].bottom, where: 'below' };
+  if (best === runs.length) return { y: runs[runs.length - 1].top, where: 'above' };
+  return { y: runs[best].bottom, where: 'between' };
+}
