@@ -1,5 +1,6 @@
 export type { GibbsChain, OrderModel } from './gibbs-chain.js';
 export { gibbsChain } from './gibbs-chain.js';
+export { keptRelations } from './kept-relations.js';
 export { MOST_BEDS_IN_PAIRS, orderRows, pairRows } from './order-rows.js';
 export type { OrderPosterior, PosteriorOptions } from './posterior.js';
 export { samplePosterior } from './posterior.js';

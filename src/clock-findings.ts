@@ -1,0 +1,300 @@
+import { type ClockSet, testingDf } from './beds/index.js';
+import type { ClockOrder, Pass, RunContext } from './clock-run.js';
+import { correlationTable } from './coast/index.js';
+import type {
+  AdjacentZonesRow,
+  AminoAcidShare,
+  AminoAcidVotes,
+  BedMark,
+  BedRow,
+  BedSite,
+  ClockBed,
+  ClockRow,
+  ConflictRow,
+  CorrelationRow,
+  Evidence,
+  GradientFinding,
+  Host,
+  OrderDiagnostics,
+  OrderRow,
+  PairRow,
+  RelationRow,
+  Remark,
+  SectionRow,
+  ShellRow,
+  ZoneCountRow,
+  ZoneRow,
+} from './model/index.js';
+import { heightOf, orderRows, pairRows } from './order/index.js';
+import type { Settled } from './passes.js';
+import { screenBeds } from './screening/index.js';
+import { adjustedRandIndex, type Random } from './statistics/index.js';
+import { checkSections } from './superposition/section-consistency.js';
+import {
+  adjacentZonesRows,
+  assignZone,
+  bedRows,
+  shellRows,
+  type Zoning,
+  zoneCountRows,
+  zoneName,
+  zoneRows,
+} from './zones/index.js';
+
+/** All rows of one clock. */
+export interface ClockResult {
+  readonly clock: ClockRow;
+  readonly zones: readonly ZoneRow[];
+  readonly zone_counts: readonly ZoneCountRow[];
+  readonly adjacent_zones: readonly AdjacentZonesRow[];
+  readonly beds: readonly BedRow[];
+  readonly shells: readonly ShellRow[];
+  readonly order: readonly OrderRow[];
+  readonly pairs: readonly PairRow[];
+  readonly relations: readonly RelationRow[];
+  readonly sections: readonly SectionRow[];
+  readonly correlation: readonly CorrelationRow[];
+  readonly evidence: readonly Evidence[];
+  readonly conflicts: readonly ConflictRow[];
+  readonly diagnostics: readonly OrderDiagnostics[];
+  readonly gradients: readonly GradientFinding[];
+  readonly votes: readonly AminoAcidVotes[];
+  readonly shares: readonly AminoAcidShare[];
+  readonly remarks: readonly Remark[];
+}
+
+/** What the rows of one taxon and fraction are made from. */
+export interface ClockFindingsInput {
+  readonly context: RunContext;
+  readonly set: ClockSet;
+  readonly settled: Settled;
+  readonly order: ClockOrder | null;
+  readonly singles: readonly Pass[];
+  readonly sites: readonly BedSite[];
+  readonly sections: readonly string[];
+  readonly host: Host;
+  readonly random: Random;
+}
+
+const EMPTY = {
+  zones: [],
+  zone_counts: [],
+  adjacent_zones: [],
+  beds: [],
+  shells: [],
+  order: [],
+  pairs: [],
+  relations: [],
+  sections: [],
+  correlation: [],
+  evidence: [],
+  conflicts: [],
+  diagnostics: [],
+  gradients: [],
+  votes: [],
+  shares: [],
+  remarks: [],
+};
+
+/** Rows of the main clock of one taxon and fraction, then one clock row an amino acid. */
+export async function clockFindings(input: ClockFindingsInput): Promise<ClockResult[]> {
+  const { settled, singles } = input;
+  const main = mainResult(input);
+  return [
+    main,
+    ...singles.map((pass) => ({
+      ...EMPTY,
+      clock: clockRow(pass, randWithMain(pass, settled.last)),
+      zones: pass.zoning === null ? [] : zoneRows(pass.data, pass.zoning),
+      zone_counts: pass.zoning === null ? [] : zoneCountRows(pass.data, pass.zoning),
+    })),
+  ];
+}
+
+function mainResult({ context, settled, order, sites, sections, random }: ClockFindingsInput): ClockResult {
+  const { last } = settled;
+  const { data, zoning } = last;
+  const { options, shells, summaries } = context;
+  const siteOf = new Map(sites.map((site) => [`${site.section}/${site.bed}`, site]));
+  const marks = bedMarks(data.beds, siteOf, options, data.scatter.assumed);
+  const unsorted = bedRows({
+    data,
+    zoning,
+    shells,
+    summaries,
+    notes: (bed) => ({ place: siteOf.get(bed.key)?.place ?? null, marks: marks.get(bed.key) ?? [], reading: '' }),
+  });
+  // tables list beds as the sites do: sections in coast order, the lowest bed first
+  const position = new Map([...siteOf.keys()].map((key, at) => [key, at]));
+  const beds = [...unsorted].sort(
+    (a, b) => position.get(`${a.section}/${a.bed}`)! - position.get(`${b.section}/${b.bed}`)!,
+  );
+  const zones = zoning === null ? [] : zoneRows(data, zoning);
+  const zoneOf = new Map(beds.map((bed) => [`${bed.section}/${bed.bed}`, bed.zone]));
+  return {
+    ...EMPTY,
+    clock: clockRow(last, 1),
+    zones,
+    zone_counts: zoning === null ? [] : zoneCountRows(data, zoning),
+    adjacent_zones: zoning === null ? [] : adjacentZonesRows(data, zoning),
+    beds,
+    shells: shellRows(data, zoning, shells, (at) => {
+      const own = settled.marks.get(data.shells[at].shell) ?? [];
+      const status = data.shells[at].setAside ? 'set aside' : own.length > 0 ? 'doubtful' : 'kept';
+      return { status, marks: own.map((mark) => mark.mark), reading: 'none', confidence: null };
+    }),
+    order:
+      order === null
+        ? []
+        : orderRows(
+            data.clock.name,
+            order.beds,
+            order.beds.map((bed) => zoneOf.get(bed.key) ?? null),
+            order.graph.node,
+            order.posterior,
+            order.ranking,
+            options.alpha,
+          ),
+    pairs:
+      order === null
+        ? []
+        : pairRows(data.clock.name, order.beds, order.posterior, order.ranking, sameZone(order.beds, zoning)),
+    relations: relationRows(settled),
+    sections: sectionRows(settled, siteOf, options.alpha, options.simulations, random),
+    correlation: correlationTable(zones, beds, sections),
+    diagnostics: order === null ? [] : [diagnosticsOf(data.clock.name, order)],
+  };
+}
+
+function clockRow({ data, zoning }: Pass, rand: number | null): ClockRow {
+  const { clock } = data;
+  return {
+    clock: clock.name,
+    taxon: clock.taxon,
+    fraction: clock.fraction,
+    amino_acids: clock.amino_acids,
+    main: clock.main,
+    shells: data.beds.reduce((sum, bed) => sum + bed.n, 0),
+    beds: data.beds.filter((bed) => bed.n > 0).length,
+    scatter: data.scatter.s,
+    spread: zoning?.spread ?? null,
+    zones: zoning?.fit.k ?? 0,
+    verdict: zoning?.verdict ?? 'too few beds',
+    slope: null,
+    slope_low: null,
+    slope_high: null,
+    rand_with_main: rand,
+  };
+}
+
+/** Adjusted Rand index of the zonings of two clocks over the beds both have; null with fewer than two. */
+function randWithMain(pass: Pass, main: Pass): number | null {
+  const labels = (from: Pass): Map<string, number> =>
+    new Map(from.zoning?.beds.map((bed, at) => [from.data.beds[bed].key, from.zoning!.labels[at]]) ?? []);
+  const [own, other] = [labels(pass), labels(main)];
+  const shared = [...own.keys()].filter((key) => other.has(key));
+  if (shared.length < 2) return null;
+  return adjustedRandIndex(
+    shared.map((key) => own.get(key)!),
+    shared.map((key) => other.get(key)!),
+  );
+}
+
+function bedMarks(
+  beds: readonly ClockBed[],
+  sites: ReadonlyMap<string, BedSite>,
+  options: RunContext['options'],
+  assumed: boolean,
+): Map<string, BedMark[]> {
+  const marks = new Map<string, BedMark[]>(beds.map((bed) => [bed.key, []]));
+  const toScreen = beds.map((bed) => ({ burial_m: sites.get(bed.key)?.burial_m ?? null, shells: bed.n }));
+  for (const { bed, mark } of screenBeds(toScreen, options.screening)) marks.get(beds[bed].key)!.push(mark);
+  const inSection = new Map<string, number>();
+  for (const bed of beds) inSection.set(bed.section, (inSection.get(bed.section) ?? 0) + 1);
+  for (const bed of beds) {
+    const own = marks.get(bed.key)!;
+    if (sites.get(bed.key)?.place == null && inSection.get(bed.section)! > 1) own.push('no place in section');
+    if (assumed) own.push('assumed scatter');
+  }
+  return marks;
+}
+
+/** Probability that two beds share a zone, from their own zone probabilities. */
+function sameZone(beds: readonly ClockBed[], zoning: Zoning | null) {
+  const probabilities = beds.map((bed) =>
+    zoning === null ? null : assignZone(bed.mean, bed.se, zoning.priors).probabilities,
+  );
+  return (a: number, b: number): number | null => {
+    const [first, second] = [probabilities[a], probabilities[b]];
+    return first === null || second === null ? null : first.reduce((sum, p, zone) => sum + p * second[zone], 0);
+  };
+}
+
+function relationRows({ first, last }: Settled): RelationRow[] {
+  const before = new Map(first.relations.map((relation, at) => [`${relation.lower}\u0001${relation.upper}`, at]));
+  return last.relations.map((relation, at) => {
+    const { difference, z, p_reversed, verdict } = last.checks[at];
+    const earlier = before.get(`${relation.lower}\u0001${relation.upper}`);
+    return {
+      clock: last.data.clock.name,
+      lower: relation.lower,
+      upper: relation.upper,
+      basis: relation.basis,
+      kind: relation.kind,
+      certainty: relation.certainty,
+      difference,
+      z,
+      p_reversed,
+      verdict: earlier === undefined ? verdict : first.checks[earlier].verdict,
+      verdict_after: verdict,
+      reading: '',
+    };
+  });
+}
+
+function sectionRows(
+  { last }: Settled,
+  sites: ReadonlyMap<string, BedSite>,
+  alpha: number,
+  simulations: number,
+  random: Random,
+): SectionRow[] {
+  const { data, relations } = last;
+  const sections = new Map<string, { rank: number; mean: number; se: number }[]>();
+  for (const bed of data.beds) {
+    const place = sites.get(bed.key)?.place;
+    const list = sections.get(bed.section) ?? [];
+    sections.set(bed.section, list);
+    if (bed.n > 0 && place != null) list.push({ rank: heightOf(place), mean: bed.mean, se: bed.se });
+  }
+  const checks = checkSections(
+    [...sections].map(([section, beds]) => ({ section, beds })),
+    random,
+    { alpha, df: testingDf(data.scatter), simulations },
+  );
+  return checks.map(({ section, beds, statistic, p_order, verdict }) => ({
+    clock: data.clock.name,
+    section,
+    beds,
+    relations: relations.filter((relation) => relation.lower.startsWith(`${section}/`)).length,
+    statistic,
+    p_order,
+    verdict,
+  }));
+}
+
+function diagnosticsOf(clock: string, order: ClockOrder): OrderDiagnostics {
+  const { posterior } = order;
+  return {
+    clock,
+    chains: posterior.chains,
+    draws: posterior.draws,
+    ess_min: posterior.essMin,
+    rhat_max: posterior.rhatMax,
+    converged: posterior.converged,
+    relations_kept: order.kept,
+    relations_left_out: order.leftOut,
+  };
+}
+
+export { zoneName };

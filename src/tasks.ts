@@ -1,0 +1,14 @@
+import type { Task } from './model/index.js';
+
+/** The pure functions that a host may run on workers, by name. */
+const TASKS: Readonly<Record<string, (argument: never) => unknown>> = {};
+
+/**
+ * Runs one task: what a worker thread, or a host without any, calls.
+ * @throws Error when no function of that name is registered
+ */
+export function runTask({ name, argument }: Task): unknown {
+  const task = TASKS[name];
+  if (task === undefined) throw new Error(`no task is named ${name}`);
+  return task(argument as never);
+}
