@@ -1,0 +1,198 @@
+import type { AminoAcid, ClockData, Confidence, ScreeningMark, ShellReading, ShellStatus } from '../model/index.js';
+import { screenedOut } from '../screening/index.js';
+import { aminoAcidAgreement } from './amino-acid-agreement.js';
+import { costOfShell } from './cost-of-shell.js';
+import { type OwnBedResiduals, ownBedResiduals } from './own-bed-residuals.js';
+import { readingOfShell } from './reading-of-shell.js';
+import { findShellConflicts, type ShellConflicts } from './shell-conflicts.js';
+import { type ShellCase, shellEvidence } from './shell-evidence.js';
+import { confidenceOfReading, statusOfShell } from './shell-status.js';
+import { type ShellsToSetAside, shellsToSetAside } from './shells-to-set-aside.js';
+import { matchZone, type ZoneToMatch } from './zone-match.js';
+
+/** What the readings of one clock are made from. */
+export interface ReadingInput {
+  readonly data: ClockData;
+  /** Amino acids measured on this taxon and fraction, also those that are not part of the clock. */
+  readonly aminoAcids: readonly AminoAcid[];
+  /** Log ratios of each clock shell, same order as `data.shells`; one column an amino acid, NaN where not measured. */
+  readonly logs: readonly (readonly number[])[];
+  /** Screening marks of each clock shell, same order. */
+  readonly marks: readonly (readonly ScreeningMark[])[];
+  /** For each clock bed, indices of all beds above it by certain relations, directly or through others. */
+  readonly above: readonly (readonly number[])[];
+  /** Zones of the clock; empty where there are none. */
+  readonly zones: readonly ZoneToMatch[];
+  /** Spread tau between beds of one zone. Default 0. */
+  readonly spread?: number;
+  /** Default 0.05. */
+  readonly alpha?: number;
+}
+
+/** The reading of one clock shell. */
+export interface ShellFinding {
+  readonly status: ShellStatus;
+  readonly reading: ShellReading;
+  readonly confidence: Confidence | null;
+  /** x minus the mean of the other sound shells of its bed. */
+  readonly residual: number | null;
+  /** Name of the zone its ratio fits; null where none. */
+  readonly zone: string | null;
+  readonly zone_probability: number | null;
+  /** Evidence in sentences; empty where nothing speaks against the shell. */
+  readonly sentences: readonly string[];
+}
+
+/** Readings of all shells of one clock and what they rest on. */
+export interface ShellReadings {
+  /** Same order as `data.shells`. */
+  readonly shells: readonly ShellFinding[];
+  readonly residuals: OwnBedResiduals;
+  readonly conflicts: ShellConflicts;
+  readonly toSetAside: ShellsToSetAside;
+}
+
+/** Amino acids of a sound shell disagree so far once in a hundred. */
+const DISAGREE = 0.01;
+
+/**
+ * Reads every shell of a clock (design 7.9): how it stands to its own bed, whether its amino acids agree, what screening
+ * says, which zone or bed its ratio fits, and with which shells it contradicts superposition. Statuses are worked out
+ * anew from all shells; those that came in are not looked at, so the same beds, zones and relations give the same answer.
+ *
+ * @throws RangeError when logs, marks or above do not match the clock's shells and beds.
+ */
+export function readShells(input: ReadingInput): ShellReadings {
+  const { data, logs, marks, above, zones, alpha = 0.05 } = input;
+  if (logs.length !== data.shells.length || marks.length !== data.shells.length || above.length !== data.beds.length) {
+    throw new RangeError(
+      `readShells: wanted logs and marks for ${data.shells.length} shells and relations for ${data.beds.length} beds, got ${logs.length}, ${marks.length} and ${above.length}`,
+    );
+  }
+  const names = marks.map((list) => list.map(({ mark }) => mark));
+  // The gradient is one number a bed, so it changes no residual, but it does change what lies in other beds.
+  const xs = data.shells.map(({ x, bed }) => x - (data.slope ?? 0) * data.beds[bed].gradient);
+  const placed = data.shells.map(({ bed }, i) => ({ bed, x: xs[i] }));
+  const excluded = new Set(names.flatMap((list, i) => (screenedOut(list) ? [i] : [])));
+  const residuals = ownBedResiduals(placed, excluded, {
+    alpha,
+    ...(data.scatter.assumed ? { assumed: data.scatter.s } : {}),
+  });
+  // Shells that screening sets aside settle their conflicts by themselves.
+  const conflicts = findShellConflicts(
+    placed.map((shell, i) => (excluded.has(i) ? { ...shell, x: Number.NaN } : shell)),
+    data.beds.map(({ section }, b) => ({ section, above: above[b] })),
+    { scatter: residuals.s, df: residuals.df, spread: input.spread, alpha: alpha / 2 },
+  );
+  const costs = residuals.shells.map(({ p }, i) => costOfShell(p, names[i].length > 0));
+  const toSetAside = shellsToSetAside(conflicts, costs);
+  const agreements = aminoAcidAgreement(
+    logs,
+    data.shells.map(({ x }) => x),
+    data.shells.map(({ bed }) => bed),
+    input.aminoAcids.map((code) => {
+      const at = data.clock.amino_acids.indexOf(code);
+      return at < 0 ? 0 : data.clock.weights[at];
+    }),
+  );
+  const inAll = new Set(toSetAside.inAll);
+  const inSome = new Set(toSetAside.inSome);
+  const ofBed = bedCounts(data, residuals, excluded, new Set([...inAll, ...inSome]));
+  const below = above.map((): number[] => []);
+  above.forEach((uppers, lower) => {
+    for (const upper of uppers) below[upper].push(lower);
+  });
+
+  const shells = data.shells.map(({ bed }, i): ShellFinding => {
+    const own = residuals.shells[i];
+    const cut = inAll.has(i) ? 'all' : inSome.has(i) ? 'some' : 'none';
+    const wholeBed = ofBed[bed].inCut * 2 >= ofBed[bed].sound;
+    const crowded = ofBed[bed].odd > Math.max(1, Math.floor(ofBed[bed].sound / 3));
+    const [asLower, asUpper] = [conflicts.asLower[i], conflicts.asUpper[i]];
+    const pulled = cut !== 'none' && !wholeBed ? Math.sign(asUpper - asLower) : 0;
+    const direction = directionOf(own.t, own.p, pulled, alpha);
+    const agree = agreements[i] === null ? null : agreements[i].p >= DISAGREE;
+    const reading = readingOfShell(direction, agree, names[i]);
+    const match = matchZone(xs[i], residuals.s, zones);
+    const ownZone = matchZone(residuals.means[bed], residuals.s / Math.sqrt(Math.max(1, own.others)), zones);
+    const sourceBed =
+      direction === 'within' ? null : sourceOf(direction === 'high' ? below[bed] : above[bed], xs[i], residuals, data);
+    const decided: ShellCase = {
+      ratio: Math.exp(data.shells[i].x),
+      own,
+      tested: residuals.tested,
+      direction,
+      reading,
+      agreement: agreements[i],
+      agree,
+      aminoAcids: input.aminoAcids,
+      marks: marks[i],
+      match,
+      zoned: zones.length > 1,
+      ownZone: ownZone?.zone.name ?? null,
+      sourceBed,
+      asLower,
+      asUpper,
+      cut,
+      wholeBed,
+      crowded,
+    };
+    const confidence = confidenceOfReading({
+      own,
+      reading,
+      agreementP: agreements[i]?.p ?? null,
+      marks: names[i],
+      sourceFits: sourceBed !== null || (match !== null && ownZone !== null && match.zone.name !== ownZone.zone.name),
+      inConflict: asLower + asUpper > 0,
+    });
+    return {
+      status: statusOfShell({ own, marks: names[i], reading, cut, wholeBed, crowded, alpha }),
+      reading,
+      confidence,
+      residual: own.residual,
+      zone: match?.zone.name ?? null,
+      zone_probability: match?.probability ?? null,
+      sentences: shellEvidence(decided),
+    };
+  });
+  return { shells, residuals, conflicts, toSetAside };
+}
+
+/** High or low at the weaker level by its own bed, or at alpha where a least costly set speaks against it on the same side. */
+function directionOf(t: number | null, p: number | null, pulled: number, alpha: number): 'high' | 'low' | 'within' {
+  if (t === null || p === null) return pulled === 0 ? 'within' : pulled > 0 ? 'high' : 'low';
+  const level = Math.sign(t) === pulled ? alpha : alpha / 5;
+  return p > level ? 'within' : t > 0 ? 'high' : 'low';
+}
+
+/** How many shells of each bed are not screened out, stand apart, or lie in a least costly set. */
+function bedCounts(
+  data: ClockData,
+  residuals: OwnBedResiduals,
+  excluded: ReadonlySet<number>,
+  proposed: ReadonlySet<number>,
+): { sound: number; odd: number; inCut: number }[] {
+  const counts = data.beds.map(() => ({ sound: 0, odd: 0, inCut: 0 }));
+  data.shells.forEach(({ bed }, i) => {
+    if (excluded.has(i)) return;
+    counts[bed].sound++;
+    if (residuals.shells[i].odd) counts[bed].odd++;
+    if (proposed.has(i)) counts[bed].inCut++;
+  });
+  return counts;
+}
+
+/** The bed among the candidates whose mean is nearest, if the ratio fits it within 2 standard deviations of a shell. */
+function sourceOf(
+  candidates: readonly number[],
+  x: number,
+  residuals: OwnBedResiduals,
+  data: ClockData,
+): string | null {
+  let best: number | null = null;
+  for (const bed of candidates) {
+    const distance = Math.abs(x - residuals.means[bed]);
+    if (distance <= 2 * residuals.s && (best === null || distance < Math.abs(x - residuals.means[best]))) best = bed;
+  }
+  return best === null ? null : data.beds[best].key;
+}

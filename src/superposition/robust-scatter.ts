@@ -1,0 +1,71 @@
+import { median } from '../statistics/index.js';
+
+/** Share of shells taken to be odd, and their standard deviation about their bed (log ratios, beyond s). */
+const ODD_SHARE = 0.05;
+const ODD_SPREAD = 0.5;
+/** An s below this, log ratios, is rounding of the table, not scatter. */
+const SMALLEST = 1e-6;
+
+/** Scatter that odd shells do not inflate. */
+export interface RobustScatter {
+  /** Standard deviation between shells of a bed; NaN with no bed of two shells. */
+  readonly s: number;
+  /** Degrees of freedom that are left after odd shells are weighed down. */
+  readonly df: number;
+  /** Mean of each bed, odd shells weighed down; NaN for a bed without shells. */
+  readonly means: readonly number[];
+}
+
+/**
+ * Pooled standard deviation of log ratios between the shells of one bed, when some shells may be odd. Each shell is either
+ * sound, N(bed mean, s²), or odd, N(bed mean, s² + 0.5²), with 1 in 20 odd; s and the bed means are those of greatest
+ * likelihood (EM from bed medians), s² divided by the sound shells less one a bed. A shell weighs in by its probability
+ * of being sound: nearly fully up to 2 s, hardly beyond 4 s. On clean data the result is within about 2 % of the classical s.
+ *
+ * Source: contaminated normal, Tukey 1960; EM, Dempster, Laird and Rubin 1977, 10.1111/j.2517-6161.1977.tb01600.x.
+ *
+ * @param beds Log ratios of the shells of each bed.
+ * @example
+ * const beds = [[0, 0.1, 0.05, 0.9], [-1, -0.9, -0.95], [0.4, 0.5, 0.45], [0.2, 0.3, 0.25]];
+ * robustScatter(beds).s // => 0.05
+ */
+export function robustScatter(beds: readonly (readonly number[])[]): RobustScatter {
+  let means = beds.map((values) => (values.length === 0 ? Number.NaN : median(values)));
+  const deviations = beds.flatMap((values, bed) =>
+    values.length < 2 ? [] : values.map((x) => Math.abs(x - means[bed])),
+  );
+  if (deviations.length === 0) return { s: Number.NaN, df: 0, means };
+  // Deviations from the median of a small bed run short; 1.2 makes up for most of it, the iteration for the rest.
+  let s = Math.max(SMALLEST, 1.2 * 1.4826 * median(deviations));
+  let df = 0;
+  for (let turn = 0; turn < 200; turn++) {
+    let squares = 0;
+    df = 0;
+    const next = beds.map((values, bed) => {
+      if (values.length === 0) return Number.NaN;
+      const weights = values.map((x) => soundness(x - means[bed], s));
+      const total = weights.reduce((sum, w) => sum + w, 0);
+      const mean = values.reduce((sum, x, i) => sum + weights[i] * x, 0) / total;
+      if (values.length > 1) {
+        squares += values.reduce((sum, x, i) => sum + weights[i] * (x - mean) ** 2, 0);
+        df += Math.max(0, total - 1);
+      }
+      return mean;
+    });
+    means = next;
+    if (!(df > 0)) break;
+    const now = Math.max(SMALLEST, Math.sqrt(squares / df));
+    const settled = Math.abs(now - s) < 1e-9 * s;
+    s = now;
+    if (settled) break;
+  }
+  return { s, df, means };
+}
+
+/** Probability that a shell this far off its bed is sound. */
+function soundness(deviation: number, s: number): number {
+  const wide = Math.hypot(s, ODD_SPREAD);
+  const sound = ((1 - ODD_SHARE) / s) * Math.exp(-0.5 * (deviation / s) ** 2);
+  const odd = (ODD_SHARE / wide) * Math.exp(-0.5 * (deviation / wide) ** 2);
+  return sound / (sound + odd);
+}
