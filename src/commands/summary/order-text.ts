@@ -1,0 +1,70 @@
+import type { OrderRow } from '../../model/index.js';
+import { type Style, safe, wrap } from '../terminal.js';
+import type { ClockFacts } from './facts.js';
+
+/** Beds from which an order is shortened, and how much of each zone and how many lines are then kept. */
+const SHORTEN = { beds: 80, ofZone: 4, zones: 12 } as const;
+
+/**
+ * The order of one clock, oldest to youngest, in a compact form: one paragraph a zone, `>` where a bed is surely older
+ * than the next, `~` where that is not resolved, and the 95 % interval of each rank.
+ */
+export function orderText({ order, sampling }: ClockFacts, style: Style): string[] {
+  if (order.length === 0) return ['  No order: no bed has a mean on this clock.'];
+  const resolved = order.filter((row) => row.resolved === true).length;
+  const lines = [
+    `  ${style.bold('Order, oldest to youngest')} (> older, ~ not resolved; [95 % interval of the rank])`,
+    ...shortened(stretches(order), order.length),
+  ];
+  if (order.length > 1) lines.push(`    ${resolved} of ${order.length - 1} steps are resolved.`);
+  if (sampling && !sampling.converged) {
+    lines.push(`    The order was not sampled well enough (R-hat ${sampling.rhat_max.toFixed(3)}); take it with care.`);
+  }
+  return lines;
+}
+
+interface Stretch {
+  readonly zone: string | null;
+  readonly rows: readonly OrderRow[];
+}
+
+// Neighbours in the order that share a zone.
+function stretches(order: readonly OrderRow[]): Stretch[] {
+  const found: { zone: string | null; rows: OrderRow[] }[] = [];
+  for (const row of order) {
+    const last = found.at(-1);
+    if (last && last.zone === row.zone) last.rows.push(row);
+    else found.push({ zone: row.zone, rows: [row] });
+  }
+  return found;
+}
+
+function shortened(all: readonly Stretch[], beds: number): string[] {
+  if (beds <= SHORTEN.beds) return all.map((stretch) => stretchText(stretch, stretch.rows.length));
+  const shown = all.slice(0, SHORTEN.zones).map((stretch) => stretchText(stretch, SHORTEN.ofZone));
+  const left = all.slice(SHORTEN.zones).reduce((sum, { rows }) => sum + rows.length, 0);
+  return [...shown, ...(left > 0 ? [`    … ${left} more beds`] : []), '    The whole order is in order.csv.'];
+}
+
+function stretchText({ zone, rows }: Stretch, most: number): string {
+  const cut = rows.length > most + 1;
+  const kept = cut ? rows.slice(0, most) : rows;
+  const words = kept.map((row) => bedText(row));
+  if (cut) words.push(`… ${rows.length - most - 1} more …`, bedText(rows[rows.length - 1]));
+  const name = (zone === null ? '-' : safe(zone)).padEnd(4);
+  return unglued(wrap(`    ${name}${words.join(' ')}`, 78, 8));
+}
+
+// A bed, its interval and the sign that follows stay together on one line.
+function bedText(row: OrderRow): string {
+  const interval =
+    row.rank_low === row.rank_high ? `[${row.rank_low}]` : `[${Math.round(row.rank_low)}-${Math.round(row.rank_high)}]`;
+  const sign = row.p_older_than_next === null ? '' : row.resolved ? ' >' : ' ~';
+  return `${safe(`${row.section}/${row.bed}`)} ${interval}${sign}`.replaceAll(' ', GLUE);
+}
+
+const GLUE = '\u00a0';
+
+function unglued(text: string): string {
+  return text.replaceAll(GLUE, ' ');
+}
