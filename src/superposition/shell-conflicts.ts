@@ -100,3 +100,26 @@ export function findShellConflicts(
   });
   return { sorted, conflicts, pairs, count, z, asLower, asUpper };
 }
+
+/**
+ * Conflicts one by one, the widest first, up to a number that a reader can take in.
+ *
+ * @param conflicts From {@link findShellConflicts}.
+ * @param shells The same shells.
+ * @param most Default 1000.
+ * @returns Indices of the two shells, and how far the lower falls short of the upper in log ratios.
+ */
+export function listConflicts(
+  conflicts: ShellConflicts,
+  shells: readonly ShellInOrder[],
+  most = 1000,
+): { lower: number; upper: number; shortfall: number }[] {
+  return conflicts.conflicts
+    .flatMap(({ lower, bed, from }) =>
+      conflicts.sorted[bed]
+        .slice(from)
+        .map((upper) => ({ lower, upper, shortfall: shells[upper].x - shells[lower].x })),
+    )
+    .sort((a, b) => b.shortfall - a.shortfall || a.lower - b.lower || a.upper - b.upper)
+    .slice(0, most);
+}
