@@ -1,0 +1,9 @@
+/** The input room: files to a survey, with every problem collected. */
+export { type DatesResult, datesFromBytes } from './dates-table.js';
+export { LIMITS } from './limits.js';
+export { readDates } from './read-dates.js';
+export { readSettings } from './read-settings.js';
+export { readSurvey, type SurveyFiles } from './read-survey.js';
+export type { FileBytes } from './read-table.js';
+export type { Settings, SettingsResult } from './settings.js';
+export { type SurveyBytes, type SurveyResult, surveyFromBytes } from './survey-from-bytes.js';
