@@ -6,7 +6,13 @@ import { endQuietlyWithoutReader } from './commands/print.js';
 import { addSurveyOptions, withUnderscores } from './commands/survey-options.js';
 import { VERSION } from './version.js';
 
-const CAUTION = 'The order that bedorder gives is relative, and is no age.';
+const DESCRIPTION =
+  'Groups beds into aminozones by D/L ratios, orders deposits from oldest to youngest without dates, and checks ' +
+  'the order against superposition. The order is relative, and is no age.';
+
+const FIRST_STEPS = `
+To see what it does:      bedorder demo
+With a survey of yours:   bedorder run shells.csv --beds beds.csv`;
 
 /*
  * The command line: registers the commands and starts the one that was asked for. What a command does is loaded only
@@ -17,11 +23,10 @@ async function program(args: readonly string[]): Promise<void> {
   endQuietlyWithoutReader();
   let status: ExitStatus = EXIT.done;
   const root = new Command('bedorder')
-    .description(
-      `Groups beds into aminozones by D/L ratios, orders deposits from oldest to youngest without\ndates, and checks the order against superposition.\n${CAUTION}`,
-    )
+    .description(DESCRIPTION)
     .version(VERSION)
     .exitOverride()
+    .addHelpText('after', FIRST_STEPS)
     .showHelpAfterError('(see `bedorder --help`)');
 
   addSurveyOptions(root.command('run').description('zone, order and check a survey; write a results folder')).action(

@@ -27,12 +27,14 @@ export function findName(findings: Findings, names: readonly string[]): Named {
     }
     return onlyOne(known, names[0], [...known.beds, ...known.shells]);
   }
+  // a name with spaces, given without quotation marks
+  const joined = exactly(known, names.join(' '));
+  if (joined) return joined;
   const words = names.filter((name) => !/^(?:[<>]|and|to|over|under)$/i.test(name));
   if (words.length === 2) {
     const [first, second] = words.map((word) => bedOf(known, word));
     return names.includes('<') ? relation(second, first) : relation(first, second);
   }
-  // a name with spaces, without quotation marks
   return findName(findings, [names.join(' ')]);
 }
 
@@ -98,16 +100,17 @@ function several(name: string, found: readonly string[]) {
 
 function unknown(name: string, all: readonly string[], known: Known) {
   const wanted = plain(name);
+  const inside = known.beds.filter((bed) => plain(bed).startsWith(`${wanted}/`));
+  if (inside.length > 0) return several(name, inside);
   const limit = Math.max(2, Math.floor(wanted.length / 4));
   const near = all
     .map((one) => ({ one, distance: distanceTo(wanted, one, limit) }))
     .filter(({ distance }) => distance <= limit)
     .sort((a, b) => a.distance - b.distance)
+    .filter(({ distance }, _, [nearest]) => distance === nearest.distance)
     .slice(0, 3)
     .map(({ one }) => one);
-  if (near.length > 0) return refused(`The results know no ${name}. Did you mean ${near.join(', or ')}?`);
-  const inside = known.beds.filter((bed) => plain(bed).startsWith(`${wanted}/`));
-  if (inside.length > 0) return several(name, inside);
+  if (near.length > 0) return refused(`The results know no ${name}. Did you mean ${near.join(' or ')}?`);
   const some = known.beds.slice(0, 5).join(', ');
   return refused(`The results know no ${name}. Beds are named section/bed, for example ${some}.`);
 }

@@ -62,7 +62,11 @@ function statusSentence(row: ShellRow): string {
 }
 
 function readingSentence(row: ShellRow): string {
-  if (row.reading === 'none') return 'Reading: none; nothing is held against it.';
+  if (row.reading === 'none') {
+    return row.marks.length > 0
+      ? 'Reading: none; its marks stand for themselves.'
+      : 'Reading: none; nothing is held against it.';
+  }
   const sure = row.confidence === null ? '' : `, with ${row.confidence} confidence`;
   return `Reading: ${row.reading}${sure} (${SHELL_READINGS[row.reading]}).`;
 }

@@ -44,7 +44,7 @@ function clockText(facts: ClockFacts, style: Style): string[] {
     ...orderText(facts, style),
     ...relationsText(facts, style),
     ...shellsText(facts, style),
-    ...sentences(facts.findings, '  '),
+    // what was found on the clock stands above, with its numbers; cautions add to it
     ...cautions(facts.cautions, style, '  '),
   ];
 }
@@ -58,13 +58,12 @@ function cautions(texts: readonly string[], style: Style, indent: string): strin
 }
 
 function nextText({ written, clocks }: SummaryFacts, style: Style): string[] {
-  const lines = [
-    `${style.bold('Written')} ${safe(written)}: report.html to read first, tables and figures beside it.`,
-    'The order is relative, and is no age.',
-  ];
+  const place = `${style.bold('Written')} ${safe(written)}: report.html to read first, tables and figures beside it.`;
+  const lines = [wrap(place, 78, 2)];
   const name = exampleName(clocks);
-  if (name !== null)
-    lines.push(`More on one bed, shell or relation: bedorder explain ${inShell(written)} ${inShell(name)}`);
+  if (name !== null) {
+    lines.push('More on one bed, shell or relation:', `  bedorder explain ${inShell(written)} ${inShell(name)}`);
+  }
   return lines;
 }
 
