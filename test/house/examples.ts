@@ -181,7 +181,7 @@ export async function runExample(
   names: Readonly<Record<string, unknown>>,
   load: (from: string) => Promise<unknown>,
 ): Promise<{ compared: number; differences: string[] }> {
-  const { promises, rest } = promisesOf(example);
+  const { promises, rest } = promisesOf({ ...example, code: importsAsCalls(example.code) });
   const parts = promises.map(({ before, value, expected }) => {
     const wanted = numbersAsWritten(expected);
     if (!parses(`return (${wanted})`))
@@ -190,7 +190,7 @@ export async function runExample(
     if (thrown) throw new Error(`${example.where}: write the value after "// =>", not ${expected}`);
     return `${before}\n__check(await (${value}\n), (${wanted}));`;
   });
-  const code = importsAsCalls([...parts, rest].join('\n'));
+  const code = [...parts, rest].join('\n');
   const script = transformSync(`return (async () => {${code}\n})()`, { loader: 'ts', target: 'es2023' }).code;
   const differences: string[] = [];
   let compared = 0;
