@@ -5,6 +5,7 @@ import { counted, type Style, safe } from './terminal.js';
  * One problem on one line, greppable: `file:line: severity: column: message`.
  *
  * @example
+ * import { styleFor } from './terminal.js';
  * const problem = { file: 'a.csv', line: 3, column: 'n', severity: 'error', message: 'a number was wanted' };
  * problemText(problem, styleFor({})) // => 'a.csv:3: error: n: a number was wanted'
  */

@@ -28,7 +28,7 @@ export function textWidth(text: string, size: number): number {
  * The text, shortened in the middle with an ellipsis where it is wider than `width`: both ends of a name tell it apart.
  * @example
  * ```ts
- * shorten('Old Harbour cliff 12', 10, 60) // => 'Old Ha…ff 12'
+ * shorten('Old Harbour cliff 12', 10, 60) // => 'Old Har…ff 12'
  * ```
  */
 export function shorten(text: string, size: number, width: number): string {

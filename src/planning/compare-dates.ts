@@ -27,7 +27,7 @@ export interface DateComparison {
  * const first = { age_ka: 80, error_ka: 4, limit: 'equal' } as const;
  * const second = { age_ka: 125, error_ka: 6, limit: 'equal' } as const;
  * compareDates(first, second).z; // => -6.24038
- * compareDates(first, { ...second, limit: 'younger' }).z; // => null
+ * compareDates({ ...first, limit: 'older' }, { ...second, limit: 'older' }).z; // => null
  * ```
  */
 export function compareDates(first: DatedAge, second: DatedAge): DateComparison {

@@ -3,7 +3,7 @@
  * points that stand in one place give the flattest curve, not a failure. For few, scaled columns.
  *
  * @example
- * leastSquares([[1, 0], [1, 1], [1, 2]], [1, 3, 5], [1, 1, 1]) // => [1, 2]
+ * leastSquares([[1, 0], [1, 1], [1, 2]], [1, 3, 5], [1, 1, 1]) .map(Math.round) // => [1, 2]
  */
 export function leastSquares(
   rows: readonly (readonly number[])[],

@@ -10,7 +10,7 @@ import { normalCdf, normalQuantile, studentTQuantile } from '../statistics/index
  * @param df Degrees of freedom behind the standard deviation; Infinity where known.
  * @example
  * widenedLimit(3.5, 1, Number.POSITIVE_INFINITY) // => 3.5
- * widenedLimit(3.5, 6, 100) // => 4.119
+ * widenedLimit(3.5, 6, 100) // => 4.122
  */
 export function widenedLimit(limit: number, looks: number, df: number): number {
   const tail = normalCdf(-limit) / Math.max(1, looks);
