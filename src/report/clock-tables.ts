@@ -1,0 +1,226 @@
+import { type ClockView, type ShellView, zoneTag } from '../figures/clock-view.js';
+import { relationNumbers } from '../figures/reversed-marks.js';
+import type { RelationRow } from '../model/index.js';
+import { html, listed, type Markup } from './html.js';
+import { bedLink, shellLink } from './links.js';
+import { chance, figures, pValue } from './numbers.js';
+import { type Column, type RowTies, table } from './table.js';
+
+/** Most rows of one table on the page; the CSV files hold all. */
+export const MOST_ROWS = 1500;
+
+/** Said under a table that does not show every row. */
+export const cut = (shown: number, all: number, file: string): Markup | null =>
+  shown < all
+    ? html`<p class="note">${shown} of ${all.toLocaleString('en-US')} rows are shown; ${file} holds all.</p>`
+    : null;
+
+/** A zone's name with its colour, which says nothing that the name doesn't. */
+export const zoneChip = (view: ClockView, zone: string | null): Markup => {
+  const index = view.zones.findIndex((row) => row.zone === zone);
+  return index < 0 ? html`${zone ?? '–'}` : html`<span class="chip z${view.index}-${index}">${zone}</span>`;
+};
+
+/** Zones of one clock. */
+export function zonesTable(view: ClockView): Markup {
+  const older = new Map(view.adjacent.map((row) => [row.younger, row]));
+  const columns: Column<ClockView['zones'][number]>[] = [
+    { head: 'zone', cell: (row) => zoneChip(view, row.zone) },
+    { head: 'beds', number: true, cell: (row) => row.beds },
+    { head: 'shells', number: true, cell: (row) => row.shells },
+    { head: 'D/L', number: true, cell: (row) => figures(row.dl_mean) },
+    {
+      head: '95 % of the mean',
+      number: true,
+      cell: (row) => html`${figures(row.dl_low)} to ${figures(row.dl_high)}`,
+      sort: (row) => row.dl_low,
+    },
+    {
+      head: 'shells ± 1 sd',
+      number: true,
+      cell: (row) => html`${figures(row.shell_low)} to ${figures(row.shell_high)}`,
+      sort: (row) => row.shell_low,
+    },
+    { head: 'stability', number: true, cell: (row) => figures(row.stability, 2) },
+    { head: 'against the next older', cell: (row) => older.get(row.zone)?.verdict ?? '–' },
+    { head: 'overlap', number: true, cell: (row) => figures(older.get(row.zone)?.overlap ?? null, 2) },
+    { head: 'p (beds)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_difference ?? null) },
+    { head: 'p (shells)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_mann_whitney ?? null) },
+  ];
+  return table(`Zones of ${view.clock.clock}`, columns, view.zones, (row) => ({
+    zone: zoneTag(view, view.zones.indexOf(row)),
+    clock: view.index,
+  }));
+}
+
+const VERDICT_ORDER = { reversed: 0, 'not tested': 3, tied: 1, agrees: 2 } as const;
+const SIGN = { reversed: '⇅', tied: '≈', agrees: '✓', 'not tested': '–' } as const;
+
+/** Field relations of one clock, reversed first. */
+export function relationsTable(view: ClockView): Markup {
+  const numbers = relationNumbers(view);
+  const rows = [...view.relations].sort(
+    (a, b) =>
+      VERDICT_ORDER[a.verdict_after] - VERDICT_ORDER[b.verdict_after] ||
+      VERDICT_ORDER[a.verdict] - VERDICT_ORDER[b.verdict] ||
+      (a.z ?? 0) - (b.z ?? 0),
+  );
+  const verdict = (value: RelationRow['verdict']) =>
+    html`<span class="verdict ${value === 'reversed' ? 'bad' : ''}"><span aria-hidden="true">${SIGN[value]}</span> ${value}</span>`;
+  const columns: Column<RelationRow>[] = [
+    { head: 'no.', cell: (row) => numbers.get(row) ?? '' },
+    { head: 'lower', cell: (row) => bedLink(view, row.lower) },
+    { head: 'upper', cell: (row) => bedLink(view, row.upper) },
+    {
+      head: 'rests on',
+      cell: (row) =>
+        html`${row.basis}${row.kind === 'same' ? ', same age' : ''}${row.certainty === 'probable' ? ', probable' : ''}`,
+    },
+    { head: 'difference', number: true, cell: (row) => figures(row.difference, 2), sort: (row) => row.difference },
+    { head: 'z', number: true, cell: (row) => figures(row.z, 2), sort: (row) => row.z },
+    { head: 'all shells', cell: (row) => verdict(row.verdict) },
+    { head: 'after setting aside', cell: (row) => verdict(row.verdict_after) },
+    { head: 'reading', long: true, cell: (row) => row.reading },
+  ];
+  const shown = rows.slice(0, MOST_ROWS);
+  return html`${table(`Field relations on ${view.clock.clock}`, columns, shown, (row): RowTies => {
+    const beds = [row.lower, row.upper].flatMap((key) => view.byKey.get(key)?.id ?? []);
+    const number = numbers.get(row);
+    return { id: number === undefined ? undefined : `relation-${view.index}-${number}`, beds, clock: view.index };
+  })}${cut(shown.length, rows.length, 'relations.csv')}`;
+}
+
+/** Shells set aside or doubtful, each with what speaks against it. */
+export function oddShells(view: ClockView, evidence: ReadonlyMap<string, readonly string[]>): Markup {
+  const odd = view.beds
+    .flatMap((bed) => bed.shells)
+    .filter((shell) => shell.row.status !== 'kept')
+    .sort((a, b) => (a.row.status === b.row.status ? 0 : a.row.status === 'set aside' ? -1 : 1));
+  if (odd.length === 0) return html`<p>No shell of ${view.clock.clock} was set aside or called doubtful.</p>`;
+  const shown = odd.slice(0, 600);
+  const columns: Column<ShellView>[] = [
+    { head: 'shell', cell: (shell) => shellLink(view, shell) },
+    { head: 'status', cell: (shell) => html`${shell.row.status === 'set aside' ? '✕' : '◆'} ${shell.row.status}` },
+    { head: 'reading', cell: (shell) => (shell.row.reading === 'none' ? '–' : shell.row.reading) },
+    { head: 'confidence', cell: (shell) => shell.row.confidence ?? '–' },
+    { head: 'D/L', number: true, cell: (shell) => figures(shell.row.dl) },
+    {
+      head: 'from its bed',
+      number: true,
+      cell: (shell) => figures(shell.row.residual, 2),
+      sort: (shell) => shell.row.residual,
+    },
+    { head: 'marks', cell: (shell) => shell.row.marks.join(', ') || '–' },
+    {
+      head: 'evidence',
+      long: true,
+      cell: (shell) => evidence.get(`${shell.row.section}/${shell.row.bed}/${shell.row.shell}`)?.join(' ') ?? '',
+    },
+  ];
+  return html`${table(`Shells of ${view.clock.clock} set aside or doubtful`, columns, shown, (shell) => ({
+    id: `odd-${shell.id}`,
+    beds: bedIds(view, shell),
+    shell: shell.id,
+    clock: view.index,
+  }))}${cut(shown.length, odd.length, 'shells.csv')}`;
+}
+
+const bedIds = (view: ClockView, shell: ShellView) => {
+  const id = view.byKey.get(`${shell.row.section}/${shell.row.bed}`)?.id;
+  return id === undefined ? [] : [id];
+};
+
+/** All beds of one clock. */
+export function bedsTable(view: ClockView): Markup {
+  const columns: Column<ClockView['beds'][number]>[] = [
+    { head: 'bed', cell: (bed) => bedLink(view, bed.key) },
+    { head: 'zone', cell: (bed) => zoneChip(view, bed.row.zone), sort: (bed) => bed.zone },
+    {
+      head: 'probability',
+      number: true,
+      cell: (bed) => chance(bed.row.zone_probability),
+      sort: (bed) => bed.row.zone_probability,
+    },
+    {
+      head: 'else',
+      cell: (bed) =>
+        bed.row.second_zone !== null && (bed.row.second_probability ?? 0) >= 0.005
+          ? html`${bed.row.second_zone} (${chance(bed.row.second_probability)})`
+          : '–',
+    },
+    { head: 'rank', number: true, cell: (bed) => bed.order?.rank ?? '–', sort: (bed) => bed.order?.rank ?? null },
+    {
+      head: '95 % rank',
+      number: true,
+      cell: (bed) => (bed.order === null ? '–' : `${bed.order.rank_low} to ${bed.order.rank_high}`),
+      sort: (bed) => bed.order?.rank_low ?? null,
+    },
+    { head: 'D/L', number: true, cell: (bed) => figures(bed.row.dl_mean), sort: (bed) => bed.row.dl_mean },
+    { head: 'sd', number: true, cell: (bed) => figures(bed.row.dl_sd, 2), sort: (bed) => bed.row.dl_sd },
+    { head: 'shells', number: true, cell: (bed) => bed.row.shells },
+    { head: 'set aside', number: true, cell: (bed) => bed.row.set_aside || '–', sort: (bed) => bed.row.set_aside },
+    { head: 'marks', cell: (bed) => bed.row.marks.join(', ') || '–' },
+    { head: 'reading', long: true, cell: (bed) => bed.row.reading || '–' },
+  ];
+  const shown = view.beds.slice(0, MOST_ROWS);
+  return html`${table(`Beds on ${view.clock.clock}`, columns, shown, (bed) => ({ beds: [bed.id], zone: zoneTag(view, bed.zone), clock: view.index }))}${cut(shown.length, view.beds.length, 'beds.csv')}`;
+}
+
+/** All shells of one clock. */
+export function shellsTable(view: ClockView): Markup {
+  const all = view.beds.flatMap((bed) => bed.shells.map((shell) => ({ bed, shell })));
+  const columns: Column<(typeof all)[number]>[] = [
+    { head: 'shell', cell: ({ shell }) => shellLink(view, shell) },
+    { head: 'lab', cell: ({ shell }) => shell.row.lab_id.join(', ') || '–' },
+    { head: 'D/L', number: true, cell: ({ shell }) => figures(shell.row.dl) },
+    {
+      head: 'log ratio',
+      number: true,
+      cell: ({ shell }) => figures(shell.row.log_ratio),
+      sort: ({ shell }) => shell.row.log_ratio,
+    },
+    {
+      head: 'from its bed',
+      number: true,
+      cell: ({ shell }) => figures(shell.row.residual, 2),
+      sort: ({ shell }) => shell.row.residual,
+    },
+    { head: 'zone', cell: ({ shell }) => zoneChip(view, shell.row.zone) },
+    {
+      head: 'probability',
+      number: true,
+      cell: ({ shell }) => chance(shell.row.zone_probability),
+      sort: ({ shell }) => shell.row.zone_probability,
+    },
+    { head: 'status', cell: ({ shell }) => shell.row.status },
+    { head: 'marks', cell: ({ shell }) => shell.row.marks.join(', ') || '–' },
+    { head: 'reading', cell: ({ shell }) => (shell.row.reading === 'none' ? '–' : shell.row.reading) },
+  ];
+  const shown = all.slice(0, MOST_ROWS);
+  return html`${table(`Shells on ${view.clock.clock}`, columns, shown, ({ bed, shell }) => ({ beds: [bed.id], shell: shell.id, clock: view.index }))}${cut(shown.length, all.length, 'shells.csv')}`;
+}
+
+/** Which beds of each section belong to each zone, in coast order. */
+export function correlationTable(view: ClockView): Markup | null {
+  if (!view.zoned) return null;
+  const of = (section: string, zone: number) =>
+    view.beds.filter((bed) => bed.row.section === section && bed.zone === zone);
+  const columns: Column<string>[] = [
+    { head: 'section', cell: (section) => section },
+    ...view.zones.map(
+      (zone, i): Column<string> => ({
+        head: zone.zone,
+        cell: (section) => {
+          const beds = of(section, i);
+          return beds.length === 0
+            ? 'missing'
+            : listed(
+                beds.map((bed) => html`<a href="#fig-correlation${view.suffix}" data-b="${bed.id}">${bed.row.bed}</a>`),
+              );
+        },
+      }),
+    ),
+  ];
+  const shown = view.sections.slice(0, 400);
+  return html`${table(`Beds of each zone by section, ${view.clock.clock}`, columns, shown, () => ({ clock: view.index }))}${cut(shown.length, view.sections.length, 'correlation.csv')}`;
+}

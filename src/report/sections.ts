@@ -1,0 +1,113 @@
+import type { ClockView } from '../figures/clock-view.js';
+import type { Figure } from '../figures/index.js';
+import type { Findings } from '../model/index.js';
+import { cautions } from './cautions.js';
+import { bedsTable, correlationTable, oddShells, relationsTable, shellsTable, zonesTable } from './clock-tables.js';
+import { figureBlock } from './figure-block.js';
+import { type HtmlValue, html, type Markup } from './html.js';
+import { methods } from './methods.js';
+import { counted } from './numbers.js';
+import { clocksTable, problemsTable, sectionsTable, sharesTable, votesTable, zoneCountsTable } from './run-tables.js';
+import { findingsInSentences } from './sentences.js';
+
+/** One part of the page. */
+export interface Part {
+  readonly id: string;
+  readonly heading: string;
+  /** Its name in the contents. */
+  readonly short: string;
+  readonly body: Markup;
+}
+
+/** The parts of the report in the order of the page; a part with nothing in it is left out. */
+export function sections(findings: Findings, views: readonly ClockView[], figures: readonly Figure[]): Part[] {
+  const drawn = (kind: string) =>
+    figures
+      .filter((figure) => views.some((view) => figure.name === kind + view.suffix))
+      .map((figure) => figureBlock(figure, figures, views));
+  const evidence = new Map(
+    findings.evidence.filter((row) => row.about === 'shell').map((row) => [row.clock + row.name, row.sentences]),
+  );
+  const evidenceOf = (view: ClockView) =>
+    new Map(
+      [...evidence].flatMap(([key, value]) =>
+        key.startsWith(view.clock.clock) ? [[key.slice(view.clock.clock.length), value] as const] : [],
+      ),
+    );
+  const all: (Part | null)[] = [
+    part('findings', 'What was found', 'Findings', [
+      html`<div class="lead">${views.map((view) => [views.length > 1 ? html`<h3>${view.clock.clock}</h3>` : '', findingsInSentences(view)])}</div>`,
+      remarks(findings, 'finding'),
+      views.map(zonesTable),
+    ]),
+    part('shells', 'All shells, bed by bed', 'Shells by bed', drawn('shells')),
+    part('correlation', 'Correlation along the coast', 'Correlation', drawn('correlation')),
+    part('order', 'Order of the beds', 'Order', drawn('ranks')),
+    part('heights', 'Height above the sea', 'Heights', drawn('heights')),
+    part('relations', 'Field relations against the ratios', 'Relations', [
+      drawn('relations'),
+      views.some((view) => view.relations.length > 0)
+        ? views.filter((view) => view.relations.length > 0).map(relationsTable)
+        : null,
+    ]),
+    part('amino-acids', 'Amino acids against each other', 'Amino acids', drawn('amino-acids')),
+    part(
+      'odd',
+      'Shells set aside, and why',
+      'Odd shells',
+      views.map((view) => oddShells(view, evidenceOf(view))),
+    ),
+    part('number-of-zones', 'How the number of zones was chosen', 'Number of zones', [
+      drawn('zones'),
+      drawn('zone-counts'),
+      zoneCountsTable(findings, views),
+    ]),
+    part('gradient', 'The slope along the coast', 'Gradient', drawn('gradient')),
+    part('tables', 'Tables', 'Tables', [
+      html`<p>Every table is also a CSV file in the results folder.</p>`,
+      views.map((view) => [
+        folded(`Beds, ${view.clock.clock}`, counted(view.beds.length, 'row'), bedsTable(view)),
+        folded(`Shells, ${view.clock.clock}`, counted(view.clock.shells, 'shell'), shellsTable(view)),
+        view.zoned
+          ? folded(
+              `Beds of each zone by section, ${view.clock.clock}`,
+              counted(view.sections.length, 'row'),
+              correlationTable(view),
+            )
+          : '',
+      ]),
+      folded('Clocks', counted(findings.clocks.length, 'row'), clocksTable(findings)),
+      findings.sections.length > 0
+        ? folded('Sections', counted(findings.sections.length, 'row'), sectionsTable(findings, views))
+        : '',
+      findings.shares.length > 0
+        ? folded('What each amino acid brings', counted(findings.shares.length, 'row'), sharesTable(findings))
+        : '',
+      findings.votes.length > 0
+        ? folded('Beds whose amino acids disagree', counted(findings.votes.length, 'pair'), votesTable(findings))
+        : '',
+      findings.problems.length > 0
+        ? folded('Warnings about the input', counted(findings.problems.length, 'row'), problemsTable(findings))
+        : '',
+    ]),
+    part('methods', 'Methods, settings and sources', 'Methods', methods(findings, views)),
+    part('cautions', 'Cautions', 'Cautions', [remarks(findings, 'caution'), cautions()]),
+  ];
+  return all.filter((one) => one !== null);
+}
+
+function part(id: string, heading: string, short: string, body: HtmlValue): Part | null {
+  const markup = html`${body}`;
+  return markup.markup === '' ? null : { id, heading, short, body: markup };
+}
+
+function folded(name: string, size: string, body: HtmlValue): Markup {
+  return html`<details><summary>${name} <span class="size">${size}</span></summary>${body}</details>`;
+}
+
+function remarks(findings: Findings, level: 'finding' | 'caution'): Markup | null {
+  const own = findings.remarks.filter((remark) => remark.level === level);
+  if (own.length === 0) return null;
+  const several = findings.clocks.filter((clock) => clock.main).length > 1;
+  return html`<ul class="remarks ${level}">${own.map((remark) => html`<li>${several && remark.clock !== null ? html`<b>${remark.clock}:</b> ` : ''}${remark.text}</li>`)}</ul>`;
+}

@@ -1,0 +1,72 @@
+import type { ClockView } from '../figures/clock-view.js';
+import { relationNumbers } from '../figures/reversed-marks.js';
+import { html, listed, type Markup } from './html.js';
+import { bedLink, shellLink } from './links.js';
+import { counted, figures } from './numbers.js';
+
+/** What was found on one clock, in plain sentences, for the top of the page. */
+export function findingsInSentences(view: ClockView): Markup {
+  return html`<p>${[groups(view), ' ', order(view), ' ', field(view), ' ', odd(view)]}</p>`;
+}
+
+function groups(view: ClockView): Markup {
+  const { clock, zones } = view;
+  const what = html`${counted(clock.shells, 'shell')} of <i>${clock.taxon}</i> from ${counted(clock.beds, 'bed')} in ${counted(view.sections.length, 'section')} were compared by ${clock.amino_acids.length > 1 ? html`the index of ${listed(clock.amino_acids)}` : html`${clock.amino_acids[0] ?? 'D/L'}`} (${clock.fraction}).`;
+  const range = zones.length > 0 ? [zones[0], zones[zones.length - 1]] : null;
+  const forced =
+    clock.verdict !== 'zones' && view.zoned
+      ? html` You asked for ${zones.length} zones, so ${zones.length} are drawn; the data do not support them.`
+      : null;
+  if (clock.verdict === 'zones' && view.zoned && range !== null) {
+    const weak = view.adjacent.filter((row) => row.verdict !== 'distinct');
+    const neighbours =
+      weak.length === 0
+        ? html` All neighbouring zones are distinct.`
+        : html` Not all neighbours stand apart: ${listed(weak.map((row) => html`${row.younger} and ${row.older} are ${row.verdict}`))}.`;
+    return html`${what} The beds fall into <strong>${counted(zones.length, 'aminozone')}</strong>, from ${range[0].zone} (youngest, D/L ${figures(range[0].dl_mean)}) to ${range[1].zone} (oldest, D/L ${figures(range[1].dl_mean)}).${neighbours}`;
+  }
+  if (clock.verdict === 'continuum')
+    return html`${what} The ratios form a <strong>continuum</strong>: no zones are supported, and the order is given without them.${forced}`;
+  if (clock.verdict === 'one zone')
+    return html`${what} All beds share <strong>one extent of racemization</strong> within error: no further zones are supported.${forced}`;
+  if (clock.verdict === 'too few beds')
+    return html`${what} There are <strong>too few beds</strong> to look for zones; the order is still given.${forced}`;
+  return what;
+}
+
+function order(view: ClockView): Markup | null {
+  const ranked = view.beds.filter((bed) => bed.order !== null).sort((a, b) => a.order!.rank - b.order!.rank);
+  if (ranked.length < 2) return null;
+  const resolved = ranked.filter((bed) => bed.order!.resolved === true).length;
+  return html`The oldest bed is ${bedLink(view, ranked[0].key)} and the youngest ${bedLink(view, ranked[ranked.length - 1].key)}; of ${counted(ranked.length - 1, 'step')} between neighbours in the order, ${resolved === 0 ? 'none is' : resolved === 1 ? '1 is' : `${resolved} are`} resolved.`;
+}
+
+function field(view: ClockView): Markup | null {
+  const tested = view.relations.filter((row) => row.verdict_after !== 'not tested');
+  if (tested.length === 0) return html`No field relation could be tested against the ratios.`;
+  const agree = tested.filter((row) => row.verdict_after === 'agrees').length;
+  const tied = tested.filter((row) => row.verdict_after === 'tied').length;
+  const numbers = relationNumbers(view);
+  const reversed = tested.filter((row) => row.verdict_after === 'reversed');
+  const settled = tested.filter((row) => row.verdict === 'reversed' && row.verdict_after !== 'reversed').length;
+  const link = (row: (typeof tested)[number]) =>
+    html`<a href="#relation-${view.index}-${numbers.get(row) ?? ''}">${numbers.get(row) ?? ''}</a> (${bedLink(view, row.lower)} below ${bedLink(view, row.upper)})`;
+  const shown = reversed.slice(0, 4);
+  return html`Of ${counted(tested.length, 'tested field relation')}, ${agree} ${agree === 1 ? 'agrees' : 'agree'}, ${tied} ${tied === 1 ? 'is' : 'are'} tied within error and <strong>${reversed.length} ${reversed.length === 1 ? 'is' : 'are'} reversed</strong>${
+    reversed.length === 0
+      ? ''
+      : html`: ${listed([...shown.map(link), ...(reversed.length > shown.length ? [`${reversed.length - shown.length} more`] : [])])}`
+  }.${settled === 0 ? '' : html` ${settled === 1 ? 'One more was' : `${settled} more were`} reversed until odd shells were set aside.`}`;
+}
+
+function odd(view: ClockView): Markup | null {
+  const aside = view.beds.flatMap((bed) => bed.shells).filter((shell) => shell.row.status === 'set aside');
+  if (aside.length === 0) return html`No shell was set aside.`;
+  const kinds = new Map<string, typeof aside>();
+  for (const shell of aside) kinds.set(shell.row.reading, [...(kinds.get(shell.row.reading) ?? []), shell]);
+  const parts = [...kinds].map(([reading, shells]) => {
+    const names = shells.length <= 4 ? html` (${listed(shells.map((shell) => shellLink(view, shell)))})` : null;
+    return html`${shells.length} ${reading === 'none' ? 'for their marks in screening' : `read as ${reading}`}${names}`;
+  });
+  return html`<strong>${counted(aside.length, 'shell')} ${aside.length === 1 ? 'was' : 'were'} set aside</strong>: ${listed(parts)}.`;
+}
