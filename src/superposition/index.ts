@@ -5,6 +5,7 @@ export { type Agreement, aminoAcidAgreement } from './amino-acid-agreement.js';
 export { bedsAbove } from './beds-above.js';
 export { conflictThreshold } from './conflict-threshold.js';
 export { costOfShell } from './cost-of-shell.js';
+export { type MixedAge, type MixedAgeOptions, mixedAgeBeds } from './mixed-age.js';
 export { type OwnBedResidual, type OwnBedResiduals, ownBedResiduals } from './own-bed-residuals.js';
 // Readings
 export { readingOfShell } from './reading-of-shell.js';
@@ -16,6 +17,14 @@ export {
   type RelationCheckOptions,
   type RelationToCheck,
 } from './relation-checks.js';
+export {
+  type AminoAcidDifference,
+  type BedFacts,
+  type Explanation,
+  type RelationReading,
+  type ReversedRelation,
+  readReversedRelation,
+} from './relation-readings.js';
 // Shells against their own bed and themselves
 export { type RobustScatter, robustScatter } from './robust-scatter.js';
 export {
@@ -35,4 +44,5 @@ export {
 } from './shell-conflicts.js';
 export { confidenceOfReading, statusOfShell } from './shell-status.js';
 export { type ShellsToSetAside, shellsToSetAside } from './shells-to-set-aside.js';
+export { bestSplit, type Split } from './two-groups.js';
 export { matchZone, type ZoneMatch, type ZoneToMatch } from './zone-match.js';

@@ -137,8 +137,10 @@ export function readShells(input: ReadingInput): ShellReadings {
       wholeBed,
       crowded,
     };
+    const status = statusOfShell({ own, marks: names[i], reading, cut, wholeBed, crowded, alpha });
     const confidence = confidenceOfReading({
       own,
+      status,
       reading,
       agreementP: agreements[i]?.p ?? null,
       marks: names[i],
@@ -146,7 +148,7 @@ export function readShells(input: ReadingInput): ShellReadings {
       inConflict: asLower + asUpper > 0,
     });
     return {
-      status: statusOfShell({ own, marks: names[i], reading, cut, wholeBed, crowded, alpha }),
+      status,
       reading,
       confidence,
       residual: own.residual,

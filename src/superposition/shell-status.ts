@@ -36,6 +36,7 @@ export function statusOfShell({ own, marks, reading, cut, wholeBed, crowded, alp
 /** What decides how sure a reading is. */
 export interface ConfidenceCase {
   readonly own: OwnBedResidual;
+  readonly status: ShellStatus;
   readonly reading: ShellReading;
   readonly agreementP: number | null;
   readonly marks: readonly ShellMark[];
@@ -48,7 +49,7 @@ export interface ConfidenceCase {
  * How sure a reading is; null without one. One point each for: an adjusted residual at p ≤ 0.01 (two), or at p ≤ 0.05 (one); four sound
  * neighbours or more; amino acids that clearly agree (p ≥ 0.05) or clearly disagree (p ≤ 0.001), or high serine for contamination; a zone
  * or bed that it fits, for reworking and intrusion; a conflict with superposition. High from 4 points, moderate from 3. A reading
- * that leaves two explanations open is never more than moderate. The points are a convention.
+ * that leaves two explanations open, or of a shell that is only doubtful, is never more than moderate. The points are a convention.
  */
 export function confidenceOfReading(shell: ConfidenceCase): Confidence | null {
   const { own, reading, agreementP, marks } = shell;
@@ -64,6 +65,6 @@ export function confidenceOfReading(shell: ConfidenceCase): Confidence | null {
     (serine ? 2 : decided && !open ? 1 : 0) +
     (moved && shell.sourceFits ? 1 : 0) +
     (shell.inConflict ? 1 : 0);
-  if (points >= 4) return open ? 'moderate' : 'high';
+  if (points >= 4) return open || shell.status !== 'set aside' ? 'moderate' : 'high';
   return points >= 3 ? 'moderate' : 'low';
 }

@@ -106,7 +106,8 @@ describe('findShellConflicts', () => {
 
 describe('shellsToSetAside', () => {
   it('costs as much as an exact integer solver says, on thousands of small surveys', async () => {
-    const highs = await highsLoader();
+    // The package's types describe its CommonJS form; as an ES module the default export is the loader itself.
+    const highs = await (highsLoader as unknown as typeof highsLoader.default)();
     const surveys = fc.sample(smallSurvey, { numRuns: 4000, seed: 20 }).filter((s) => pairsInConflict(s).length > 0);
     expect(surveys.length).toBeGreaterThan(2000);
     // Many surveys in one model: each of ours costs at least its optimum, so equal sums mean that every one is equal.
