@@ -30,7 +30,7 @@ export interface Grubbs {
  * @throws RangeError when values are too few or not finite, or alpha is not between 0 and 1
  * @example
  * ```ts
- * grubbs([1, 2, 3, 4, 20]).limit; // => 1.7150357373403
+ * grubbs([1, 2, 3, 4, 20]).limit; // => 1.7150373
  * grubbs([1, 2, 3, 4, 20]).outlier; // => true
  * ```
  */

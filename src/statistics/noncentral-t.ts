@@ -12,7 +12,7 @@ import { normalCdf } from './normal.js';
  * @throws RangeError when t or the noncentrality is not finite or df is not above 0
  * @example
  * ```ts
- * noncentralT(2, 10, 1).lower; // => 0.807611529
+ * noncentralT(2, 10, 1).lower; // => 0.80761156253
  * ```
  */
 export function noncentralT(t: number, df: number, noncentrality: number): { lower: number; upper: number } {

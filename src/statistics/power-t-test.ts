@@ -23,7 +23,7 @@ export interface PowerDesign {
  * @example
  * ```ts
  * powerTTest({ delta: 1, sd: 1 }, 20); // => 0.868953
- * powerTTest({ delta: 1, sd: 1 }, 10, 40); // => 0.790998
+ * powerTTest({ delta: 1, sd: 1 }, 10, 40); // => 0.791451
  * ```
  */
 export function powerTTest(design: PowerDesign, n1: number, n2 = n1): number {
@@ -47,7 +47,7 @@ export function powerTTest(design: PowerDesign, n1: number, n2 = n1): number {
  * @throws RangeError when delta is 0, or another number is out of range
  * @example
  * ```ts
- * sampleSizeTTest({ delta: 1, sd: 1 }, 0.9); // => 22.02110
+ * sampleSizeTTest({ delta: 1, sd: 1 }, 0.9); // => 22.02109
  * ```
  */
 export function sampleSizeTTest(design: PowerDesign, power = 0.8): number {

@@ -44,7 +44,7 @@ export function welchTTest(a: Numbers, b: Numbers, options: WelchOptions = {}): 
  * @throws RangeError when a mean is not finite, an sd is below 0, or an n is under 2
  * @example
  * ```ts
- * welchFromSummaries({ mean: 0.335, sd: 0.028, n: 19 }, { mean: 0.471, sd: 0.038, n: 9 }).t; // => -9.575924
+ * welchFromSummaries({ mean: 0.335, sd: 0.028, n: 19 }, { mean: 0.471, sd: 0.038, n: 9 }).t; // => -9.5758597
  * ```
  */
 export function welchFromSummaries(a: Summary, b: Summary, { level = 0.95 }: WelchOptions = {}): Welch {
