@@ -2,6 +2,8 @@ import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { describe, expect, it } from 'vitest';
+import { drawFigures } from '../../src/figures/index.js';
+import { analyse, DEFAULT_OPTIONS, runTask, surveyFromBytes, type Task } from '../../src/index.js';
 import { COAST_PLAN } from './examples/coast-plan.js';
 import { coastFiles } from './examples/coast-tables.js';
 import { spreadsheetFiles, summaryFiles, warmingFiles } from './examples/further-tables.js';
@@ -11,6 +13,24 @@ const files = { ...coastFiles(), ...summaryFiles(), ...spreadsheetFiles(), ...wa
 
 /** The spreadsheet is saved in Windows-1252; its letters are all in Latin-1 too, where both agree. */
 const bytes = (path: string, text: string) => Buffer.from(text, path === 'spreadsheet/shells.csv' ? 'latin1' : 'utf8');
+
+const PICTURE = join(EXAMPLES, 'coast/correlation.svg');
+
+/** The correlation panel of the coast, as the tool draws it. */
+async function drawPicture(): Promise<string> {
+  const bytesOf = (path: string) => ({
+    file: path,
+    bytes: new TextEncoder().encode(files[path as keyof typeof files]),
+  });
+  const { survey } = await surveyFromBytes({
+    shells: bytesOf('coast/shells.csv'),
+    beds: bytesOf('coast/beds.csv'),
+    relations: bytesOf('coast/relations.csv'),
+  });
+  const host = { progress: () => {}, map: async (tasks: readonly Task[]) => tasks.map(runTask) };
+  const findings = await analyse(survey!, DEFAULT_OPTIONS, host);
+  return drawFigures(findings).find((figure) => figure.name === 'correlation')!.svg;
+}
 
 describe('the example surveys', () => {
   it.each(Object.entries(files))('%s is what its script makes (`npm run golden` writes it anew)', (path, text) => {
@@ -39,6 +59,16 @@ describe('the example surveys', () => {
         if (bed.shells <= 2 || bed.mixedWith !== undefined || bed.burial < 1)
           expect(page).toContain(`${section.section}/${bed.bed}`);
       }
+    }
+  });
+
+  it('the picture of the first page shows every section of the coast', async () => {
+    if (process.env.GOLDEN === 'write') writeFileSync(PICTURE, `${await drawPicture()}\n`);
+    const picture = readFileSync(PICTURE, 'utf8');
+    expect(picture).toMatch(/^<svg [\s\S]*<\/svg>\s*$/);
+    for (const { section, beds } of COAST_PLAN) {
+      expect(picture).toContain(`>${section}<`);
+      for (const { bed } of beds) expect(picture).toContain(`>${bed}<`);
     }
   });
 });
