@@ -11,8 +11,8 @@ export interface RelatedDates {
   readonly relation: DateRelation;
   readonly p: number;
   /**
-   * The relation is one of the surest: those of them that are wrong are, together, expected to be fewer than the share
-   * of alpha that the doubt of the order is given.
+   * The relation is one of the surest: the wrong ones among them are expected to be no more than the share of alpha that
+   * the doubt of the order is given.
    */
   readonly sure: boolean;
 }
@@ -25,15 +25,15 @@ export interface RelatedDates {
  * from the surest on until the chances of being wrong add up to `doubt` for the order, and likewise over beds for their
  * zones. Beyond that, a measured order is kept as less sure, and a zone is not used.
  *
- * @param doubt expected number of wrong relations among the sure ones of either kind, at most
+ * @param doubt expected number of wrong orders among the sure ones, at most, and of wrong zones among the sure beds
  */
 export function relatedDates(
   findings: Findings,
   dates: readonly DateRecord[],
-  { alpha, doubt }: { readonly alpha: number; readonly doubt: number },
+  { alpha, doubt }: { readonly alpha: number; readonly doubt: { readonly order: number; readonly zones: number } },
 ): { readonly related: RelatedDates[]; readonly known: KnownOrder } {
   const known = knownOrder(findings, alpha);
-  const zoneOf = sureZones(findings, new Set(dates.map(bedKey)), doubt);
+  const zoneOf = sureZones(findings, new Set(dates.map(bedKey)), doubt.zones);
   const related: RelatedDates[] = [];
   const bed = dates.map((date) => known.indexOf.get(bedKey(date)));
   for (let i = 0; i < dates.length; i++) {
@@ -59,7 +59,7 @@ export function relatedDates(
       if (p > 0) related.push({ first: i, second: j, relation: 'one zone', p, sure: true });
     }
   }
-  return { related: withSureOrder(related, doubt), known };
+  return { related: withSureOrder(related, doubt.order), known };
 }
 
 /** The beds whose zones are surest, until the chances of being wrong add up to `doubt`. */

@@ -26,8 +26,9 @@ interface Claim {
 /**
  * Holds independent dates against the order of a run. Every pair of dates whose beds have a known order gives a claim;
  * its p is the chance of dates at least so far the wrong way round, errors and limits counted. Good dates of a right order
- * contradict it anywhere in at most alpha of surveys: half of alpha goes to the claims together (Holm), half to the doubt
- * of the order itself ({@link relatedDates}); a claim from a less sure order is no surer than that order.
+ * contradict it anywhere in at most alpha of surveys: a quarter of alpha goes to the claims together (Holm), a quarter to
+ * the doubt of the order and half to that of the zones ({@link relatedDates}); a claim from a less sure order is no surer
+ * than that order.
  *
  * Two dates of one zone are held together too, since a date moved to a neighbouring zone contradicts no order by itself.
  * A zone may span some time, so they only count as a contradiction where they also reach into the dates of another zone.
@@ -49,9 +50,12 @@ export function judgeDates(
 ): DatesJudgement {
   const alpha = options.alpha ?? findings.options.alpha;
   if (!(alpha > 0 && alpha < 1)) throw new RangeError(`judgeDates: alpha must lie between 0 and 1, got ${alpha}`);
-  const { related, known } = relatedDates(findings, dates, { alpha, doubt: alpha / 4 });
+  const { related, known } = relatedDates(findings, dates, {
+    alpha,
+    doubt: { order: alpha / 4, zones: alpha / 2 },
+  });
   const claims = related.flatMap((pair, index) => claimsOf(pair, index, dates));
-  const adjusted = holm(claims.map((claim) => claim.p)).map((p) => Math.min(1, 2 * p));
+  const adjusted = holm(claims.map((claim) => claim.p)).map((p) => Math.min(1, 4 * p));
   const worst = related.map((_, pair) => {
     const own = claims.flatMap((claim, at) => (claim.pair === pair ? [at] : []));
     return own.reduce((least, at) => (claims[at].p < claims[least].p ? at : least), own[0]);

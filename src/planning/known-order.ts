@@ -44,7 +44,12 @@ export function knownOrder(findings: Findings, alpha: number = findings.options.
     raise(zone, b, a, same);
   });
   const field = fieldOrder(findings, indexOf);
-  for (let a = 0; a < size; a++) for (let b = 0; b < size; b++) if (includes(field.younger[a], b)) p[a * size + b] = 1;
+  for (let a = 0; a < size; a++) {
+    for (let b = 0; b < size; b++) {
+      if (includes(field.younger[a], b)) p[a * size + b] = 1;
+      else if (field.asOld(a, b)) p[a * size + b] = 0;
+    }
+  }
   for (let a = 0; a < size; a++) {
     for (let b = 0; b < a; b++) {
       if (p[a * size + b] >= 1 - alpha && p[b * size + a] >= 1 - alpha) {

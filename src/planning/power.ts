@@ -98,8 +98,8 @@ export interface PresentPair {
   readonly varianceAfter: number;
   /** Variance that the judge of the pair adds for spread between beds. Default 0. */
   readonly spreadVariance?: number;
-  /** Degrees of freedom of the scatter. Default Infinity. */
-  readonly df?: number;
+  /** Standard errors from the shells by which a resolved pair differs ({@link resolvingLimit}). Default: of the normal. */
+  readonly limit?: number;
 }
 
 /**
@@ -118,10 +118,8 @@ export interface PresentPair {
  */
 export function chanceFromHere(pair: PresentPair, alpha = 0.05): number {
   const { gap, variance, varianceAfter, spreadVariance = 0 } = pair;
-  const limit = Math.sqrt(
-    resolvingLimit(1 - alpha, pair.df ?? Number.POSITIVE_INFINITY) ** 2 * varianceAfter +
-      normalQuantile(1 - alpha) ** 2 * spreadVariance,
-  );
+  const z = normalQuantile(1 - alpha);
+  const limit = Math.sqrt((pair.limit ?? z) ** 2 * varianceAfter + z * z * spreadVariance);
   const step = Math.sqrt(Math.max(0, variance - varianceAfter));
   if (step === 0) return Math.abs(gap) >= limit ? 1 : 0;
   return normalCdf((gap - limit) / step) + normalCdf((-gap - limit) / step);
