@@ -108,8 +108,9 @@ export function breaches(file: Code): string[] {
       if (match) found.push(`uses ${match[0].replace(/[.(]$/, '')}; chance, clock and terminal come in as arguments`);
     }
   }
-  // results must be the same bytes whatever the language of the machine
-  const locale = /\.localeCompare\(|\.toLocale\w+\(\s*\)|\bIntl\.\w+\(\s*\)/.exec(code);
+  // results must be the same bytes whatever the language of the machine; the page's own script sorts for its reader
+  const locale =
+    file.path === 'report/script.ts' ? null : /\.localeCompare\(|\.toLocale\w+\(\s*\)|\bIntl\.\w+\(\s*\)/.exec(code);
   if (locale) found.push(`uses ${locale[0]}, which hangs on the language of the machine`);
   return found.map((breach) => `${file.path}: ${breach}`);
 }
