@@ -1,5 +1,5 @@
 import { type ClockSet, testingDf } from './beds/index.js';
-import type { ClockOrder, Pass, RunContext } from './clock-run.js';
+import type { ClockOrder, Pass, RunContext, SlopeOfPass } from './clock-run.js';
 import { correlationTable } from './coast/index.js';
 import type {
   AdjacentZonesRow,
@@ -21,23 +21,25 @@ import type {
   RelationRow,
   Remark,
   SectionRow,
+  Shell,
   ShellRow,
   ZoneCountRow,
   ZoneRow,
 } from './model/index.js';
 import { heightOf, orderRows, pairRows } from './order/index.js';
 import type { Settled } from './passes.js';
+import { relationFindings } from './relation-findings.js';
 import { screenBeds } from './screening/index.js';
 import { adjustedRandIndex, type Random } from './statistics/index.js';
-import { checkSections } from './superposition/section-consistency.js';
+import { checkSections, listConflicts } from './superposition/index.js';
 import {
   adjacentZonesRows,
   assignZone,
   bedRows,
+  isNearEquilibrium,
   shellRows,
   type Zoning,
   zoneCountRows,
-  zoneName,
   zoneRows,
 } from './zones/index.js';
 
@@ -116,13 +118,18 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
   const { data, zoning } = last;
   const { options, shells, summaries } = context;
   const siteOf = new Map(sites.map((site) => [`${site.section}/${site.bed}`, site]));
-  const marks = bedMarks(data.beds, siteOf, options, data.scatter.assumed);
+  const ages = new Map(data.beds.map((bed, at) => [bed.key, settled.ages[at]]));
+  const marks = bedMarks(settled, siteOf, options, zoning);
   const unsorted = bedRows({
     data,
     zoning,
     shells,
     summaries,
-    notes: (bed) => ({ place: siteOf.get(bed.key)?.place ?? null, marks: marks.get(bed.key) ?? [], reading: '' }),
+    notes: (bed) => ({
+      place: siteOf.get(bed.key)?.place ?? null,
+      marks: marks.get(bed.key) ?? [],
+      reading: ages.get(bed.key)?.reading ?? '',
+    }),
   });
   // tables list beds as the sites do: sections in coast order, the lowest bed first
   const position = new Map([...siteOf.keys()].map((key, at) => [key, at]));
@@ -130,6 +137,7 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
     (a, b) => position.get(`${a.section}/${a.bed}`)! - position.get(`${b.section}/${b.bed}`)!,
   );
   const zones = zoning === null ? [] : zoneRows(data, zoning);
+  const relations = relationFindings({ settled, shells, beds, sites: siteOf });
   const zoneOf = new Map(beds.map((bed) => [`${bed.section}/${bed.bed}`, bed.zone]));
   return {
     ...EMPTY,
@@ -138,11 +146,16 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
     zone_counts: zoning === null ? [] : zoneCountRows(data, zoning),
     adjacent_zones: zoning === null ? [] : adjacentZonesRows(data, zoning),
     beds,
-    shells: shellRows(data, zoning, shells, (at) => {
-      const own = settled.marks.get(data.shells[at].shell) ?? [];
-      const status = data.shells[at].setAside ? 'set aside' : own.length > 0 ? 'doubtful' : 'kept';
-      return { status, marks: own.map((mark) => mark.mark), reading: 'none', confidence: null };
-    }),
+    shells: shellRows(data, zoning, shells, (at) => ({
+      ...settled.readings.shells[at],
+      marks: settled.marks[at].map((mark) => mark.mark),
+    })),
+    evidence: [
+      ...shellEvidence(settled, shells),
+      ...bedEvidence(settled, marks, siteOf, options),
+      ...relations.evidence,
+    ],
+    conflicts: conflictRows(settled, shells),
     order:
       order === null
         ? []
@@ -159,14 +172,15 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
       order === null
         ? []
         : pairRows(data.clock.name, order.beds, order.posterior, order.ranking, sameZone(order.beds, zoning)),
-    relations: relationRows(settled),
+    relations: relations.rows,
     sections: sectionRows(settled, siteOf, options.alpha, options.simulations, random),
     correlation: correlationTable(zones, beds, sections),
     diagnostics: order === null ? [] : [diagnosticsOf(data.clock.name, order)],
+    gradients: last.gradient === null ? [] : [gradientFinding(last, last.gradient, options.gradient!)],
   };
 }
 
-function clockRow({ data, zoning }: Pass, rand: number | null): ClockRow {
+function clockRow({ data, zoning, gradient }: Pass, rand: number | null): ClockRow {
   const { clock } = data;
   return {
     clock: clock.name,
@@ -180,9 +194,9 @@ function clockRow({ data, zoning }: Pass, rand: number | null): ClockRow {
     spread: zoning?.spread ?? null,
     zones: zoning?.fit.k ?? 0,
     verdict: zoning?.verdict ?? 'too few beds',
-    slope: null,
-    slope_low: null,
-    slope_high: null,
+    slope: gradient?.slope ?? null,
+    slope_low: gradient?.low ?? null,
+    slope_high: gradient?.high ?? null,
     rand_with_main: rand,
   };
 }
@@ -201,11 +215,12 @@ function randWithMain(pass: Pass, main: Pass): number | null {
 }
 
 function bedMarks(
-  beds: readonly ClockBed[],
+  { last: { data }, left }: Settled,
   sites: ReadonlyMap<string, BedSite>,
   options: RunContext['options'],
-  assumed: boolean,
+  zoning: Zoning | null,
 ): Map<string, BedMark[]> {
+  const { beds } = data;
   const marks = new Map<string, BedMark[]>(beds.map((bed) => [bed.key, []]));
   const toScreen = beds.map((bed) => ({ burial_m: sites.get(bed.key)?.burial_m ?? null, shells: bed.n }));
   for (const { bed, mark } of screenBeds(toScreen, options.screening)) marks.get(beds[bed].key)!.push(mark);
@@ -214,7 +229,9 @@ function bedMarks(
   for (const bed of beds) {
     const own = marks.get(bed.key)!;
     if (sites.get(bed.key)?.place == null && inSection.get(bed.section)! > 1) own.push('no place in section');
-    if (assumed) own.push('assumed scatter');
+    if (data.scatter.assumed) own.push('assumed scatter');
+    if (left.mixed.has(bed.key)) own.push('mixed age');
+    if (zoning !== null && bed.n > 0 && isNearEquilibrium(data.clock, bed.mean)) own.push('near equilibrium');
   }
   return marks;
 }
@@ -228,28 +245,6 @@ function sameZone(beds: readonly ClockBed[], zoning: Zoning | null) {
     const [first, second] = [probabilities[a], probabilities[b]];
     return first === null || second === null ? null : first.reduce((sum, p, zone) => sum + p * second[zone], 0);
   };
-}
-
-function relationRows({ first, last }: Settled): RelationRow[] {
-  const before = new Map(first.relations.map((relation, at) => [`${relation.lower}\u0001${relation.upper}`, at]));
-  return last.relations.map((relation, at) => {
-    const { difference, z, p_reversed, verdict } = last.checks[at];
-    const earlier = before.get(`${relation.lower}\u0001${relation.upper}`);
-    return {
-      clock: last.data.clock.name,
-      lower: relation.lower,
-      upper: relation.upper,
-      basis: relation.basis,
-      kind: relation.kind,
-      certainty: relation.certainty,
-      difference,
-      z,
-      p_reversed,
-      verdict: earlier === undefined ? verdict : first.checks[earlier].verdict,
-      verdict_after: verdict,
-      reading: '',
-    };
-  });
 }
 
 function sectionRows(
@@ -283,6 +278,65 @@ function sectionRows(
   }));
 }
 
+function gradientFinding({ data }: Pass, fit: SlopeOfPass, column: string): GradientFinding {
+  return {
+    clock: data.clock.name,
+    column,
+    centre: fit.centre,
+    slope: fit.slope,
+    slope_low: fit.low,
+    slope_high: fit.high,
+    bic_with: fit.bicWith,
+    bic_without: fit.bicWithout,
+    used: fit.used,
+  };
+}
+
+function bedEvidence(
+  { last: { data }, ages }: Settled,
+  marks: ReadonlyMap<string, readonly BedMark[]>,
+  sites: ReadonlyMap<string, BedSite>,
+  options: RunContext['options'],
+): Evidence[] {
+  const screened = screenBeds(
+    data.beds.map((bed) => ({ burial_m: sites.get(bed.key)?.burial_m ?? null, shells: bed.n })),
+    options.screening,
+  );
+  return data.beds.flatMap((bed, at) => {
+    const sentences = [
+      ...ages[at].sentences,
+      ...screened.filter((mark) => mark.bed === at).map((mark) => sentence(mark.evidence)),
+    ];
+    if (marks.get(bed.key)?.includes('near equilibrium')) {
+      sentences.push('Its ratio is near equilibrium, where older and younger beds come to look alike.');
+    }
+    return sentences.length === 0 ? [] : [{ clock: data.clock.name, about: 'bed' as const, name: bed.key, sentences }];
+  });
+}
+
+const sentence = (text: string): string =>
+  `${text.charAt(0).toUpperCase()}${text.slice(1)}${text.endsWith('.') ? '' : '.'}`;
+
+const shellName = ({ section, bed, shell }: Shell): string => `${section}/${bed}/${shell}`;
+
+function shellEvidence({ last: { data }, readings }: Settled, shells: readonly Shell[]): Evidence[] {
+  return data.shells.flatMap(({ shell }, at) => {
+    const { sentences } = readings.shells[at];
+    if (sentences.length === 0) return [];
+    return [{ clock: data.clock.name, about: 'shell' as const, name: shellName(shells[shell]), sentences }];
+  });
+}
+
+function conflictRows({ last: { data }, readings }: Settled, shells: readonly Shell[]): ConflictRow[] {
+  const placed = data.shells.map(({ bed, x }) => ({ bed, x: x - data.slope * data.beds[bed].gradient }));
+  return listConflicts(readings.conflicts, placed).map(({ lower, upper, shortfall }) => ({
+    clock: data.clock.name,
+    lower: shellName(shells[data.shells[lower].shell]),
+    upper: shellName(shells[data.shells[upper].shell]),
+    shortfall,
+  }));
+}
+
 function diagnosticsOf(clock: string, order: ClockOrder): OrderDiagnostics {
   const { posterior } = order;
   return {
@@ -296,5 +350,3 @@ function diagnosticsOf(clock: string, order: ClockOrder): OrderDiagnostics {
     relations_left_out: order.leftOut,
   };
 }
-
-export { zoneName };

@@ -1,4 +1,5 @@
-import { bedKey, type ClockSet, clockData, testingDf } from './beds/index.js';
+import { type ClockSet, clockData, testingDf } from './beds/index.js';
+import { fitGradient, type GradientFit } from './coast/index.js';
 import type { Clock, ClockBed, ClockData, PublishedSummary, RelationRecord, RunOptions, Shell } from './model/index.js';
 import type { PlacedBed } from './order/index.js';
 import {
@@ -23,6 +24,8 @@ export interface RunContext {
   readonly placed: ReadonlyMap<string, PlacedBed>;
   /** Relations of the table, and those derived from elevations. */
   readonly relations: readonly RelationRecord[];
+  /** Value of the gradient column by bed; null without `--gradient`. */
+  readonly gradient: ReadonlyMap<string, number> | null;
   readonly options: RunOptions;
 }
 
@@ -32,26 +35,47 @@ export interface Pass {
   readonly zoning: Zoning | null;
   readonly relations: readonly RelationRecord[];
   readonly checks: readonly RelationCheck[];
+  /** The slope along the gradient asked for; null without one, or where the column does not vary. */
+  readonly gradient: SlopeOfPass | null;
 }
 
+/** The slope of one clock, where it is centred, and each bed's distance from there. */
+export interface SlopeOfPass extends GradientFit {
+  readonly centre: number;
+  readonly values: ReadonlyMap<string, number>;
+}
+
+/** What a pass leaves out of the means, and beds it treats with care. */
+export interface LeftOut {
+  /** Indices of shells of the run. */
+  readonly setAside: ReadonlySet<number>;
+  /** Keys of beds whose shells scatter beyond one age. */
+  readonly wide: ReadonlySet<string>;
+  /** Keys of those among them that hold two groups. */
+  readonly mixed: ReadonlySet<string>;
+}
+
+/** Nothing left out: the first pass. */
+export const NOTHING: LeftOut = { setAside: new Set(), wide: new Set(), mixed: new Set() };
+
 /** One pass of design 7.1 to 7.7 over one clock. */
-export function runPass(
-  context: RunContext,
-  clock: Clock,
-  set: ClockSet,
-  setAside: ReadonlySet<number>,
-  random: Random,
-  gradient?: { readonly slope: number; readonly values: ReadonlyMap<string, number> },
-): Pass {
+export function runPass(context: RunContext, clock: Clock, set: ClockSet, left: LeftOut, random: Random): Pass {
   const { shells, summaries, options } = context;
   const imputation = clock.amino_acids.length > 1 ? set.index?.imputation : undefined;
-  const data = clockData({ clock, shells, summaries, setAside, imputation, gradient });
+  const input = { clock, shells, summaries, setAside: left.setAside, wide: left.wide, imputation };
+  const plain = clockData(input);
+  const gradient = context.gradient === null ? null : slopeOf(plain, context.gradient, left.mixed);
+  const data =
+    gradient === null
+      ? plain
+      : clockData({ ...input, gradient: { slope: gradient.used ? gradient.slope : 0, values: gradient.values } });
   const zoning = findZones(data, {
     alpha: options.alpha,
     zones: clock.main ? options.zones : null,
     random: random.fork(1),
-    extraParameters: gradient === undefined ? 0 : 1,
+    extraParameters: gradient?.used ? 1 : 0,
     simulations: options.simulations,
+    leaveOut: left.mixed,
   });
   const relations = relationsOf(context, data);
   const checks = checkRelations(relations, data.beds, {
@@ -59,7 +83,22 @@ export function runPass(
     df: testingDf(data.scatter),
     spread: zoning?.spread ?? 0,
   });
-  return { data, zoning, relations, checks };
+  return { data, zoning, relations, checks, gradient };
+}
+
+/** Fits the slope on beds that are of one age and have a value; beds without one stand at the mean. */
+function slopeOf(data: ClockData, values: ReadonlyMap<string, number>, mixed: ReadonlySet<string>): SlopeOfPass | null {
+  const beds = data.beds.filter((bed) => bed.n > 0 && values.has(bed.key));
+  if (beds.length === 0) return null;
+  const centre = beds.reduce((sum, bed) => sum + values.get(bed.key)!, 0) / beds.length;
+  const sound = beds.filter((bed) => !mixed.has(bed.key));
+  const fit = fitGradient(
+    sound.map((bed) => bed.mean),
+    sound.map((bed) => bed.se),
+    sound.map((bed) => values.get(bed.key)! - centre),
+  );
+  if (fit === null) return null;
+  return { ...fit, centre, values: new Map(beds.map((bed) => [bed.key, values.get(bed.key)! - centre])) };
 }
 
 /** Superposition among the clock's beds that have a mean, then the relations of the table; a pair stands once. */
@@ -129,5 +168,3 @@ export function orderClock(
     leftOut,
   };
 }
-
-export { bedKey };

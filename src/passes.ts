@@ -1,8 +1,18 @@
 import type { ClockSet } from './beds/index.js';
-import { type Pass, type RunContext, runPass } from './clock-run.js';
-import type { ScreeningMark, ShellMark } from './model/index.js';
-import { screenedOut } from './screening/index.js';
+import { type LeftOut, NOTHING, type Pass, type RunContext, runPass } from './clock-run.js';
+import type { AminoAcid, ScreeningMark } from './model/index.js';
+import { AMINO_ACIDS } from './model/index.js';
+import { relationGraph } from './order/index.js';
 import type { Random } from './statistics/index.js';
+import {
+  bedsAbove,
+  type MixedAge,
+  mixedAgeBeds,
+  readShells,
+  type ShellReadings,
+  type ZoneToMatch,
+} from './superposition/index.js';
+import { zoneName } from './zones/index.js';
 
 /** Most passes before the tool says that it does not settle (design 7.9). */
 export const MOST_PASSES = 5;
@@ -21,24 +31,104 @@ export interface Settled {
   readonly first: Pass;
   /** Without the shells set aside. */
   readonly last: Pass;
-  /** Indices into the shells of the run. */
-  readonly setAside: ReadonlySet<number>;
+  /** Readings of the clock's shells, from the last pass. */
+  readonly readings: ShellReadings;
+  /** Whether each bed's shells are of one age, in the order of ClockData.beds, from the last pass. */
+  readonly ages: readonly MixedAge[];
+  readonly left: LeftOut;
   readonly passes: number;
+  /** False when a status still changed in the last pass allowed. */
   readonly settled: boolean;
-  /** Screening marks of each shell, by index. */
-  readonly marks: ReadonlyMap<number, readonly ScreeningMark[]>;
+  /** Screening marks of each clock shell, in the order of ClockData.shells. */
+  readonly marks: readonly (readonly ScreeningMark[])[];
 }
 
 /**
- * Repeats 7.1 to 7.9 until no status changes, at most five times. The first pass uses all shells.
+ * Repeats 7.1 to 7.9 until no shell's status changes, at most five times. The first pass uses all shells; each later one
+ * leaves out those that the readings of the pass before set aside, so zones are found without them.
  */
-export async function settlePasses({ context, set, screening, random }: PassInput): Promise<Settled> {
-  const marks = new Map<number, ScreeningMark[]>();
-  for (const mark of screening) marks.set(mark.shell, [...(marks.get(mark.shell) ?? []), mark]);
-  const screened = new Set(
-    [...marks].filter(([, own]) => screenedOut(own.map((mark): ShellMark => mark.mark))).map(([shell]) => shell),
+export function settlePasses({ context, set, screening, random }: PassInput): Settled {
+  const byShell = new Map<number, ScreeningMark[]>();
+  for (const mark of screening) {
+    const own = byShell.get(mark.shell);
+    if (own === undefined) byShell.set(mark.shell, [mark]);
+    else own.push(mark);
+  }
+  const first = runPass(context, set.main, set, NOTHING, random);
+  const marks = first.data.shells.map(({ shell }) => byShell.get(shell) ?? []);
+  const fixed = fixedParts(context, first);
+  let last = first;
+  let left = NOTHING;
+  for (let passes = 1; ; passes++) {
+    const zones = zonesToMatch(last);
+    const { data } = last;
+    const spread = last.zoning?.spread ?? 0;
+    const readings = readShells({ data, ...fixed, marks, zones, spread, alpha: context.options.alpha });
+    const setAside = new Set(
+      data.shells.flatMap(({ shell }, at) => (readings.shells[at].status === 'set aside' ? [shell] : [])),
+    );
+    const ages = agesOfBeds(context, last, setAside, zones, random.fork(7));
+    const keysOf = (verdicts: readonly MixedAge['verdict'][]): Set<string> =>
+      new Set(data.beds.flatMap((bed, at) => (verdicts.includes(ages[at].verdict) ? [bed.key] : [])));
+    const next = { setAside, wide: keysOf(['mixed age', 'wide scatter']), mixed: keysOf(['mixed age']) };
+    const settled =
+      sameSet(next.setAside, left.setAside) && sameSet(next.wide, left.wide) && sameSet(next.mixed, left.mixed);
+    if (settled || passes === MOST_PASSES) return { first, last, readings, ages, left, passes, settled, marks };
+    left = next;
+    last = runPass(context, set.main, set, left, random);
+  }
+}
+
+function sameSet<T>(a: ReadonlySet<T>, b: ReadonlySet<T>): boolean {
+  return a.size === b.size && [...a].every((item) => b.has(item));
+}
+
+function agesOfBeds(
+  { options }: RunContext,
+  { data }: Pass,
+  setAside: ReadonlySet<number>,
+  zones: readonly ZoneToMatch[],
+  random: Random,
+): MixedAge[] {
+  const kept = data.beds.map((bed) =>
+    bed.shells
+      .map((at) => data.shells[at])
+      .filter((shell) => !setAside.has(shell.shell))
+      .map((shell) => shell.x - data.slope * bed.gradient),
   );
-  const first = runPass(context, set.main, set, new Set(), random);
-  const last = screened.size === 0 ? first : runPass(context, set.main, set, screened, random);
-  return { first, last, setAside: screened, passes: 1, settled: true, marks };
+  const assumed = data.scatter.assumed ? data.scatter.s : undefined;
+  return mixedAgeBeds(kept, random, { alpha: options.alpha, simulations: options.simulations, zones, assumed });
+}
+
+/** What no pass changes: log ratios of every amino acid, and which beds lie above which. */
+interface FixedParts {
+  readonly aminoAcids: readonly AminoAcid[];
+  readonly logs: readonly (readonly number[])[];
+  readonly above: readonly (readonly number[])[];
+}
+
+function fixedParts({ shells }: RunContext, { data, relations }: Pass): FixedParts {
+  const aminoAcids = AMINO_ACIDS.filter((code) =>
+    data.shells.some(({ shell }) => shells[shell].ratios[code] !== undefined),
+  );
+  const logs = data.shells.map(({ shell }) =>
+    aminoAcids.map((code) => Math.log(shells[shell].ratios[code] ?? Number.NaN)),
+  );
+  const certain = relations.filter((relation) => relation.certainty === 'certain');
+  const graph = relationGraph(
+    data.beds.map((bed) => bed.key),
+    certain,
+  );
+  return { aminoAcids, logs, above: bedsAbove(graph) };
+}
+
+function zonesToMatch({ zoning }: Pass): ZoneToMatch[] {
+  if (zoning === null || zoning.fit.k === 1) return [];
+  const { means, se, weights, tau } = zoning.priors;
+  return means.map((mean, zone) => ({
+    name: zoneName(zone),
+    mean,
+    sd: Math.hypot(tau, se[zone]),
+    weight: Math.max(weights[zone], 1e-12),
+  }));
 }

@@ -35,6 +35,12 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
       }),
     ),
     relations: survey.relations,
+    gradient:
+      options.gradient === null
+        ? null
+        : new Map(
+            sites.flatMap((site) => (site.gradient === null ? [] : [[bedKey(site.section, site.bed), site.gradient]])),
+          ),
     options,
   };
   const random = createRandom(options.seed);
@@ -82,14 +88,14 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
     const own = random.fork(at);
     const name = set.main.name;
     host.progress(`zones of ${name}`, 0);
-    const settled = await settlePasses({ context, set, screening, random: own.fork(1) });
+    const settled = settlePasses({ context, set, screening, random: own.fork(1) });
     host.progress(`order of ${name}`, 0);
     const order = orderClock(settled.last, options.alpha, own.fork(2), (fraction) =>
       host.progress(`order of ${name}`, fraction),
     );
     const singles = set.singles.map((clock, k) => {
       host.progress(`each amino acid of ${name}`, k / set.singles.length);
-      return runPass(context, clock, set, settled.setAside, own.fork(100 + k));
+      return runPass(context, clock, set, settled.left, own.fork(100 + k));
     });
     return clockFindings({ context, set, settled, order, singles, sites, sections, host, random: own.fork(3) });
   }

@@ -13,8 +13,8 @@ export interface ClockDataInput {
   readonly imputation?: Imputation;
   /** Slope of x along a column, and that column's value less its mean for each bed by key `section/bed`. */
   readonly gradient?: { readonly slope: number; readonly values: ReadonlyMap<string, number> };
-  /** Scatter to use in place of the pooled one (a robust one on the first pass). */
-  readonly scatter?: (groups: readonly (readonly number[])[]) => number;
+  /** Keys of beds whose shells scatter beyond one age: their errors rest on their own scatter, and they leave the pool. */
+  readonly wide?: ReadonlySet<string>;
 }
 
 /** Name of a bed in tables. */
@@ -40,15 +40,28 @@ export function clockData(input: ClockDataInput): ClockData {
   const published = addSummaries(beds, clock, summaries, imputation);
   const drafts = [...beds.values()];
   const kept = drafts.map((bed) => bed.shells.filter((at) => !clockShells[at].setAside).map((at) => clockShells[at].x));
-  const pooled = pooledScatter(kept, published);
-  const scatter = input.scatter === undefined || pooled.assumed ? pooled : { ...pooled, s: input.scatter(kept) };
+  const wide = drafts.map((bed) => input.wide?.has(bedKey(bed.section, bed.bed)) ?? false);
+  const scatter = pooledScatter(
+    kept.filter((_, at) => !wide[at]),
+    published,
+  );
   return {
     clock,
     shells: clockShells,
-    beds: drafts.map((bed, index) => finishBed(bed, kept[index], scatter.s, gradient)),
+    beds: drafts.map((bed, index) =>
+      finishBed(bed, kept[index], wide[index] ? ownScatter(kept[index], scatter.s) : scatter.s, gradient),
+    ),
     scatter,
     slope: gradient?.slope ?? 0,
   };
+}
+
+/** Standard deviation of one bed's shells, not below the pooled one. */
+function ownScatter(values: readonly number[], pooled: number): number {
+  if (values.length < 2) return pooled;
+  const mean = values.reduce((sum, x) => sum + x, 0) / values.length;
+  const squares = values.reduce((sum, x) => sum + (x - mean) ** 2, 0);
+  return Math.max(pooled, Math.sqrt(squares / (values.length - 1)));
 }
 
 interface DraftBed {

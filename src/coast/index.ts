@@ -1,2 +1,3 @@
 export { correlationTable } from './correlation-table.js';
+export { fitGradient, type GradientFit } from './gradient.js';
 export { sectionOrder } from './section-order.js';

@@ -12,8 +12,9 @@ export interface Continuum {
  * p(m) = [Φ((high − m)/se) − Φ((low − m)/se)] / (high − low) (design 7.3). Two parameters.
  * @param values bed means of log ratios, at least one
  * @param errors their standard errors, 0 or more
+ * @param tolerance of the two ends, relative
  */
-export function fitContinuum(values: readonly number[], errors: readonly number[]): Continuum {
+export function fitContinuum(values: readonly number[], errors: readonly number[], tolerance = 1e-10): Continuum {
   const least = Math.min(...values);
   const most = Math.max(...values);
   const range = most - least;
@@ -27,10 +28,10 @@ export function fitContinuum(values: readonly number[], errors: readonly number[
   // The two ends hardly speak to each other, so turns at one and the other settle in a few rounds.
   for (let round = 0; round < 40; round++) {
     const before = best;
-    low = goldenSection((end) => evaluate(end, high), least - 3 * widest, high - narrowest);
-    high = goldenSection((end) => evaluate(low, end), low + narrowest, most + 3 * widest + narrowest);
+    low = goldenSection((end) => evaluate(end, high), least - 3 * widest, high - narrowest, tolerance);
+    high = goldenSection((end) => evaluate(low, end), low + narrowest, most + 3 * widest + narrowest, tolerance);
     best = evaluate(low, high);
-    if (Math.abs(best - before) < 1e-9) break;
+    if (Math.abs(best - before) < Math.max(1e-9, tolerance)) break;
   }
   return { low, high, logLikelihood: best };
 }

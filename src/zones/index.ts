@@ -10,6 +10,7 @@ export type { Mixture, MixtureOptions } from './mixture.js';
 export { bic, fitMixture } from './mixture.js';
 export type { ModelChoice } from './model-choice.js';
 export { chooseModel, FEWEST_BEDS, MOST_ZONES } from './model-choice.js';
+export { equilibriumLimit, isNearEquilibrium, nearEquilibriumRatio } from './near-equilibrium.js';
 export { partition } from './partition.js';
 export type { ShellNotes } from './shell-rows.js';
 export { leaveOneOutResidual, shellRows } from './shell-rows.js';

@@ -20,6 +20,8 @@ export interface MixtureOptions {
   readonly iterations?: number;
   /** A partition to start from beside those of the design (labels 0..k-1). Default none. */
   readonly start?: readonly number[];
+  /** Parameters near the answer, in place of all other starts: one climb, for refits of drawn samples. Default none. */
+  readonly near?: Pick<Mixture, 'means' | 'weights' | 'tau'>;
 }
 
 const LOG_ROOT_TWO_PI = 0.9189385332046727;
@@ -40,6 +42,7 @@ export function fitMixture(
 ): Mixture {
   const variances = Float64Array.from(errors, (se) => se * se);
   const floor = varianceFloor(values);
+  if (options.near !== undefined) return climbFrom(options.near, values, variances, floor, options);
   const starts = options.start === undefined ? [] : [options.start];
   starts.push(
     partition(
@@ -64,22 +67,50 @@ function varianceFloor(values: readonly number[]): number {
   return Math.max(1e-12, (1e-6 * range) ** 2);
 }
 
+/** From a partition. */
 function maximise(
   values: readonly number[],
   variances: Float64Array,
   k: number,
   start: readonly number[],
   floor: number,
-  { tolerance = 1e-9, iterations = 2000 }: MixtureOptions,
+  options: MixtureOptions,
 ): Mixture {
-  const n = values.length;
-  const responsibilities = new Float64Array(n * k);
+  const responsibilities = new Float64Array(values.length * k);
   start.forEach((label, bed) => {
     responsibilities[bed * k + label] = 1;
   });
-  const means = new Float64Array(k);
+  const tau2 = startingSpread(values, variances, start, k);
+  return climb({ k, means: new Float64Array(k), tau2, responsibilities }, values, variances, floor, options);
+}
+
+/** From parameters. Weights are kept off 0, from which they could not rise. */
+function climbFrom(
+  near: NonNullable<MixtureOptions['near']>,
+  values: readonly number[],
+  variances: Float64Array,
+  floor: number,
+  options: MixtureOptions,
+): Mixture {
+  const k = near.means.length;
+  const means = Float64Array.from(near.means);
+  const weights = Float64Array.from(near.weights, (weight) => Math.max(weight, 0.5 / values.length));
+  const responsibilities = new Float64Array(values.length * k);
+  expectation(values, variances, means, weights, near.tau ** 2, floor, responsibilities);
+  return climb({ k, means, tau2: near.tau ** 2, responsibilities }, values, variances, floor, options);
+}
+
+function climb(
+  start: { k: number; means: Float64Array; tau2: number; responsibilities: Float64Array },
+  values: readonly number[],
+  variances: Float64Array,
+  floor: number,
+  { tolerance = 1e-9, iterations = 2000 }: MixtureOptions,
+): Mixture {
+  const n = values.length;
+  const { k, means, responsibilities } = start;
+  let { tau2 } = start;
   const weights = new Float64Array(k);
-  let tau2 = startingSpread(values, variances, start, k);
   let logLikelihood = Number.NEGATIVE_INFINITY;
   for (let iteration = 0; iteration < iterations; iteration++) {
     for (let j = 0; j < k; j++) {
@@ -96,7 +127,7 @@ function maximise(
       weights[j] = sumR / n;
       if (sumRW > 0) means[j] = sumRWX / sumRW;
     }
-    tau2 = spreadGiven(values, variances, means, responsibilities, k, floor);
+    tau2 = spreadGiven(values, variances, means, responsibilities, k, floor, tau2);
     const next = expectation(values, variances, means, weights, tau2, floor, responsibilities);
     if (next - logLikelihood < tolerance && iteration > 2) {
       logLikelihood = Math.max(next, logLikelihood);
@@ -168,6 +199,7 @@ function spreadGiven(
   responsibilities: Float64Array,
   k: number,
   floor: number,
+  last: number,
 ): number {
   const n = values.length;
   const distances = new Float64Array(n);
@@ -178,23 +210,28 @@ function spreadGiven(
     distances[bed] = sum;
     if (sum > largest) largest = sum;
   }
-  const slope = (tau2: number): number => {
-    let sum = 0;
-    for (let bed = 0; bed < n; bed++) {
-      const v = Math.max(tau2 + variances[bed], floor);
-      sum += (distances[bed] - v) / (v * v);
-    }
-    return sum;
-  };
-  if (!(slope(0) > 0)) return 0;
   let low = 0;
   let high = largest;
-  for (let step = 0; step < 60 && high - low > 1e-12 * (1 + high); step++) {
-    const middle = (low + high) / 2;
-    if (slope(middle) > 0) low = middle;
-    else high = middle;
+  // Newton's steps from the last spread, halving the bracket where a step would leave it.
+  let tau2 = 0;
+  for (let step = 0; step < 60 && high - low > 1e-13 * (1 + high); step++) {
+    let slope = 0;
+    let bend = 0;
+    for (let bed = 0; bed < n; bed++) {
+      const v = Math.max(tau2 + variances[bed], floor);
+      const ratio = distances[bed] / v;
+      slope += (ratio - 1) / v;
+      bend += (1 - 2 * ratio) / (v * v);
+    }
+    if (slope > 0) low = tau2;
+    else if (tau2 === 0) return 0;
+    else high = tau2;
+    const newton = tau2 - slope / bend;
+    const next = step === 0 && last > 0 ? last : newton > low && newton < high ? newton : (low + high) / 2;
+    if (step > 1 && Math.abs(next - tau2) <= 1e-12 * (1e-6 + tau2)) return next;
+    tau2 = next;
   }
-  return (low + high) / 2;
+  return tau2;
 }
 
 function sorted(fit: Mixture): Mixture {

@@ -15,17 +15,7 @@ export function partition(values: readonly number[], weights: readonly number[],
   if (!(Number.isInteger(k) && k >= 1 && k <= n)) {
     throw new RangeError(`partition wants a whole number of groups from 1 to ${n}, got ${k}`);
   }
-  const order = values.map((_, index) => index).sort((a, b) => values[a] - values[b] || a - b);
-  const cost = segmentCosts(order, values, weights);
-  let previous = Float64Array.from({ length: n }, (_, last) => cost(0, last));
-  const cuts: Int32Array[] = [new Int32Array(n)];
-  for (let group = 1; group < k; group++) {
-    const current = new Float64Array(n).fill(Number.POSITIVE_INFINITY);
-    const cut = new Int32Array(n);
-    fillRow(previous, current, cut, cost, group, group, n - 1, group, n - 1);
-    cuts.push(cut);
-    previous = current;
-  }
+  const { order, cuts } = fillTable(values, weights, k);
   const labels = new Array<number>(n);
   let last = n - 1;
   for (let group = k - 1; group >= 0; group--) {
@@ -34,6 +24,43 @@ export function partition(values: readonly number[], weights: readonly number[],
     last = first - 1;
   }
   return labels;
+}
+
+/**
+ * The least weighted sums of squares within 1 … k groups, all from one table.
+ * @param values numbers, any order
+ * @param weights one positive weight a value
+ * @param k most groups, 1 to the number of values
+ * @returns k numbers, never growing
+ * @throws RangeError when k is no whole number from 1 to the number of values
+ * @example
+ * partitionCosts([0, 2, 10, 12], [1, 1, 1, 1], 2) // => [104, 4]
+ */
+export function partitionCosts(values: readonly number[], weights: readonly number[], k: number): number[] {
+  const n = values.length;
+  if (!(Number.isInteger(k) && k >= 1 && k <= n)) {
+    throw new RangeError(`partitionCosts wants a whole number of groups from 1 to ${n}, got ${k}`);
+  }
+  return fillTable(values, weights, k).costs;
+}
+
+/** The table of best last cuts, a row a number of groups, over the values in order. */
+function fillTable(values: readonly number[], weights: readonly number[], k: number) {
+  const n = values.length;
+  const order = values.map((_, index) => index).sort((a, b) => values[a] - values[b] || a - b);
+  const cost = segmentCosts(order, values, weights);
+  let previous = Float64Array.from({ length: n }, (_, last) => cost(0, last));
+  const cuts: Int32Array[] = [new Int32Array(n)];
+  const costs = [previous[n - 1]];
+  for (let group = 1; group < k; group++) {
+    const current = new Float64Array(n).fill(Number.POSITIVE_INFINITY);
+    const cut = new Int32Array(n);
+    fillRow(previous, current, cut, cost, group, group, n - 1, group, n - 1);
+    cuts.push(cut);
+    costs.push(current[n - 1]);
+    previous = current;
+  }
+  return { order, cuts, costs };
 }
 
 /** Weighted sum of squares of the sorted values from `first` to `last`, by running sums about the mean of all. */

@@ -1,5 +1,6 @@
 import type { AdjacentZonesRow, ClockData, ZoneCountRow, ZoneRow } from '../model/index.js';
 import { studentTQuantile } from '../statistics/index.js';
+import { assignZone } from './assignment.js';
 import type { Zoning } from './zoning.js';
 
 /** Name of a zone in tables: Z1 is the youngest. */
@@ -9,8 +10,10 @@ export const zoneName = (zone: number): string => `Z${zone + 1}`;
 export function zoneRows(data: ClockData, zoning: Zoning, stability: readonly (number | null)[] = []): ZoneRow[] {
   const { fit, priors, df } = zoning;
   const shellSd = Math.hypot(data.scatter.s, fit.tau);
+  // beds of mixed age found no zone, but stand in the one they fit best
+  const zoneOfBed = data.beds.map((bed) => (bed.n > 0 ? assignZone(bed.mean, bed.se, priors).zone : -1));
   return fit.means.map((mean, j) => {
-    const members = zoning.beds.filter((_, at) => zoning.labels[at] === j);
+    const members = data.beds.flatMap((_, bed) => (zoneOfBed[bed] === j ? [bed] : []));
     const half = studentTQuantile(0.975, Math.max(1, df[j])) * priors.se[j];
     return {
       clock: data.clock.name,

@@ -16,9 +16,13 @@ export interface ZoningOptions {
   readonly extraParameters?: number;
   /** Repeats behind intervals of overlaps. Default 999. */
   readonly simulations?: number;
+  /** Keys of beds of mixed age: no zone is founded on them. Default none. */
+  readonly leaveOut?: ReadonlySet<string>;
+  /** A choice made already on these beds, such as one that a bootstrap settled. Default: made here by BIC. */
+  readonly choice?: ModelChoice;
 }
 
-/** The zones of one clock. Beds are those of ClockData that have a mean, in its order. */
+/** The zones of one clock. Beds are those of ClockData that have a mean and are not of mixed age, in its order. */
 export interface Zoning {
   /** Indices into ClockData.beds of the beds that were zoned. */
   readonly beds: readonly number[];
@@ -47,11 +51,13 @@ export interface Zoning {
  * @returns null when no bed has a mean
  */
 export function findZones(data: ClockData, options: ZoningOptions): Zoning | null {
-  const beds = data.beds.flatMap((bed, index) => (bed.n > 0 ? [index] : []));
+  const measured = data.beds.flatMap((bed, index) => (bed.n > 0 ? [index] : []));
+  const sound = measured.filter((index) => !(options.leaveOut?.has(data.beds[index].key) ?? false));
+  const beds = sound.length > 0 ? sound : measured;
   if (beds.length === 0) return null;
   const values = beds.map((index) => data.beds[index].mean);
   const errors = beds.map((index) => data.beds[index].se);
-  const choice = chooseModel(values, errors, options.extraParameters ?? 0);
+  const choice = options.choice ?? chooseModel(values, errors, options.extraParameters ?? 0);
   const supported = choice.verdict === 'zones' ? choice.bestZones : 1;
   const joined = joinNeighbours(data, beds, choice.mixtures[supported - 1], options);
   const verdict = choice.verdict === 'zones' && joined.fit.k === 1 ? 'one zone' : choice.verdict;

@@ -1,0 +1,104 @@
+import { clockLogRatio, pooledScatter } from './beds/index.js';
+import type { AminoAcid, BedRow, BedSite, Clock, Evidence, RelationRow, Shell } from './model/index.js';
+import type { Settled } from './passes.js';
+import { type AminoAcidDifference, type BedFacts, readReversedRelation } from './superposition/index.js';
+
+/** What the rows of relations.csv are made from. */
+export interface RelationFindingsInput {
+  readonly settled: Settled;
+  readonly shells: readonly Shell[];
+  readonly beds: readonly BedRow[];
+  readonly sites: ReadonlyMap<string, BedSite>;
+}
+
+/** Rows of relations.csv, the verdict before and after setting aside, with readings of those still reversed. */
+export function relationFindings(input: RelationFindingsInput): { rows: RelationRow[]; evidence: Evidence[] } {
+  const { first, last } = input.settled;
+  const clock = last.data.clock.name;
+  const before = new Map(first.relations.map((relation, at) => [`${relation.lower}\u0001${relation.upper}`, at]));
+  const facts = factsOfBeds(input);
+  const evidence: Evidence[] = [];
+  const rows = last.relations.map((relation, at): RelationRow => {
+    const check = last.checks[at];
+    const earlier = before.get(`${relation.lower}\u0001${relation.upper}`);
+    const verdict = earlier === undefined ? check.verdict : first.checks[earlier].verdict;
+    const { lower, upper, basis, kind, certainty } = relation;
+    const { difference, z, p_reversed, verdict: verdict_after } = check;
+    let reading = '';
+    if (verdict_after === 'reversed') {
+      const read = readReversedRelation({
+        relation,
+        check,
+        lower: facts.get(lower)!,
+        upper: facts.get(upper)!,
+        differences: aminoAcidDifferences(input, lower, upper),
+      });
+      reading = read.reading;
+      evidence.push({ clock, about: 'relation', name: `${lower} > ${upper}`, sentences: read.sentences });
+    } else if (verdict === 'reversed') {
+      reading = 'no longer reversed once odd shells were set aside';
+    }
+    return { clock, lower, upper, basis, kind, certainty, difference, z, p_reversed, verdict, verdict_after, reading };
+  });
+  return { rows, evidence };
+}
+
+function factsOfBeds({ settled, shells, beds, sites }: RelationFindingsInput): Map<string, BedFacts> {
+  const { data, relations, checks } = settled.last;
+  const tally = new Map<string, { reversed: number; agrees: number }>(
+    data.beds.map((bed) => [bed.key, { reversed: 0, agrees: 0 }]),
+  );
+  relations.forEach(({ lower, upper }, at) => {
+    for (const key of [lower, upper]) {
+      const counts = tally.get(key);
+      if (counts === undefined) continue;
+      if (checks[at].verdict === 'reversed') counts.reversed++;
+      if (checks[at].verdict === 'agrees') counts.agrees++;
+    }
+  });
+  const rowOf = new Map(beds.map((bed) => [`${bed.section}/${bed.bed}`, bed]));
+  return new Map(
+    data.beds.map((bed) => {
+      const row = rowOf.get(bed.key)!;
+      const counts = tally.get(bed.key)!;
+      const serine = bed.shells.filter((at) => shells[data.shells[at].shell].serine_ratio !== null);
+      const facts: BedFacts = {
+        key: bed.key,
+        section: bed.section,
+        shells: bed.n,
+        zone: row.zone,
+        marks: row.marks,
+        // the relation that is being read is not one of the others
+        otherReversed: Math.max(0, counts.reversed - 1),
+        otherAgree: counts.agrees,
+        highSerine: bed.shells.filter((at) => settled.marks[at].some(({ mark }) => mark === 'high serine')).length,
+        serineMeasured: serine.length,
+        cmat_c: sites.get(bed.key)?.cmat_c ?? null,
+      };
+      return [bed.key, facts];
+    }),
+  );
+}
+
+/** Difference of two beds in each amino acid, over the shells kept, with that amino acid's own pooled scatter. */
+function aminoAcidDifferences(input: RelationFindingsInput, lower: string, upper: string): AminoAcidDifference[] {
+  const { data } = input.settled.last;
+  const { taxon, fraction } = data.clock;
+  const codes = [...new Set(input.shells.flatMap((shell) => Object.keys(shell.ratios) as AminoAcid[]))];
+  return codes.flatMap((code) => {
+    const single: Clock = { name: code, taxon, fraction, amino_acids: [code], weights: [1], main: false };
+    const groups = data.beds.map((bed) =>
+      bed.shells
+        .filter((at) => !data.shells[at].setAside)
+        .map((at) => clockLogRatio(input.shells[data.shells[at].shell].ratios, single))
+        .filter((x): x is number => x !== null),
+    );
+    const { s } = pooledScatter(groups);
+    const [low, high] = [lower, upper].map((key) => groups[data.beds.findIndex((bed) => bed.key === key)] ?? []);
+    if (low.length === 0 || high.length === 0) return [];
+    const mean = (values: readonly number[]): number => values.reduce((sum, x) => sum + x, 0) / values.length;
+    return [
+      { amino_acid: code, difference: mean(low) - mean(high), se: s * Math.sqrt(1 / low.length + 1 / high.length) },
+    ];
+  });
+}

@@ -1,0 +1,80 @@
+import type { Random } from '../statistics/index.js';
+import { partitionCosts } from './partition.js';
+
+/** How much tighter the groups are than those of values spread evenly. */
+export interface Gap {
+  /** Mean of ln W over the references less ln W of the values; null where the groups leave no scatter at all. */
+  readonly gap: number | null;
+  /** Its standard error by simulation, the references' own number counted in. */
+  readonly se: number | null;
+}
+
+/** Options of {@link gapStatistic}. */
+export interface GapOptions {
+  readonly random: Random;
+  /** Most groups. Default 10, or one fewer than the number of distinct values. */
+  readonly most?: number;
+  /** Reference samples. Default 100. */
+  readonly references?: number;
+}
+
+/**
+ * The gap statistic of 1 … K groups of values on a line (Tibshirani, Walther and Hastie 2001,
+ * doi:10.1111/1467-9868.00293): W is the weighted sum of squares within the groups of the exact partition, and each
+ * reference spreads as many values evenly over the range seen, which holds the beds' errors already; every value keeps
+ * its weight. It stands beside the choice of the design, and does not make it: it can't tell zones from the bunching that
+ * errors alone give, and on many data sets it climbs too far.
+ * @param values bed means of log ratios
+ * @param weights one positive weight a value, such as 1/se²
+ * @returns one entry a number of groups, from 1 upwards
+ */
+export function gapStatistic(values: readonly number[], weights: readonly number[], options: GapOptions): Gap[] {
+  const { random, references = 100 } = options;
+  const distinct = new Set(values).size;
+  const most = Math.max(1, Math.min(options.most ?? 10, distinct - 1));
+  if (distinct < 2) return [{ gap: null, se: null }];
+  const low = Math.min(...values);
+  const range = Math.max(...values) - low;
+  const drawn = Array.from({ length: references }, (_, label) => {
+    const own = random.fork(label);
+    const even = values.map(() => low + range * own.uniform());
+    return partitionCosts(even, weights, most);
+  });
+  return gapOf(partitionCosts(values, weights, most), drawn);
+}
+
+/**
+ * Gap and standard error from sums of squares within groups, of any grouping in any number of dimensions.
+ * @param within sum of squares of the data for 1 … K groups
+ * @param references the same of each reference sample
+ * @example
+ * gapOf([4], [[8], [8]])[0].gap // => 0.69314718
+ */
+export function gapOf(within: readonly number[], references: readonly (readonly number[])[]): Gap[] {
+  const size = references.length;
+  return within.map((sum, at) => {
+    const logs = references.map((reference) => Math.log(reference[at]));
+    const mean = logs.reduce((total, value) => total + value, 0) / size;
+    const variance = logs.reduce((total, value) => total + (value - mean) ** 2, 0) / size;
+    const gap = mean - Math.log(sum);
+    return Number.isFinite(gap) ? { gap, se: Math.sqrt(variance * (1 + 1 / size)) } : { gap: null, se: null };
+  });
+}
+
+/**
+ * The number of groups the gap statistic asks for: the smallest K with gap(K) ≥ gap(K + 1) − se(K + 1); the last K where
+ * it climbs to the end.
+ * @param gaps from 1 group upwards
+ * @returns null when no gap is known
+ * @example
+ * groupsByGap([{ gap: 0.1, se: 0.05 }, { gap: 0.8, se: 0.05 }, { gap: 0.82, se: 0.05 }]) // => 2
+ */
+export function groupsByGap(gaps: readonly Gap[]): number | null {
+  for (let k = 1; k <= gaps.length; k++) {
+    const here = gaps[k - 1].gap;
+    if (here === null) return k > 1 ? k - 1 : null;
+    const next = gaps[k];
+    if (next === undefined || next.gap === null || here >= next.gap - next.se!) return k;
+  }
+  return null;
+}

@@ -1,0 +1,135 @@
+import type { Task } from '../model/index.js';
+import { createRandom, type Random } from '../statistics/index.js';
+import { assignZone, type ZonePriors } from './assignment.js';
+import { fitMixture, type Mixture } from './mixture.js';
+import { bestLabels } from './zoning.js';
+
+/** Argument of {@link bootstrapZones}: plain data, so that it can go to a worker. */
+export interface BootstrapZonesArgument {
+  /** Bed means of log ratios, their standard errors and numbers of shells. */
+  readonly values: readonly number[];
+  readonly errors: readonly number[];
+  readonly shells: readonly number[];
+  /** Residuals of single shells about their beds, scaled to the pooled scatter; empty where only summaries are known. */
+  readonly residuals: readonly number[];
+  /** The fit in use. */
+  readonly fit: { readonly means: readonly number[]; readonly weights: readonly number[]; readonly tau: number };
+  /** Most probable zone of each bed in that fit. */
+  readonly labels: readonly number[];
+  readonly seed: number;
+  /** Repeats `first` … `first + repeats − 1`: each draws from a stream of its own, whoever runs it. */
+  readonly first: number;
+  readonly repeats: number;
+}
+
+/** What one bootstrap gives. */
+export interface BootstrapZones {
+  /** Jaccard similarity of each zone with the most similar zone found again; null where none of its beds was drawn. */
+  readonly jaccard: readonly (number | null)[];
+  /** The zones found again. */
+  readonly priors: ZonePriors;
+}
+
+/**
+ * Draws beds with replacement, and for each drawn bed its shells anew: as many residuals, with replacement, from those of
+ * all shells about their beds, since a bed's own four or five shells would make too small an error. Finds the same number
+ * of zones again and compares them, over the beds drawn, with the zones in use (Hennig 2007,
+ * doi:10.1016/j.csda.2006.11.025). A task for the host: pure, from plain data to plain data.
+ */
+export function bootstrapZones(argument: BootstrapZonesArgument): BootstrapZones[] {
+  const random = createRandom(argument.seed);
+  return Array.from({ length: argument.repeats }, (_, at) => repeat(argument, random.fork(argument.first + at)));
+}
+
+function repeat({ values, errors, shells, residuals, fit, labels }: BootstrapZonesArgument, random: Random) {
+  const drawn = values.map(() => random.integer(values.length));
+  const means = drawn.map((bed) => values[bed] + meanError(errors[bed], shells[bed], residuals, random));
+  const drawnErrors = drawn.map((bed) => errors[bed]);
+  const again = fitMixture(means, drawnErrors, fit.means.length, { near: fit, tolerance: 1e-5, iterations: 300 });
+  const found = bestLabels(again, drawn.length);
+  // a bed drawn twice may fall into two zones: its first draw speaks for it
+  const first = drawn.flatMap((bed, at) => (drawn.indexOf(bed) === at ? [at] : []));
+  const jaccard = fit.means.map((_, zone) => {
+    const similarities = fit.means.map((_, other) => {
+      let both = 0;
+      let either = 0;
+      for (const at of first) {
+        const inZone = labels[drawn[at]] === zone;
+        const inOther = found[at] === other;
+        if (inZone && inOther) both++;
+        if (inZone || inOther) either++;
+      }
+      return either === 0 ? 0 : both / either;
+    });
+    return first.some((at) => labels[drawn[at]] === zone) ? Math.max(...similarities) : null;
+  });
+  return { jaccard, priors: priorsOf(again) };
+}
+
+function meanError(error: number, shells: number, residuals: readonly number[], random: Random): number {
+  if (residuals.length < 10) return error * random.normal();
+  let sum = 0;
+  for (let shell = 0; shell < shells; shell++) sum += residuals[random.integer(residuals.length)];
+  return sum / shells;
+}
+
+const priorsOf = ({ means, weights, tau }: Mixture): ZonePriors => ({ means, weights, tau, se: means.map(() => 0) });
+
+/** Repeats a task. */
+const REPEATS_A_TASK = 50;
+
+/**
+ * The tasks of a bootstrap of zones, for the host to map; their results, joined, go to {@link stabilityOf} and
+ * {@link sameZone}.
+ * @param argument the common part
+ * @param repeats in all. Default 200
+ */
+export function stabilityTasks(argument: Omit<BootstrapZonesArgument, 'first' | 'repeats'>, repeats = 200): Task[] {
+  return Array.from({ length: Math.ceil(repeats / REPEATS_A_TASK) }, (_, at) => {
+    const first = at * REPEATS_A_TASK;
+    const own = { ...argument, first, repeats: Math.min(REPEATS_A_TASK, repeats - first) };
+    return { name: 'bootstrapZones', argument: own };
+  });
+}
+
+/**
+ * Stability of each zone: its mean Jaccard similarity over the bootstraps, 0 to 1. Under 0.6 a zone should not be believed;
+ * from 0.75 up it is a stable pattern, from 0.85 highly so (Hennig 2007).
+ * @example
+ * stabilityOf([{ jaccard: [1, 0.5], priors: { means: [], weights: [], tau: 0, se: [] } }, { jaccard: [0.8, null], priors: { means: [], weights: [], tau: 0, se: [] } }]) // => [0.9, 0.5]
+ */
+export function stabilityOf(bootstraps: readonly BootstrapZones[]): (number | null)[] {
+  return (bootstraps[0]?.jaccard ?? []).map((_, zone) => {
+    const known = bootstraps.flatMap(({ jaccard }) => (jaccard[zone] === null ? [] : [jaccard[zone]!]));
+    return known.length === 0 ? null : known.reduce((sum, value) => sum + value, 0) / known.length;
+  });
+}
+
+/**
+ * Probability that two beds share a zone: the posterior chance Σ_j P(a in j) P(b in j) with each bed's own mean and error,
+ * averaged over the zones that the bootstraps found again, so that the doubt about the zones themselves counts.
+ * @returns n × n, row by row; 1 on the diagonal
+ */
+export function sameZone(
+  values: readonly number[],
+  errors: readonly number[],
+  bootstraps: readonly BootstrapZones[],
+): Float64Array {
+  const n = values.length;
+  const same = new Float64Array(n * n);
+  for (const { priors } of bootstraps) {
+    const chances = values.map((value, bed) => assignZone(value, errors[bed], priors).probabilities);
+    for (let a = 0; a < n; a++) {
+      for (let b = 0; b < a; b++) {
+        let sum = 0;
+        for (let j = 0; j < chances[a].length; j++) sum += chances[a][j] * chances[b][j];
+        same[a * n + b] += sum / bootstraps.length;
+      }
+    }
+  }
+  for (let a = 0; a < n; a++) {
+    same[a * n + a] = 1;
+    for (let b = 0; b < a; b++) same[b * n + a] = same[a * n + b];
+  }
+  return same;
+}
