@@ -14,7 +14,7 @@ const files = { ...coastFiles(), ...summaryFiles(), ...spreadsheetFiles(), ...wa
 /** The spreadsheet is saved in Windows-1252; its letters are all in Latin-1 too, where both agree. */
 const bytes = (path: string, text: string) => Buffer.from(text, path === 'spreadsheet/shells.csv' ? 'latin1' : 'utf8');
 
-const PICTURE = join(EXAMPLES, 'coast/correlation.svg');
+const PICTURE = join(EXAMPLES, 'correlation.svg');
 
 /** The correlation panel of the coast, as the tool draws it. */
 async function drawPicture(): Promise<string> {
