@@ -1,3 +1,4 @@
+import { aminoAcidOf } from '../input/column-names.js';
 import { nearestName } from '../input/edit-distance.js';
 import { AMINO_ACIDS, type AminoAcid, type RunOptions } from '../model/index.js';
 
@@ -60,39 +61,21 @@ export const readFlag: OptionReader<boolean> = (name, value, complain) => {
   return undefined;
 };
 
-/** `Ile`, `Asx,Glx`, a list of codes, or `all`; letters of either case. */
+/** `Ile`, `Asx,Glx`, a list of codes, or `all`; names as laboratories write them are understood. */
 export const readAminoAcids: OptionReader<NonNullable<RunOptions['amino_acid']>> = (name, value, complain) => {
   const codes = (Array.isArray(value) ? value : String(value).split(',')).map((code) => String(code).trim());
   if (codes.length === 1 && codes[0].toLowerCase() === 'all') return 'all';
   const known: AminoAcid[] = [];
   for (const code of codes) {
-    const found = AMINO_ACIDS.find((one) => one.toLowerCase() === code.toLowerCase());
-    if (found === undefined) complain(unknownAminoAcid(name, code));
+    const found = aminoAcidOf(code);
+    if (found === null) complain(unknownAminoAcid(name, code));
     else if (!known.includes(found)) known.push(found);
   }
-  return known.length === codes.length || known.length > 0 ? known : undefined;
-};
-
-// what laboratories write for the codes
-const OTHER_NAMES: Readonly<Record<string, AminoAcid>> = {
-  asp: 'Asx',
-  asn: 'Asx',
-  aspartic: 'Asx',
-  glu: 'Glx',
-  gln: 'Glx',
-  glutamic: 'Glx',
-  'a/i': 'Ile',
-  aile: 'Ile',
-  isoleucine: 'Ile',
-  serine: 'Ser',
-  alanine: 'Ala',
-  valine: 'Val',
-  phenylalanine: 'Phe',
-  leucine: 'Leu',
+  return known.length > 0 ? known : undefined;
 };
 
 function unknownAminoAcid(name: string, code: string): string {
-  const near = OTHER_NAMES[code.toLowerCase()] ?? nearestName(code, AMINO_ACIDS);
+  const near = nearestName(code, AMINO_ACIDS);
   const advice = near ? `Did you mean ${near}?` : `Known are ${AMINO_ACIDS.join(', ')}, or all.`;
   return `${name} ${shown(code)}: this amino acid is not known. ${advice}`;
 }

@@ -1,10 +1,11 @@
-import { readFileSync, statSync } from 'node:fs';
+import { existsSync, readFileSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 import type { Findings } from '../model/index.js';
 import { VERSION } from '../version.js';
 import { FINDINGS_FIELDS } from './findings-fields.js';
+import { isLocked } from './folder/lock.js';
 import { codeOf, refused } from './folder/output-error.js';
-import { placesOf } from './folder/places.js';
+import { type Places, placesOf } from './folder/places.js';
 import { recoverFolder } from './folder/recover.js';
 
 /**
@@ -34,12 +35,23 @@ export function readResults(folder: string): Findings {
 function locate(folder: string): string {
   const found = statSync(folder, { throwIfNoEntry: false });
   if (found && !found.isDirectory()) return folder;
+  const path = join(folder, 'results.json');
   try {
-    recoverFolder(placesOf(folder));
+    const places = placesOf(folder);
+    recoverFolder(places);
+    awaitMove(path, places);
   } catch {
     // what can't be put right is told of below, by what is missing
   }
-  return join(folder, 'results.json');
+  return path;
+}
+
+// while a living run moves its results into place, for a moment none are there
+function awaitMove(path: string, places: Places): void {
+  const clock = new Int32Array(new SharedArrayBuffer(4));
+  for (let tries = 0; tries < 20 && !existsSync(path) && existsSync(places.old) && isLocked(places); tries++) {
+    Atomics.wait(clock, 0, 0, 10);
+  }
 }
 
 function readText(path: string, folder: string): string {
