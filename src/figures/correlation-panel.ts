@@ -163,11 +163,12 @@ function drawSlice(view: ClockView, slice: Slice, x0: number, width: number, dy:
   );
   const middle = y + h / 2 + 3.2;
   const zone = bed.zone < 0 ? '?' : view.zoned ? view.zones[bed.zone].zone : '';
-  const room = w - strip - 8;
+  const mixed = bed.row.marks.includes('mixed age') ? 9 : 0;
+  const room = w - strip - 8 - mixed;
   const zoneWide = textWidth(zone, TYPE.small) + 3;
   if (zone !== '' && room > zoneWide + 6)
     group.append(
-      label(x + w - strip - 4, middle, zone, {
+      label(x + w - strip - mixed * 0.7 - 4, middle, zone, {
         'text-anchor': 'end',
         'font-size': TYPE.small,
         'font-weight': 700,

@@ -1,9 +1,15 @@
 import type { Findings } from '../model/index.js';
+import { aminoAcidPairs } from './amino-acid-pairs.js';
 import { clockViews } from './clock-view.js';
 import { correlationPanel } from './correlation-panel.js';
 import type { Figure } from './figure.js';
+import { ratioAgainstGradient } from './gradient.js';
+import { heightsAgainstRatio } from './heights.js';
 import { ranksWithIntervals } from './ranks.js';
+import { relationDifferences } from './relation-differences.js';
 import { shellsByBed } from './shells-by-bed.js';
+import { zoneCounts } from './zone-counts.js';
+import { zoneRanges } from './zone-ranges.js';
 
 export type { Figure } from './figure.js';
 
@@ -14,6 +20,16 @@ export type { Figure } from './figure.js';
  */
 export function drawFigures(findings: Findings): Figure[] {
   const views = clockViews(findings);
-  const kinds = [shellsByBed, correlationPanel, ranksWithIntervals];
-  return kinds.flatMap((draw) => views.flatMap((view) => draw(view) ?? []));
+  const kinds = [
+    shellsByBed,
+    correlationPanel,
+    ranksWithIntervals,
+    heightsAgainstRatio,
+    relationDifferences,
+    aminoAcidPairs,
+    zoneRanges,
+    zoneCounts,
+    ratioAgainstGradient,
+  ];
+  return kinds.flatMap((draw) => views.flatMap((view) => draw(view, findings) ?? []));
 }

@@ -1,16 +1,19 @@
 import * as Plot from '@observablehq/plot';
 import { bedColumns, bedNote, LINE } from './bed-rows.js';
-import { type ClockView, inkOf, type ShellView, zoneTag } from './clock-view.js';
+import { type ClockView, inkOf, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
 import { legend } from './legend.js';
-import { meanSign, SHAPE, shellSign } from './signs.js';
+import { shellDots } from './shell-dots.js';
+import { shellsSummarised } from './shells-summarised.js';
+import { meanSign, shellSign } from './signs.js';
 import type { SvgNode } from './svg-node.js';
 import { shorten } from './text-width.js';
-import { INK, PAPER, SOFT, TYPE, WIDE } from './theme.js';
+import { INK, MOST_BEDS, MOST_SHELLS, PAPER, SOFT, TYPE, WIDE } from './theme.js';
 
 /** Log ratios of all shells, one line a bed, beds listed by zone with the youngest on top; null without shells. */
 export function shellsByBed(view: ClockView): Figure | null {
+  if (view.beds.length > MOST_BEDS || view.clock.shells > MOST_SHELLS) return shellsSummarised(view);
   const shells = view.beds.flatMap((bed) => bed.shells);
   const values = [
     ...shells.map((shell) => shell.row.log_ratio),
@@ -28,8 +31,9 @@ export function shellsByBed(view: ClockView): Figure | null {
   const body: SvgNode[] = columns.map((column, c) => {
     const beds = column.lines.filter((line) => line.kind === 'bed');
     const heads = column.lines.filter((line) => line.kind === 'zone');
-    const points = beds.flatMap((line) => line.bed.shells.map((shell) => ({ shell, line })));
-    points.sort((a, b) => statusOrder(a.shell) - statusOrder(b.shell));
+    const points = beds.flatMap((line) =>
+      line.bed.shells.map((shell) => ({ shell, bed: line.bed, x: shell.row.log_ratio, y: line.y })),
+    );
     const bandTags = tagged((i) => ({ 'data-z': zoneTag(view, column.bands[i].zone) }));
     const byBed = tagged((i) => ({ 'data-b': beds[i].bed.id }));
     const means = beds.filter((line) => line.bed.row.log_mean !== null);
@@ -132,17 +136,7 @@ export function shellsByBed(view: ClockView): Figure | null {
             strokeWidth: 1.6,
             strokeLinecap: 'butt',
           }),
-          Plot.dot(points, {
-            x: (point) => point.shell.row.log_ratio,
-            y: (point) => point.line.y,
-            symbol: (point: { shell: ShellView }) => SHAPE[point.shell.row.status],
-            r: 2.6,
-            fill: (point) => (point.shell.row.status === 'set aside' ? 'none' : inkOf(view, point.line.zone).fill),
-            stroke: INK,
-            strokeWidth: (point) =>
-              point.shell.row.status === 'set aside' ? 1.4 : point.shell.row.status === 'doubtful' ? 0.9 : 0.55,
-            render: tagged((i) => ({ 'data-b': points[i].line.bed.id, 'data-s': points[i].shell.id })),
-          }),
+          shellDots(view, points),
           Plot.axisX({
             ...AXIS,
             anchor: 'bottom',
@@ -192,8 +186,6 @@ const ranges = (view: ClockView) =>
   view.zoned && !view.gradient?.used
     ? 'The darker part of each band spans one standard deviation of shells either side of the zone mean.'
     : '';
-
-const statusOrder = (shell: ShellView) => (shell.row.status === 'kept' ? 0 : shell.row.status === 'doubtful' ? 1 : 2);
 
 const bedName = (row: { section: string; bed: string }) => `${row.section}/${row.bed}`;
 

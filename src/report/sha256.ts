@@ -29,7 +29,14 @@ export function sha256Base64(text: string): string {
     for (let t = 0; t < 64; t++) {
       const one = (h + (turn(e, 6) ^ turn(e, 11) ^ turn(e, 25)) + ((e & f) ^ (~e & g)) + ROUND[t] + w[t]) | 0;
       const two = ((turn(a, 2) ^ turn(a, 13) ^ turn(a, 22)) + ((a & b) ^ (a & c) ^ (b & c))) | 0;
-      [h, g, f, e, d, c, b, a] = [g, f, e, (d + one) | 0, c, b, a, (one + two) | 0];
+      h = g;
+      g = f;
+      f = e;
+      e = (d + one) | 0;
+      d = c;
+      c = b;
+      b = a;
+      a = (one + two) | 0;
     }
     [a, b, c, d, e, f, g, h].forEach((word, i) => {
       hash[i] += word;

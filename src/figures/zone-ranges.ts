@@ -1,0 +1,91 @@
+import * as Plot from '@observablehq/plot';
+import { type ClockView, inkOf, zoneTag } from './clock-view.js';
+import { type Figure, finishFigure } from './figure.js';
+import { AXIS, housePlot, tagged } from './house-plot.js';
+import { padded, short } from './shells-by-bed.js';
+import { INK, NARROW, SOFT, TYPE } from './theme.js';
+
+const STEP = 34;
+
+/** The zones on the D/L scale with how far neighbours overlap, for one journal column; null without zones. */
+export function zoneRanges(view: ClockView): Figure | null {
+  if (!view.zoned) return null;
+  const zones = view.zones.map((zone, i) => ({ zone, i, y: 10 + (i + 0.5) * STEP }));
+  const [low, high] = padded(
+    Math.min(...view.zones.map((zone) => zone.shell_low)),
+    Math.max(...view.zones.map((zone) => zone.shell_high)),
+  );
+  const between = view.adjacent.flatMap((row) => {
+    const at = view.zones.findIndex((zone) => zone.zone === row.younger);
+    return at < 0 ? [] : [{ row, y: 10 + (at + 1) * STEP }];
+  });
+  const bottom = 10 + zones.length * STEP;
+  const tags = tagged((i) => ({ 'data-z': zoneTag(view, i) }));
+  const body = housePlot({
+    width: NARROW,
+    height: bottom + 40,
+    marginLeft: 34,
+    marginRight: 88,
+    marginTop: 10,
+    marginBottom: 40,
+    x: { domain: [Math.max(0, low), high] },
+    y: { type: 'identity', axis: null },
+    marks: [
+      Plot.gridX({ stroke: INK, strokeOpacity: 0.1, ticks: 4 }),
+      Plot.rect(zones, {
+        x1: (row) => row.zone.shell_low,
+        x2: (row) => row.zone.shell_high,
+        y1: (row) => row.y - 8,
+        y2: (row) => row.y + 8,
+        fill: (row) => inkOf(view, row.i).fill,
+        stroke: INK,
+        strokeWidth: 0.8,
+        render: tags,
+      }),
+      Plot.ruleY(zones, {
+        x1: (row) => row.zone.dl_low,
+        x2: (row) => row.zone.dl_high,
+        y: (row) => row.y + 11.5,
+        stroke: INK,
+        strokeWidth: 1.8,
+      }),
+      Plot.link(zones, {
+        x1: (row) => row.zone.dl_mean,
+        x2: (row) => row.zone.dl_mean,
+        y1: (row) => row.y - 10,
+        y2: (row) => row.y + 14,
+        stroke: INK,
+        strokeWidth: 1.1,
+      }),
+      Plot.text(zones, {
+        x: Math.max(0, low),
+        y: 'y',
+        dx: -8,
+        text: (row) => row.zone.zone,
+        textAnchor: 'end',
+        fontWeight: 700,
+        render: tags,
+      }),
+      Plot.text(between, {
+        x: high,
+        y: (entry) => entry.y + 1.5,
+        dx: 6,
+        text: (entry) => `${entry.row.verdict}, ${short(entry.row.overlap)}`,
+        textAnchor: 'start',
+        fontSize: TYPE.tiny,
+        fill: SOFT,
+      }),
+      Plot.axisX({ ...AXIS, ticks: 4, label: 'D/L', labelOffset: 32 }),
+    ],
+  });
+  return finishFigure({
+    name: `zones${view.suffix}`,
+    title: `The zones and how far neighbours overlap${view.heading}`,
+    caption:
+      'Boxes span one standard deviation of shells either side of the zone mean; the line below a box is the 95 % interval of the mean. Beside each pair of neighbours stand the verdict and the overlap coefficient of their shells: 0 apart, 1 alike, 0.32 where the boxes just touch.',
+    alt: `${view.zones.map((zone) => `${zone.zone}: D/L ${short(zone.dl_mean)}, shells ${short(zone.shell_low)} to ${short(zone.shell_high)}`).join('; ')}. ${view.adjacent.map((row) => `${row.younger} and ${row.older}: ${row.verdict}, overlap ${short(row.overlap)}`).join('; ')}.`,
+    width: NARROW,
+    height: bottom + 42,
+    body: [body],
+  });
+}
