@@ -10,7 +10,7 @@ const SMALLEST = 1e-6;
 export interface RobustScatter {
   /** Standard deviation between shells of a bed; NaN with no bed of two shells. */
   readonly s: number;
-  /** Degrees of freedom that are left after odd shells are weighed down. */
+  /** Degrees of freedom that the estimate is worth: fewer than shells less beds, since odd shells were weighed down. */
   readonly df: number;
   /** Mean of each bed, odd shells weighed down; NaN for a bed without shells. */
   readonly means: readonly number[];
@@ -20,7 +20,9 @@ export interface RobustScatter {
  * Pooled standard deviation of log ratios between the shells of one bed, when some shells may be odd. Each shell is either
  * sound, N(bed mean, s²), or odd, N(bed mean, s² + 0.5²), with 1 in 20 odd; s and the bed means are those of greatest
  * likelihood (EM from bed medians), s² divided by the sound shells less one a bed. A shell weighs in by its probability
- * of being sound: nearly fully up to 2 s, hardly beyond 4 s. On clean data the result is within about 2 % of the classical s.
+ * of being sound: nearly fully up to 2 s, hardly beyond 4 s. What the weights take from the variance of sound shells is given
+ * back. The degrees of freedom, 0.93 of the weights less one a bed, less 2, are what simulated clean beds of 3 to 7 shells
+ * were worth (variance of s² over 1,500 runs), at the cautious end.
  *
  * Source: contaminated normal, Tukey 1960; EM, Dempster, Laird and Rubin 1977, 10.1111/j.2517-6161.1977.tb01600.x.
  *
@@ -54,12 +56,12 @@ export function robustScatter(beds: readonly (readonly number[])[]): RobustScatt
     });
     means = next;
     if (!(df > 0)) break;
-    const now = Math.max(SMALLEST, Math.sqrt(squares / df));
+    const now = Math.max(SMALLEST, Math.sqrt(squares / df / varianceLeft(s)));
     const settled = Math.abs(now - s) < 1e-9 * s;
     s = now;
     if (settled) break;
   }
-  return { s, df, means };
+  return { s, df: Math.max(Math.min(df, 1), 0.93 * df - 2), means };
 }
 
 /** Probability that a shell this far off its bed is sound. */
@@ -68,4 +70,16 @@ function soundness(deviation: number, s: number): number {
   const sound = ((1 - ODD_SHARE) / s) * Math.exp(-0.5 * (deviation / s) ** 2);
   const odd = (ODD_SHARE / wide) * Math.exp(-0.5 * (deviation / wide) ** 2);
   return sound / (sound + odd);
+}
+
+/** Share of the variance of sound shells that the weights leave: E[w z²] / E[w] for a standard normal z. */
+function varianceLeft(s: number): number {
+  let weights = 0;
+  let squares = 0;
+  for (let z = 0.05; z < 7; z += 0.1) {
+    const mass = soundness(z * s, s) * Math.exp(-0.5 * z * z);
+    weights += mass;
+    squares += mass * z * z;
+  }
+  return squares / weights;
 }

@@ -24,7 +24,7 @@ export interface ShellCase {
   readonly asLower: number;
   readonly asUpper: number;
   readonly cut: 'all' | 'some' | 'none';
-  /** Shells of its bed in the cut make up half of the bed or more. */
+  /** Its conflicts are those of its bed: half of the bed or more is in the cut, or the bed means are reversed too. */
   readonly wholeBed: boolean;
   /** So many of its bed stand apart that the bed itself is in doubt. */
   readonly crowded: boolean;
@@ -102,7 +102,7 @@ const fitsBed = (bed: string, direction: string): string =>
 
 function inTheCut({ cut, wholeBed }: ShellCase): string {
   if (wholeBed)
-    return 'To remove all conflicts at least cost, half of its bed or more would go: that is a matter of the bed or of the relation, not of single shells.';
+    return 'Its bed as a whole contradicts superposition: that is a matter of the bed or of the relation, not of this shell.';
   if (cut === 'all') return 'Every least costly set of shells that would remove all conflicts holds it.';
   return 'Some, but not all, of the least costly sets of shells that would remove all conflicts hold it: another shell could be to blame instead.';
 }
