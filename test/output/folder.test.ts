@@ -9,6 +9,7 @@ import {
   rmSync,
   symlinkSync,
   unlinkSync,
+  utimesSync,
   writeFileSync,
 } from 'node:fs';
 import { hostname, tmpdir } from 'node:os';
@@ -196,6 +197,15 @@ describe('two runs at once', () => {
     expect(beside()).toEqual(['results']);
   });
 
+  it('a lock that says nothing is taken over once it is old', async () => {
+    const lock = join(home, '.results.bedorder-lock');
+    writeFileSync(lock, '');
+    await expect(write(1)).rejects.toThrow(/Another run/);
+    utimesSync(lock, 1, 1);
+    await write(1);
+    expect(beside()).toEqual(['results']);
+  });
+
   it('a lock of another machine is left alone', async () => {
     writeFileSync(join(home, '.results.bedorder-lock'), '1 another-machine\n');
     await expect(write(1)).rejects.toThrow(/on another-machine/);
@@ -228,7 +238,9 @@ describe('after a kill', () => {
         throw new Error('killed');
       })
       .catch(() => {});
-    writeFileSync(places.lock, `99999999 ${hostname()}\n`);
+    // its lock names a process that is gone
+    rmSync(places.lock);
+    symlinkSync(`99999999 ${hostname()}`, places.lock);
   }
 
   const half = (folder: string) => writeFileSync(join(folder, 'beds.csv'), 'half of a table');

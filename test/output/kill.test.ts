@@ -30,7 +30,10 @@ afterAll(() => rmSync(home, { recursive: true, force: true }));
 /** Starts a process that replaces the results again and again; resolves when it has done so once. */
 function startWriter() {
   const child = spawn(process.execPath, [writer, out], { stdio: ['ignore', 'pipe', 'inherit'] });
-  const ready = new Promise<void>((resolve) => child.stdout.once('data', () => resolve()));
+  const ready = new Promise<void>((resolve, reject) => {
+    child.stdout.once('data', () => resolve());
+    child.once('close', () => reject(new Error('the writer ended before it had written')));
+  });
   const ended = new Promise<void>((resolve) => child.once('close', () => resolve()));
   return { child, ready, ended };
 }

@@ -1,4 +1,4 @@
-import { closeSync, openSync, readFileSync, renameSync, rmSync, statSync, writeSync } from 'node:fs';
+import { lstatSync, readFileSync, readlinkSync, renameSync, rmSync, symlinkSync, writeFileSync } from 'node:fs';
 import { hostname } from 'node:os';
 import { codeOf, refused } from './output-error.js';
 import type { Places } from './places.js';
@@ -11,15 +11,10 @@ import type { Places } from './places.js';
  * @throws OutputError when another run holds it; system errors as they come.
  */
 export function takeLock({ lock, given }: Places): () => void {
-  const mine = `${process.pid} ${hostname()}\n`;
+  const mine = `${process.pid} ${hostname()}`;
   for (let attempt = 0; attempt < 5; attempt++) {
     try {
-      const file = openSync(lock, 'wx');
-      try {
-        writeSync(file, mine);
-      } finally {
-        closeSync(file);
-      }
+      createLock(lock, mine);
       return () => {
         if (readLock(lock) === mine) rmSync(lock, { force: true });
       };
@@ -31,6 +26,17 @@ export function takeLock({ lock, given }: Places): () => void {
     if (theirs !== null) removeStale(lock, theirs);
   }
   throw busy(given, lock, '');
+}
+
+// A symbolic link that leads nowhere is made at once with what it says, so a kill leaves no empty lock. Where a file
+// system knows no links, a file does.
+function createLock(lock: string, mine: string): void {
+  try {
+    symlinkSync(mine, lock);
+  } catch (error) {
+    if (!['EPERM', 'ENOSYS', 'ENOTSUP', 'EOPNOTSUPP', 'EINVAL'].includes(codeOf(error))) throw error;
+    writeFileSync(lock, mine, { flag: 'wx' });
+  }
 }
 
 /** Whether a living run holds the lock. */
@@ -50,7 +56,7 @@ function busy(given: string, lock: string, theirs: string) {
 
 function readLock(lock: string): string | null {
   try {
-    return readFileSync(lock, 'utf8');
+    return lstatSync(lock).isSymbolicLink() ? readlinkSync(lock) : readFileSync(lock, 'utf8');
   } catch {
     return null;
   }
@@ -58,7 +64,7 @@ function readLock(lock: string): string | null {
 
 function isHeld(lock: string, theirs: string): boolean {
   const [pid, host] = theirs.trim().split(' ');
-  if (!pid || !host) return Date.now() - (statSync(lock, { throwIfNoEntry: false })?.mtimeMs ?? 0) < 5000;
+  if (!pid || !host) return Date.now() - (lstatSync(lock, { throwIfNoEntry: false })?.mtimeMs ?? 0) < 5000;
   // of a run on another machine nothing can be known from here
   if (host !== hostname()) return true;
   try {
