@@ -26,7 +26,12 @@ export interface BedRegister {
   /** The beds of each section, in order of appearance. */
   readonly sections: () => ReadonlyMap<string, ReadonlyMap<string, BedEntry>>;
   /** Notes a bed's place; a second, different one is an error. */
-  readonly setPlace: (entry: BedEntry, place: BedPlace, at: RowPlace & { readonly column: string }) => void;
+  readonly setPlace: (
+    entry: BedEntry,
+    kind: BedPlace['kind'],
+    value: number,
+    place: () => RowPlace & { readonly column: string },
+  ) => void;
 }
 
 /** Makes an empty register. */
@@ -51,19 +56,20 @@ export function createBedRegister(problems: ProblemList): BedRegister {
     find: (section, bed) => sections.get(section)?.get(bed) ?? null,
     all: () => all,
     sections: () => sections,
-    setPlace: (entry, place, at) => {
+    setPlace: (entry, kind, value, place) => {
       const { place: known, placedAt } = entry;
       if (known === null || placedAt === null) {
-        entry.place = place;
-        entry.placedAt = at;
+        entry.place = { kind, value };
+        entry.placedAt = place();
         return;
       }
-      if (known.kind === place.kind && known.value === place.value) return;
+      if (known.kind === kind && known.value === value) return;
+      const at = place();
       const where = placedAt.file === at.file ? `line ${placedAt.line}` : `${placedAt.file}, line ${placedAt.line}`;
       problems.error(
         'two places',
         at,
-        `Bed ${entry.section}/${entry.bed} has two places: ${known.kind} ${known.value} (${where}) and ${place.kind} ${place.value}. ` +
+        `Bed ${entry.section}/${entry.bed} has two places: ${known.kind} ${known.value} (${where}) and ${kind} ${value}. ` +
           'A bed has one place in its section: give the same one in every row, or name two beds.',
       );
     },

@@ -71,7 +71,7 @@ export function readBeds(table: Table, beds: BedRegister, problems: ProblemList)
   const known = [...PLACE_KINDS, ...BED_NUMBERS].map(at).filter((index) => index >= 0);
   const { numeric, other } = sortUnknown(table, match.unknown);
   const sign = settleDecimal(table, decimalsIn(table, known) ? known : [...known, ...numeric], problems);
-  const extra = numeric.filter((index) => readable(table, index, sign));
+  const extra = readableColumns(table, numeric, sign);
   const unread = [...other, ...numeric.filter((index) => !extra.includes(index))].sort((a, b) => a - b);
   warnOfUnknownColumns(table, unread, COLUMNS, () => null, problems);
 
@@ -105,7 +105,7 @@ export function readBeds(table: Table, beds: BedRegister, problems: ProblemList)
           `The row gives ${given} and ${kind} as well. Give one kind of place for a whole section.`,
         );
       } else if (kind === 'depth_m' && value < 0) problems.error('negative depth', place, NEGATIVE_DEPTH(value));
-      else if (entry !== null) beds.setPlace(entry, { kind, value }, place);
+      else if (entry !== null) beds.setPlace(entry, kind, value, () => place);
       given ??= kind;
     }
     for (const index of extra) {
@@ -196,10 +196,16 @@ function decimalsIn(table: Table, columns: readonly number[]): boolean {
   return false;
 }
 
-function readable(table: Table, index: number, sign: DecimalSign): boolean {
-  for (let row = 0; row < table.length; row += 1) {
-    const cell = table.cells(row)[index];
-    if (typeof cell === 'string' && !isBlank(cell) && Number.isNaN(readNumber(tidyNumber(cell), sign))) return false;
+/** The columns of which every filled cell is a number with the file's decimal sign. */
+function readableColumns(table: Table, columns: readonly number[], sign: DecimalSign): number[] {
+  const left = new Set(columns);
+  for (let row = 0; row < table.length && left.size > 0; row += 1) {
+    const cells = table.cells(row);
+    for (const index of left) {
+      const cell = cells[index];
+      if (typeof cell === 'string' && !isBlank(cell) && Number.isNaN(readNumber(tidyNumber(cell), sign)))
+        left.delete(index);
+    }
   }
-  return true;
+  return [...left];
 }

@@ -105,7 +105,7 @@ export function measureOf(
   if (unit !== null && unit.index > 0) {
     const stem = squash(header.trim().slice(0, unit.index));
     const amino = aminoAcids.get(stem) ?? aminoAcids.get(stem.replace(/^conc(entration)?|conc(entration)?$/g, ''));
-    if (amino !== undefined) return { key: `concentration ${amino}`, unit: unit[1].trim() };
+    if (amino !== undefined) return { key: `concentration ${amino}`, unit: unit[1].replace(/[\s)\]]+$/, '') };
   }
   return null;
 }

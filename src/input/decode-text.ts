@@ -20,16 +20,25 @@ export function decodeText(bytes: Uint8Array): DecodedText | { readonly refused:
   const utf16 = utf16Order(bytes);
   if (utf16 !== null) {
     const text = new TextDecoder(utf16 === 'LE' ? 'utf-16le' : 'utf-16be').decode(bytes);
-    return looksBinary(text) ? { refused: BINARY } : { text, encoding: `UTF-16 ${utf16}` };
+    return refuse(text) ?? { text, encoding: `UTF-16 ${utf16}` };
   }
   if (bytes.includes(0)) return { refused: BINARY };
   try {
     const text = new TextDecoder('utf-8', { fatal: true }).decode(bytes);
-    return looksBinary(text) ? { refused: BINARY } : { text, encoding: 'UTF-8' };
+    return refuse(text) ?? { text, encoding: 'UTF-8' };
   } catch {
-    const text = new TextDecoder('windows-1252').decode(bytes);
-    return looksBinary(text) ? { refused: BINARY } : { text, encoding: 'Windows-1252' };
+    const text = decodeWindows1252(bytes);
+    return refuse(text) ?? { text, encoding: 'Windows-1252' };
   }
+}
+
+/** What Windows-1252 has at 0x80 to 0x9f; the five bytes it leaves out stay control characters. */
+const HIGH = '€\u0081‚ƒ„…†‡ˆ‰Š‹Œ\u008dŽ\u008f\u0090‘’“”•–—˜™š›œ\u009džŸ';
+
+/** Node 20 decodes `windows-1252` as Latin-1 (seen in 20.20): the 32 signs in which they differ are put right here. */
+function decodeWindows1252(bytes: Uint8Array): string {
+  const text = new TextDecoder('windows-1252').decode(bytes);
+  return text.replace(/[\u0080-\u009f]/g, (sign) => HIGH[sign.charCodeAt(0) - 0x80]);
 }
 
 const BINARY =
@@ -43,6 +52,8 @@ const SIGNATURES: readonly (readonly [readonly number[], string])[] = [
   [[0x89, 0x50, 0x4e, 0x47], 'This is a picture (PNG). Wanted is a table as CSV, TSV or .xlsx.'],
   [[0xff, 0xd8, 0xff], 'This is a picture (JPEG). Wanted is a table as CSV, TSV or .xlsx.'],
 ];
+
+const MARKUP = /^[\ufeff\s]*<(?:\?xml|!doctype|html|table|svg)\b/i;
 
 function knownBinary(bytes: Uint8Array): string | null {
   for (const [signature, message] of SIGNATURES) {
@@ -67,6 +78,14 @@ function utf16Order(bytes: Uint8Array): 'LE' | 'BE' | null {
   if (odd > 0.7 * pairs && even === 0) return 'LE';
   if (even > 0.7 * pairs && odd === 0) return 'BE';
   return null;
+}
+
+/** What to say of text that is no table. */
+function refuse(text: string): { refused: string } | null {
+  if (looksBinary(text)) return { refused: BINARY };
+  return MARKUP.test(text.slice(0, 200))
+    ? { refused: 'This is a page or a document in XML or HTML. Wanted is a table as CSV, TSV or .xlsx.' }
+    : null;
 }
 
 /** Text has hardly any control characters; a few are left for the cells' own checks. */

@@ -1,6 +1,6 @@
 import { LIMITS } from './limits.js';
 import type { ProblemList } from './problem-list.js';
-import { type Cell, columnLetters, isBlank, type RawRows, type Table } from './table.js';
+import { type Cell, columnLetters, type RawRows, type Table } from './table.js';
 
 /**
  * Finds the header among the first rows: the one with the most known column names. Rows above it are warned of.
@@ -17,7 +17,11 @@ export function findHeader(
   problems: ProblemList,
 ): Table | null {
   if (rows.length === 0) {
-    problems.error('empty', { file, line: null }, `The file is empty. Wanted is a table with a header: ${wanted}.`);
+    problems.error(
+      'empty',
+      { file, line: null },
+      `The ${rows.sheet ? 'sheet is empty (another is read with --sheet)' : 'file is empty'}. Wanted is a table with a header: ${wanted}.`,
+    );
     return null;
   }
   let at = -1;
@@ -30,6 +34,7 @@ export function findHeader(
     }
   }
   if (at < 0) {
+    if (rows.faulty) return null;
     problems.error(
       'no header',
       { file, line: rows.line(0) },
@@ -82,16 +87,13 @@ export function findHeader(
     length: rows.length - at - 1,
     line: (row) => rows.line(at + 1 + row),
     cells: (row) => rows.cells(at + 1 + row),
+    print: (row) => rows.print(at + 1 + row),
     cellName: rows.sheet ? (row, column) => `${columnLetters(column)}${rows.line(at + 1 + row)}` : null,
     mayHoldCommas: rows.mayHoldCommas,
   };
 }
 
-/** Headers trimmed, empty ones at the end left out. */
+/** Headers without white space around them; empty ones stay, so that a row must be exactly as wide. */
 function headerCells(cells: readonly Cell[]): string[] {
-  let end = cells.length;
-  while (end > 0 && isBlank(cells[end - 1])) end -= 1;
-  return cells
-    .slice(0, end)
-    .map((cell) => (cell instanceof Date ? 'a date' : String(cell).replace(/\s+/g, ' ').trim()));
+  return cells.map((cell) => (cell instanceof Date ? 'a date' : String(cell).replace(/\s+/g, ' ').trim()));
 }

@@ -1,7 +1,7 @@
 import { nearestName } from './edit-distance.js';
 import type { ProblemList } from './problem-list.js';
 import { squash } from './squash.js';
-import type { Table } from './table.js';
+import { isBlank, type Table } from './table.js';
 
 /** Which column holds what: key of the column to its index. */
 export interface ColumnMatch {
@@ -53,8 +53,13 @@ export function warnOfUnknownColumns(
   hintOf: (header: string) => string | null,
   problems: ProblemList,
 ): void {
-  if (unknown.length === 0) return;
-  const listed = unknown.slice(0, 30).map((index) => {
+  const nameless = columnsWithData(
+    table,
+    unknown.filter((index) => table.header[index] === ''),
+  );
+  const filled = unknown.filter((index) => table.header[index] !== '' || nameless.has(index));
+  if (filled.length === 0) return;
+  const listed = filled.slice(0, 30).map((index) => {
     const header = table.header[index];
     if (header === '') return `column ${index + 1} (without a name)`;
     const hint = hintOf(header);
@@ -62,10 +67,20 @@ export function warnOfUnknownColumns(
     const near = squash(header).length < 4 ? null : nearestName(header, known);
     return near === null ? `"${header}"` : `"${header}" (did you mean ${near}?)`;
   });
-  const more = unknown.length > listed.length ? ` and ${unknown.length - listed.length} more` : '';
+  const more = filled.length > listed.length ? ` and ${filled.length - listed.length} more` : '';
   problems.warning(
     'unknown columns',
     { file: table.file, line: table.headerLine },
-    `${unknown.length === 1 ? 'One column is' : `${unknown.length} columns are`} not known and not read: ${listed.join(', ')}${more}.`,
+    `${filled.length === 1 ? 'One column is' : `${filled.length} columns are`} not known and not read: ${listed.join(', ')}${more}.`,
   );
+}
+
+/** Which of some columns hold anything at all, in one pass. */
+function columnsWithData(table: Table, columns: readonly number[]): ReadonlySet<number> {
+  const found = new Set<number>();
+  for (let row = 0; row < table.length && found.size < columns.length; row += 1) {
+    const cells = table.cells(row);
+    for (const index of columns) if (!isBlank(cells[index])) found.add(index);
+  }
+  return found;
 }

@@ -34,10 +34,37 @@ const NOT_MEASURED =
  * readNumber('039.000', 'point') // => NaN
  */
 export function readNumber(text: string, sign: DecimalSign): number {
+  const plain = readPlain(text, sign === 'point' ? 46 : 44);
+  if (!Number.isNaN(plain)) return plain;
   if (!(sign === 'point' ? POINT : COMMA).test(text) || hasLeadingZero(text)) return Number.NaN;
   const value = Number(sign === 'point' ? text : text.replace(',', '.'));
   return Number.isFinite(value) ? value : Number.NaN;
 }
+
+/**
+ * Digits with at most one decimal sign, 15 digits at most: whole number and power of ten are then exact, so that their
+ * quotient is the nearest floating-point number, as in Number(). NaN for anything else.
+ */
+function readPlain(text: string, decimalSign: number): number {
+  const length = text.length;
+  if (length === 0 || length > 16 || hasLeadingZero(text)) return Number.NaN;
+  let whole = 0;
+  let digits = 0;
+  let decimals = -1;
+  for (let i = 0; i < length; i += 1) {
+    const code = text.charCodeAt(i);
+    if (code >= 48 && code <= 57) {
+      whole = whole * 10 + (code - 48);
+      digits += 1;
+      if (decimals >= 0) decimals += 1;
+    } else if (code === decimalSign && decimals < 0) decimals = 0;
+    else return Number.NaN;
+  }
+  if (digits === 0 || digits > 15) return Number.NaN;
+  return decimals > 0 ? whole / POWERS[decimals] : whole;
+}
+
+const POWERS = Array.from({ length: 16 }, (_, i) => Number(`1e${i}`));
 
 /** Text of a numeric cell without white space around it, a typographic minus as a hyphen. */
 export function tidyNumber(text: string): string {
@@ -86,7 +113,7 @@ export function whyNoNumber(text: string, sign: DecimalSign): string {
       return 'starts with a zero before other digits, so its decimal sign may be lost. Write the number as the laboratory gave it';
     }
     const other = sign === 'point' ? 'comma' : 'point';
-    if ((sign === 'point' ? COMMA : POINT).test(text)) {
+    if (text.includes(sign === 'point' ? ',' : '.')) {
       return `has a decimal ${other}, but the file has a decimal ${sign}. Use one decimal sign in the whole file`;
     }
     return 'is too large for a number. Write the number as the laboratory gave it';

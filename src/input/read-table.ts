@@ -4,7 +4,7 @@ import { findHeader } from './find-header.js';
 import { LIMITS } from './limits.js';
 import type { ProblemList } from './problem-list.js';
 import { splitCells, splitRecords } from './split-records.js';
-import type { RawRows, Table } from './table.js';
+import { printText, type RawRows, type RowPrint, type Table } from './table.js';
 
 /** A file in memory: its name without folders, and its bytes. */
 export interface FileBytes {
@@ -38,7 +38,24 @@ export async function readTable(source: FileBytes, kind: TableKind, problems: Pr
     return null;
   }
   const rows = isZip(bytes) ? await readSheetRows(source, kind.sheet, problems) : readTextRows(source, kind, problems);
-  return rows === null ? null : findHeader(rows, file, kind.isKnown, kind.wanted, problems);
+  if (rows === null) return null;
+  const table = findHeader(rows, file, kind.isKnown, kind.wanted, problems);
+  if (table !== null) refuseMerged(rows, table, kind, problems);
+  return table;
+}
+
+/** Merged cells below the header hold their value only once: the other rows would read as empty. */
+function refuseMerged(rows: RawRows, table: Table, kind: TableKind, problems: ProblemList): void {
+  for (const range of rows.merged) {
+    if (range.bottom + 1 <= table.headerLine) continue;
+    const column = table.header.findIndex((header, i) => i >= range.left && i <= range.right && kind.isKnown(header));
+    if (column < 0) continue;
+    problems.error(
+      'merged cells',
+      { file: table.file, line: Math.max(range.top + 1, table.headerLine + 1), column: table.header[column] },
+      `The cells ${range.name} are merged, so only the first holds a value. Unmerge them and write the value in every row.`,
+    );
+  }
 }
 
 function readTextRows(source: FileBytes, kind: TableKind, problems: ProblemList): RawRows | null {
@@ -52,12 +69,20 @@ function readTextRows(source: FileBytes, kind: TableKind, problems: ProblemList)
   const records = splitRecords(text, delimiter);
   for (const fault of records.faults) problems.error('quotes', { file: source.file, line: fault.line }, fault.message);
   if (records.starts.length === 0 && records.faults.length > 0) return null;
+  const quoted = records.text.includes('"');
+  const print: RowPrint = { a: 0, b: 0 };
   return {
     length: records.starts.length,
     line: (row) => records.lines[row],
-    cells: (row) => splitCells(records.text.slice(records.starts[row], records.ends[row]), delimiter),
+    cells: (row) => {
+      const record = records.text.slice(records.starts[row], records.ends[row]);
+      return quoted ? splitCells(record, delimiter) : record.split(delimiter);
+    },
+    print: (row) => printText(records.text, records.starts[row], records.ends[row], print),
+    faulty: records.faults.length > 0,
+    merged: [],
     sheet: false,
-    mayHoldCommas: (delimiter !== ',' || records.text.includes('"')) && records.text.includes(','),
+    mayHoldCommas: (delimiter !== ',' || quoted) && records.text.includes(','),
   };
 }
 

@@ -1,68 +1,85 @@
+import type { Analysis } from '../model/index.js';
 import type { ProblemList } from './problem-list.js';
-import type { Cell, Table } from './table.js';
+import type { Table } from './table.js';
 
-/** Warns of rows and laboratory numbers that come twice, while a shells table is read. */
-export interface RepeatWatch {
-  readonly row: (cells: readonly Cell[], row: number) => void;
-  /** @param analysis what the number stands for: the same number on other injections of one shell is no repeat */
-  readonly labId: (id: string, shell: string, analysis: string, row: number, column: number) => void;
+/** Warns of rows that come twice, word for word, while a table is read. */
+export interface RowWatch {
+  readonly row: (row: number) => void;
 }
 
-/** Makes the watch over one table. */
-export function createRepeatWatch(table: Table, problems: ProblemList): RepeatWatch {
-  const rows = new Map<number, number>();
-  const ids = new Map<string, { row: number; shell: string; analyses: string | Set<string> }>();
-
-  const row: RepeatWatch['row'] = (cells, at) => {
-    const print = fingerprint(cells);
-    const first = rows.get(print);
-    if (first === undefined) {
-      rows.set(print, at);
-      return;
-    }
-    const before = table.cells(first);
-    if (before.length !== cells.length || !before.every((cell, i) => String(cell) === String(cells[i]))) return;
-    problems.warning(
-      'row twice',
-      { file: table.file, line: table.line(at) },
-      `The row is the same as line ${table.line(first)} in every cell, and both are counted. Delete one if it was pasted twice.`,
-    );
+/** Makes the watch over one table: a hash table of row numbers, in 16 bytes a row. */
+export function createRowWatch(table: Table, problems: ProblemList): RowWatch {
+  let size = 16;
+  while (size < 2 * table.length) size *= 2;
+  const slots = new Int32Array(size);
+  const checks = new Int32Array(size);
+  return {
+    row: (row) => {
+      const { a, b } = table.print(row);
+      let slot = Math.imul(a ^ (a >>> 15), 0x2c1b3c6d) & (size - 1);
+      while (slots[slot] !== 0) {
+        const before = slots[slot] - 1;
+        if (checks[slot] === b && sameRow(table, before, row)) {
+          problems.warning(
+            'row twice',
+            { file: table.file, line: table.line(row) },
+            `The row is the same as line ${table.line(before)} in every cell, and both are counted. Delete one if it was pasted twice.`,
+          );
+          return;
+        }
+        slot = (slot + 1) & (size - 1);
+      }
+      slots[slot] = row + 1;
+      checks[slot] = b;
+    },
   };
+}
 
-  const labId: RepeatWatch['labId'] = (id, shell, analysis, at, column) => {
-    const known = ids.get(id);
-    if (known === undefined) {
-      ids.set(id, { row: at, shell, analyses: analysis });
+function sameRow(table: Table, a: number, b: number): boolean {
+  const [cellsA, cellsB] = [table.cells(a), table.cells(b)];
+  return cellsA.length === cellsB.length && cellsA.every((cell, i) => String(cell) === String(cellsB[i]));
+}
+
+/**
+ * Warns of laboratory numbers that come twice: for another shell, or for the same fraction, preparation and injection
+ * (in the long form, of the same amino acid) of one shell. Several injections of one shell under one number are no
+ * repeat.
+ */
+export function warnOfRepeatedIds(analyses: readonly Analysis[], column: string, problems: ProblemList): void {
+  const first = new Map<string, number>();
+  const more = new Map<string, Set<string>>();
+  analyses.forEach((analysis, index) => {
+    const id = analysis.lab_id;
+    if (id === null) return;
+    const before = first.get(id);
+    if (before === undefined) {
+      first.set(id, index);
       return;
     }
-    const again = typeof known.analyses === 'string' ? known.analyses === analysis : known.analyses.has(analysis);
-    if (known.shell === shell && !again) {
-      if (typeof known.analyses === 'string') known.analyses = new Set([known.analyses]);
-      known.analyses.add(analysis);
+    const other = analyses[before];
+    const sameShell =
+      other.shell === analysis.shell &&
+      other.bed === analysis.bed &&
+      other.section === analysis.section &&
+      other.taxon === analysis.taxon;
+    let known = more.get(id);
+    if (known === undefined) {
+      known = new Set([kindOf(other)]);
+      more.set(id, known);
+    }
+    const kind = kindOf(analysis);
+    if (sameShell && !known.has(kind)) {
+      known.add(kind);
       return;
     }
     problems.warning(
       'lab_id twice',
-      { file: table.file, line: table.line(at), column: table.header[column] },
-      `The laboratory number "${id}" also stands on line ${table.line(known.row)}, ${known.shell === shell ? 'for the same analysis' : 'for another shell'}. Both rows are counted: check that none was pasted or numbered wrongly.`,
+      { file: analysis.file, line: analysis.line, column },
+      `The laboratory number "${id}" also stands on line ${other.line}, for ${sameShell ? 'the same analysis' : 'another shell'}. Both rows are counted: check that none was pasted or numbered wrongly.`,
     );
-  };
-  return { row, labId };
+  });
 }
 
-/** A number that nearly always differs between rows that differ (two 26-bit multiplicative hashes side by side). */
-function fingerprint(cells: readonly Cell[]): number {
-  let a = 17;
-  let b = 31;
-  for (const cell of cells) {
-    const text = typeof cell === 'string' ? cell : String(cell);
-    for (let i = 0; i < text.length; i += 1) {
-      const code = text.charCodeAt(i);
-      a = (Math.imul(a, 31) + code) | 0;
-      b = (Math.imul(b, 16_777_619) ^ code) | 0;
-    }
-    a = (Math.imul(a, 31) + 1) | 0;
-    b = (Math.imul(b, 16_777_619) ^ 1) | 0;
-  }
-  return (a >>> 6) * 67_108_864 + (b >>> 6);
+function kindOf({ fraction, preparation, injection, ratios }: Analysis): string {
+  return [fraction, preparation, injection, Object.keys(ratios).join(' ')].join('\u0000');
 }

@@ -19,12 +19,14 @@ export interface RowReader {
 }
 
 /** Names met again and again are cleaned once and kept once. */
-const KEPT_NAMES = 100_000;
+const KEPT_NAMES = 50_000;
 
 /** Makes the reader of one table whose decimal sign is settled. */
 export function createRowReader(table: Table, sign: DecimalSign, problems: ProblemList): RowReader {
   const names = new Map<string, string>();
   const width = table.header.length;
+  const lastRaw: string[] = new Array(width).fill('');
+  const lastName: string[] = new Array(width).fill('');
 
   const place = (row: number, column?: number) => ({
     file: table.file,
@@ -50,8 +52,13 @@ export function createRowReader(table: Table, sign: DecimalSign, problems: Probl
     if (column < 0) return '';
     const cell = cells[column];
     if (typeof cell === 'string') {
+      if (cell === lastRaw[column]) return lastName[column];
       const known = names.get(cell);
-      if (known !== undefined) return known;
+      if (known !== undefined) {
+        lastRaw[column] = cell;
+        lastName[column] = known;
+        return known;
+      }
       if (tooLong(cell, row, column)) return '';
       const cleaned = cleanName(cell);
       if (cleaned === null) {
@@ -120,7 +127,7 @@ export function createRowReader(table: Table, sign: DecimalSign, problems: Probl
   const forEachRow: RowReader['forEachRow'] = (visit) => {
     for (let row = 0; row < table.length; row += 1) {
       const cells = table.cells(row);
-      if (cells.length !== width && !fits(cells, width, table.cellName !== null)) {
+      if (cells.length !== width) {
         const more = cells.length > width;
         problems.error(
           'ragged',
@@ -137,11 +144,4 @@ export function createRowReader(table: Table, sign: DecimalSign, problems: Probl
   };
 
   return { forEachRow, name, neededName, number, place };
-}
-
-/** Blank cells beyond the header do no harm; in a sheet, rows also end early. */
-function fits(cells: readonly Cell[], width: number, sheet: boolean): boolean {
-  if (cells.length < width) return sheet;
-  for (let i = width; i < cells.length; i += 1) if (!isBlank(cells[i])) return false;
-  return true;
 }

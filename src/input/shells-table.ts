@@ -4,7 +4,7 @@ import { checkRatio } from './check-ratio.js';
 import { aminoAcidOf } from './column-names.js';
 import { joinLongRows } from './join-long-rows.js';
 import type { ProblemList } from './problem-list.js';
-import { createRepeatWatch } from './repeats.js';
+import { createRowWatch, warnOfRepeatedIds } from './repeats.js';
 import { createRowReader, type RowReader } from './row-reader.js';
 import { settleDecimal } from './settle-decimal.js';
 import { layoutOfShells, type ShellsLayout } from './shells-layout.js';
@@ -44,7 +44,7 @@ export function readShells(
   if (layout === null) return [];
   const { at } = layout.columns;
   const reader = createRowReader(table, settleDecimal(table, layout.numeric, problems), problems);
-  const repeats = createRepeatWatch(table, problems);
+  const repeats = createRowWatch(table, problems);
   const column = {
     section: at('section'),
     bed: at('bed'),
@@ -81,7 +81,7 @@ export function readShells(
       reader,
       problems,
     );
-    repeats.row(cells, row);
+    repeats.row(row);
     if (section === '' || bed === '' || written === '') return;
 
     const line = table.line(row);
@@ -104,7 +104,7 @@ export function readShells(
         problems.error('negative depth', reader.place(row, place.column), NEGATIVE_DEPTH(value));
         continue;
       }
-      beds.setPlace(entry, { kind: place.kind, value }, { file: table.file, line, column: table.header[place.column] });
+      beds.setPlace(entry, place.kind, value, () => ({ file: table.file, line, column: table.header[place.column] }));
     }
     if (!measures.filled) {
       problems.warning(
@@ -113,14 +113,6 @@ export function readShells(
         'The row has no D/L value and is not used. Fill it in, or delete the row.',
       );
       return;
-    }
-    const preparation = orNull(column.preparation);
-    const injection = orNull(column.injection);
-    const labId = orNull(column.lab_id);
-    if (labId !== null) {
-      const amino = layout.long ? Object.keys(measures.ratios)[0] : '';
-      const analysis = `${fraction}\u0000${preparation ?? ''}\u0000${injection ?? ''}\u0000${amino}`;
-      repeats.labId(labId, `${section}\u0000${bed}\u0000${taxon}\u0000${shell}`, analysis, row, column.lab_id);
     }
     countShell(entry.shells, taxon, shell, summary, line);
     analyses.push({
@@ -131,9 +123,9 @@ export function readShells(
       taxon,
       fraction,
       shell,
-      preparation,
-      injection,
-      lab_id: labId,
+      preparation: orNull(column.preparation),
+      injection: orNull(column.injection),
+      lab_id: orNull(column.lab_id),
       lab: orNull(column.lab),
       method: orNull(column.method),
       ratios: measures.ratios,
@@ -142,6 +134,7 @@ export function readShells(
       summary,
     });
   });
+  warnOfRepeatedIds(analyses, column.lab_id < 0 ? '' : table.header[column.lab_id], problems);
   return layout.long ? joinLongRows(analyses) : analyses;
 }
 
@@ -150,7 +143,7 @@ export const NEGATIVE_DEPTH = (value: number): string =>
   `depth_m is ${value}; a depth is counted downwards from the surface and is not below 0. Leave the minus sign out, or give height_m in its place.`;
 
 function readFraction(text: string, row: number, column: number, reader: RowReader, problems: ProblemList): Fraction {
-  if (text === '') return 'THAA';
+  if (text === '' || text === 'THAA') return 'THAA';
   const plain = squash(text);
   if (plain === 'thaa') return 'THAA';
   if (plain === 'faa') return 'FAA';
