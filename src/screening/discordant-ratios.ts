@@ -27,8 +27,8 @@ export function discordantRatios(shells: readonly Shell[], limits: ScreeningLimi
     const pairs = pairCurves(shells, members).filter((pair) => pair.curve.sd > 0);
     for (const { first, second, curve, points } of pairs) {
       const limit = widenedLimit(limits.discordance, pairs.length, curve.df);
-      for (const { shell, difference, expected } of points) {
-        const distance = (difference - expected) / curve.sd;
+      for (const { shell, difference, expected, sd } of points) {
+        const distance = (difference - expected) / sd;
         const known = worst.get(shell);
         const off = known?.off ?? new Map<AminoAcid, number>();
         off.set(first, (off.get(first) ?? 0) + distance);

@@ -19,6 +19,8 @@ export interface PairPoint {
   readonly difference: number;
   /** What the curve expects it to be. */
   readonly expected: number;
+  /** Robust standard deviation there. */
+  readonly sd: number;
 }
 
 /**
@@ -47,7 +49,12 @@ export function pairCurves(shells: readonly Shell[], members: readonly number[])
       const means = logs.map(([a, b]) => (a + b) / 2);
       const differences = logs.map(([a, b]) => a - b);
       const curve = robustCurve(means, differences);
-      const points = both.map((shell, i) => ({ shell, difference: differences[i], expected: curve.at(means[i]) }));
+      const points = both.map((shell, i) => ({
+        shell,
+        difference: differences[i],
+        expected: curve.at(means[i]),
+        sd: curve.sdAt(means[i]),
+      }));
       curves.push({ first, second, curve, points });
     }
   });

@@ -27,8 +27,8 @@ export function rateOrder(shells: readonly Shell[], _limits: ScreeningLimits): S
       const sign = ahead >= TYPICAL ? 1 : -1;
       const [fast, slow] = sign > 0 ? [first, second] : [second, first];
       const limit = widenedLimit(MISS, pairs.length, curve.df);
-      for (const { shell, difference, expected } of points) {
-        const miss = (sign * (expected - difference)) / curve.sd;
+      for (const { shell, difference, expected, sd } of points) {
+        const miss = (sign * (expected - difference)) / sd;
         if (!(sign * difference < 0 && sign * expected > 0 && miss >= limit)) continue;
         const excess = -sign * difference;
         if (excess <= (found.get(shell)?.excess ?? 0)) continue;

@@ -6,6 +6,8 @@ export interface RobustCurve {
   readonly at: (u: number) => number;
   /** Robust standard deviation of the points about the curve. */
   readonly sd: number;
+  /** The same among the neighbours of a place where that is larger, else `sd`: scatter narrows towards equilibrium. */
+  readonly sdAt: (u: number) => number;
   /** Degrees of freedom that a median absolute deviation of so many points is worth. */
   readonly df: number;
 }
@@ -15,8 +17,8 @@ const EFFICIENCY_OF_MAD = 0.37;
 
 /**
  * Fits a polynomial by Tukey's bisquare, started from the medians of groups of neighbouring points so that wild points do
- * not lead it astray: a straight line under 20 points, a parabola under 60, a cubic from there, because pairs of amino acids bend
- * over a long range of ages. Beyond the inner 96 % of the points it runs on straight.
+ * not lead it astray: a straight line under 30 points, a parabola under 120, a cubic from there, because pairs of amino acids bend
+ * over a long range of ages. Beyond the inner 90 % of the points it runs on straight.
  *
  * Sources: Beaton and Tukey 1974, Technometrics 16, 147–185, 10.1080/00401706.1974.10489171; Rousseeuw and Croux 1993
  * (efficiency of the MAD), 10.1080/01621459.1993.10476408.
@@ -26,9 +28,9 @@ const EFFICIENCY_OF_MAD = 0.37;
  */
 export function robustCurve(u: readonly number[], v: readonly number[]): RobustCurve {
   const sorted = u.map((_, index) => index).sort((a, b) => u[a] - u[b]);
-  const [low, high] = [u[sorted[Math.floor(0.02 * (u.length - 1))]], u[sorted[Math.ceil(0.98 * (u.length - 1))]]];
+  const [low, high] = [u[sorted[Math.floor(0.05 * (u.length - 1))]], u[sorted[Math.ceil(0.95 * (u.length - 1))]]];
   const half = (high - low) / 2;
-  const degree = half > 0 ? (u.length < 20 ? 1 : u.length < 60 ? 2 : 3) : 0;
+  const degree = half > 0 ? (u.length < 30 ? 1 : u.length < 120 ? 2 : 3) : 0;
   const terms = (value: number): number[] => {
     const scaled = half > 0 ? (value - low - half) / half : 0;
     const inside = Math.min(1, Math.max(-1, scaled));
@@ -41,7 +43,7 @@ export function robustCurve(u: readonly number[], v: readonly number[]): RobustC
   let coefficients = startingCurve(u, v, sorted, terms, degree);
   const value = (row: readonly number[]) => row.reduce((sum, term, k) => sum + term * coefficients[k], 0);
   let sd = 0;
-  for (let turn = 0; turn < 30; turn++) {
+  for (let turn = 0; turn < 20; turn++) {
     const residuals = rows.map((row, i) => v[i] - value(row));
     sd = robustSd(residuals) * Math.sqrt(u.length / Math.max(1, u.length - degree - 1));
     if (!(sd > 0)) break;
@@ -49,17 +51,23 @@ export function robustCurve(u: readonly number[], v: readonly number[]): RobustC
     const next = leastSquares(rows, v, weights);
     const change = Math.max(...next.map((c, k) => Math.abs(c - coefficients[k])));
     coefficients = next;
-    if (change < 1e-9) break;
+    if (change < 1e-4 * sd) break;
   }
   const final = coefficients;
+  const at = (where: number) => terms(where).reduce((sum, term, k) => sum + term * final[k], 0);
   return {
-    at: (where) => terms(where).reduce((sum, term, k) => sum + term * final[k], 0),
+    at,
     sd,
+    sdAt: localSd(
+      sorted.map((i) => u[i]),
+      sorted.map((i) => v[i] - at(u[i])),
+      sd,
+    ),
     df: Math.max(1, EFFICIENCY_OF_MAD * (u.length - degree - 1)),
   };
 }
 
-/** Least squares through the medians of about a dozen groups of neighbours. */
+/** Least squares through the medians of up to eight groups of neighbours. */
 function startingCurve(
   u: readonly number[],
   v: readonly number[],
@@ -67,7 +75,7 @@ function startingCurve(
   terms: (u: number) => number[],
   degree: number,
 ): number[] {
-  const groups = Math.max(degree + 1, Math.min(12, Math.floor(u.length / 5)));
+  const groups = Math.max(degree + 1, Math.min(8, Math.floor(u.length / 8)));
   const rows: number[][] = [];
   const middle: number[] = [];
   for (let g = 0; g < groups; g++) {
@@ -82,4 +90,31 @@ function startingCurve(
     middle,
     rows.map(() => 1),
   );
+}
+
+/** Neighbours from which the scatter at a place is taken. */
+const NEIGHBOURS = 40;
+
+/** Robust standard deviation in runs of 40 neighbours, at least the overall one; a place takes that of its run. */
+function localSd(u: readonly number[], residuals: readonly number[], overall: number): (u: number) => number {
+  const runs = Math.max(1, Math.floor(u.length / NEIGHBOURS));
+  if (runs === 1) return () => overall;
+  const ends: number[] = [];
+  const sds: number[] = [];
+  for (let run = 0; run < runs; run++) {
+    const [from, to] = [Math.floor((run * u.length) / runs), Math.floor(((run + 1) * u.length) / runs)];
+    ends.push(u[to - 1]);
+    sds.push(Math.max(overall, robustSd(residuals.slice(from, to))));
+  }
+  // The wider of a run and its neighbours, so that the step from one to the next marks nobody.
+  const wide = sds.map((sd, run) => Math.max(sd, sds[run - 1] ?? sd, sds[run + 1] ?? sd));
+  return (where) => {
+    let [low, high] = [0, runs - 1];
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if (ends[middle] < where) low = middle + 1;
+      else high = middle;
+    }
+    return wide[low];
+  };
 }
