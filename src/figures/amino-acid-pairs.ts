@@ -80,8 +80,8 @@ function panel(
   const odd = points.filter((p) => p.shell.row.status !== 'kept');
   const kept = points.filter((p) => p.shell.row.status === 'kept');
   const drawn = [...thinned(kept, MOST_SHELLS / 4), ...thinned(odd, MOST_SHELLS / 10)];
-  const ticksX = spaced(ratioTicks(...x), x, width - 60, 26);
-  const ticksY = spaced(ratioTicks(...y), y, height - 60, 16);
+  const ticksX = ratioTicks(x[0], x[1], width - 60, 26);
+  const ticksY = ratioTicks(y[0], y[1], height - 60, 16);
   const group = housePlot(
     {
       width,
@@ -124,16 +124,6 @@ const thinned = <Item>(items: readonly Item[], most: number): Item[] => {
   const every = Math.ceil(items.length / most);
   return items.filter((_, i) => i % every === 0);
 };
-
-/** Ticks thinned so that their labels keep apart. */
-function spaced(ticks: readonly number[], domain: readonly [number, number], length: number, least: number): number[] {
-  const kept: number[] = [];
-  for (const tick of ticks) {
-    const last = kept[kept.length - 1];
-    if (last === undefined || (Math.log(tick / last) / (domain[1] - domain[0])) * length >= least) kept.push(tick);
-  }
-  return kept;
-}
 
 /** Pairs of amino acids measured together, on most shells first; each with the faster known one on the first axis. */
 function commonPairs(all: readonly ByAminoAcid[]): [AminoAcid, AminoAcid][] {

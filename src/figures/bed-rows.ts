@@ -12,22 +12,24 @@ export interface BedColumn {
   readonly bottom: number;
 }
 
-/** Height of one bed's line in units. */
-export const LINE = 12;
 const HEAD = 17;
-const MOST_LINES = 62;
+
+/** Columns and the height of a line for a list of beds: what fits a printed page with type that is still read. */
+export function listShape(lines: number): { readonly columns: number; readonly line: number } {
+  return lines <= 66 ? { columns: 1, line: 12 } : { columns: Math.ceil(lines / 80), line: 10.8 };
+}
 
 /**
  * Lists the beds by zone, youngest at the top as in the field, and breaks the list into columns that fit a page.
  * @param view the clock
  * @param top where the first line begins
  */
-export function bedColumns(view: ClockView, top: number): BedColumn[] {
+export function bedColumns(view: ClockView, top: number): { readonly columns: BedColumn[]; readonly line: number } {
   const groups = [...view.zones.keys(), -1]
     .map((zone) => ({ zone, beds: youngestFirst(view.beds.filter((bed) => bed.zone === zone)) }))
     .filter((group) => group.beds.length > 0);
   const total = view.beds.length + groups.length * 1.5;
-  const columns = Math.ceil(total / MOST_LINES);
+  const { columns, line } = listShape(total);
   const each = Math.ceil(total / columns);
   const out: BedColumn[] = [];
   let lines: BedLine[] = [];
@@ -42,7 +44,7 @@ export function bedColumns(view: ClockView, top: number): BedColumn[] {
   for (const { zone, beds } of groups) {
     let open = false;
     for (const bed of beds) {
-      if (out.length < columns - 1 && (y - top) / LINE > each - (open ? 0 : 2)) {
+      if (out.length < columns - 1 && (y - top) / line > each - (open ? 0 : 2)) {
         close();
         open = false;
       }
@@ -53,13 +55,13 @@ export function bedColumns(view: ClockView, top: number): BedColumn[] {
         y += HEAD;
         open = true;
       }
-      lines.push({ kind: 'bed', zone, bed, y: y + LINE / 2 });
-      y += LINE;
+      lines.push({ kind: 'bed', zone, bed, y: y + line / 2 });
+      y += line;
       bands[bands.length - 1].bottom = y + 2;
     }
   }
   close();
-  return out;
+  return { columns: out, line };
 }
 
 function youngestFirst(beds: BedView[]): BedView[] {
@@ -72,5 +74,5 @@ export function bedNote(bed: BedView): string {
   const notes: string[] = [];
   if (bed.row.straddles && bed.row.second_zone !== null) notes.push(`or ${bed.row.second_zone}`);
   if (bed.row.marks.includes('mixed age')) notes.push('mixed');
-  return notes.join(', ');
+  return notes.length > 1 ? `${bed.row.second_zone}?, mix` : notes.join('');
 }

@@ -27,7 +27,7 @@ export interface SectionColumn {
 
 /** Thickness of a bed without metres, and the least a bed may have. */
 const EVEN = 21;
-const LEAST = 15;
+const LEAST = 13;
 const TALLEST = 250;
 
 /** Units a metre at which every bed keeps the least thickness and no section grows too tall; null where there is none. */
@@ -42,7 +42,9 @@ export function metreScale(view: ClockView): number | null {
   }
   if (gaps.length === 0) return null;
   const need = LEAST / Math.min(...gaps);
-  return need * Math.max(...spans) + EVEN <= TALLEST ? Math.max(need, EVEN / median(gaps)) : null;
+  if (!(need * Math.max(...spans) + EVEN <= TALLEST)) return null;
+  // A long coast is drawn flatter, so that its rows fit one page.
+  return Math.max(need, (view.sections.length > 15 ? 15.5 : EVEN) / median(gaps));
 }
 
 // Distinct heights above the lowest bed, ascending; null unless every placed bed has metres.

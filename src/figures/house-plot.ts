@@ -1,6 +1,6 @@
 import * as Plot from '@observablehq/plot';
 import { element, type SvgNode, svgDocument } from './svg-node.js';
-import { FONT, GRID, INK, SOFT, TYPE } from './theme.js';
+import { FONT, GRID, INK, SOFT, TYPE, WIDE } from './theme.js';
 
 /** Attributes that tie an element to a bed, a shell or a zone. */
 export type Tags = Readonly<Record<string, string | number | undefined>>;
@@ -64,16 +64,25 @@ export const AXIS = {
 /** Grid lines of the house. */
 export const GRID_LINES = { stroke: GRID, strokeOpacity: 1, strokeWidth: 0.75 } as const;
 
-/** Round D/L values for the ticks of an axis in log ratios between `low` and `high`. */
-export function ratioTicks(low: number, high: number): number[] {
+/**
+ * Round D/L values for the ticks of an axis in log ratios between `low` and `high`, thinned to keep `least` units apart
+ * on an axis of `length` units.
+ */
+export function ratioTicks(low: number, high: number, length = WIDE - 150, least = 30): number[] {
   const all = [0.01, 0.02, 0.03, 0.05, 0.07, 0.1, 0.15, 0.2, 0.3, 0.4, 0.5, 0.6, 0.8, 1, 1.3];
-  const inside = all.filter((v) => Math.log(v) >= low && Math.log(v) <= high);
-  if (inside.length >= 3) return inside;
-  const step = 10 ** Math.floor(Math.log10((Math.exp(high) - Math.exp(low)) / 3));
-  const fine: number[] = [];
-  for (let k = Math.ceil(Math.exp(low) / step); k * step <= Math.exp(high) && fine.length < 12; k++)
-    fine.push(k * step);
-  return fine;
+  let inside = all.filter((v) => Math.log(v) >= low && Math.log(v) <= high);
+  if (inside.length < 3) {
+    const step = 10 ** Math.floor(Math.log10((Math.exp(high) - Math.exp(low)) / 3));
+    inside = [];
+    for (let k = Math.ceil(Math.exp(low) / step); k * step <= Math.exp(high) && inside.length < 40; k++)
+      inside.push(k * step);
+  }
+  const kept: number[] = [];
+  for (const tick of inside) {
+    const last = kept[kept.length - 1];
+    if (last === undefined || (Math.log(tick / last) / (high - low)) * length >= least) kept.push(tick);
+  }
+  return kept;
 }
 
 /** A ratio as the axis writes it. */

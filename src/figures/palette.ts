@@ -36,7 +36,7 @@ export interface ZoneInk {
  */
 export function zoneInks(count: number): ZoneInk[] {
   return Array.from({ length: count }, (_, i) => {
-    const t = count === 1 ? 0.5 : count === 2 ? 0.25 + 0.5 * i : i / (count - 1);
+    const t = count === 1 ? 0.25 : count === 2 ? 0.25 + 0.5 * i : i / (count - 1);
     const fill = colourAt(t);
     const type = [DARK, LIGHT].find((colour) => contrast(fill, colour) >= 4.5) ?? '#000000';
     return { fill, type, hatch: i % 6 };

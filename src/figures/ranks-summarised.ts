@@ -50,7 +50,7 @@ export function ranksSummarised(view: ClockView, beds: readonly BedView[]): Figu
   });
   return finishFigure({
     name: `ranks${view.suffix}`,
-    title: `Order of the beds, summarised${view.heading}`,
+    title: `Ranks of the beds, summarised${view.heading}`,
     caption: `${beds.length} beds in ${rows.length} groups along the order; each bar is the mean 95 % interval of the ranks of its group, coloured by zone. Tall bars are stretches of the order where beds can't be told apart. order.csv holds every bed.`,
     alt: `Mean rank intervals of ${beds.length} beds in ${rows.length} groups along the order; order.csv holds the same as a table.`,
     width: WIDE,

@@ -1,4 +1,5 @@
 import * as Plot from '@observablehq/plot';
+import { listShape } from './bed-rows.js';
 import { type BedView, type ClockView, inkOf, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, tagged } from './house-plot.js';
@@ -7,23 +8,21 @@ import type { SvgNode } from './svg-node.js';
 import { shorten } from './text-width.js';
 import { INK, MOST_BEDS, SOFT, TYPE, WIDE } from './theme.js';
 
-const LINE = 12;
-
 /** The order of the beds: each bed's rank with its 95 % interval, youngest on top; null without an order. */
 export function ranksWithIntervals(view: ClockView): Figure | null {
   const beds = view.beds.filter((bed) => bed.order !== null).sort((a, b) => b.order!.rank - a.order!.rank);
   if (beds.length === 0) return null;
   if (beds.length > MOST_BEDS) return ranksSummarised(view, beds);
-  const columns = Math.ceil(beds.length / 62);
+  const { columns, line: lineHeight } = listShape(beds.length);
   const each = Math.ceil(beds.length / columns);
   const gap = 10;
   const width = (WIDE - gap * (columns - 1)) / columns;
   const labels = columns === 1 ? 132 : columns === 2 ? 96 : 72;
   const top = 8;
-  const bottom = top + each * LINE;
+  const bottom = top + each * lineHeight;
   const body: SvgNode[] = [];
   for (let c = 0; c < columns; c++) {
-    const own = beds.slice(c * each, (c + 1) * each).map((bed, i) => ({ bed, y: top + (i + 0.5) * LINE }));
+    const own = beds.slice(c * each, (c + 1) * each).map((bed, i) => ({ bed, y: top + (i + 0.5) * lineHeight }));
     const steps = own.filter((line, i) => i > 0 && line.bed.order!.resolved === true);
     const byBed = tagged((i) => ({ 'data-b': own[i].bed.id, 'data-z': zoneTag(view, own[i].bed.zone) }));
     body.push(
@@ -40,7 +39,7 @@ export function ranksWithIntervals(view: ClockView): Figure | null {
           marks: [
             Plot.gridX({ ticks: rankTicks(beds.length, columns), stroke: INK, strokeOpacity: 0.1, strokeWidth: 0.75 }),
             Plot.ruleY(steps, {
-              y: (line) => line.y - LINE / 2,
+              y: (line) => line.y - lineHeight / 2,
               x1: beds.length + 0.5,
               x2: 0.5,
               stroke: SOFT,
@@ -55,7 +54,7 @@ export function ranksWithIntervals(view: ClockView): Figure | null {
               y1: 'y',
               y2: 'y',
               stroke: INK,
-              strokeWidth: 7.2,
+              strokeWidth: lineHeight * 0.6,
               strokeLinecap: 'round',
             }),
             Plot.link(own, {
@@ -64,7 +63,7 @@ export function ranksWithIntervals(view: ClockView): Figure | null {
               y1: 'y',
               y2: 'y',
               stroke: (line) => inkOf(view, line.bed.zone).fill,
-              strokeWidth: 6,
+              strokeWidth: lineHeight * 0.6 - 1.2,
               strokeLinecap: 'round',
               render: byBed,
             }),
@@ -114,7 +113,7 @@ export function ranksWithIntervals(view: ClockView): Figure | null {
   const resolved = beds.filter((bed) => bed.order!.resolved === true).length;
   return finishFigure({
     name: `ranks${view.suffix}`,
-    title: `Order of the beds, with what is known of each rank${view.heading}`,
+    title: `Ranks of the beds with their 95 % intervals${view.heading}`,
     caption: `Beds from the youngest (top) to the oldest (bottom). The dot is the rank, the bar its 95 % interval: beds whose bars cover each other can't be told apart in age. A broken line stands between neighbours whose order is resolved (${resolved} of ${beds.length - 1}). The order is relative and is no age.`,
     alt: `Ranks of ${beds.length} beds from the youngest to the oldest: ${beds.map((bed) => `${bed.key} ${bed.order!.rank} (${bed.order!.rank_low} to ${bed.order!.rank_high})`).join('; ')}.`,
     width: WIDE,

@@ -9,10 +9,10 @@ import { ALARM, PAPER } from './theme.js';
 /** Whether a relation is reversed before or after shells were set aside. */
 export const everReversed = (row: RelationRow) => row.verdict === 'reversed' || row.verdict_after === 'reversed';
 
-/** Numbers R1, R2 … of the reversed relations of a clock, those still reversed first. */
+/** Numbers R1, R2 … of the reversed relations of a clock, those still reversed first, the worst of them on top. */
 export function relationNumbers(view: ClockView): Map<RelationRow, string> {
   const still = (row: RelationRow) => (row.verdict_after === 'reversed' ? 0 : 1);
-  const rows = view.relations.filter(everReversed).sort((a, b) => still(a) - still(b));
+  const rows = view.relations.filter(everReversed).sort((a, b) => still(a) - still(b) || (a.z ?? 0) - (b.z ?? 0));
   return new Map(rows.map((row, i) => [row, `R${i + 1}`]));
 }
 

@@ -1,5 +1,5 @@
 import * as Plot from '@observablehq/plot';
-import { bedColumns, bedNote, LINE } from './bed-rows.js';
+import { bedColumns, bedNote } from './bed-rows.js';
 import { type ClockView, inkOf, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
@@ -22,12 +22,13 @@ export function shellsByBed(view: ClockView): Figure | null {
   if (values.length === 0) return null;
   const [low, high] = padded(Math.min(...values), Math.max(...values));
   const top = 40;
-  const columns = bedColumns(view, top);
+  const { columns, line: lineHeight } = bedColumns(view, top);
   const gap = 10;
   const width = (WIDE - gap * (columns.length - 1)) / columns.length;
   const labels = columns.length === 1 ? 132 : columns.length === 2 ? 96 : 72;
-  const notes = view.beds.some((bed) => bedNote(bed) !== '') ? (columns.length > 2 ? 30 : 40) : 6;
+  const notes = view.beds.some((bed) => bedNote(bed) !== '') ? 42 : 6;
   const bottom = Math.max(...columns.map((column) => column.bottom));
+  const ticks = ratioTicks(low, high, width - labels - notes).map(Math.log);
   const body: SvgNode[] = columns.map((column, c) => {
     const beds = column.lines.filter((line) => line.kind === 'bed');
     const heads = column.lines.filter((line) => line.kind === 'zone');
@@ -83,7 +84,7 @@ export function shellsByBed(view: ClockView): Figure | null {
             render: tagged((i) => ({ 'data-z': zoneTag(view, column.bands[i].zone) })),
           }),
           Plot.gridX({
-            ticks: ratioTicks(low, high).map(Math.log),
+            ticks,
             stroke: INK,
             strokeOpacity: 0.1,
             strokeWidth: 0.75,
@@ -130,8 +131,8 @@ export function shellsByBed(view: ClockView): Figure | null {
           Plot.link(means, {
             x1: (line) => line.bed.row.log_mean,
             x2: (line) => line.bed.row.log_mean,
-            y1: (line) => line.y - LINE / 2 + 1,
-            y2: (line) => line.y + LINE / 2 - 1,
+            y1: (line) => line.y - lineHeight / 2 + 1,
+            y2: (line) => line.y + lineHeight / 2 - 1,
             stroke: INK,
             strokeWidth: 1.6,
             strokeLinecap: 'butt',
@@ -140,14 +141,14 @@ export function shellsByBed(view: ClockView): Figure | null {
           Plot.axisX({
             ...AXIS,
             anchor: 'bottom',
-            ticks: columns.length > 2 ? 3 : 6,
+            ticks: columns.length > 1 ? 4 : 6,
             label: 'log ratio, ln(D/L)',
             labelOffset: 30,
           }),
           Plot.axisX({
             ...AXIS,
             anchor: 'top',
-            ticks: ratioTicks(low, high).map(Math.log),
+            ticks,
             tickFormat: (v: number) => ratioLabel(Math.exp(v)),
             label: 'D/L',
             labelOffset: 32,
@@ -175,7 +176,7 @@ export function shellsByBed(view: ClockView): Figure | null {
     name: `shells${view.suffix}`,
     title: `Log ratios of all shells by bed${view.heading}`,
     caption: `One line a bed, ${view.zoned ? 'grouped by zone with the youngest zone and bed on top' : 'the youngest on top'}; older beds lie further to the right. Look for shells that stand apart from their own line${aside > 0 ? `: the ${aside} crossed ones were set aside` : ''}. ${ranges(view)}`,
-    alt: `${shells.length} shells of ${view.clock.taxon} in ${view.beds.length} beds. ${view.zones.map((zone) => `${zone.zone}: ${zone.beds} beds, D/L ${short(zone.dl_mean)}`).join('; ')}. ${aside} shells set aside.`,
+    alt: `${shells.length} shells of ${view.clock.taxon} in ${view.beds.length} beds. ${view.zones.map((zone) => `${zone.zone}: ${zone.beds} beds, D/L ${ratio(zone.dl_mean)}`).join('; ')}. ${aside} shells set aside.`,
     width: WIDE,
     height: bottom + 44 + key.height,
     body: [...body, key.node],
@@ -189,16 +190,19 @@ const ranges = (view: ClockView) =>
 
 const bedName = (row: { section: string; bed: string }) => `${row.section}/${row.bed}`;
 
+/** A D/L ratio with three decimals. */
+export const ratio = (value: number) => value.toFixed(3);
+
 /** Three significant digits. */
 export const short = (value: number) => String(Number(value.toPrecision(3)));
 
 function zoneHead(view: ClockView, zone: number, columns: number): string {
   if (zone < 0) return 'in no zone';
   const { zone: name, dl_mean, dl_low, dl_high } = view.zones[zone];
-  if (!view.zoned) return `all beds, D/L ${short(dl_mean)}`;
+  if (!view.zoned) return `all beds, D/L ${ratio(dl_mean)}`;
   return columns > 2
-    ? `${name}  D/L ${short(dl_mean)}`
-    : `${name}   D/L ${short(dl_mean)} (${short(dl_low)} to ${short(dl_high)})`;
+    ? `${name}  D/L ${ratio(dl_mean)}`
+    : `${name}   D/L ${ratio(dl_mean)} (${ratio(dl_low)} to ${ratio(dl_high)})`;
 }
 
 /** Ends of an axis a little beyond the values. */

@@ -3,7 +3,7 @@ import { quantile } from '../statistics/index.js';
 import { type ClockView, inkOf, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
-import { padded, short } from './shells-by-bed.js';
+import { padded, ratio } from './shells-by-bed.js';
 import { INK, SOFT, TYPE, WIDE } from './theme.js';
 
 const BINS = 90;
@@ -87,7 +87,7 @@ export function shellsSummarised(view: ClockView): Figure | null {
         x: low,
         y: 'y',
         text: ({ group }) =>
-          `${group.zone < 0 ? 'in no zone' : view.zoned ? `${view.zones[group.zone].zone}   D/L ${short(view.zones[group.zone].dl_mean)}` : 'all beds'}   ${group.beds} beds, ${group.kept.length} shells, ${group.aside.length} set aside`,
+          `${group.zone < 0 ? 'in no zone' : view.zoned ? `${view.zones[group.zone].zone}   D/L ${ratio(view.zones[group.zone].dl_mean)}` : 'all beds'}   ${group.beds} beds, ${group.kept.length} shells, ${group.aside.length} set aside`,
         textAnchor: 'start',
         fontSize: TYPE.small,
         fontWeight: 700,

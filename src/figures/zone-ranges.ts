@@ -2,18 +2,26 @@ import * as Plot from '@observablehq/plot';
 import { type ClockView, inkOf, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, tagged } from './house-plot.js';
-import { padded, short } from './shells-by-bed.js';
+import { padded, ratio, short } from './shells-by-bed.js';
 import { INK, NARROW, SOFT, TYPE } from './theme.js';
 
-const STEP = 34;
+const STEP = 40;
 
 /** The zones on the D/L scale with how far neighbours overlap, for one journal column; null without zones. */
 export function zoneRanges(view: ClockView): Figure | null {
   if (!view.zoned) return null;
   const zones = view.zones.map((zone, i) => ({ zone, i, y: 10 + (i + 0.5) * STEP }));
+  const shells = zones.flatMap(({ i, y }) => {
+    const own = view.beds
+      .filter((bed) => bed.zone === i)
+      .flatMap((bed) => bed.shells)
+      .filter((shell) => shell.row.status !== 'set aside' && Number.isFinite(shell.row.dl));
+    const every = Math.ceil(own.length / 400);
+    return own.filter((_, k) => k % every === 0).map((shell) => ({ x: shell.row.dl, y, id: shell.id }));
+  });
   const [low, high] = padded(
-    Math.min(...view.zones.map((zone) => zone.shell_low)),
-    Math.max(...view.zones.map((zone) => zone.shell_high)),
+    Math.min(...view.zones.map((zone) => zone.shell_low), ...shells.map((shell) => shell.x)),
+    Math.max(...view.zones.map((zone) => zone.shell_high), ...shells.map((shell) => shell.x)),
   );
   const between = view.adjacent.flatMap((row) => {
     const at = view.zones.findIndex((zone) => zone.zone === row.younger);
@@ -32,11 +40,21 @@ export function zoneRanges(view: ClockView): Figure | null {
     y: { type: 'identity', axis: null },
     marks: [
       Plot.gridX({ stroke: INK, strokeOpacity: 0.1, ticks: 4 }),
+      Plot.link(shells, {
+        x1: 'x',
+        x2: 'x',
+        y1: (shell) => shell.y + 5,
+        y2: (shell) => shell.y + 11,
+        stroke: INK,
+        strokeWidth: 0.6,
+        strokeOpacity: 0.55,
+        render: tagged((i) => ({ 'data-s': shells[i].id })),
+      }),
       Plot.rect(zones, {
         x1: (row) => row.zone.shell_low,
         x2: (row) => row.zone.shell_high,
-        y1: (row) => row.y - 8,
-        y2: (row) => row.y + 8,
+        y1: (row) => row.y - 11,
+        y2: (row) => row.y + 2,
         fill: (row) => inkOf(view, row.i).fill,
         stroke: INK,
         strokeWidth: 0.8,
@@ -45,15 +63,15 @@ export function zoneRanges(view: ClockView): Figure | null {
       Plot.ruleY(zones, {
         x1: (row) => row.zone.dl_low,
         x2: (row) => row.zone.dl_high,
-        y: (row) => row.y + 11.5,
+        y: (row) => row.y - 14,
         stroke: INK,
         strokeWidth: 1.8,
       }),
       Plot.link(zones, {
         x1: (row) => row.zone.dl_mean,
         x2: (row) => row.zone.dl_mean,
-        y1: (row) => row.y - 10,
-        y2: (row) => row.y + 14,
+        y1: (row) => row.y - 16,
+        y2: (row) => row.y + 11,
         stroke: INK,
         strokeWidth: 1.1,
       }),
@@ -82,8 +100,8 @@ export function zoneRanges(view: ClockView): Figure | null {
     name: `zones${view.suffix}`,
     title: `The zones and how far neighbours overlap${view.heading}`,
     caption:
-      'Boxes span one standard deviation of shells either side of the zone mean; the line below a box is the 95 % interval of the mean. Beside each pair of neighbours stand the verdict and the overlap coefficient of their shells: 0 apart, 1 alike, 0.32 where the boxes just touch.',
-    alt: `${view.zones.map((zone) => `${zone.zone}: D/L ${short(zone.dl_mean)}, shells ${short(zone.shell_low)} to ${short(zone.shell_high)}`).join('; ')}. ${view.adjacent.map((row) => `${row.younger} and ${row.older}: ${row.verdict}, overlap ${short(row.overlap)}`).join('; ')}.`,
+      'Boxes span one standard deviation of shells either side of the zone mean; the heavy line above a box is the 95 % interval of the mean, and the ticks below are single shells. Beside each pair of neighbours stand the verdict and the overlap coefficient of their shells: 0 apart, 1 alike, 0.32 where the boxes just touch.',
+    alt: `${view.zones.map((zone) => `${zone.zone}: D/L ${ratio(zone.dl_mean)}, shells ${ratio(zone.shell_low)} to ${ratio(zone.shell_high)}`).join('; ')}. ${view.adjacent.map((row) => `${row.younger} and ${row.older}: ${row.verdict}, overlap ${short(row.overlap)}`).join('; ')}.`,
     width: NARROW,
     height: bottom + 42,
     body: [body],

@@ -3,7 +3,7 @@ import { relationNumbers } from '../figures/reversed-marks.js';
 import type { RelationRow } from '../model/index.js';
 import { html, listed, type Markup } from './html.js';
 import { bedLink, shellLink } from './links.js';
-import { chance, figures, pValue } from './numbers.js';
+import { chance, figures, pValue, ratio } from './numbers.js';
 import { type Column, type RowTies, table } from './table.js';
 
 /** Most rows of one table on the page; the CSV files hold all. */
@@ -28,17 +28,17 @@ export function zonesTable(view: ClockView): Markup {
     { head: 'zone', cell: (row) => zoneChip(view, row.zone) },
     { head: 'beds', number: true, cell: (row) => row.beds },
     { head: 'shells', number: true, cell: (row) => row.shells },
-    { head: 'D/L', number: true, cell: (row) => figures(row.dl_mean) },
+    { head: 'D/L', number: true, cell: (row) => ratio(row.dl_mean) },
     {
       head: '95 % of the mean',
       number: true,
-      cell: (row) => html`${figures(row.dl_low)} to ${figures(row.dl_high)}`,
+      cell: (row) => html`${ratio(row.dl_low)} to ${ratio(row.dl_high)}`,
       sort: (row) => row.dl_low,
     },
     {
       head: 'shells ± 1 sd',
       number: true,
-      cell: (row) => html`${figures(row.shell_low)} to ${figures(row.shell_high)}`,
+      cell: (row) => html`${ratio(row.shell_low)} to ${ratio(row.shell_high)}`,
       sort: (row) => row.shell_low,
     },
     { head: 'stability', number: true, cell: (row) => figures(row.stability, 2) },
@@ -103,7 +103,7 @@ export function oddShells(view: ClockView, evidence: ReadonlyMap<string, readonl
     { head: 'status', cell: (shell) => html`${shell.row.status === 'set aside' ? '✕' : '◆'} ${shell.row.status}` },
     { head: 'reading', cell: (shell) => (shell.row.reading === 'none' ? '–' : shell.row.reading) },
     { head: 'confidence', cell: (shell) => shell.row.confidence ?? '–' },
-    { head: 'D/L', number: true, cell: (shell) => figures(shell.row.dl) },
+    { head: 'D/L', number: true, cell: (shell) => ratio(shell.row.dl) },
     {
       head: 'from its bed',
       number: true,
@@ -155,7 +155,7 @@ export function bedsTable(view: ClockView): Markup {
       cell: (bed) => (bed.order === null ? '–' : `${bed.order.rank_low} to ${bed.order.rank_high}`),
       sort: (bed) => bed.order?.rank_low ?? null,
     },
-    { head: 'D/L', number: true, cell: (bed) => figures(bed.row.dl_mean), sort: (bed) => bed.row.dl_mean },
+    { head: 'D/L', number: true, cell: (bed) => ratio(bed.row.dl_mean), sort: (bed) => bed.row.dl_mean },
     { head: 'sd', number: true, cell: (bed) => figures(bed.row.dl_sd, 2), sort: (bed) => bed.row.dl_sd },
     { head: 'shells', number: true, cell: (bed) => bed.row.shells },
     { head: 'set aside', number: true, cell: (bed) => bed.row.set_aside || '–', sort: (bed) => bed.row.set_aside },
@@ -172,7 +172,7 @@ export function shellsTable(view: ClockView): Markup {
   const columns: Column<(typeof all)[number]>[] = [
     { head: 'shell', cell: ({ shell }) => shellLink(view, shell) },
     { head: 'lab', cell: ({ shell }) => shell.row.lab_id.join(', ') || '–' },
-    { head: 'D/L', number: true, cell: ({ shell }) => figures(shell.row.dl) },
+    { head: 'D/L', number: true, cell: ({ shell }) => ratio(shell.row.dl) },
     {
       head: 'log ratio',
       number: true,

@@ -1,7 +1,7 @@
 import type { ClockView } from '../figures/clock-view.js';
 import { zoneTag } from '../figures/clock-view.js';
 import { html, type Markup } from './html.js';
-import { figures } from './numbers.js';
+import { ratio } from './numbers.js';
 import type { Part } from './sections.js';
 
 /** The side of the page: where things are, the zones, and the filters (which the script uncovers). */
@@ -28,6 +28,6 @@ export const sectionsOf = (views: readonly ClockView[]): string[] => [
 function zoneKeys(view: ClockView): Markup {
   return html`<div class="zones" role="group" aria-label="Zones of ${view.clock.clock}"><p class="sidehead">Zones${view.heading}, D/L</p>${view.zones.map(
     (zone, i) =>
-      html`<button type="button" class="zonekey" data-z="${zoneTag(view, i)}" disabled><span class="chip z${view.index}-${i}">${zone.zone}</span> ${figures(zone.dl_mean)}${i === 0 ? ' youngest' : i === view.zones.length - 1 ? ' oldest' : ''}</button>`,
+      html`<button type="button" class="zonekey" data-z="${zoneTag(view, i)}" disabled><span class="chip z${view.index}-${i}">${zone.zone}</span> ${ratio(zone.dl_mean)}${i === 0 ? ' youngest' : i === view.zones.length - 1 ? ' oldest' : ''}</button>`,
   )}</div>`;
 }

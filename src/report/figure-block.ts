@@ -5,7 +5,7 @@ import { html, type Markup, raw } from './html.js';
 /** A figure on the page: title, drawing in a box that scrolls by itself, caption, and a button to save it. */
 export function figureBlock(figure: Figure, all: readonly Figure[], views: readonly ClockView[]): Markup {
   const number = all.indexOf(figure) + 1;
-  const view = views.find((one) => one.suffix !== '' && figure.name.endsWith(one.suffix));
+  const view = views.find((one) => one.suffix !== '' && figure.name.replace(/-part-\d+$/, '').endsWith(one.suffix));
   const narrow = /width="(\d+(?:\.\d+)?)mm"/.exec(figure.svg);
   const wide = narrow === null || Number(narrow[1]) > 100;
   return html`<figure id="fig-${figure.name}"${view === undefined ? '' : html` data-c="${view.index}"`} class="${wide ? 'wide' : 'narrow'}">

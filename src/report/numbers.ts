@@ -40,3 +40,13 @@ export function pValue(value: number | null): string {
  */
 export const counted = (count: number, noun: string, plural = `${noun}s`): string =>
   `${count.toLocaleString('en-US')} ${count === 1 ? noun : plural}`;
+
+/**
+ * A D/L ratio with three decimals, as laboratories print it.
+ * @example
+ * ```ts
+ * ratio(0.13) // => '0.130'
+ * ```
+ */
+export const ratio = (value: number | null): string =>
+  value === null || !Number.isFinite(value) ? '–' : value.toFixed(3);

@@ -1,7 +1,7 @@
 import { type ClockView, zoneTag } from '../figures/clock-view.js';
 import { MOST_BEDS, MOST_SHELLS } from '../figures/theme.js';
 import { sectionsOf } from './contents.js';
-import { chance, figures } from './numbers.js';
+import { chance, ratio } from './numbers.js';
 
 /** What the page's script knows: for filters and for the line that reads out what is lit. */
 export interface PageData {
@@ -22,7 +22,7 @@ export function pageData(views: readonly ClockView[]): PageData {
   for (const view of views) {
     view.zones.forEach((zone, i) => {
       zones[zoneTag(view, i)!] =
-        `${zone.zone}${view.heading}: D/L ${figures(zone.dl_mean)} (${figures(zone.dl_low)} to ${figures(zone.dl_high)}), ${zone.beds} beds, ${zone.shells} shells`;
+        `${zone.zone}${view.heading}: D/L ${ratio(zone.dl_mean)} (${ratio(zone.dl_low)} to ${ratio(zone.dl_high)}), ${zone.beds} beds, ${zone.shells} shells`;
     });
     for (const bed of view.beds) {
       const entry = beds[bed.id] ?? [sections.get(bed.row.section)!, views.map(() => ''), bed.key];
@@ -41,11 +41,11 @@ function bedText(view: ClockView, bed: ClockView['beds'][number]): string {
   const rank = order === null ? '' : ` · rank ${order.rank} (${order.rank_low} to ${order.rank_high})`;
   const aside = row.set_aside > 0 ? `, ${row.set_aside} set aside` : '';
   const marks = row.marks.length > 0 ? ` · ${row.marks.join(', ')}` : '';
-  return `${view.heading}${zone} · D/L ${figures(row.dl_mean)} · ${row.shells} shells${aside}${rank}${marks}`;
+  return `${view.heading}${zone} · D/L ${ratio(row.dl_mean)} · ${row.shells} shells${aside}${rank}${marks}`;
 }
 
 function shellText(row: ClockView['beds'][number]['shells'][number]['row']): string {
   const reading = row.reading === 'none' ? '' : ` · ${row.reading}`;
   const marks = row.marks.length > 0 ? ` · ${row.marks.join(', ')}` : '';
-  return `shell ${row.shell} · D/L ${figures(row.dl)} · ${row.status}${reading}${marks}`;
+  return `shell ${row.shell} · D/L ${ratio(row.dl)} · ${row.status}${reading}${marks}`;
 }

@@ -23,7 +23,7 @@ export interface Part {
 export function sections(findings: Findings, views: readonly ClockView[], figures: readonly Figure[]): Part[] {
   const drawn = (kind: string) =>
     figures
-      .filter((figure) => views.some((view) => figure.name === kind + view.suffix))
+      .filter((figure) => views.some((view) => figure.name.replace(/-part-\d+$/, '') === kind + view.suffix))
       .map((figure) => figureBlock(figure, figures, views));
   const evidence = new Map(
     findings.evidence.filter((row) => row.about === 'shell').map((row) => [row.clock + row.name, row.sentences]),
@@ -43,21 +43,21 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
     part('shells', 'All shells, bed by bed', 'Shells by bed', drawn('shells')),
     part('correlation', 'Correlation along the coast', 'Correlation', drawn('correlation')),
     part('order', 'Order of the beds', 'Order', drawn('ranks')),
-    part('heights', 'Height above the sea', 'Heights', drawn('heights')),
-    part('relations', 'Field relations against the ratios', 'Relations', [
+    part('heights', 'Do older beds stand higher?', 'Heights', drawn('heights')),
+    part('relations', 'Does the field agree?', 'Relations', [
       drawn('relations'),
       views.some((view) => view.relations.length > 0)
         ? views.filter((view) => view.relations.length > 0).map(relationsTable)
         : null,
     ]),
-    part('amino-acids', 'Amino acids against each other', 'Amino acids', drawn('amino-acids')),
+    part('amino-acids', 'Do the amino acids agree?', 'Amino acids', drawn('amino-acids')),
     part(
       'odd',
       'Shells set aside, and why',
       'Odd shells',
       views.map((view) => oddShells(view, evidenceOf(view))),
     ),
-    part('number-of-zones', 'How the number of zones was chosen', 'Number of zones', [
+    part('number-of-zones', 'How many zones?', 'Number of zones', [
       drawn('zones'),
       drawn('zone-counts'),
       zoneCountsTable(findings, views),

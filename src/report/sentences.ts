@@ -2,7 +2,7 @@ import type { ClockView } from '../figures/clock-view.js';
 import { relationNumbers } from '../figures/reversed-marks.js';
 import { html, listed, type Markup } from './html.js';
 import { bedLink, shellLink } from './links.js';
-import { counted, figures } from './numbers.js';
+import { counted, ratio } from './numbers.js';
 
 /** What was found on one clock, in plain sentences, for the top of the page. */
 export function findingsInSentences(view: ClockView): Markup {
@@ -23,7 +23,7 @@ function groups(view: ClockView): Markup {
       weak.length === 0
         ? html` All neighbouring zones are distinct.`
         : html` Not all neighbours stand apart: ${listed(weak.map((row) => html`${row.younger} and ${row.older} are ${row.verdict}`))}.`;
-    return html`${what} The beds fall into <strong>${counted(zones.length, 'aminozone')}</strong>, from ${range[0].zone} (youngest, D/L ${figures(range[0].dl_mean)}) to ${range[1].zone} (oldest, D/L ${figures(range[1].dl_mean)}).${neighbours}`;
+    return html`${what} The beds fall into <strong>${counted(zones.length, 'aminozone')}</strong>, from ${range[0].zone} (youngest, D/L ${ratio(range[0].dl_mean)}) to ${range[1].zone} (oldest, D/L ${ratio(range[1].dl_mean)}).${neighbours}`;
   }
   if (clock.verdict === 'continuum')
     return html`${what} The ratios form a <strong>continuum</strong>: no zones are supported, and the order is given without them.${forced}`;

@@ -60,11 +60,12 @@ figcaption b{color:var(--ink)}
 table{border-collapse:collapse;width:100%;font:.8438rem/1.4 Helvetica,Arial,sans-serif;font-variant-numeric:tabular-nums}
 caption{position:absolute;width:1px;height:1px;overflow:hidden;clip-path:inset(50%)}
 thead th{position:sticky;top:0;background:var(--paper);border-bottom:1.5px solid var(--ink);vertical-align:bottom;z-index:1}
-th,td{padding:.34rem .7rem;text-align:left;vertical-align:top;white-space:nowrap}
+th,td{padding:.34rem .7rem;text-align:left;vertical-align:top}
+thead th,tbody th,.num{white-space:nowrap}
 tbody th{font-weight:400}
 tbody tr+tr>*{border-top:1px solid var(--line)}
 .num{text-align:right}
-.long{white-space:normal;min-width:17rem}
+.long{min-width:17rem}
 th button{all:unset;cursor:pointer;font-weight:700}
 th button:focus-visible{outline:3px solid var(--link);outline-offset:2px}
 th[aria-sort=ascending] button::after{content:" ↑"}
@@ -84,7 +85,7 @@ summary{cursor:pointer;padding:.5rem 0;font:700 .9375rem/1.3 Helvetica,Arial,san
 .sources{font-size:.9375rem}
 #reader{position:fixed;left:50%;bottom:1rem;transform:translateX(-50%);width:max-content;max-width:min(56rem,calc(100vw - 2rem));padding:.55rem 1rem;background:var(--ink);color:var(--paper);border-radius:6px;font:.875rem/1.4 Helvetica,Arial,sans-serif;z-index:5;overflow-wrap:anywhere;box-shadow:0 3px 14px #0004}
 #reader[hidden]{display:none}
-.fig .fk{fill:var(--ink)}.fig .sk{stroke:var(--ink)}.fig .fm{fill:var(--soft)}.fig .sm{stroke:var(--soft)}.fig .fn{fill:var(--faint)}.fig .sn{stroke:var(--faint)}.fig .fg{fill:var(--grid)}.fig .sg{stroke:var(--grid)}.fig .fp,.fig .paper{fill:var(--paper)}.fig .sp{stroke:var(--paper)}.fig .fa{fill:var(--alarm)}.fig .sa{stroke:var(--alarm)}
+.fig.fk,.fig .fk{fill:var(--ink)}.fig .sk{stroke:var(--ink)}.fig .fm{fill:var(--soft)}.fig .sm{stroke:var(--soft)}.fig .fn{fill:var(--faint)}.fig .sn{stroke:var(--faint)}.fig .fg{fill:var(--grid)}.fig .sg{stroke:var(--grid)}.fig .fp,.fig .paper{fill:var(--paper)}.fig .sp{stroke:var(--paper)}.fig .fa{fill:var(--alarm)}.fig .sa{stroke:var(--alarm)}
 .fig text{white-space:pre}
 .js .fig [data-b],.js .fig [data-z],.js .fig [data-s]{cursor:pointer}
 .lit .fig [data-b]:not(.on),.lit .fig .tie:not(.on),.lit .fig [data-s]:not(.on){opacity:.22}
@@ -124,8 +125,9 @@ figure.narrow{max-width:100mm}
 .figbox svg{min-width:0!important;max-height:235mm}
 .tablebox{overflow:visible;max-height:none;border:0;margin:2mm 0}
 table{font-size:7pt}
-th,td{padding:.6mm 1mm;white-space:normal;overflow-wrap:anywhere}
-.long{min-width:38mm}
+th,td{padding:.6mm 1mm}
+thead th,tbody th{white-space:normal}
+.long{min-width:30mm}
 thead th{position:static}
 tr{break-inside:avoid}
 .chip{print-color-adjust:exact;-webkit-print-color-adjust:exact}
