@@ -1,5 +1,5 @@
-import { clockLogRatio, pooledScatter } from './beds/index.js';
-import type { AminoAcid, BedRow, BedSite, Clock, Evidence, RelationRow, Shell } from './model/index.js';
+import { pooledScatter } from './beds/index.js';
+import type { AminoAcid, BedRow, BedSite, Evidence, RelationRow, Shell } from './model/index.js';
 import type { Settled } from './passes.js';
 import { type AminoAcidDifference, type BedFacts, readReversedRelation } from './superposition/index.js';
 
@@ -17,6 +17,8 @@ export function relationFindings(input: RelationFindingsInput): { rows: Relation
   const clock = last.data.clock.name;
   const before = new Map(first.relations.map((relation, at) => [`${relation.lower}\u0001${relation.upper}`, at]));
   const facts = factsOfBeds(input);
+  const aminoAcids = groupByAminoAcid(input);
+  const bedAt = new Map(last.data.beds.map((bed, at) => [bed.key, at]));
   const evidence: Evidence[] = [];
   const rows = last.relations.map((relation, at): RelationRow => {
     const check = last.checks[at];
@@ -31,7 +33,7 @@ export function relationFindings(input: RelationFindingsInput): { rows: Relation
         check,
         lower: facts.get(lower)!,
         upper: facts.get(upper)!,
-        differences: aminoAcidDifferences(input, lower, upper),
+        differences: differencesOf(aminoAcids, bedAt.get(lower)!, bedAt.get(upper)!),
       });
       reading = read.reading;
       evidence.push({ clock, about: 'relation', name: `${lower} > ${upper}`, sentences: read.sentences });
@@ -80,25 +82,35 @@ function factsOfBeds({ settled, shells, beds, sites }: RelationFindingsInput): M
   );
 }
 
-/** Difference of two beds in each amino acid, over the shells kept, with that amino acid's own pooled scatter. */
-function aminoAcidDifferences(input: RelationFindingsInput, lower: string, upper: string): AminoAcidDifference[] {
-  const { data } = input.settled.last;
-  const { taxon, fraction } = data.clock;
-  const codes = [...new Set(input.shells.flatMap((shell) => Object.keys(shell.ratios) as AminoAcid[]))];
-  return codes.flatMap((code) => {
-    const single: Clock = { name: code, taxon, fraction, amino_acids: [code], weights: [1], main: false };
+/** Log ratios of the kept shells of each bed in one amino acid, and their pooled scatter. */
+interface AminoAcidGroups {
+  readonly amino_acid: AminoAcid;
+  readonly groups: readonly (readonly number[])[];
+  readonly s: number;
+}
+
+/** Nothing for a clock of one amino acid: the relation's own difference says it all. */
+function groupByAminoAcid({ settled, shells }: RelationFindingsInput): AminoAcidGroups[] {
+  const { data } = settled.last;
+  const codes = new Set(data.shells.flatMap(({ shell }) => Object.keys(shells[shell].ratios) as AminoAcid[]));
+  if (codes.size < 2) return [];
+  return [...codes].map((amino_acid) => {
     const groups = data.beds.map((bed) =>
-      bed.shells
-        .filter((at) => !data.shells[at].setAside)
-        .map((at) => clockLogRatio(input.shells[data.shells[at].shell].ratios, single))
-        .filter((x): x is number => x !== null),
+      bed.shells.flatMap((at) => {
+        const ratio = shells[data.shells[at].shell].ratios[amino_acid];
+        return data.shells[at].setAside || ratio === undefined ? [] : [Math.log(ratio)];
+      }),
     );
-    const { s } = pooledScatter(groups);
-    const [low, high] = [lower, upper].map((key) => groups[data.beds.findIndex((bed) => bed.key === key)] ?? []);
+    return { amino_acid, groups, s: pooledScatter(groups).s };
+  });
+}
+
+/** Difference of two beds in each amino acid, over the shells kept, with that amino acid's own pooled scatter. */
+function differencesOf(aminoAcids: readonly AminoAcidGroups[], lower: number, upper: number): AminoAcidDifference[] {
+  const mean = (values: readonly number[]): number => values.reduce((sum, x) => sum + x, 0) / values.length;
+  return aminoAcids.flatMap(({ amino_acid, groups, s }) => {
+    const [low, high] = [groups[lower], groups[upper]];
     if (low.length === 0 || high.length === 0) return [];
-    const mean = (values: readonly number[]): number => values.reduce((sum, x) => sum + x, 0) / values.length;
-    return [
-      { amino_acid: code, difference: mean(low) - mean(high), se: s * Math.sqrt(1 / low.length + 1 / high.length) },
-    ];
+    return [{ amino_acid, difference: mean(low) - mean(high), se: s * Math.sqrt(1 / low.length + 1 / high.length) }];
   });
 }

@@ -9,14 +9,18 @@ export function correlationTable(
   beds: readonly Pick<BedRow, 'clock' | 'section' | 'bed' | 'zone'>[],
   sections: readonly string[],
 ): CorrelationRow[] {
+  const cells = new Map<string, string[]>();
+  const cellOf = (clock: string, zone: string | null, section: string): string =>
+    JSON.stringify([clock, zone, section]);
+  for (const { clock, zone, section, bed } of beds) {
+    const cell = cellOf(clock, zone, section);
+    const names = cells.get(cell);
+    if (names === undefined) cells.set(cell, [bed]);
+    else names.push(bed);
+  }
   return [...zones].reverse().map(({ clock, zone }) => ({
     clock,
     zone,
-    sections: Object.fromEntries(
-      sections.map((section) => [
-        section,
-        beds.filter((bed) => bed.clock === clock && bed.zone === zone && bed.section === section).map((bed) => bed.bed),
-      ]),
-    ),
+    sections: Object.fromEntries(sections.map((section) => [section, cells.get(cellOf(clock, zone, section)) ?? []])),
   }));
 }
