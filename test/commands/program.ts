@@ -1,5 +1,5 @@
 import { type SpawnOptionsWithoutStdio, spawn } from 'node:child_process';
-import { cpSync, existsSync, mkdirSync, readdirSync, statSync, symlinkSync } from 'node:fs';
+import { cpSync, existsSync, mkdirSync, readdirSync, rmSync, statSync, symlinkSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { build } from 'esbuild';
@@ -21,13 +21,19 @@ export interface Outcome {
  */
 export async function builtProgram(): Promise<string> {
   const dist = join(ROOT, 'dist');
-  if (existsSync(join(dist, 'cli.js')) && newest(join(ROOT, 'src')) <= statSync(join(dist, 'cli.js')).mtimeMs)
-    return dist;
-  const home = join(ROOT, 'node_modules/.cache/bedorder-test', String(process.pid));
+  const isFresh = (stamp: string) => existsSync(stamp) && newest(join(ROOT, 'src')) <= statSync(stamp).mtimeMs;
+  if (isFresh(join(dist, 'cli.js'))) return dist;
+  return freshBuild('program');
+}
+
+/** Builds the program anew into a folder of its own; gives its dist. */
+export async function freshBuild(name: string): Promise<string> {
+  const home = join(ROOT, 'node_modules/.cache/bedorder-test', `${name}-${process.pid}`);
   const entries = readdirSync(join(ROOT, 'src'), { recursive: true, encoding: 'utf8' })
     .filter((name) => name.endsWith('.ts'))
     .map((name) => join(ROOT, 'src', name));
   mkdirSync(home, { recursive: true });
+  process.once('exit', () => rmSync(home, { recursive: true, force: true }));
   await build({
     entryPoints: entries,
     outdir: join(home, 'dist'),

@@ -1,8 +1,10 @@
 import type {
   AdjacentZonesRow,
+  AminoAcidShare,
   ClockRow,
   ConflictRow,
   Findings,
+  GradientFinding,
   OrderDiagnostics,
   OrderRow,
   RelationRow,
@@ -26,6 +28,7 @@ export interface SummaryFacts {
 
 /** How much was read. */
 export interface ReadFacts {
+  /** Single shells; those behind published means are counted in the clocks only. */
   readonly shells: number;
   readonly beds: number;
   readonly sections: number;
@@ -42,6 +45,9 @@ export interface ClockFacts {
   /** Oldest first. */
   readonly zones: readonly ZoneRow[];
   readonly adjacent: readonly AdjacentZonesRow[];
+  /** What each amino acid brings to an index. */
+  readonly shares: readonly AminoAcidShare[];
+  readonly gradient: GradientFinding | null;
   readonly order: readonly OrderRow[];
   readonly sampling: OrderDiagnostics | null;
   readonly relations: RelationFacts;
@@ -97,6 +103,8 @@ function clockFacts(findings: Findings, clock: ClockRow): ClockFacts {
     models: mine(findings.zone_counts),
     zones: [...mine(findings.zones)].sort((a, b) => b.dl_mean - a.dl_mean),
     adjacent: mine(findings.adjacent_zones),
+    shares: mine(findings.shares),
+    gradient: mine(findings.gradients)[0] ?? null,
     order: [...mine(findings.order)].sort((a, b) => a.rank - b.rank),
     sampling: mine(findings.diagnostics)[0] ?? null,
     relations: {

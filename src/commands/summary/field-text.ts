@@ -23,7 +23,7 @@ export function relationsText({ relations, inconsistent_sections }: ClockFacts, 
 }
 
 function reversedText(row: RelationRow): string {
-  const why = row.reading === '' ? '' : ` ${safe(row.reading)}`;
+  const why = row.reading === '' ? '' : ` Reading: ${safe(row.reading)}.`.replace(/\.\.$/, '.');
   const p = row.p_reversed === null ? '' : ` (p ${probability(row.p_reversed)})`;
   return wrap(`    ${safe(row.lower)} should be older than ${safe(row.upper)}, and looks younger${p}.${why}`, 78, 6);
 }

@@ -1,5 +1,5 @@
 import type { Findings } from '../../model/index.js';
-import { counted, type Style, safe, wrap } from '../terminal.js';
+import { counted, figure, type Style, safe, wrap } from '../terminal.js';
 import { type ClockFacts, type ReadFacts, type SummaryFacts, summaryFacts } from './facts.js';
 import { relationsText, shellsText } from './field-text.js';
 import { orderText } from './order-text.js';
@@ -30,7 +30,7 @@ function readText({ shells, beds, sections, taxa, warnings }: ReadFacts): string
   const names = taxa.length > 0 && taxa.length <= 3 ? ` (${taxa.map(safe).join(', ')})` : '';
   const doubt = warnings > 0 ? `; ${counted(warnings, 'warning')}` : '';
   return (
-    `${counted(shells, 'shell')} of ${counted(taxa.length, 'taxon', 'taxa')}${names} in ` +
+    `${shells > 0 ? counted(shells, 'shell') : 'published means'} of ${counted(taxa.length, 'taxon', 'taxa')}${names} in ` +
     `${counted(beds, 'bed')} of ${counted(sections, 'section')}${doubt}.`
   );
 }
@@ -40,6 +40,7 @@ function clockText(facts: ClockFacts, style: Style): string[] {
   const acids = amino_acids.length > 1 ? ` of ${amino_acids.join(', ')}` : '';
   return [
     wrap(`${style.bold(safe(clock))}${acids}: ${counted(shells, 'shell')} in ${counted(beds, 'bed')}`, 78, 2),
+    ...aboutClock(facts),
     ...zonesText(facts, style),
     ...orderText(facts, style),
     ...relationsText(facts, style),
@@ -48,6 +49,28 @@ function clockText(facts: ClockFacts, style: Style): string[] {
     ...cautions(facts.cautions, style, '  '),
   ];
 }
+
+// What an index rests on, and what was done along a gradient.
+function aboutClock({ shares, gradient }: ClockFacts): string[] {
+  const lines: string[] = [];
+  if (shares.length > 1) {
+    const verdicts = [...new Set(shares.map(({ verdict }) => verdict))];
+    const words = verdicts.map((verdict) => {
+      const acids = shares.filter((share) => share.verdict === verdict).map(({ amino_acid }) => amino_acid);
+      return `${acids.join(', ')} ${acids.length > 1 ? PLURAL[verdict] : verdict}`;
+    });
+    lines.push(wrap(`  Amino acids: ${words.join('; ')}.`, 78, 4));
+  }
+  if (gradient) {
+    const { column, slope, slope_low, slope_high, centre, used } = gradient;
+    const done = used ? `taken out: ratios hold at ${figure(centre)}` : 'left in, since BIC does not ask for it';
+    const slopeText = `${figure(slope)} per unit (95 % ${figure(slope_low)} to ${figure(slope_high)})`;
+    lines.push(wrap(`  Slope of the log ratio along ${safe(column)}: ${slopeText}, ${done}.`, 78, 4));
+  }
+  return lines;
+}
+
+const PLURAL = { 'carries the resolution': 'carry the resolution', helps: 'help', 'adds noise': 'add noise' } as const;
 
 function sentences(texts: readonly string[], indent: string): string[] {
   return texts.map((text) => wrap(`${indent}${safe(text)}`, 78, indent.length + 2));

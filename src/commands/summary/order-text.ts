@@ -13,10 +13,11 @@ export function orderText({ order, sampling }: ClockFacts, style: Style): string
   if (order.length === 0) return ['  No order: no bed has a mean on this clock.'];
   const resolved = order.filter((row) => row.resolved === true).length;
   const lines = [
-    `  ${style.bold('Order, oldest to youngest')} (> older, ~ not resolved; [95 % interval of the rank])`,
+    `  ${style.bold('Order, oldest to youngest')} (> older, ~ not resolved, = as old)`,
     ...shortened(stretches(order), order.length),
   ];
-  if (order.length > 1) lines.push(`    ${resolved} of ${order.length - 1} steps are resolved.`);
+  if (order.length > 1)
+    lines.push(`    ${resolved} of ${order.length - 1} steps are resolved; [ ] is the 95 % interval of the rank.`);
   if (sampling && !sampling.converged) {
     lines.push(`    The order was not sampled well enough (R-hat ${sampling.rhat_max.toFixed(3)}); take it with care.`);
   }
@@ -26,17 +27,19 @@ export function orderText({ order, sampling }: ClockFacts, style: Style): string
 interface Stretch {
   readonly zone: string | null;
   readonly rows: readonly OrderRow[];
+  /** Whether the order ends with it. */
+  readonly last: boolean;
 }
 
 // Neighbours in the order that share a zone.
 function stretches(order: readonly OrderRow[]): Stretch[] {
   const found: { zone: string | null; rows: OrderRow[] }[] = [];
   for (const row of order) {
-    const last = found.at(-1);
-    if (last && last.zone === row.zone) last.rows.push(row);
+    const before = found.at(-1);
+    if (before && before.zone === row.zone) before.rows.push(row);
     else found.push({ zone: row.zone, rows: [row] });
   }
-  return found;
+  return found.map((stretch, i) => ({ ...stretch, last: i + 1 === found.length }));
 }
 
 function shortened(all: readonly Stretch[], beds: number): string[] {
@@ -46,20 +49,21 @@ function shortened(all: readonly Stretch[], beds: number): string[] {
   return [...shown, ...(left > 0 ? [`    … ${left} more beds`] : []), '    The whole order is in order.csv.'];
 }
 
-function stretchText({ zone, rows }: Stretch, most: number): string {
+function stretchText({ zone, rows, last }: Stretch, most: number): string {
   const cut = rows.length > most + 1;
   const kept = cut ? rows.slice(0, most) : rows;
-  const words = kept.map((row) => bedText(row));
-  if (cut) words.push(`… ${rows.length - most - 1} more …`, bedText(rows[rows.length - 1]));
+  const words = kept.map((row, i) => bedText(row, i + 1 === rows.length && last));
+  if (cut) words.push(`… ${rows.length - most - 1} more …`, bedText(rows[rows.length - 1], last));
   const name = (zone === null ? '-' : safe(zone)).padEnd(4);
   return unglued(wrap(`    ${name}${words.join(' ')}`, 78, 8));
 }
 
 // A bed, its interval and the sign that follows stay together on one line.
-function bedText(row: OrderRow): string {
+function bedText(row: OrderRow, isLast: boolean): string {
   const interval =
     row.rank_low === row.rank_high ? `[${row.rank_low}]` : `[${Math.round(row.rank_low)}-${Math.round(row.rank_high)}]`;
-  const sign = row.p_older_than_next === null ? '' : row.resolved ? ' >' : ' ~';
+  // without a probability the two are as old by a relation `same`
+  const sign = isLast ? '' : row.p_older_than_next === null ? ' =' : row.resolved ? ' >' : ' ~';
   return `${safe(`${row.section}/${row.bed}`)} ${interval}${sign}`.replaceAll(' ', GLUE);
 }
 
