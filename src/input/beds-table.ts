@@ -1,14 +1,15 @@
 import { type BedRegister, PLACE_KINDS } from './bed-register.js';
+import { decimalsIn, readableColumns, sortUnknown } from './gradient-columns.js';
 import { matchColumns, warnOfUnknownColumns } from './match-columns.js';
 import { ownValue } from './own-value.js';
+import { placeColumns, readPlace } from './place-columns.js';
 import type { ProblemList } from './problem-list.js';
-import { type DecimalSign, readNumber, tidyNumber } from './read-number.js';
+import { readNumber, tidyNumber } from './read-number.js';
 import { createRowReader } from './row-reader.js';
 import { settleDecimal } from './settle-decimal.js';
 import { PLACE_NAMES, shellsKey } from './shells-columns.js';
-import { NEGATIVE_DEPTH } from './shells-table.js';
 import { squash } from './squash.js';
-import { isBlank, type Table } from './table.js';
+import type { Table } from './table.js';
 
 /** Numbers of the beds table that bedorder knows by name. */
 export const BED_NUMBERS = ['elevation_m', 'latitude', 'longitude', 'coast_km', 'cmat_c', 'burial_m'] as const;
@@ -76,6 +77,7 @@ export function readBeds(table: Table, beds: BedRegister, problems: ProblemList)
   warnOfUnknownColumns(table, unread, COLUMNS, () => null, problems);
 
   const reader = createRowReader(table, sign, problems);
+  const places = placeColumns(at);
   const firstRows = new Map<string, number>();
   reader.forEachRow((cells, row) => {
     const section = reader.neededName(cells, row, at('section'), 'section');
@@ -90,23 +92,14 @@ export function readBeds(table: Table, beds: BedRegister, problems: ProblemList)
       numbers[name] = value;
       columns.push([table.header[at(name)], value], [name, value]);
     }
-    let given: string | null = null;
     const row_ = { file: table.file, line: table.line(row) };
     const entry = section === '' || bed === '' ? null : beds.enter(section, bed, () => row_);
-    for (const kind of PLACE_KINDS) {
-      const value = reader.number(cells, row, at(kind));
-      if (value === null) continue;
-      columns.push([table.header[at(kind)], value]);
-      const place = { ...row_, column: table.header[at(kind)] };
-      if (given !== null) {
-        problems.error(
-          'two kinds in a row',
-          place,
-          `The row gives ${given} and ${kind} as well. Give one kind of place for a whole section.`,
-        );
-      } else if (kind === 'depth_m' && value < 0) problems.error('negative depth', place, NEGATIVE_DEPTH(value));
-      else if (entry !== null) beds.setPlace(entry, kind, value, () => place);
-      given ??= kind;
+    readPlace(places, cells, row, entry, reader, beds, problems);
+    for (const { column } of places) {
+      // A place that can't be read has its problem already.
+      const value =
+        typeof cells[column] === 'number' ? cells[column] : readNumber(tidyNumber(String(cells[column])), sign);
+      if (Number.isFinite(value)) columns.push([table.header[column], value]);
     }
     for (const index of extra) {
       const value = reader.number(cells, row, index);
@@ -165,47 +158,4 @@ function outOfRange(name: BedNumber, value: number): string | null {
   if (name === 'burial_m' && !(value >= 0)) return `burial_m is ${value}; the thickness of a cover can't be below 0.`;
   if (name === 'cmat_c' && !(Math.abs(value) <= 60)) return `cmat_c is ${value}; wanted are degrees Celsius.`;
   return null;
-}
-
-const NUMBER_LIKE = /^[+-]?(?:\d+[.,]?\d*|[.,]\d+)(?:[eE][+-]?\d{1,4})?$/;
-
-/** Parts the columns without a known name into those that hold numbers only, for `--gradient`, and the others. */
-function sortUnknown(table: Table, unknown: readonly number[]): { numeric: number[]; other: number[] } {
-  const filled = new Map(unknown.map((index) => [index, 0]));
-  const text = new Set<number>(unknown.filter((index) => table.header[index] === ''));
-  for (let row = 0; row < table.length; row += 1) {
-    const cells = table.cells(row);
-    for (const index of unknown) {
-      const cell = cells[index];
-      if (isBlank(cell) || text.has(index)) continue;
-      filled.set(index, filled.get(index)! + 1);
-      if (typeof cell !== 'number' && (typeof cell !== 'string' || !NUMBER_LIKE.test(tidyNumber(cell))))
-        text.add(index);
-    }
-  }
-  const isNumeric = (index: number) => !text.has(index) && filled.get(index)! > 0;
-  return { numeric: unknown.filter(isNumeric), other: unknown.filter((index) => !isNumeric(index)) };
-}
-
-function decimalsIn(table: Table, columns: readonly number[]): boolean {
-  for (let row = 0; row < table.length; row += 1) {
-    const cells = table.cells(row);
-    if (columns.some((index) => typeof cells[index] === 'string' && /\d[.,]\d/.test(cells[index] as string)))
-      return true;
-  }
-  return false;
-}
-
-/** The columns of which every filled cell is a number with the file's decimal sign. */
-function readableColumns(table: Table, columns: readonly number[], sign: DecimalSign): number[] {
-  const left = new Set(columns);
-  for (let row = 0; row < table.length && left.size > 0; row += 1) {
-    const cells = table.cells(row);
-    for (const index of left) {
-      const cell = cells[index];
-      if (typeof cell === 'string' && !isBlank(cell) && Number.isNaN(readNumber(tidyNumber(cell), sign)))
-        left.delete(index);
-    }
-  }
-  return [...left];
 }

@@ -5,5 +5,6 @@ export { readDates } from './read-dates.js';
 export { readSettings } from './read-settings.js';
 export { readSurvey, type SurveyFiles } from './read-survey.js';
 export type { FileBytes } from './read-table.js';
-export type { Settings, SettingsResult } from './settings.js';
+export type { SettingsResult } from './settings.js';
+export type { Settings } from './settings-schema.js';
 export { type SurveyBytes, type SurveyResult, surveyFromBytes } from './survey-from-bytes.js';

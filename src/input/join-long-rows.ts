@@ -1,5 +1,5 @@
 import type { AminoAcid, Analysis } from '../model/index.js';
-import type { OpenAnalysis } from './shells-table.js';
+import type { OpenAnalysis } from './open-analysis.js';
 
 /**
  * Joins the rows of the long form, one an amino acid, to analyses: rows alike in everything but the amino acid are one
