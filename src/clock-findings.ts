@@ -27,7 +27,7 @@ import type {
   ZoneRow,
 } from './model/index.js';
 import { heightOf, orderRows, pairRows } from './order/index.js';
-import type { Settled } from './passes.js';
+import { MOST_PASSES, type Settled } from './passes.js';
 import { relationFindings } from './relation-findings.js';
 import { screenBeds } from './screening/index.js';
 import { adjustedRandIndex, type Random } from './statistics/index.js';
@@ -176,6 +176,7 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
     sections: sectionRows(settled, siteOf, options.alpha, options.simulations, random),
     correlation: correlationTable(zones, beds, sections),
     diagnostics: order === null ? [] : [diagnosticsOf(data.clock.name, order)],
+    remarks: settled.settled ? [] : [unsettledPasses(data.clock.name)],
     gradients: last.gradient === null ? [] : [gradientFinding(last, last.gradient, options.gradient!)],
   };
 }
@@ -276,6 +277,11 @@ function sectionRows(
     p_order,
     verdict,
   }));
+}
+
+function unsettledPasses(clock: string): Remark {
+  const text = `After ${MOST_PASSES} passes some shells still change between set aside and kept; the last pass is shown, and they deserve a look.`;
+  return { clock, level: 'caution', text };
 }
 
 function gradientFinding({ data }: Pass, fit: SlopeOfPass, column: string): GradientFinding {
