@@ -1,5 +1,7 @@
 import { studentTQuantile } from '../statistics/index.js';
-import { chooseModel, fitContinuum, fitMixture, type ModelChoice, partition } from '../zones/index.js';
+import { bic, fitContinuum, fitMixture, MOST_ZONES } from '../zones/index.js';
+import { type BedsOnGradient, climb, type Model, profileEnd, slopeProfile, takeOut } from './slope-profile.js';
+import { slopeValleys } from './slope-valleys.js';
 
 /** The slope of log ratios along a gradient, and whether the data support one. */
 export interface GradientFit {
@@ -15,181 +17,114 @@ export interface GradientFit {
   readonly used: boolean;
 }
 
-/** Slopes tried on the coarse grid. */
-const GRID = 241;
+/** Beds under which no slope is fitted. */
+export const FEWEST_BEDS_FOR_SLOPE = 4;
+
+/** Beds on which the valleys of the slope are looked for; of more, an even choice of this many. */
+const MOST_BEDS_IN_SEARCH = 300;
+
+/** Valleys that are refined. */
+const VALLEYS = 4;
 
 /**
  * Fits x = μ_zone + β (g − ḡ) + error with one slope for all zones (design 7.11), the isochrons of a coast along which the
- * temperature changes. For every slope of a grid the beds are partitioned exactly after the slope is taken out and the
- * models are compared by BIC on their classification likelihood (Symons 1981, doi:10.2307/2530520); the best slopes are
- * refined with the full mixtures and the continuum, and the interval is where the profile of the likelihood stays within
- * t²/2 of its top, t the 97.5 % point of Student's t on beds less zones less 1: 1.92 with very many beds, more with few.
+ * temperature changes. For every slope of a grid the beds are partitioned exactly after the slope is taken out; the best
+ * slopes are refined with the full mixtures and the continuum, compared by BIC in which the slope counts as one parameter;
+ * the interval is where the profile of the likelihood stays within t²/2 of its top (Pawitan 2001, In All Likelihood,
+ * chapter 2, from memory), t the 97.5 % point of Student's t on beds less zones less 1: 1.92 with very many beds, more
+ * with few.
  * @param values bed means of log ratios
  * @param errors their standard errors
  * @param gradient value of the column less its mean, one a bed
- * @returns null when the column does not vary over the beds
+ * @returns null with fewer than 4 beds, or when the column does not vary over them
+ * @example
+ * fitGradient([-2, -1.9, -1.8], [0.02, 0.02, 0.02], [-1, 0, 1]) // => null
  */
 export function fitGradient(
   values: readonly number[],
   errors: readonly number[],
   gradient: readonly number[],
 ): GradientFit | null {
-  const reach = Math.max(...gradient) - Math.min(...gradient);
-  if (!(reach > 0) || values.length < 4) return null;
-  const without = bestOf(chooseModel(values, errors));
-  const range = Math.max(...values) - Math.min(...values);
-  const limit = (1.5 * Math.max(range, 4 * Math.max(...errors))) / reach;
-  const step = (2 * limit) / (GRID - 1);
-  const grid = Array.from({ length: GRID }, (_, at) => -limit + at * step);
-  const scores = grid.map((slope) => roughBic(takeOut(values, gradient, slope), errors));
-  let best = { slope: 0, bic: without.bic + Math.log(values.length), model: without.model };
-  for (const at of lowPoints(scores).slice(0, 4)) {
-    const candidate = refine(values, errors, gradient, grid[at], step);
+  const reach = spanOf(gradient);
+  if (!(reach > 0) || values.length < FEWEST_BEDS_FOR_SLOPE) return null;
+  const all: BedsOnGradient = { values, errors, gradient };
+  const few = thinned(all);
+  const limit = (1.5 * Math.max(spanOf(values), 4 * Math.max(...errors))) / reach;
+  const { valleys, step } = slopeValleys(few, limit);
+  const flat = bestModel(few, 0, null);
+  let best = { slope: 0, bic: flat.bic, model: flat.model };
+  for (const valley of valleys.slice(0, VALLEYS)) {
+    const candidate = refine(few, valley.slope, valley.zones, step);
     if (candidate.bic < best.bic) best = candidate;
   }
-  const profile = (slope: number): number => logLikelihood(takeOut(values, gradient, slope), errors, best.model);
-  const centre = climb(profile, best.slope, step);
-  const top = profile(centre);
-  const bicWith = best.bic - 2 * Math.max(0, top - profile(best.slope));
-  const df = Math.max(2, values.length - 1 - (best.model === 'continuum' ? 2 : best.model));
+  const bicWithout = few === all ? flat.bic : bestModel(all, 0, flat.model).bic;
+  // on the thinned beds the number of zones may come out too low: look about it once more with all of them
+  const { model } = few === all ? best : bestModel(all, best.slope, best.model);
+  const profile = slopeProfile(all, model, step);
+  const slope = climb(profile, best.slope, few === all ? step / 20 : step / 5, 1e-4 * step);
+  const top = profile(slope);
+  const df = Math.max(2, values.length - 1 - (model === 'continuum' ? 2 : model));
   const drop = studentTQuantile(0.975, df) ** 2 / 2;
+  const n = values.length;
+  const bicWith = bicOf(top, model, n) + Math.log(n);
+  const width = step / 8;
   return {
-    slope: centre,
-    low: profileEnd(profile, centre, top - drop, -step),
-    high: profileEnd(profile, centre, top - drop, step),
+    slope,
+    low: profileEnd(profile, slope, top - drop, -width),
+    high: profileEnd(profile, slope, top - drop, width),
     bicWith,
-    bicWithout: without.bic,
-    used: bicWith < without.bic,
+    bicWithout,
+    used: bicWith < bicWithout,
   };
 }
 
-const takeOut = (values: readonly number[], gradient: readonly number[], slope: number): number[] =>
-  values.map((value, at) => value - slope * gradient[at]);
+const spanOf = (values: readonly number[]): number => {
+  let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (const value of values) [low, high] = [Math.min(low, value), Math.max(high, value)];
+  return high - low;
+};
 
-/** Number of zones of the best model, or the continuum. */
-type Model = number | 'continuum';
-
-function bestOf(choice: ModelChoice): { readonly bic: number; readonly model: Model } {
-  const mixture = choice.bics[choice.bestZones - 1];
-  return mixture <= choice.continuumBic
-    ? { bic: mixture, model: choice.bestZones }
-    : { bic: choice.continuumBic, model: 'continuum' };
+/** An even choice of beds that keeps to no rhythm of sections and levels: multiples of the golden ratio, modulo 1. */
+function thinned(all: BedsOnGradient): BedsOnGradient {
+  const n = all.values.length;
+  if (n <= MOST_BEDS_IN_SEARCH) return all;
+  const golden = (Math.sqrt(5) - 1) / 2;
+  const chosen = all.values.flatMap((_, at) => ((at * golden) % 1 < MOST_BEDS_IN_SEARCH / n ? [at] : []));
+  const of = (list: readonly number[]): number[] => chosen.map((at) => list[at]);
+  return { values: of(all.values), errors: of(all.errors), gradient: of(all.gradient) };
 }
 
-function logLikelihood(values: readonly number[], errors: readonly number[], model: Model): number {
-  return model === 'continuum'
-    ? fitContinuum(values, errors).logLikelihood
-    : fitMixture(values, errors, model, { tolerance: 1e-7 }).logLikelihood;
-}
+const bicOf = (logLikelihood: number, model: Model, n: number): number =>
+  bic(logLikelihood, model === 'continuum' ? 2 : 2 * model, n);
 
-/** Least BIC over numbers of zones with every bed given to its own zone: quick, and good enough to find the valleys. */
-function roughBic(values: readonly number[], errors: readonly number[]): number {
+/** The model of lowest BIC at one slope, the slope not counted: all of them, or those about a guess. */
+function bestModel(beds: BedsOnGradient, slope: number, guess: Model | null): { bic: number; model: Model } {
+  const values = takeOut(beds, slope);
   const n = values.length;
-  const weights = errors.map((se) => 1 / Math.max(se * se, 1e-12));
+  const continuum = fitContinuum(values, beds.errors, 1e-7);
+  let best: { bic: number; model: Model } = { bic: bicOf(continuum.logLikelihood, 'continuum', n), model: 'continuum' };
+  const most = Math.min(MOST_ZONES, new Set(values).size);
+  const [from, to] = typeof guess === 'number' ? [Math.max(1, guess - 1), Math.min(most, guess + 1)] : [1, most];
   let least = Number.POSITIVE_INFINITY;
   let worse = 0;
-  for (let k = 1; k <= Math.min(10, n - 1) && worse < 3; k++) {
-    const score = classificationBic(values, errors, partition(values, weights, k), k);
-    if (score < least) least = score;
+  for (let k = from; k <= to && worse < 3; k++) {
+    const score = bicOf(fitMixture(values, beds.errors, k, { tolerance: 1e-7 }).logLikelihood, k, n);
+    if (score < least) [least, worse] = [score, 0];
     else worse++;
+    if (score < best.bic) best = { bic: score, model: k };
   }
-  return least;
+  return best;
 }
 
-function classificationBic(
-  values: readonly number[],
-  errors: readonly number[],
-  labels: readonly number[],
-  k: number,
-): number {
-  const n = values.length;
-  const sums = new Float64Array(k);
-  const counts = new Float64Array(k);
-  labels.forEach((label, at) => {
-    sums[label] += values[at];
-    counts[label]++;
-  });
-  let excess = 0;
-  labels.forEach((label, at) => {
-    excess += (values[at] - sums[label] / counts[label]) ** 2 - errors[at] ** 2;
-  });
-  const tau2 = Math.max(0, excess / n);
-  let total = 0;
-  labels.forEach((label, at) => {
-    const variance = Math.max(tau2 + errors[at] ** 2, 1e-12);
-    const d = values[at] - sums[label] / counts[label];
-    total += Math.log(counts[label] / n) - 0.5 * Math.log(2 * Math.PI * variance) - (0.5 * d * d) / variance;
-  });
-  return -2 * total + 2 * k * Math.log(n);
-}
-
-/** Grid points lower than their neighbours, the lowest first. */
-function lowPoints(scores: readonly number[]): number[] {
-  return scores
-    .map((_, at) => at)
-    .filter(
-      (at) =>
-        scores[at] <= (scores[at - 1] ?? Number.POSITIVE_INFINITY) &&
-        scores[at] <= (scores[at + 1] ?? Number.POSITIVE_INFINITY),
-    )
-    .sort((a, b) => scores[a] - scores[b] || a - b);
-}
-
-function refine(
-  values: readonly number[],
-  errors: readonly number[],
-  gradient: readonly number[],
-  start: number,
-  step: number,
-) {
-  let { model } = bestOf(chooseModel(takeOut(values, gradient, start), errors));
+/** Follows a valley down: the best number of zones may change as the slope settles, and the slope with it. */
+function refine(beds: BedsOnGradient, start: number, zones: number, step: number) {
+  const penalty = Math.log(beds.values.length);
+  let { model } = bestModel(beds, start, zones);
   let slope = start;
-  let bic = Number.POSITIVE_INFINITY;
-  // the best number of zones may change as the slope settles, and the slope with it
-  for (let round = 0; round < 3; round++) {
-    slope = climb((at) => logLikelihood(takeOut(values, gradient, at), errors, model), slope, step);
-    const next = bestOf(chooseModel(takeOut(values, gradient, slope), errors, 1));
-    bic = next.bic;
-    if (next.model === model) break;
+  for (let round = 0; ; round++) {
+    slope = climb(slopeProfile(beds, model, step), slope, step / 2, step / 50);
+    const next = bestModel(beds, slope, model);
+    if (next.model === model || round === 2) return { slope, bic: next.bic + penalty, model: next.model };
     model = next.model;
   }
-  return { slope, bic, model };
-}
-
-/** Top of a function near a start: steps uphill to bracket it, then halves by golden sections. */
-function climb(f: (x: number) => number, start: number, step: number): number {
-  let [low, high] = [start - step, start + step];
-  for (let turn = 0; turn < 40 && f(low) > f((low + high) / 2); turn++) low -= step;
-  for (let turn = 0; turn < 40 && f(high) > f((low + high) / 2); turn++) high += step;
-  const ratio = (Math.sqrt(5) - 1) / 2;
-  let [left, right] = [high - ratio * (high - low), low + ratio * (high - low)];
-  let [fLeft, fRight] = [f(left), f(right)];
-  for (let turn = 0; turn < 60 && high - low > 1e-4 * step; turn++) {
-    if (fLeft >= fRight) {
-      [high, right, fRight] = [right, left, fLeft];
-      left = high - ratio * (high - low);
-      fLeft = f(left);
-    } else {
-      [low, left, fLeft] = [left, right, fRight];
-      right = low + ratio * (high - low);
-      fRight = f(right);
-    }
-  }
-  return (low + high) / 2;
-}
-
-/** Where the profile has fallen to a level, going outwards from its top. */
-function profileEnd(profile: (slope: number) => number, centre: number, level: number, step: number): number {
-  let inside = centre;
-  let outside = centre + step / 4;
-  for (let turn = 0; turn < 200 && profile(outside) > level; turn++) {
-    inside = outside;
-    outside += (step / 4) * (1 + turn / 4);
-  }
-  for (let turn = 0; turn < 40 && Math.abs(outside - inside) > 1e-5 * Math.abs(step); turn++) {
-    const middle = (inside + outside) / 2;
-    if (profile(middle) > level) inside = middle;
-    else outside = middle;
-  }
-  return (inside + outside) / 2;
 }
