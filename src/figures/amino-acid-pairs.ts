@@ -39,7 +39,8 @@ export function aminoAcidPairs(view: ClockView, findings: Findings): Figure | nu
   });
   const bottom = Math.ceil(pairs.length / across) * (height + 8);
   const fill = view.inks[Math.floor((view.inks.length - 1) / 3)].fill;
-  const key = zoneLegend(view, 44, bottom + 12, WIDE - 50, [
+  const sheet = across === 1 ? width + 8 : WIDE;
+  const key = zoneLegend(view, 44, bottom + 12, sheet - 50, [
     { sign: [shellSign('doubtful', fill)], half: 4, text: 'doubtful' },
     { sign: [shellSign('set aside', PAPER)], half: 4, text: 'set aside' },
   ]);
@@ -49,7 +50,7 @@ export function aminoAcidPairs(view: ClockView, findings: Findings): Figure | nu
     title: `Amino acids against each other${view.heading}`,
     caption: `D/L of every shell in two amino acids, both axes logarithmic. Sound shells of one taxon follow one line; a shell beside the line was contaminated, heated or leached, a shell far along the line from its bed more likely comes from an older or a younger deposit. ${odd === 0 ? 'No shell was marked.' : `The ${odd} doubtful or set-aside ones are marked by shape.`}${shells.length > MOST_SHELLS / 4 ? ' So many shells are drawn thinned; shells.csv holds all.' : ''}`,
     alt: `${pairs.map((pair) => pair.join(' against ')).join('; ')}: D/L of ${shells.length} shells, ${odd} of them doubtful or set aside.`,
-    width: across === 1 ? width + 8 : WIDE,
+    width: sheet,
     height: bottom + 8 + key.height,
     body: [...body, key.node],
   });

@@ -138,3 +138,20 @@ const slug = (name: string) =>
     .replace(/[^a-z0-9]+/g, '-')
     .replace(/^-+|-+$/g, '')
     .slice(0, 40) || 'clock';
+
+/**
+ * Log ratio of a shell as its bed's mean has it: with the slope taken out where one is used, at the gradient's centre.
+ */
+export function shellRatio(view: ClockView, bed: BedView, shell: ShellView): number {
+  const { gradient } = view;
+  const at = bed.site?.gradient ?? null;
+  return gradient?.used && at !== null
+    ? shell.row.log_ratio - gradient.slope * (at - gradient.centre)
+    : shell.row.log_ratio;
+}
+
+/** Said of an axis or a caption where the slope was taken out: at which value of the gradient the ratios hold. */
+export function atCentre(view: ClockView): string {
+  const { gradient } = view;
+  return gradient?.used ? `, at ${gradient.column} ${Number(gradient.centre.toPrecision(3))}` : '';
+}

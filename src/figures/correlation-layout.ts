@@ -82,7 +82,10 @@ export function layColumns(view: ClockView): SectionColumn[] {
 
 function layColumn(section: string, beds: readonly BedView[], scale: number | null): SectionColumn {
   const placed = beds.filter((bed) => upwards(bed) !== null);
-  const floating = beds.filter((bed) => upwards(bed) === null);
+  // Beds without a place stand by their rank, the oldest lowest: all that is known of them.
+  const floating = beds
+    .filter((bed) => upwards(bed) === null)
+    .sort((a, b) => (a.order?.rank ?? 0) - (b.order?.rank ?? 0));
   const steps = [...new Set(placed.map((bed) => upwards(bed)!))].sort((a, b) => a - b);
   const metric = scale !== null && metricHeights(placed) !== null && steps.length > 0;
   const slices: Slice[] = [];
@@ -103,9 +106,16 @@ function layColumn(section: string, beds: readonly BedView[], scale: number | nu
     });
     y -= thick;
   });
-  // Beds without a place stand apart, below the column.
-  let below = steps.length > 0 ? 8 : 0;
-  for (const bed of floating) {
+  if (steps.length === 0) {
+    for (const bed of floating) {
+      slices.push({ bed, top: y - EVEN + 3, bottom: y, left: 0, right: 1, placed: false });
+      y -= EVEN;
+    }
+    return { section, slices, metric: false, shift: 0, top: y, bottom: 0 };
+  }
+  // Beside beds with a place they stand apart, below the column.
+  let below = floating.length > 0 ? 8 : 0;
+  for (const bed of [...floating].reverse()) {
     slices.push({ bed, top: below, bottom: below + EVEN - 3, left: 0, right: 1, placed: false });
     below += EVEN;
   }
@@ -119,7 +129,7 @@ function layColumn(section: string, beds: readonly BedView[], scale: number | nu
 function align(columns: readonly SectionColumn[], zones: number): SectionColumn[] {
   const centres = columns.map((column) =>
     Array.from({ length: zones }, (_, zone) => {
-      const own = column.slices.filter((slice) => slice.bed.zone === zone && slice.placed);
+      const own = column.slices.filter((slice) => slice.bed.zone === zone);
       return own.length === 0 ? null : own.reduce((sum, slice) => sum + (slice.top + slice.bottom) / 2, 0) / own.length;
     }),
   );
@@ -148,8 +158,9 @@ export interface Run {
 /** Stretches of one zone in a column, from the lowest up, shift included. */
 export function runsOf(column: SectionColumn): Run[] {
   const runs: Run[] = [];
+  const loose = column.slices.every((slice) => !slice.placed);
   for (const slice of column.slices) {
-    if (slice.bed.zone < 0 || !slice.placed) continue;
+    if (slice.bed.zone < 0 || !(slice.placed || loose)) continue;
     const last = runs[runs.length - 1];
     const [top, bottom] = [slice.top + column.shift, slice.bottom + column.shift];
     if (last !== undefined && last.zone === slice.bed.zone)

@@ -71,7 +71,7 @@ export function panelEntries(view: ClockView, hatch: (zone: number) => string, r
         }),
       ],
       half: 9,
-      text: 'no place in its section',
+      text: 'no place in its section: stands by its rank',
     });
   if (reversed)
     out.push({

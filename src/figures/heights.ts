@@ -1,5 +1,5 @@
 import * as Plot from '@observablehq/plot';
-import { type ClockView, inkOf } from './clock-view.js';
+import { atCentre, type ClockView, inkOf } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
 import { padded } from './shells-by-bed.js';
@@ -15,11 +15,10 @@ export function heightsAgainstRatio(view: ClockView): Figure | null {
   });
   if (beds.length < 2) return null;
   const x = padded(Math.min(...beds.map((p) => p.x - 1.96 * p.se)), Math.max(...beds.map((p) => p.x + 1.96 * p.se)));
-  const y = padded(Math.min(0, ...beds.map((p) => p.y)), Math.max(...beds.map((p) => p.y)));
-  const means =
-    view.zoned && !view.gradient?.used
-      ? [...view.zones.keys()].filter((zone) => beds.some((p) => p.bed.zone === zone))
-      : [];
+  const [yLow, yTop] = padded(Math.min(0, ...beds.map((p) => p.y)), Math.max(...beds.map((p) => p.y)));
+  // Room for the zones' names above the highest bed.
+  const y = [yLow, yTop + 0.07 * (yTop - yLow)] as const;
+  const means = view.zoned ? [...view.zones.keys()].filter((zone) => beds.some((p) => p.bed.zone === zone)) : [];
   const few = beds.length <= MOST_BEDS;
   const height = 380;
   const body = housePlot({
@@ -67,7 +66,12 @@ export function heightsAgainstRatio(view: ClockView): Figure | null {
         strokeWidth: few ? 0.8 : 0.4,
         render: tagged((i) => ({ 'data-b': beds[i].bed.id })),
       }),
-      Plot.axisX({ ...AXIS, anchor: 'bottom', label: 'mean log ratio of the bed, ln(D/L)', labelOffset: 34 }),
+      Plot.axisX({
+        ...AXIS,
+        anchor: 'bottom',
+        label: `mean log ratio of the bed, ln(D/L)${atCentre(view)}`,
+        labelOffset: 34,
+      }),
       Plot.axisX({
         ...AXIS,
         anchor: 'top',

@@ -93,7 +93,7 @@ export function relationDifferences(view: ClockView): Figure | null {
   return finishFigure({
     name: `relations${view.suffix}`,
     title: `Field relations against the ratios${view.heading}`,
-    caption: `Each line is one relation with the 95 % interval of the difference: right of zero the lower bed has the higher ratio, as it should. Filled discs agree, open ones are tied, red squares (numbered) are reversed, open squares were reversed until odd shells were set aside.${sorted.length > rows.length ? ` The ${rows.length} least agreeable of ${sorted.length} are drawn.` : ''}`,
+    caption: `Each line is one relation with the 95 % interval of the difference: right of zero the lower bed has the higher ratio, as it should. Filled signs agree, open ones are tied (triangles: relations of one age), red squares (numbered) are reversed, open squares were reversed until odd shells were set aside.${sorted.length > rows.length ? ` The ${rows.length} least agreeable of ${sorted.length} are drawn.` : ''}`,
     alt: `${tested.length} relations: ${['agrees', 'tied', 'reversed'].map((verdict) => `${tested.filter((row) => row.verdict_after === verdict).length} ${verdict}`).join(', ')}. Reversed: ${
       sorted
         .filter((row) => row.verdict_after === 'reversed')

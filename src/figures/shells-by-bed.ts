@@ -1,6 +1,6 @@
 import * as Plot from '@observablehq/plot';
 import { bedColumns, bedNote } from './bed-rows.js';
-import { type ClockView, inkOf, zoneTag } from './clock-view.js';
+import { atCentre, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
 import { legend } from './legend.js';
@@ -16,7 +16,7 @@ export function shellsByBed(view: ClockView): Figure | null {
   if (view.beds.length > MOST_BEDS || view.clock.shells > MOST_SHELLS) return shellsSummarised(view);
   const shells = view.beds.flatMap((bed) => bed.shells);
   const values = [
-    ...shells.map((shell) => shell.row.log_ratio),
+    ...view.beds.flatMap((bed) => bed.shells.map((shell) => shellRatio(view, bed, shell))),
     ...view.beds.flatMap((bed) => (bed.row.log_mean === null ? [] : [bed.row.log_mean])),
   ].filter(Number.isFinite);
   if (values.length === 0) return null;
@@ -33,14 +33,12 @@ export function shellsByBed(view: ClockView): Figure | null {
     const beds = column.lines.filter((line) => line.kind === 'bed');
     const heads = column.lines.filter((line) => line.kind === 'zone');
     const points = beds.flatMap((line) =>
-      line.bed.shells.map((shell) => ({ shell, bed: line.bed, x: shell.row.log_ratio, y: line.y })),
+      line.bed.shells.map((shell) => ({ shell, bed: line.bed, x: shellRatio(view, line.bed, shell), y: line.y })),
     );
     const bandTags = tagged((i) => ({ 'data-z': zoneTag(view, column.bands[i].zone) }));
     const byBed = tagged((i) => ({ 'data-b': beds[i].bed.id }));
     const means = beds.filter((line) => line.bed.row.log_mean !== null);
-    const ranges = view.gradient?.used
-      ? []
-      : column.bands.filter((band) => band.zone >= 0 && view.zoned && view.zones[band.zone].shells > 1);
+    const ranges = column.bands.filter((band) => band.zone >= 0 && view.zoned && view.zones[band.zone].shells > 1);
     return housePlot(
       {
         width,
@@ -142,7 +140,7 @@ export function shellsByBed(view: ClockView): Figure | null {
             ...AXIS,
             anchor: 'bottom',
             ticks: columns.length > 1 ? 4 : 6,
-            label: 'log ratio, ln(D/L)',
+            label: `log ratio, ln(D/L)${atCentre(view)}`,
             labelOffset: 30,
           }),
           Plot.axisX({
@@ -184,9 +182,12 @@ export function shellsByBed(view: ClockView): Figure | null {
 }
 
 const ranges = (view: ClockView) =>
-  view.zoned && !view.gradient?.used
-    ? 'The darker part of each band spans one standard deviation of shells either side of the zone mean.'
-    : '';
+  [
+    view.zoned
+      ? 'The darker part of each band spans one standard deviation of shells either side of the zone mean.'
+      : '',
+    view.gradient?.used ? `The slope along ${view.gradient.column} is taken out of every ratio.` : '',
+  ].join(' ');
 
 const bedName = (row: { section: string; bed: string }) => `${row.section}/${row.bed}`;
 

@@ -1,6 +1,6 @@
 import * as Plot from '@observablehq/plot';
 import { quantile } from '../statistics/index.js';
-import { type ClockView, inkOf, zoneTag } from './clock-view.js';
+import { atCentre, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
 import { padded, ratio } from './shells-by-bed.js';
@@ -12,9 +12,12 @@ const BINS = 90;
 export function shellsSummarised(view: ClockView): Figure | null {
   const groups = [...view.zones.keys(), -1]
     .map((zone) => {
-      const shells = view.beds.filter((bed) => bed.zone === zone).flatMap((bed) => bed.shells);
-      const pick = (aside: boolean) =>
-        shells.filter((shell) => (shell.row.status === 'set aside') === aside).map((shell) => shell.row.log_ratio);
+      const shells = view.beds
+        .filter((bed) => bed.zone === zone)
+        .flatMap((bed) =>
+          bed.shells.map((shell) => ({ aside: shell.row.status === 'set aside', x: shellRatio(view, bed, shell) })),
+        );
+      const pick = (aside: boolean) => shells.filter((shell) => shell.aside === aside).map((shell) => shell.x);
       return { zone, kept: pick(false), aside: pick(true), beds: view.beds.filter((bed) => bed.zone === zone).length };
     })
     .filter((group) => group.kept.length + group.aside.length > 0);
@@ -93,7 +96,7 @@ export function shellsSummarised(view: ClockView): Figure | null {
         fontWeight: 700,
         fill: SOFT,
       }),
-      Plot.axisX({ ...AXIS, anchor: 'bottom', label: 'log ratio, ln(D/L)', labelOffset: 32 }),
+      Plot.axisX({ ...AXIS, anchor: 'bottom', label: `log ratio, ln(D/L)${atCentre(view)}`, labelOffset: 32 }),
       Plot.axisX({
         ...AXIS,
         anchor: 'top',

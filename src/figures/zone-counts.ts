@@ -35,7 +35,7 @@ export function zoneCounts(view: ClockView): Figure | null {
   return finishFigure({
     name: `zone-counts${view.suffix}`,
     title: `How the number of zones was chosen${view.heading}`,
-    caption: `Three criteria for every number of zones${rows.some((row) => row.model === 'continuum') ? '; ~ is the continuum, without zones' : ''}. The ringed model is in use${chosen === undefined ? '' : ` (${naming(chosen.model)})`}. A BIC within 2 of the best is hardly worse; the gap and the silhouette speak for a number where they are large. Here ${votes.join(', ')}.`,
+    caption: `${['', 'One criterion', 'Two criteria', 'Three criteria'][drawn.length]} for every number of zones${rows.some((row) => row.model === 'continuum') ? '; ~ is the continuum, without zones' : ''}. The ringed model is in use${chosen === undefined ? '' : ` (${naming(chosen.model)})`}. A BIC within 2 of the best is hardly worse${drawn.length > 1 ? '; the gap and the silhouette speak for a number where they are large' : ''}. Here ${votes.join(', ')}.`,
     alt: `BIC above the best: ${rows.map((row) => `${row.model} ${Math.round((row.bic - best) * 10) / 10}`).join(', ')}. ${votes.join('; ')}.`,
     width: drawn.length === 1 ? width : WIDE,
     height: 232,

@@ -1,8 +1,8 @@
 import * as Plot from '@observablehq/plot';
-import { type ClockView, inkOf, zoneTag } from './clock-view.js';
+import { atCentre, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, tagged } from './house-plot.js';
-import { padded, ratio, short } from './shells-by-bed.js';
+import { padded, ratio } from './shells-by-bed.js';
 import { INK, NARROW, SOFT, TYPE } from './theme.js';
 
 const STEP = 40;
@@ -14,10 +14,10 @@ export function zoneRanges(view: ClockView): Figure | null {
   const shells = zones.flatMap(({ i, y }) => {
     const own = view.beds
       .filter((bed) => bed.zone === i)
-      .flatMap((bed) => bed.shells)
-      .filter((shell) => shell.row.status !== 'set aside' && Number.isFinite(shell.row.dl));
+      .flatMap((bed) => bed.shells.map((shell) => ({ shell, dl: Math.exp(shellRatio(view, bed, shell)) })))
+      .filter(({ shell, dl }) => shell.row.status !== 'set aside' && Number.isFinite(dl));
     const every = Math.ceil(own.length / 400);
-    return own.filter((_, k) => k % every === 0).map((shell) => ({ x: shell.row.dl, y, id: shell.id }));
+    return own.filter((_, k) => k % every === 0).map(({ shell, dl }) => ({ x: dl, y, id: shell.id }));
   });
   const [low, high] = padded(
     Math.min(...view.zones.map((zone) => zone.shell_low), ...shells.map((shell) => shell.x)),
@@ -88,12 +88,12 @@ export function zoneRanges(view: ClockView): Figure | null {
         x: high,
         y: (entry) => entry.y + 1.5,
         dx: 6,
-        text: (entry) => `${entry.row.verdict}, ${short(entry.row.overlap)}`,
+        text: (entry) => `${entry.row.verdict}, ${overlapText(entry.row.overlap)}`,
         textAnchor: 'start',
         fontSize: TYPE.tiny,
         fill: SOFT,
       }),
-      Plot.axisX({ ...AXIS, ticks: 4, label: 'D/L', labelOffset: 32 }),
+      Plot.axisX({ ...AXIS, ticks: 4, label: `D/L${atCentre(view)}`, labelOffset: 32 }),
     ],
   });
   return finishFigure({
@@ -101,9 +101,11 @@ export function zoneRanges(view: ClockView): Figure | null {
     title: `The zones and how far neighbours overlap${view.heading}`,
     caption:
       'Boxes span one standard deviation of shells either side of the zone mean; the heavy line above a box is the 95 % interval of the mean, and the ticks below are single shells. Beside each pair of neighbours stand the verdict and the overlap coefficient of their shells: 0 apart, 1 alike, 0.32 where the boxes just touch.',
-    alt: `${view.zones.map((zone) => `${zone.zone}: D/L ${ratio(zone.dl_mean)}, shells ${ratio(zone.shell_low)} to ${ratio(zone.shell_high)}`).join('; ')}. ${view.adjacent.map((row) => `${row.younger} and ${row.older}: ${row.verdict}, overlap ${short(row.overlap)}`).join('; ')}.`,
+    alt: `${view.zones.map((zone) => `${zone.zone}: D/L ${ratio(zone.dl_mean)}, shells ${ratio(zone.shell_low)} to ${ratio(zone.shell_high)}`).join('; ')}. ${view.adjacent.map((row) => `${row.younger} and ${row.older}: ${row.verdict}, overlap ${overlapText(row.overlap)}`).join('; ')}.`,
     width: NARROW,
     height: bottom + 42,
     body: [body],
   });
 }
+
+const overlapText = (overlap: number) => (overlap < 0.005 ? '< 0.01' : overlap.toFixed(2));

@@ -1,4 +1,4 @@
-import { type ClockView, type ShellView, zoneTag } from '../figures/clock-view.js';
+import { type ClockView, zoneTag } from '../figures/clock-view.js';
 import { relationNumbers } from '../figures/reversed-marks.js';
 import type { RelationRow } from '../model/index.js';
 import { html, listed, type Markup } from './html.js';
@@ -43,7 +43,7 @@ export function zonesTable(view: ClockView): Markup {
     },
     { head: 'stability', number: true, cell: (row) => figures(row.stability, 2) },
     { head: 'against the next older', cell: (row) => older.get(row.zone)?.verdict ?? '–' },
-    { head: 'overlap', number: true, cell: (row) => figures(older.get(row.zone)?.overlap ?? null, 2) },
+    { head: 'overlap', number: true, cell: (row) => chance(older.get(row.zone)?.overlap ?? null) },
     { head: 'p (beds)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_difference ?? null) },
     { head: 'p (shells)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_mann_whitney ?? null) },
   ];
@@ -89,46 +89,6 @@ export function relationsTable(view: ClockView): Markup {
     return { id: number === undefined ? undefined : `relation-${view.index}-${number}`, beds, clock: view.index };
   })}${cut(shown.length, rows.length, 'relations.csv')}`;
 }
-
-/** Shells set aside or doubtful, each with what speaks against it. */
-export function oddShells(view: ClockView, evidence: ReadonlyMap<string, readonly string[]>): Markup {
-  const odd = view.beds
-    .flatMap((bed) => bed.shells)
-    .filter((shell) => shell.row.status !== 'kept')
-    .sort((a, b) => (a.row.status === b.row.status ? 0 : a.row.status === 'set aside' ? -1 : 1));
-  if (odd.length === 0) return html`<p>No shell of ${view.clock.clock} was set aside or called doubtful.</p>`;
-  const shown = odd.slice(0, 600);
-  const columns: Column<ShellView>[] = [
-    { head: 'shell', cell: (shell) => shellLink(view, shell) },
-    { head: 'status', cell: (shell) => html`${shell.row.status === 'set aside' ? '✕' : '◆'} ${shell.row.status}` },
-    { head: 'reading', cell: (shell) => (shell.row.reading === 'none' ? '–' : shell.row.reading) },
-    { head: 'confidence', cell: (shell) => shell.row.confidence ?? '–' },
-    { head: 'D/L', number: true, cell: (shell) => ratio(shell.row.dl) },
-    {
-      head: 'from its bed',
-      number: true,
-      cell: (shell) => figures(shell.row.residual, 2),
-      sort: (shell) => shell.row.residual,
-    },
-    { head: 'marks', cell: (shell) => shell.row.marks.join(', ') || '–' },
-    {
-      head: 'evidence',
-      long: true,
-      cell: (shell) => evidence.get(`${shell.row.section}/${shell.row.bed}/${shell.row.shell}`)?.join(' ') ?? '',
-    },
-  ];
-  return html`${table(`Shells of ${view.clock.clock} set aside or doubtful`, columns, shown, (shell) => ({
-    id: `odd-${shell.id}`,
-    beds: bedIds(view, shell),
-    shell: shell.id,
-    clock: view.index,
-  }))}${cut(shown.length, odd.length, 'shells.csv')}`;
-}
-
-const bedIds = (view: ClockView, shell: ShellView) => {
-  const id = view.byKey.get(`${shell.row.section}/${shell.row.bed}`)?.id;
-  return id === undefined ? [] : [id];
-};
 
 /** All beds of one clock. */
 export function bedsTable(view: ClockView): Markup {

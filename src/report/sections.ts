@@ -2,11 +2,12 @@ import type { ClockView } from '../figures/clock-view.js';
 import type { Figure } from '../figures/index.js';
 import type { Findings } from '../model/index.js';
 import { cautions } from './cautions.js';
-import { bedsTable, correlationTable, oddShells, relationsTable, shellsTable, zonesTable } from './clock-tables.js';
+import { bedsTable, correlationTable, relationsTable, shellsTable, zonesTable } from './clock-tables.js';
 import { figureBlock } from './figure-block.js';
 import { type HtmlValue, html, type Markup } from './html.js';
 import { methods } from './methods.js';
 import { counted } from './numbers.js';
+import { oddShells } from './odd-shells.js';
 import { clocksTable, problemsTable, sectionsTable, sharesTable, votesTable, zoneCountsTable } from './run-tables.js';
 import { findingsInSentences } from './sentences.js';
 
@@ -58,9 +59,8 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
       views.map((view) => oddShells(view, evidenceOf(view))),
     ),
     part('number-of-zones', 'How many zones?', 'Number of zones', [
-      drawn('zones'),
-      drawn('zone-counts'),
-      zoneCountsTable(findings, views),
+      html`<div class="figures">${[drawn('zones'), drawn('zone-counts')]}</div>`,
+      folded('Criteria for every number of zones', counted(views.length, 'clock'), zoneCountsTable(findings, views)),
     ]),
     part('gradient', 'The slope along the coast', 'Gradient', drawn('gradient')),
     part('tables', 'Tables', 'Tables', [

@@ -95,10 +95,20 @@ summary{cursor:pointer;padding:.5rem 0;font:700 .9375rem/1.3 Helvetica,Arial,san
 .fig .tie.on{stroke:var(--ink);stroke-width:1.6;stroke-opacity:1}
 .fig circle.star,.fig path.star{stroke:var(--ink);stroke-width:3.2}
 .off{opacity:.1}
-tr.off,tr.unfound,figure.off{display:none}
+tr.off,li.off,tr.unfound,figure.off{display:none}
 tr.on>*{background:var(--mark)}
 tr.on>:first-child{box-shadow:inset 4px 0 0 var(--ink)}
 a.on{background:var(--mark)}
+td a[data-b],th a[data-b]{white-space:nowrap}
+.odd{list-style:none;padding:0;max-width:64rem;margin:.4rem 0 1rem;border-top:1px solid var(--line)}
+.odd li{padding:.55rem .8rem .6rem;border-bottom:1px solid var(--line)}
+.odd li.on{background:var(--mark);box-shadow:inset 4px 0 0 var(--ink)}
+.odd p{margin:0;max-width:none}
+.odd .what{font:.9375rem/1.5 Helvetica,Arial,sans-serif}
+.odd .why{color:var(--soft);font-size:.9375rem;line-height:1.5;max-width:56rem}
+.figures{display:flex;flex-wrap:wrap;gap:0 2.2rem;align-items:flex-start}
+.figures figure{flex:1 1 22rem;min-width:0}
+.figures figure.wide{flex-basis:100%}
 @media (max-width:62rem){
 .layout{display:block}
 .side{position:static;max-height:none;padding-bottom:0;border-bottom:1px solid var(--line)}
@@ -122,11 +132,12 @@ h2,h3{break-after:avoid}
 figure{break-inside:avoid;max-width:none;margin-bottom:6mm}
 figure.narrow{max-width:100mm}
 .figbox{overflow:visible;border:0;padding:0}
-.figbox svg{min-width:0!important;max-height:235mm}
+.figbox svg{min-width:0!important;max-height:203mm}
 .tablebox{overflow:visible;max-height:none;border:0;margin:2mm 0}
 table{font-size:7pt}
 th,td{padding:.6mm 1mm}
-thead th,tbody th{white-space:normal}
+thead th,tbody th,td a[data-b],th a[data-b]{white-space:normal}
+.odd li{break-inside:avoid}
 .long{min-width:30mm}
 thead th{position:static}
 tr{break-inside:avoid}

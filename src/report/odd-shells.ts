@@ -1,0 +1,41 @@
+import type { ClockView, ShellView } from '../figures/clock-view.js';
+import { cut } from './clock-tables.js';
+import { html, type Markup } from './html.js';
+import { shellLink } from './links.js';
+import { counted, figures, ratio } from './numbers.js';
+
+const MOST = 400;
+
+/** Shells set aside or doubtful, each with its reading and what speaks for it; the surest first. */
+export function oddShells(view: ClockView, evidence: ReadonlyMap<string, readonly string[]>): Markup {
+  const odd = view.beds.flatMap((bed) => bed.shells.map((shell) => ({ bed: bed.id, shell })));
+  const aside = odd.filter(({ shell }) => shell.row.status === 'set aside').sort(bySureness);
+  const doubtful = odd.filter(({ shell }) => shell.row.status === 'doubtful').sort(bySureness);
+  if (aside.length + doubtful.length === 0)
+    return html`<p>No shell of ${view.clock.clock} was set aside or called doubtful.</p>`;
+  const list = (heading: string, rows: typeof odd) =>
+    rows.length === 0
+      ? null
+      : html`<h3>${heading}${view.heading}</h3><ol class="odd">${rows.slice(0, MOST).map(({ bed, shell }) => entry(view, bed, shell, evidence))}</ol>${cut(Math.min(rows.length, MOST), rows.length, 'shells.csv')}`;
+  return html`${list(`${counted(aside.length, 'shell')} set aside`, aside)}${list(`${counted(doubtful.length, 'shell')} doubtful, and counted`, doubtful)}`;
+}
+
+const SURENESS = { high: 0, moderate: 1, low: 2 } as const;
+const sureness = (shell: ShellView) => (shell.row.confidence === null ? 3 : SURENESS[shell.row.confidence]);
+const bySureness = (a: { readonly shell: ShellView }, b: { readonly shell: ShellView }) =>
+  sureness(a.shell) - sureness(b.shell);
+
+function entry(
+  view: ClockView,
+  bed: number,
+  shell: ShellView,
+  evidence: ReadonlyMap<string, readonly string[]>,
+): Markup {
+  const { row } = shell;
+  const sentences = evidence.get(`${row.section}/${row.bed}/${row.shell}`) ?? [];
+  const sign = row.status === 'set aside' ? '✕' : '◆';
+  const reading = row.reading === 'none' ? (row.marks.length > 0 ? row.marks.join(', ') : 'no reading') : row.reading;
+  const from =
+    row.residual === null ? '' : `, ${figures(row.residual, 2).replace(/^(?!−)/, '+')} log ratios from its bed`;
+  return html`<li data-b="${bed}" data-s="${shell.id}"><p class="what"><span aria-hidden="true">${sign}</span> ${shellLink(view, shell)}: <b>${reading}</b>${row.confidence === null ? '' : ` (${row.confidence} confidence)`}</p><p class="why">D/L ${ratio(row.dl)}${from}. ${sentences.join(' ')}${row.reading !== 'none' && row.marks.length > 0 ? ` Marks: ${row.marks.join(', ')}.` : ''}</p></li>`;
+}
