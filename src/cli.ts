@@ -1,7 +1,7 @@
 #!/usr/bin/env node
 import { Command, CommanderError } from 'commander';
 import { EXIT, type ExitStatus } from './commands/exit-status.js';
-import { ending } from './commands/fault.js';
+import { ending, endShortlyOnFaults } from './commands/fault.js';
 import { endQuietlyWithoutReader } from './commands/print.js';
 import { addSurveyOptions, withUnderscores } from './commands/survey-options.js';
 import { VERSION } from './version.js';
@@ -21,6 +21,7 @@ With a survey of yours:   bedorder run shells.csv --beds beds.csv`;
 
 async function program(args: readonly string[]): Promise<void> {
   endQuietlyWithoutReader();
+  endShortlyOnFaults();
   let status: ExitStatus = EXIT.done;
   const root = new Command('bedorder')
     .description(DESCRIPTION)

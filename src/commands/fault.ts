@@ -16,6 +16,11 @@ export async function ending(command: () => Promise<ExitStatus>): Promise<void> 
   }
 }
 
+/** Faults that no command catches, such as one on a worker thread, end the program in the same way. */
+export function endShortlyOnFaults(): void {
+  process.on('uncaughtException', (error) => process.exit(tell(error)));
+}
+
 /** Prints an error and says with which status to end. */
 export function tell(error: unknown): ExitStatus {
   if (isOutputError(error)) {

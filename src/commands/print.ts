@@ -1,6 +1,6 @@
 import { writeSync } from 'node:fs';
 
-/** Writes to standard output, whole, whatever stands behind it. */
+/** Writes to standard output. */
 export function print(text: string): void {
   process.stdout.write(text.endsWith('\n') ? text : `${text}\n`);
 }

@@ -52,9 +52,10 @@ describe('the summary', () => {
     expect(adjacent('not resolved')).toContain('Z2 and Z1: too few shells or beds to resolve');
   });
 
-  it('says when the order was not sampled well', () => {
-    const diagnostics = [{ ...FINDINGS.diagnostics[0], converged: false, rhat_max: 1.2 }];
-    expect(flat({ ...FINDINGS, diagnostics })).toContain('not sampled well enough (R-hat 1.200)');
+  it('passes on what the run remarks of a clock, findings before cautions', () => {
+    const remark = (level: 'finding' | 'caution', text: string) => ({ clock: 'Mya THAA Ile', level, text });
+    const remarks = [remark('caution', 'Rank intervals are rough.'), remark('finding', 'A slope was found.')];
+    expect(flat({ ...FINDINGS, remarks })).toContain('A slope was found. Caution: Rank intervals are rough.');
   });
 
   it('shortens a long order, and stays within 80 columns', () => {

@@ -45,7 +45,7 @@ function clockText(facts: ClockFacts, style: Style): string[] {
     ...orderText(facts, style),
     ...relationsText(facts, style),
     ...shellsText(facts, style),
-    // what was found on the clock stands above, with its numbers; cautions add to it
+    ...sentences(facts.findings, '  '),
     ...cautions(facts.cautions, style, '  '),
   ];
 }

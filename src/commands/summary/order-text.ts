@@ -9,7 +9,7 @@ const SHORTEN = { beds: 80, ofZone: 4, zones: 12 } as const;
  * The order of one clock, oldest to youngest, in a compact form: one paragraph a zone, `>` where a bed is surely older
  * than the next, `~` where that is not resolved, and the 95 % interval of each rank.
  */
-export function orderText({ order, sampling }: ClockFacts, style: Style): string[] {
+export function orderText({ order }: ClockFacts, style: Style): string[] {
   if (order.length === 0) return ['  No order: no bed has a mean on this clock.'];
   const resolved = order.filter((row) => row.resolved === true).length;
   const lines = [
@@ -18,9 +18,6 @@ export function orderText({ order, sampling }: ClockFacts, style: Style): string
   ];
   if (order.length > 1)
     lines.push(`    ${resolved} of ${order.length - 1} steps are resolved; [ ] is the 95 % interval of the rank.`);
-  if (sampling && !sampling.converged) {
-    lines.push(`    The order was not sampled well enough (R-hat ${sampling.rhat_max.toFixed(3)}); take it with care.`);
-  }
   return lines;
 }
 

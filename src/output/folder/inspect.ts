@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { readdirSync, readFileSync, statSync } from 'node:fs';
+import { closeSync, openSync, readdirSync, readFileSync, readSync, statSync } from 'node:fs';
 import { join } from 'node:path';
 import { PACKAGE_NAME } from '../data-package.js';
 
@@ -73,8 +73,21 @@ function unchanged(folder: string, { path, bytes, hash }: ListedFile): boolean {
   try {
     const file = join(folder, path);
     if (statSync(file).size !== bytes) return false;
-    return `sha256:${createHash('sha256').update(readFileSync(file)).digest('hex')}` === hash;
+    return `sha256:${sha256Of(file)}` === hash;
   } catch {
     return false;
   }
+}
+
+// in pieces: results of a million shells have files of half a gigabyte
+function sha256Of(path: string): string {
+  const hash = createHash('sha256');
+  const piece = Buffer.allocUnsafe(1 << 20);
+  const file = openSync(path, 'r');
+  try {
+    for (let read = readSync(file, piece); read > 0; read = readSync(file, piece)) hash.update(piece.subarray(0, read));
+  } finally {
+    closeSync(file);
+  }
+  return hash.digest('hex');
 }
