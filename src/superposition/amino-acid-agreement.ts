@@ -6,12 +6,17 @@ import { chiSquaredCdf, chiSquaredQuantile, fUpperTail, median, robustSd } from 
 export interface Agreement {
   /** Probability of so large a disagreement in a sound shell. */
   readonly p: number;
-  /** How far each amino acid is off what the shell's own extent asks for, in robust standard deviations; positive is too high. */
+  /**
+   * How far each amino acid is off what the shell's own extent asks for, in robust standard deviations; positive is too
+   * high. NaN for an amino acid that took no part.
+   */
   readonly deviations: readonly number[];
 }
 
 /** Complete shells beyond the number of amino acids that are needed to know how sound shells vary. */
 const FEWEST_SPARE_SHELLS = 10;
+/** Share of the shells on which an amino acid must be measured to take part. */
+const SHARE_MEASURED = 0.8;
 /** Share of shells that the covariance is taken from. */
 const CORE = 0.975;
 
@@ -27,10 +32,35 @@ const CORE = 0.975;
  * @param x The clock's log ratio of each shell.
  * @param bed Bed of each shell.
  * @param weights Weight of each amino acid in x.
- * @returns One entry a shell: null where an amino acid is missing, where there is only one, or where fewer than 10 shells beyond the number of
- * amino acids are complete.
+ * @returns One entry a shell. An amino acid measured on fewer than 80 % of the shells takes no part. Null where one that
+ * does is missing, where there is only one, or where fewer than 10 shells beyond the number of amino acids are complete.
  */
 export function aminoAcidAgreement(
+  logs: readonly (readonly number[])[],
+  x: readonly number[],
+  bed: readonly number[],
+  weights: readonly number[],
+): (Agreement | null)[] {
+  const known = logs.filter((_, i) => Number.isFinite(x[i]));
+  const columns = weights.flatMap((_, a) =>
+    known.filter((row) => Number.isFinite(row[a])).length >= SHARE_MEASURED * known.length ? [a] : [],
+  );
+  const answers = agreementOfComplete(
+    logs.map((row) => columns.map((a) => row[a])),
+    x,
+    bed,
+    columns.map((a) => weights[a]),
+  );
+  return answers.map((answer) => {
+    if (answer === null) return null;
+    const deviations = weights.map((_, a) =>
+      columns.includes(a) ? answer.deviations[columns.indexOf(a)] : Number.NaN,
+    );
+    return { p: answer.p, deviations };
+  });
+}
+
+function agreementOfComplete(
   logs: readonly (readonly number[])[],
   x: readonly number[],
   bed: readonly number[],

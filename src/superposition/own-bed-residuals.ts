@@ -1,3 +1,4 @@
+import { FEWEST_DEGREES_OF_FREEDOM } from '../beds/index.js';
 import { holm, studentTCdf } from '../statistics/index.js';
 import { robustScatter } from './robust-scatter.js';
 
@@ -35,12 +36,13 @@ export interface OwnBedResiduals {
  *
  * @param shells Bed and log ratio of each shell; NaN is passed over.
  * @param excluded Shells that screening sets aside: tested, but never part of a mean.
- * @param options Level alpha (0.05), and the scatter to use where the clock has too few shells (s = 0.07 is assumed).
+ * @param options Level alpha (0.05), and the scatter to fall back on where repeated shells give fewer than 4 degrees of freedom:
+ * that of published summaries, or the assumed one with df Infinity. Without one nothing is tested there.
  */
 export function ownBedResiduals(
   shells: readonly { readonly bed: number; readonly x: number }[],
   excluded: ReadonlySet<number> = new Set(),
-  options: { readonly alpha?: number; readonly assumed?: number } = {},
+  options: { readonly alpha?: number; readonly fallback?: { readonly s: number; readonly df: number } } = {},
 ): OwnBedResiduals {
   const alpha = options.alpha ?? 0.05;
   const beds = 1 + shells.reduce((most, shell) => Math.max(most, shell.bed), -1);
@@ -50,7 +52,7 @@ export function ownBedResiduals(
   });
   const sound = shells.map((shell, index) => Number.isFinite(shell.x) && !excluded.has(index));
   const robust = robustScatter(members.map((list) => list.filter((i) => sound[i]).map((i) => shells[i].x)));
-  const [s, df] = options.assumed === undefined ? [robust.s, robust.df] : [options.assumed, Number.POSITIVE_INFINITY];
+  const { s, df } = robust.df >= FEWEST_DEGREES_OF_FREEDOM ? robust : (options.fallback ?? { s: Number.NaN, df: 0 });
 
   for (;;) {
     const raw = shells.map((shell, index) => ownResidual(shell.x, index, members[shell.bed], sound, shells, s, df));

@@ -74,10 +74,9 @@ export function readShells(input: ReadingInput): ShellReadings {
   const xs = data.shells.map(({ x, bed }) => x - (data.slope ?? 0) * data.beds[bed].gradient);
   const placed = data.shells.map(({ bed }, i) => ({ bed, x: xs[i] }));
   const excluded = new Set(names.flatMap((list, i) => (screenedOut(list) ? [i] : [])));
-  const residuals = ownBedResiduals(placed, excluded, {
-    alpha,
-    ...(data.scatter.assumed ? { assumed: data.scatter.s } : {}),
-  });
+  const { s, df, assumed } = data.scatter;
+  const fallback = { s, df: assumed ? Number.POSITIVE_INFINITY : Math.max(1, df) };
+  const residuals = ownBedResiduals(placed, excluded, { alpha, fallback });
   // Shells that screening sets aside settle their conflicts by themselves.
   const conflicts = findShellConflicts(
     placed.map((shell, i) => (excluded.has(i) ? { ...shell, x: Number.NaN } : shell)),

@@ -29,7 +29,7 @@ export interface RobustScatter {
  * @param beds Log ratios of the shells of each bed.
  * @example
  * const beds = [[0, 0.1, 0.05, 0.9], [-1, -0.9, -0.95], [0.4, 0.5, 0.45], [0.2, 0.3, 0.25]];
- * robustScatter(beds).s // => 0.05
+ * robustScatter(beds).s // => 0.051003
  */
 export function robustScatter(beds: readonly (readonly number[])[]): RobustScatter {
   let means = beds.map((values) => (values.length === 0 ? Number.NaN : median(values)));

@@ -77,14 +77,13 @@ function amongAminoAcids({ agreement, agree, aminoAcids, reading }: ShellCase): 
         : 'With amino acids missing on it, or too few complete shells to learn from,';
     return `${why} ${high ? 'reworking and alteration' : 'intrusion and contamination'} can't be told apart.`;
   }
-  if (agree)
-    return `Its ${aminoAcids.length} amino acids tell the same extent of racemization (p = ${probability(agreement.p)}).`;
-  const worst = agreement.deviations.reduce(
-    (far, d, a) => (Math.abs(d) > Math.abs(agreement.deviations[far]) ? a : far),
-    0,
-  );
-  const off = agreement.deviations[worst];
-  return `Its ${aminoAcids.length} amino acids disagree (p = ${probability(agreement.p)}): ${aminoAcids[worst]} stands out, too ${off > 0 ? 'high' : 'low'} by ${number(Math.abs(off))} standard deviations for the rest.`;
+  const { deviations, p } = agreement;
+  const count = deviations.filter((off) => !Number.isNaN(off)).length;
+  if (agree) return `Its ${count} amino acids tell the same extent of racemization (p = ${probability(p)}).`;
+  const size = (a: number) => (Number.isNaN(deviations[a]) ? -1 : Math.abs(deviations[a]));
+  const worst = deviations.reduce((far, _, a) => (size(a) > size(far) ? a : far), 0);
+  const side = deviations[worst] > 0 ? 'high' : 'low';
+  return `Its ${count} amino acids disagree (p = ${probability(p)}): ${aminoAcids[worst]} stands out, too ${side} by ${number(size(worst))} standard deviations for the rest.`;
 }
 
 function possibleSource({ match, zoned, ownZone, sourceBed, direction, agree }: ShellCase): string | null {

@@ -88,6 +88,14 @@ describe('ownBedResiduals', () => {
     }
   });
 
+  it('falls back on a known scatter where repeated shells are too few, and tests nothing without one', () => {
+    const few = [0, 0.05, 0.9].map((x) => ({ bed: 0, x }));
+    expect(ownBedResiduals(few).shells.map(({ p }) => p)).toEqual([null, null, null]);
+    const { shells, s } = ownBedResiduals(few, new Set(), { fallback: { s: 0.07, df: Number.POSITIVE_INFINITY } });
+    expect(s).toBe(0.07);
+    expect(shells.map(({ odd }) => odd)).toEqual([false, false, true]);
+  });
+
   it('passes over unknown ratios, single shells and empty clocks', () => {
     const { shells, tested } = ownBedResiduals([
       { bed: 0, x: -1 },
@@ -169,6 +177,11 @@ describe('aminoAcidAgreement', () => {
     const answers = aminoAcidAgreement(gap, logs.map(xOf), bed, weights);
     expect(answers[0]).toBeNull();
     expect(answers[1]).not.toBeNull();
+    // an amino acid measured on one shell in five takes no part, and costs nobody an answer
+    const rare = logs.map((row, i) => [...row, i % 5 === 0 ? -1 : Number.NaN]);
+    const five = aminoAcidAgreement(rare, logs.map(xOf), bed, [...weights, 0]);
+    expect(five.map((answer) => answer?.p)).toEqual(agree(logs, bed).map((answer) => answer?.p));
+    expect(five[0]?.deviations[4]).toBeNaN();
     expect(agree(logs.slice(0, 13), bed.slice(0, 13)).every((answer) => answer === null)).toBe(true);
   });
 });
