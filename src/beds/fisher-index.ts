@@ -19,6 +19,8 @@ export interface FisherIndex {
   readonly basis: 'fisher' | 'separate resolutions' | 'equal weights';
   /** Pooled covariance of log ratios within beds, regularised; amino acids in order. */
   readonly within: readonly (readonly number[])[];
+  /** Covariance of true bed values: errors of the bed means taken out, no variance below 0. */
+  readonly between: readonly (readonly number[])[];
 }
 
 /**
@@ -60,7 +62,30 @@ export function fisherIndex(
     imputation,
     basis,
     within: shrunk,
+    between: between.covariance,
   };
+}
+
+/**
+ * Resolution along an index: variance between beds over that of a shell within its bed.
+ * @param index of {@link fisherIndex}
+ * @param without position of an amino acid to leave out, the others weighed anew. Default none
+ * @returns 0 or more; 0 where nothing is left
+ */
+export function indexResolution(index: FisherIndex, without?: number): number {
+  const kept = index.shares.flatMap((_, at) => (at === without ? [] : [at]));
+  if (kept.length === 0) return 0;
+  const sub = (matrix: readonly (readonly number[])[]): number[][] => kept.map((i) => kept.map((j) => matrix[i][j]));
+  const [within, between] = [sub(index.within), sub(index.between)];
+  const own = kept.map((at) => index.shares[at].resolution);
+  const weights =
+    without === undefined
+      ? kept.map((at) => index.shares[at].weight)
+      : weigh(index.basis, within, between, own, kept.length);
+  const form = (matrix: number[][]): number =>
+    weights.reduce((sum, w, i) => sum + weights.reduce((row, v, j) => row + w * v * matrix[i][j], 0), 0);
+  const error = form(within);
+  return error > 0 ? Math.max(0, form(between)) / error : 0;
 }
 
 function weigh(

@@ -1,3 +1,4 @@
+export { aminoAcidShares, CARRIES, HARDLY } from './amino-acid-shares.js';
 export type { Averages } from './averaging.js';
 export { averageAnalyses } from './averaging.js';
 export type { ClockSet } from './choose-clocks.js';
@@ -5,7 +6,7 @@ export { chooseClocks, SHARE_FOR_INDEX } from './choose-clocks.js';
 export type { ClockDataInput } from './clock-data.js';
 export { bedKey, clockData } from './clock-data.js';
 export type { FisherIndex, IndexShare } from './fisher-index.js';
-export { fisherIndex, inverseSquareRoot } from './fisher-index.js';
+export { fisherIndex, indexResolution, inverseSquareRoot } from './fisher-index.js';
 export type { Imputation } from './log-ratios.js';
 export { clockLogRatio } from './log-ratios.js';
 export type { LogSummary } from './log-summary.js';

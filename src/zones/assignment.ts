@@ -39,6 +39,13 @@ export function assignZone(x: number, error: number, { means, se, weights, tau }
   const raw = logs.map((value) => Math.exp(value - largest));
   const sum = raw.reduce((total, value) => total + value, 0);
   const probabilities = raw.map((value) => value / sum);
+  return assignmentOf(probabilities);
+}
+
+/** Most and second most probable zone from the probabilities of all. */
+export function assignmentOf(chances: readonly number[]): Assignment {
+  // sums of many rounded shares may end a hair above 1
+  const probabilities = chances.map((chance) => Math.min(1, chance));
   const ranked = probabilities.map((_, j) => j).sort((a, b) => probabilities[b] - probabilities[a] || a - b);
   const [zone, second] = ranked;
   return {

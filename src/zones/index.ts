@@ -1,19 +1,41 @@
 export type { NeighbourOptions, NeighbourTest, ZoneForTest } from './adjacent-zones.js';
 export { equalOverlap, smallestRankP, TOUCHING_OVERLAP, testNeighbours } from './adjacent-zones.js';
+export type { VoteOptions, VotingClock } from './amino-acid-votes.js';
+export { aminoAcidVotes } from './amino-acid-votes.js';
 export type { Assignment, ZonePriors } from './assignment.js';
 export { assignZone, STRADDLE } from './assignment.js';
 export type { BedNotes, BedRowInput } from './bed-rows.js';
 export { bedRows } from './bed-rows.js';
+export type { Criteria } from './choice-sentence.js';
+export { choiceSentence } from './choice-sentence.js';
 export type { Continuum } from './continuum.js';
 export { fitContinuum } from './continuum.js';
+export type { Gap, GapOptions } from './gap-statistic.js';
+export { gapOf, gapStatistic, groupsByGap } from './gap-statistic.js';
+export type { KMeansCheck, KMeansCheckInput } from './kmeans-check.js';
+export { kmeansCheck } from './kmeans-check.js';
+export type { LikelihoodRatioArgument, NullModel } from './likelihood-ratio.js';
+export { bootstrapLikelihoodRatio, bootstrapP } from './likelihood-ratio.js';
 export type { Mixture, MixtureOptions } from './mixture.js';
 export { bic, fitMixture } from './mixture.js';
 export type { ModelChoice } from './model-choice.js';
 export { chooseModel, FEWEST_BEDS, MOST_ZONES } from './model-choice.js';
-export { equilibriumLimit, isNearEquilibrium, nearEquilibriumRatio } from './near-equilibrium.js';
-export { partition } from './partition.js';
+export {
+  equilibriumLimit,
+  equilibriumLimit,
+  isNearEquilibrium,
+  isNearEquilibrium,
+  nearEquilibriumRatio,
+  nearEquilibriumRatio,
+} from './near-equilibrium.js';
+export { partition, partitionCosts } from './partition.js';
+export type { Comparison, SettledChoice, SettleOptions } from './settle-choice.js';
+export { CLEAR_BIC, NEAR_BIC, settleChoice } from './settle-choice.js';
 export type { ShellNotes } from './shell-rows.js';
 export { leaveOneOutResidual, shellRows } from './shell-rows.js';
+export { meanSilhouette } from './silhouette.js';
+export type { BootstrapZones, BootstrapZonesArgument } from './stability.js';
+export { assignOverDraws, bootstrapZones, sameZone, stabilityOf, stabilityTasks, zoneMeanErrors } from './stability.js';
 export type { ZoneErrors } from './zone-errors.js';
 export { unbiasedSpread, zoneErrors } from './zone-errors.js';
 export type { CountCriteria } from './zone-rows.js';

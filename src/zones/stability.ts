@@ -1,7 +1,8 @@
 import type { Task } from '../model/index.js';
 import { createRandom, type Random } from '../statistics/index.js';
-import { assignZone, type ZonePriors } from './assignment.js';
+import { type Assignment, assignmentOf, assignZone, type ZonePriors } from './assignment.js';
 import { fitMixture, type Mixture } from './mixture.js';
+import { unbiasedSpread } from './zone-errors.js';
 import { bestLabels } from './zoning.js';
 
 /** Argument of {@link bootstrapZones}: plain data, so that it can go to a worker. */
@@ -26,7 +27,7 @@ export interface BootstrapZonesArgument {
 export interface BootstrapZones {
   /** Jaccard similarity of each zone with the most similar zone found again; null where none of its beds was drawn. */
   readonly jaccard: readonly (number | null)[];
-  /** The zones found again. */
+  /** The zones found from the drawn beds with the means they have: how much zones vary with the beds that were sampled. */
   readonly priors: ZonePriors;
 }
 
@@ -43,9 +44,10 @@ export function bootstrapZones(argument: BootstrapZonesArgument): BootstrapZones
 
 function repeat({ values, errors, shells, residuals, fit, labels }: BootstrapZonesArgument, random: Random) {
   const drawn = values.map(() => random.integer(values.length));
+  const quick = { near: fit, tolerance: 1e-5, iterations: 300 };
   const means = drawn.map((bed) => values[bed] + meanError(errors[bed], shells[bed], residuals, random));
   const drawnErrors = drawn.map((bed) => errors[bed]);
-  const again = fitMixture(means, drawnErrors, fit.means.length, { near: fit, tolerance: 1e-5, iterations: 300 });
+  const again = fitMixture(means, drawnErrors, fit.means.length, quick);
   const found = bestLabels(again, drawn.length);
   // a bed drawn twice may fall into two zones: its first draw speaks for it
   const first = drawn.flatMap((bed, at) => (drawn.indexOf(bed) === at ? [at] : []));
@@ -63,7 +65,9 @@ function repeat({ values, errors, shells, residuals, fit, labels }: BootstrapZon
     });
     return first.some((at) => labels[drawn[at]] === zone) ? Math.max(...similarities) : null;
   });
-  return { jaccard, priors: priorsOf(again) };
+  // the beds' means hold their shells' errors already: drawing shells anew as well would count those errors twice
+  const asMeasured = drawn.map((bed) => values[bed]);
+  return { jaccard, priors: priorsOf(fitMixture(asMeasured, drawnErrors, fit.means.length, quick)) };
 }
 
 function meanError(error: number, shells: number, residuals: readonly number[], random: Random): number {
@@ -73,7 +77,10 @@ function meanError(error: number, shells: number, residuals: readonly number[], 
   return sum / shells;
 }
 
-const priorsOf = ({ means, weights, tau }: Mixture): ZonePriors => ({ means, weights, tau, se: means.map(() => 0) });
+function priorsOf(fit: Mixture): ZonePriors {
+  const { means, weights } = fit;
+  return { means, weights, tau: unbiasedSpread(fit, fit.responsibilities.length / fit.k), se: means.map(() => 0) };
+}
 
 /** Repeats a task. */
 const REPEATS_A_TASK = 50;
@@ -132,4 +139,36 @@ export function sameZone(
     for (let b = 0; b < a; b++) same[b * n + a] = same[a * n + b];
   }
   return same;
+}
+
+/**
+ * Zone of a bed or shell, its probabilities averaged over the zones that the bootstraps found again. The zones of the fit
+ * alone make probabilities too sure where zones come close; here the doubt about the zones counts.
+ * @param x log ratio
+ * @param error its standard error
+ */
+export function assignOverDraws(x: number, error: number, bootstraps: readonly BootstrapZones[]): Assignment {
+  const probabilities = new Array<number>(bootstraps[0].priors.means.length).fill(0);
+  for (const { priors } of bootstraps) {
+    assignZone(x, error, priors).probabilities.forEach((p, j) => {
+      probabilities[j] += p / bootstraps.length;
+    });
+  }
+  return assignmentOf(probabilities);
+}
+
+/**
+ * Standard errors of zone means for the interval dl_low to dl_high: where zones come close, beds change hands from one
+ * drawn sample to the next, and means vary more than the beds of fixed zones would say. The square is the mean of both
+ * squares, and never under that of fixed zones, since a bootstrap of few beds comes out small.
+ * @param se errors of fixed zones
+ */
+export function zoneMeanErrors(se: readonly number[], bootstraps: readonly BootstrapZones[]): number[] {
+  if (bootstraps.length < 2) return [...se];
+  return se.map((error, zone) => {
+    const means = bootstraps.map(({ priors }) => priors.means[zone]);
+    const centre = means.reduce((sum, mean) => sum + mean, 0) / means.length;
+    const variance = means.reduce((sum, mean) => sum + (mean - centre) ** 2, 0) / (means.length - 1);
+    return Math.max(error, Math.sqrt((error ** 2 + variance) / 2));
+  });
 }

@@ -4,39 +4,53 @@ import type { Mixture } from './mixture.js';
 export interface ZoneErrors {
   /** Standard error of each zone's mean log ratio, from its beds' errors and the spread. */
   readonly se: readonly number[];
-  /** Degrees of freedom behind those errors (Satterthwaite 1946, doi:10.2307/3002019). */
+  /** Degrees of freedom behind those errors. */
   readonly df: readonly number[];
 }
 
 /**
  * Standard errors of zone means: beds, not shells, are the units that repeat, so a bed counts with 1/(tau² + se²).
  * The spread is first freed of the bias of maximum likelihood, which divides by the number of beds where that less the
- * number of zones is due. Degrees of freedom weigh those of the spread (beds less zones) and of the scatter.
+ * number of zones is due. Where a spread was found, errors have the degrees of freedom of that, beds less zones, and grow with
+ * what the beds still scatter beyond it (Hartung and Knapp 2001, doi:10.1002/sim.791); where none was, those of the scatter.
  * @param fit the mixture
  * @param errors standard errors of the bed means
  * @param scatterDf degrees of freedom of the pooled scatter
+ * @param values the bed means; without them errors don't grow with what is left
  */
-export function zoneErrors(fit: Mixture, errors: readonly number[], scatterDf: number): ZoneErrors {
+export function zoneErrors(
+  fit: Mixture,
+  errors: readonly number[],
+  scatterDf: number,
+  values?: readonly number[],
+): ZoneErrors {
   const n = errors.length;
   const spreadDf = Math.max(1, n - fit.k);
   const tau2 = unbiasedSpread(fit, n) ** 2;
+  const excess = fit.tau > 0 && values ? Math.max(1, squaresLeft(fit, values, errors, tau2) / spreadDf) : 1;
   const se: number[] = [];
   const df: number[] = [];
   for (let j = 0; j < fit.k; j++) {
     let information = 0;
-    let fromErrors = 0;
     for (let bed = 0; bed < n; bed++) {
-      const r = fit.responsibilities[bed * fit.k + j];
-      const total = Math.max(tau2 + errors[bed] ** 2, 1e-18);
-      information += r / total;
-      fromErrors += (r / total) * (errors[bed] ** 2 / total);
+      information += fit.responsibilities[bed * fit.k + j] / Math.max(tau2 + errors[bed] ** 2, 1e-18);
     }
-    const variance = information > 0 ? 1 / information : Number.POSITIVE_INFINITY;
-    const share = information > 0 ? fromErrors / information : 1;
-    se.push(Math.sqrt(variance));
-    df.push(1 / (share ** 2 / Math.max(1, scatterDf) + (1 - share) ** 2 / spreadDf));
+    se.push(information > 0 ? Math.sqrt(excess / information) : Number.POSITIVE_INFINITY);
+    df.push(fit.tau > 0 ? spreadDf : Math.max(1, scatterDf));
   }
   return { se, df };
+}
+
+/** Sum of squares of the beds about their zones, in units of their whole variances. */
+function squaresLeft(fit: Mixture, values: readonly number[], errors: readonly number[], tau2: number): number {
+  let sum = 0;
+  for (let bed = 0; bed < values.length; bed++) {
+    const variance = Math.max(tau2 + errors[bed] ** 2, 1e-18);
+    for (let j = 0; j < fit.k; j++) {
+      sum += (fit.responsibilities[bed * fit.k + j] * (values[bed] - fit.means[j]) ** 2) / variance;
+    }
+  }
+  return sum;
 }
 
 /** The spread tau with the n/(n − K) correction; 0 stays 0. */

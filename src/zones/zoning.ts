@@ -68,13 +68,13 @@ export function findZones(data: ClockData, options: ZoningOptions): Zoning | nul
     fit = choice.mixtures[k - 1] ?? fitMixture(values, errors, k);
     neighbours = testAll(data, beds, fit, options);
   }
-  const { se, df } = zoneErrors(fit, errors, data.scatter.df);
+  const { se, df } = zoneErrors(fit, errors, data.scatter.df, values);
   const ageMayDiffer = fit.k === 1 && verdict !== 'one zone';
   return {
     beds,
     choice,
     fit,
-    priors: { means: fit.means, se, weights: fit.weights, tau: fit.tau },
+    priors: { means: fit.means, se, weights: fit.weights, tau: unbiasedSpread(fit, beds.length) },
     df,
     verdict,
     forced,
@@ -102,7 +102,8 @@ function joinNeighbours(data: ClockData, beds: readonly number[], start: Mixture
 function testAll(data: ClockData, beds: readonly number[], fit: Mixture, options: ZoningOptions): NeighbourTest[] {
   if (fit.k === 1) return [];
   const errors = beds.map((index) => data.beds[index].se);
-  const { se, df } = zoneErrors(fit, errors, data.scatter.df);
+  const values = beds.map((index) => data.beds[index].mean);
+  const { se, df } = zoneErrors(fit, errors, data.scatter.df, values);
   const labels = bestLabels(fit, beds.length);
   const zones = fit.means.map((mean, j): ZoneForTest => {
     const members = beds.filter((_, at) => labels[at] === j).map((index) => data.beds[index]);
