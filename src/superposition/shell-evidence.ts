@@ -47,6 +47,11 @@ export function shellEvidence(shell: ShellCase): string[] {
   if (asUpper > 0)
     sentences.push(`It is higher than ${shellsOf(asUpper)} of beds below it by more than chance allows.`);
   if (cut !== 'none') sentences.push(inTheCut(shell));
+  else if (asLower + asUpper > 0) {
+    sentences.push(
+      'No least costly set of shells that would remove all conflicts holds it: other shells are to blame.',
+    );
+  }
   if (own.others === 1)
     sentences.push('Its bed has one other shell only, so the bed cannot tell which of the two is the odd one.');
   if (own.others === 0)
@@ -64,8 +69,8 @@ function againstOwnBed({ own, ratio, tested }: ShellCase): string {
   const size = Math.abs(100 * Math.expm1(own.residual));
   const side = own.residual > 0 ? 'above' : 'below';
   const others = own.others === 1 ? 'the one other sound shell' : `the mean of the ${own.others} other sound shells`;
-  const adjusted = own.adjusted === null ? '' : `; adjusted for ${tested} shells p = ${probability(own.adjusted)}`;
-  return `Its ratio of ${number(ratio)} lies ${number(size)} % ${side} ${others} of its bed (${number(Math.abs(own.t))} standard errors, p = ${probability(own.p)}${adjusted}).`;
+  const adjusted = own.adjusted === null ? '' : `; adjusted for ${tested} shells ${probability(own.adjusted)}`;
+  return `Its ratio of ${number(ratio)} lies ${number(size)} % ${side} ${others} of its bed (${number(Math.abs(own.t))} standard errors, ${probability(own.p)}${adjusted}).`;
 }
 
 function amongAminoAcids({ agreement, agree, aminoAcids, reading }: ShellCase): string {
@@ -79,11 +84,11 @@ function amongAminoAcids({ agreement, agree, aminoAcids, reading }: ShellCase): 
   }
   const { deviations, p } = agreement;
   const count = deviations.filter((off) => !Number.isNaN(off)).length;
-  if (agree) return `Its ${count} amino acids tell the same extent of racemization (p = ${probability(p)}).`;
+  if (agree) return `Its ${count} amino acids tell the same extent of racemization (${probability(p)}).`;
   const size = (a: number) => (Number.isNaN(deviations[a]) ? -1 : Math.abs(deviations[a]));
   const worst = deviations.reduce((far, _, a) => (size(a) > size(far) ? a : far), 0);
   const side = deviations[worst] > 0 ? 'high' : 'low';
-  return `Its ${count} amino acids disagree (p = ${probability(p)}): ${aminoAcids[worst]} stands out, too ${side} by ${number(size(worst))} standard deviations for the rest.`;
+  return `Its ${count} amino acids disagree (${probability(p)}): ${aminoAcids[worst]} stands out, too ${side} by ${number(size(worst))} standard deviations for the rest.`;
 }
 
 function possibleSource({ match, zoned, ownZone, sourceBed, direction, agree }: ShellCase): string | null {
@@ -108,4 +113,4 @@ function inTheCut({ cut, wholeBed }: ShellCase): string {
 
 const shellsOf = (count: number): string => (count === 1 ? '1 shell' : `${count} shells`);
 const number = (value: number): string => String(Number(value.toPrecision(3)));
-const probability = (p: number): string => (p < 1e-6 ? 'under 0.000001' : String(Number(p.toPrecision(2))));
+const probability = (p: number): string => (p < 1e-6 ? 'p under 0.000001' : `p = ${Number(p.toPrecision(2))}`);
