@@ -1,4 +1,5 @@
 import type { BedPlace, RowPlace } from '../model/index.js';
+import { LIMITS } from './limits.js';
 import type { ProblemList } from './problem-list.js';
 
 /** Kinds of place in a section, as their columns are named. */
@@ -47,6 +48,13 @@ export function createBedRegister(problems: ProblemList): BedRegister {
       }
       let entry = beds.get(bed);
       if (entry === undefined) {
+        if (all.length === LIMITS.beds) {
+          problems.stop(
+            'beds',
+            row(),
+            `The survey has more than ${LIMITS.beds} beds. Look for bed names that number the rows, or split the survey.`,
+          );
+        }
         entry = { section, bed, first: row(), place: null, placedAt: null, shells: new Map() };
         beds.set(bed, entry);
         all.push(entry);

@@ -1,5 +1,6 @@
 import { type BedRegister, PLACE_KINDS } from './bed-register.js';
 import { decimalsIn, readableColumns, sortUnknown } from './gradient-columns.js';
+import { LIMITS } from './limits.js';
 import { matchColumns, warnOfUnknownColumns } from './match-columns.js';
 import { ownValue } from './own-value.js';
 import { placeColumns, readPlace } from './place-columns.js';
@@ -72,7 +73,7 @@ export function readBeds(table: Table, beds: BedRegister, problems: ProblemList)
   const known = [...PLACE_KINDS, ...BED_NUMBERS].map(at).filter((index) => index >= 0);
   const { numeric, other } = sortUnknown(table, match.unknown);
   const sign = settleDecimal(table, decimalsIn(table, known) ? known : [...known, ...numeric], problems);
-  const extra = readableColumns(table, numeric, sign);
+  const extra = readableColumns(table, numeric, sign).slice(0, LIMITS.gradientColumns);
   const unread = [...other, ...numeric.filter((index) => !extra.includes(index))].sort((a, b) => a - b);
   warnOfUnknownColumns(table, unread, COLUMNS, () => null, problems);
 

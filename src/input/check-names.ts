@@ -11,7 +11,7 @@ export interface TaxonCount {
 }
 
 /** Names beyond this number are not compared with each other. */
-const MOST_NAMES = 3_000;
+const MOST_NAMES = 1_000;
 
 /**
  * Warns of taxon names one or two letters apart, all spellings of one name in one warning, with the lines of an aliases

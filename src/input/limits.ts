@@ -12,6 +12,12 @@ export const LIMITS = {
   /** Rows of a table below its header. */
   rows: 2_000_000,
   columns: 1_000,
+  /** Beds of a survey. */
+  beds: 200_000,
+  /** Numeric columns of the beds table kept for `--gradient`, beyond the known ones. */
+  gradientColumns: 100,
+  /** Errors after which reading stops. */
+  errors: 10_000,
   /** Characters of one cell. */
   cellCharacters: 10_000,
   /** Lines searched for the header. */

@@ -14,8 +14,12 @@ export interface ProblemPlace {
  */
 export interface ProblemList {
   readonly error: (kind: string, place: ProblemPlace, message: string) => void;
+  /** An error after which reading on makes no sense: it counts as {@link LIMITS.errors} and one more. */
+  readonly stop: (kind: string, place: ProblemPlace, message: string) => void;
   readonly warning: (kind: string, place: ProblemPlace, message: string) => void;
   readonly hasErrors: () => boolean;
+  /** Number of errors, those that are only counted included. */
+  readonly errorCount: () => number;
   /** Every problem, by file, line and column; problems without a line come first in their file. */
   readonly list: () => Problem[];
 }
@@ -46,8 +50,13 @@ export function createProblemList(): ProblemList {
 
   return {
     error: (kind, place, message) => add('error', kind, place, message),
+    stop: (kind, place, message) => {
+      add('error', kind, place, message);
+      errors += LIMITS.errors;
+    },
     warning: (kind, place, message) => add('warning', kind, place, message),
     hasErrors: () => errors > 0,
+    errorCount: () => errors,
     list: () => {
       const all: Problem[] = [];
       for (const { problems, count } of groups.values()) {

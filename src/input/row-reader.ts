@@ -6,8 +6,8 @@ import { type Cell, isBlank, type Table } from './table.js';
 
 /** Reads the cells of a table's rows as names and numbers, and notes what is wrong with them. */
 export interface RowReader {
-  /** Calls `visit` for every row of the right width; other rows are problems. */
-  readonly forEachRow: (visit: (cells: readonly Cell[], row: number) => void) => void;
+  /** Calls `visit` for every row of the right width; other rows are problems. Stops after far too many errors. */
+  readonly forEachRow: (visit: (cells: readonly Cell[], row: number) => unknown) => void;
   /** The cleaned text of a cell; empty where the column is absent (-1), the cell blank or refused. */
   readonly name: (cells: readonly Cell[], row: number, column: number) => string;
   /** As `name`, but an empty cell is a problem. */
@@ -125,7 +125,16 @@ export function createRowReader(table: Table, sign: DecimalSign, problems: Probl
   };
 
   const forEachRow: RowReader['forEachRow'] = (visit) => {
+    const before = problems.errorCount();
     for (let row = 0; row < table.length; row += 1) {
+      if (problems.errorCount() - before > LIMITS.errors) {
+        problems.error(
+          'stopped',
+          place(row),
+          `Reading stopped here: there are too many errors. Mend those listed and check again.`,
+        );
+        return;
+      }
       const cells = table.cells(row);
       if (cells.length !== width) {
         const more = cells.length > width;
