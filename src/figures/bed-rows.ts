@@ -16,7 +16,7 @@ const HEAD = 17;
 
 /** Columns and the height of a line for a list of beds: what fits a printed page with type that is still read. */
 export function listShape(lines: number): { readonly columns: number; readonly line: number } {
-  return lines <= 66 ? { columns: 1, line: 12 } : { columns: Math.ceil(lines / 80), line: 10.8 };
+  return lines <= 66 ? { columns: 1, line: 12 } : { columns: Math.ceil(lines / 80), line: 10.3 };
 }
 
 /**

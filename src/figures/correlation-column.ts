@@ -21,10 +21,18 @@ export function sectionHead(
   const out = lines.map((line, k) =>
     label(x, y + height - 17 - 12 * (lines.length - 1 - k), line, { 'text-anchor': 'middle', 'font-weight': 700 }),
   );
-  if (km !== null) {
-    const text = shorten(`${Math.round(km * 10) / 10} km`, TYPE.tiny, slot - 8);
-    out.push(label(x, y + height - 6, text, { 'text-anchor': 'middle', 'font-size': TYPE.tiny, fill: SOFT }));
-  }
+  const under = [
+    ...(km === null ? [] : [`${Math.round(km * 10) / 10} km`]),
+    ...(site?.place?.kind === 'depth_m' ? ['depths'] : []),
+  ].join(', ');
+  if (under !== '')
+    out.push(
+      label(x, y + height - 6, shorten(under, TYPE.tiny, slot - 8), {
+        'text-anchor': 'middle',
+        'font-size': TYPE.tiny,
+        fill: SOFT,
+      }),
+    );
   return out;
 }
 

@@ -94,7 +94,7 @@ export function panelCaption(view: ClockView, rows: number, scaled: boolean, met
   if (scaled)
     parts.push('Thickness follows the heights; each section is moved up or down as a whole so that zones run level.');
   else parts.push('Thickness is not to scale.');
-  if (metric) parts.push('Numbers beside a column are metres at the base of each bed.');
+  if (metric) parts.push('Numbers beside a column are metres at the base of each bed, as logged.');
   return parts.join(' ');
 }
 

@@ -38,7 +38,7 @@ function order(view: ClockView): Markup | null {
   const ranked = view.beds.filter((bed) => bed.order !== null).sort((a, b) => a.order!.rank - b.order!.rank);
   if (ranked.length < 2) return null;
   const resolved = ranked.filter((bed) => bed.order!.resolved === true).length;
-  return html`The oldest bed is ${bedLink(view, ranked[0].key)} and the youngest ${bedLink(view, ranked[ranked.length - 1].key)}; of ${counted(ranked.length - 1, 'step')} between neighbours in the order, ${resolved === 0 ? 'none is' : resolved === 1 ? '1 is' : `${resolved} are`} resolved.`;
+  return html`The oldest bed is ${bedLink(view, ranked[0].key)} and the youngest ${bedLink(view, ranked[ranked.length - 1].key)}; of ${counted(ranked.length - 1, 'step')} between neighbours in the order, ${someAre(resolved)} resolved.`;
 }
 
 function field(view: ClockView): Markup | null {
@@ -47,12 +47,12 @@ function field(view: ClockView): Markup | null {
   const agree = tested.filter((row) => row.verdict_after === 'agrees').length;
   const tied = tested.filter((row) => row.verdict_after === 'tied').length;
   const numbers = relationNumbers(view);
-  const reversed = tested.filter((row) => row.verdict_after === 'reversed');
+  const reversed = [...numbers.keys()].filter((row) => row.verdict_after === 'reversed');
   const settled = tested.filter((row) => row.verdict === 'reversed' && row.verdict_after !== 'reversed').length;
   const link = (row: (typeof tested)[number]) =>
     html`<a href="#relation-${view.index}-${numbers.get(row) ?? ''}">${numbers.get(row) ?? ''}</a> (${bedLink(view, row.lower)} below ${bedLink(view, row.upper)})`;
   const shown = reversed.slice(0, 4);
-  return html`Of ${counted(tested.length, 'tested field relation')}, ${agree} ${agree === 1 ? 'agrees' : 'agree'}, ${tied} ${tied === 1 ? 'is' : 'are'} tied within error and <strong>${reversed.length} ${reversed.length === 1 ? 'is' : 'are'} reversed</strong>${
+  return html`Of ${counted(tested.length, 'tested field relation')}, ${agree === 0 ? 'none agrees' : agree === 1 ? '1 agrees' : `${agree} agree`}, ${someAre(tied)} tied within error and <strong>${someAre(reversed.length)} reversed</strong>${
     reversed.length === 0
       ? ''
       : html`: ${listed([...shown.map(link), ...(reversed.length > shown.length ? [`${reversed.length - shown.length} more`] : [])])}`
@@ -70,3 +70,5 @@ function odd(view: ClockView): Markup | null {
   });
   return html`<strong>${counted(aside.length, 'shell')} ${aside.length === 1 ? 'was' : 'were'} set aside</strong>: ${listed(parts)}.`;
 }
+
+const someAre = (count: number) => (count === 0 ? 'none is' : count === 1 ? '1 is' : `${count} are`);

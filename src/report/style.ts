@@ -72,6 +72,7 @@ th[aria-sort=ascending] button::after{content:" ↑"}
 th[aria-sort=descending] button::after{content:" ↓"}
 .find{margin:.6rem 0 0;font:.875rem Helvetica,Arial,sans-serif;color:var(--soft)}
 .find input{padding:.3rem .5rem;border:1px solid var(--faint);border-radius:3px;background:var(--paper);color:var(--ink);font:inherit;width:14rem;max-width:100%}
+.verdict{white-space:nowrap}
 .verdict.bad{color:var(--alarm);font-weight:700}
 .note,.size{color:var(--soft);font-size:.875rem;font-weight:400}
 details{border-top:1px solid var(--line);padding:.2rem 0}

@@ -434,6 +434,7 @@ export function fixture(options: FixtureOptions = {}): Findings {
       relations_kept: relations.length - 1,
       relations_left_out: 1,
     })),
+    conversions: [],
     gradients: options.gradient
       ? mains.map((clock) => ({
           clock: clock.clock,
