@@ -20,14 +20,7 @@ export type { Mixture, MixtureOptions } from './mixture.js';
 export { bic, fitMixture } from './mixture.js';
 export type { ModelChoice } from './model-choice.js';
 export { chooseModel, FEWEST_BEDS, MOST_ZONES } from './model-choice.js';
-export {
-  equilibriumLimit,
-  equilibriumLimit,
-  isNearEquilibrium,
-  isNearEquilibrium,
-  nearEquilibriumRatio,
-  nearEquilibriumRatio,
-} from './near-equilibrium.js';
+export { equilibriumLimit, isNearEquilibrium, nearEquilibriumRatio } from './near-equilibrium.js';
 export { partition, partitionCosts } from './partition.js';
 export type { Comparison, SettledChoice, SettleOptions } from './settle-choice.js';
 export { CLEAR_BIC, NEAR_BIC, settleChoice } from './settle-choice.js';
