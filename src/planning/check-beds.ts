@@ -49,7 +49,7 @@ export function checkBeds(
       shells: [shells],
       total: shells,
       pairs_gained: gained,
-      settles: `${shellsInWords(shells)} from ${bed.key} (now ${bed.shells}), from another place in the bed: ${why}. Over the whole order, ${pairsInWords(gained)} expected to be newly resolved.`,
+      settles: `${shellsInWords(shells)} from ${bed.key} (now ${bed.shells}), from another place in the bed: ${why}.${gained < 0.05 ? '' : ` Over the whole order, ${pairsInWords(gained)} expected to be newly resolved.`}`,
     }),
   );
 }
@@ -68,8 +68,9 @@ function request(
   let shells = Math.min(fewest, settings.most);
   if (against.length > 0) {
     const others = against.map((row) => (row.lower === bed.key ? row.upper : row.lower));
+    const relations = against.length === 1 ? 'relation' : 'relations';
     parts.push(
-      `whether its reversed ${against.length === 1 ? 'relation' : 'relations'} to ${joinedInWords(others)} lie in these shells or in the bed`,
+      `whether its reversed ${relations} to ${joinedInWords(others)} ${against.length === 1 ? 'rests' : 'rest'} on these shells or on the bed`,
     );
     for (const name of others) shells = Math.max(shells, confirming(view, bed, bedOf.get(name), settings));
   }

@@ -23,6 +23,7 @@ export function dateBeds(
   const sound = soundnessOf(findings, reversed);
   const soundness = known.beds.map((key) => sound.get(key)?.score ?? 0);
   const rows: PlanRow[] = [];
+  let before = 0;
   for (let count = 1; count <= Math.min(budget, known.beds.length); count++) {
     const found = bedsToDate(known, count, { soundness });
     const others = known.beds.length - count;
@@ -32,13 +33,16 @@ export function dateBeds(
       count === 1
         ? `Dating ${names[0]} bounds ${found.bounded} of the ${others} other beds on one side, the most that one date can; one date brackets none.`
         : `Dating ${joinedInWords(names)} brackets ${found.bracketed} of the ${others} other beds between an older and a younger date, and bounds ${oneSided} more on one side. ${found.proven ? `No other ${count} beds bracket more.` : `No ${count} beds can bracket more than ${found.most}.`}`;
+    const nothingMore =
+      count > 2 && found.bracketed <= before ? [`That is no more than ${count - 1} dates bracket.`] : [];
+    before = found.bracketed;
     rows.push({
       ...blankRow(null, 'date beds'),
       rank: count,
       beds: names,
       beds_bracketed: found.bracketed,
       proven_best: found.proven,
-      settles: [what, ...doubtful(known, found.beds, sound)].join(' '),
+      settles: [what, ...nothingMore, ...doubtful(known, found.beds, sound)].join(' '),
     });
     // more dates than bracket anything new are no plan
     if (found.bounded === 0) break;

@@ -1,6 +1,6 @@
 import type { AdjacentZonesRow, Findings, PlanRow } from '../model/index.js';
 import { normalCdf, studentTQuantile } from '../statistics/index.js';
-import { smallestRankP, TOUCHING_OVERLAP } from '../zones/index.js';
+import { smallestRankP, TOUCHING_OVERLAP } from '../zones/adjacent-zones.js';
 import type { BedOnClock, ClockInView } from './bed-on-clock.js';
 import { blankRow, type PlanSettings } from './plan-settings.js';
 import { dealInWords, gapInWords, percentInWords, shellsInWords } from './plan-words.js';

@@ -140,6 +140,7 @@ export function madeFindings(
     conflicts: [],
     diagnostics: [],
     gradients: [],
+    conversions: [],
     votes: [],
     shares: [],
     remarks: [],
