@@ -2,7 +2,7 @@ import type { Survey } from '../model/index.js';
 import { EXIT, type ExitStatus } from './exit-status.js';
 import { complain, print } from './print.js';
 import { problemText } from './problem-text.js';
-import { readRequest } from './read-request.js';
+import { readRequest, tellRefusal } from './read-request.js';
 import type { RawOptions } from './run-request.js';
 import { surveyCounts } from './survey-counts.js';
 import { counted, styleFor } from './terminal.js';
@@ -10,7 +10,7 @@ import { counted, styleFor } from './terminal.js';
 /** `bedorder check`: reads and validates only; every problem is listed, nothing is written. */
 export async function check(shells: string, commandLine: RawOptions): Promise<ExitStatus> {
   const read = await readRequest(shells, commandLine);
-  if (!read) return EXIT.unusable;
+  if (!('survey' in read)) return tellRefusal(read);
   const { request, survey } = read;
   if (request.json) {
     print(JSON.stringify({ usable: true, ...surveyCounts(survey), problems: survey.problems }, null, 2));

@@ -7,14 +7,14 @@ const SIGNALS = { SIGINT: 2, SIGTERM: 15, SIGHUP: 1 } as const;
  *
  * @returns A function that takes the care back.
  */
-export function onSignal(cleanUp: () => void): () => void {
+export function onSignal(cleanUp: () => Promise<void>): () => void {
   const names = Object.keys(SIGNALS) as (keyof typeof SIGNALS)[];
   const listeners = names.map((name) => {
-    const listener = () => {
+    const listener = async () => {
       try {
-        cleanUp();
+        await cleanUp();
       } finally {
-        complainNow('Stopped; earlier results are as they were.');
+        complainNow('Stopped.');
         process.exit(128 + SIGNALS[name]);
       }
     };

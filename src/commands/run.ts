@@ -1,66 +1,117 @@
-import type { Findings } from '../model/index.js';
-import type { FolderHold } from '../output/folder/replace-folder.js';
+import { Worker } from 'node:worker_threads';
+import { placesOf } from '../output/folder/places.js';
+import { type FolderHold, holdFolder, refuseForeign } from '../output/folder/replace-folder.js';
 import { EXIT, type ExitStatus } from './exit-status.js';
 import { onSignal } from './on-signal.js';
 import { complain, print } from './print.js';
 import { problemText } from './problem-text.js';
 import { progressBar } from './progress.js';
-import { type ReadRequest, readRequest } from './read-request.js';
+import { tellRefusal } from './read-request.js';
+import type { Job, JobNews, Told } from './run-job.js';
 import type { RawOptions, RunRequest } from './run-request.js';
-import { counted, styleFor } from './terminal.js';
+import { counted, styleFor, wantsColours } from './terminal.js';
 
-/** `bedorder run`: zones, orders and checks a survey, and writes the results folder. */
+/**
+ * `bedorder run`: zones, orders and checks a survey, and writes the results folder. The work is done on a thread
+ * (run-job.ts); this one holds the folder, shows progress and hears of signals.
+ */
 export async function run(shells: string, commandLine: RawOptions): Promise<ExitStatus> {
-  const { holdFolder, placesOf, refuseForeign } = await import('./results-folder.js');
-  // what stands in the way of the results is told before a long reading
-  const read = await readRequest(shells, commandLine, ({ out }) => refuseForeign(placesOf(out)));
-  if (!read) return EXIT.unusable;
-  const { request } = read;
-  const hold = holdFolder(placesOf(request.out));
-  const forget = onSignal(hold.release);
+  const job = startJob({ shells, commandLine, colours: wantsColours(process.stdout) });
+  let hold: FolderHold | undefined;
+  const cleanUp = async () => {
+    await job.end();
+    hold?.release();
+  };
+  const forget = onSignal(cleanUp);
+  const bar = await progressBar(commandLine.quiet !== true);
   try {
-    const findings = await analyseAndWrite(read, hold);
-    await tellWhatWasFound(findings, request);
-    const reversed = findings.relations.some(({ verdict_after }) => verdict_after === 'reversed');
-    return request.strict && reversed ? EXIT.reversed : EXIT.done;
+    const asked = await job.next(bar.show);
+    if (asked.news === 'refused') return tellRefusal(asked.refusal);
+    const { request } = expected(asked, 'asked');
+    // what stands in the way of the results is told before a long reading
+    refuseForeign(placesOf(request.out));
+    const read = await job.next(bar.show);
+    if (read.news === 'refused') return tellRefusal(read.refusal);
+    expected(read, 'read');
+    hold = holdFolder(placesOf(request.out));
+    const told = await written(job, hold, bar.show);
+    bar.stop();
+    tellWhatWasFound(told, request);
+    return request.strict && told.reversed ? EXIT.reversed : EXIT.done;
   } finally {
-    hold.release();
+    bar.stop();
+    await cleanUp();
     forget();
   }
 }
 
-async function analyseAndWrite({ request, survey }: ReadRequest, hold: FolderHold): Promise<Findings> {
-  const { analyse } = await import('../pipeline.js');
-  const { createWorkerHost } = await import('./worker-host.js');
-  const bar = await progressBar(!request.quiet);
-  const host = createWorkerHost(bar.show);
-  try {
-    const findings = await analyse(survey, request.options, host);
-    bar.show('drawing', 1);
-    const { drawFigures } = await import('../figures/index.js');
-    const { renderReport } = await import('../report/index.js');
-    const drawings = { report: renderReport(findings), figures: drawFigures(findings) };
-    bar.show('writing', 1);
-    const { writeResults } = await import('../output/write-results.js');
-    await hold.replace(async (folder) => void (await writeResults(findings, drawings, folder)));
-    return findings;
-  } finally {
-    bar.stop();
-    await host.close();
-  }
+type Show = (step: string, fraction: number) => void;
+
+interface RunningJob {
+  /** The next news that is no progress. */
+  readonly next: (show: Show) => Promise<JobNews>;
+  readonly give: (folder: string) => void;
+  readonly end: () => Promise<void>;
+}
+
+function startJob(job: Job): RunningJob {
+  const worker = new Worker(new URL('./run-job.js', import.meta.url), { workerData: job });
+  const waiting: JobNews[] = [];
+  let heard: () => void = () => {};
+  let show: Show = () => {};
+  const hear = (news: JobNews) => {
+    if (news.news === 'progress') return show(news.step, news.fraction);
+    waiting.push(news);
+    heard();
+  };
+  worker.on('message', hear);
+  worker.on('error', ({ message, stack }) => hear({ news: 'failed', message, stack }));
+  worker.on('exit', () => hear({ news: 'failed', message: 'the working thread ended before it was done' }));
+  return {
+    next: async (showing) => {
+      show = showing;
+      while (waiting.length === 0) {
+        await new Promise<void>((resolve) => {
+          heard = resolve;
+        });
+      }
+      const news = waiting.shift() as JobNews;
+      if (news.news === 'failed') throw Object.assign(new Error(news.message), named(news));
+      return news;
+    },
+    give: (folder) => worker.postMessage(folder),
+    end: async () => void (await worker.terminate()),
+  };
+}
+
+// errors lose what is not standard about them on their way between threads
+function named({ stack, code, kind }: JobNews & { readonly news: 'failed' }) {
+  return { stack, ...(code ? { code } : {}), ...(kind ? { kind, name: 'OutputError' } : {}) };
+}
+
+function expected<Kind extends JobNews['news']>(news: JobNews, kind: Kind): JobNews & { readonly news: Kind } {
+  if (news.news !== kind) throw new Error(`"${kind}" was wanted from the working thread, "${news.news}" came`);
+  return news as JobNews & { readonly news: Kind };
+}
+
+async function written(job: RunningJob, hold: FolderHold, show: Show): Promise<Told> {
+  let told: Told | undefined;
+  await hold.replace(async (folder) => {
+    job.give(folder);
+    told = expected(await job.next(show), 'written').told;
+  });
+  return told as unknown as Told;
 }
 
 /** Warnings shown by a run; all of them stand in problems.csv. */
 const WARNINGS_SHOWN = 10;
 
-async function tellWhatWasFound(findings: Findings, request: RunRequest): Promise<void> {
-  const { summaryJson, summaryText } = await import('./summary/index.js');
-  if (request.json) print(summaryJson(findings, request.out));
+function tellWhatWasFound({ summary, json, warnings }: Told, request: RunRequest): void {
+  if (request.json) print(json);
   if (request.quiet) return;
   const style = styleFor(process.stderr);
-  for (const problem of findings.problems.slice(0, WARNINGS_SHOWN)) complain(problemText(problem, style));
-  const more = findings.problems.length - WARNINGS_SHOWN;
-  if (more > 0)
-    complain(`… and ${counted(more, 'more warning', 'more warnings')}; all are in ${request.out}/problems.csv.`);
-  if (!request.json) print(summaryText(findings, request.out, styleFor(process.stdout)));
+  for (const problem of warnings.slice(0, WARNINGS_SHOWN)) complain(problemText(problem, style));
+  const more = warnings.length - WARNINGS_SHOWN;
+  if (more > 0) complain(`… and ${counted(more, 'more warning')}; all are in ${request.out}/problems.csv.`);
+  if (!request.json) print(summary);
 }

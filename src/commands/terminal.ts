@@ -15,13 +15,22 @@ export interface Style {
  * @param stream `process.stdout` or `process.stderr`, or anything with isTTY.
  */
 export function styleFor(stream: { readonly isTTY?: boolean }, env: NodeJS.ProcessEnv = process.env): Style {
-  const colours = stream.isTTY === true && !env.NO_COLOR && env.TERM !== 'dumb';
+  return styleOf(wantsColours(stream, env));
+}
+
+/** Whether colours are wanted on a stream. */
+export function wantsColours(stream: { readonly isTTY?: boolean }, env: NodeJS.ProcessEnv = process.env): boolean {
+  return stream.isTTY === true && !env.NO_COLOR && env.TERM !== 'dumb';
+}
+
+/** The style with or without colours. */
+export function styleOf(colours: boolean): Style {
   const { bold, dim, red, yellow, green } = picocolors.createColors(colours);
   return { bold, dim, red, yellow, green };
 }
 
 /** The style without colour. */
-export const PLAIN: Style = styleFor({ isTTY: false });
+export const PLAIN: Style = styleOf(false);
 
 /**
  * Text from outside made safe for a terminal: control characters, which could move the cursor or change colours, are

@@ -25,6 +25,7 @@ export function* resultsPieces(findings: Findings): Generator<string> {
 }
 
 function* listPieces(name: string, shape: AnyShape, items: readonly unknown[]): Generator<string> {
+  if (!Array.isArray(items)) throw new Error(`results.json: a list of ${name} was wanted, ${items} came`);
   if (items.length === 0) {
     yield '[]';
     return;
