@@ -1,6 +1,6 @@
 import { type ClockSet, testingDf } from './beds/index.js';
 import type { ClockOrder, Pass, RunContext, SlopeOfPass } from './clock-run.js';
-import { correlationTable } from './coast/index.js';
+import { correlationTable, gradientRemarks } from './coast/index.js';
 import type {
   AdjacentZonesRow,
   AminoAcidShare,
@@ -139,6 +139,7 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
   const zones = zoning === null ? [] : zoneRows(data, zoning);
   const relations = relationFindings({ settled, shells, beds, sites: siteOf });
   const zoneOf = new Map(beds.map((bed) => [`${bed.section}/${bed.bed}`, bed.zone]));
+  const slope = last.gradient === null ? null : gradientFinding(last, last.gradient, options.gradient!);
   return {
     ...EMPTY,
     clock: clockRow(last, 1),
@@ -176,8 +177,11 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
     sections: sectionRows(settled, siteOf, options.alpha, options.simulations, random),
     correlation: correlationTable(zones, beds, sections),
     diagnostics: order === null ? [] : [diagnosticsOf(data.clock.name, order)],
-    remarks: settled.settled ? [] : [unsettledPasses(data.clock.name)],
-    gradients: last.gradient === null ? [] : [gradientFinding(last, last.gradient, options.gradient!)],
+    remarks: [
+      ...(settled.settled ? [] : [unsettledPasses(data.clock.name)]),
+      ...(options.gradient === null ? [] : slopeRemarks(last, slope, context, options.gradient)),
+    ],
+    gradients: slope === null ? [] : [slope],
   };
 }
 
@@ -282,6 +286,16 @@ function sectionRows(
 function unsettledPasses(clock: string): Remark {
   const text = `After ${MOST_PASSES} passes some shells still change between set aside and kept; the last pass is shown, and they deserve a look.`;
   return { clock, level: 'caution', text };
+}
+
+function slopeRemarks(
+  { data }: Pass,
+  slope: GradientFinding | null,
+  { gradient }: RunContext,
+  column: string,
+): Remark[] {
+  const without = data.beds.filter((bed) => bed.n > 0 && !gradient?.has(bed.key)).map((bed) => bed.key);
+  return gradientRemarks(data.clock.name, column, slope, without);
 }
 
 function gradientFinding({ data }: Pass, fit: SlopeOfPass, column: string): GradientFinding {

@@ -1,5 +1,12 @@
 import { type ClockSet, clockData, testingDf } from './beds/index.js';
-import { fitGradient, type GradientFit } from './coast/index.js';
+import {
+  fitGradient,
+  type GradientFit,
+  type LaboratoryOffset,
+  type Staircase,
+  staircaseRelations,
+  withLaboratoryErrors,
+} from './coast/index.js';
 import type { Clock, ClockBed, ClockData, PublishedSummary, RelationRecord, RunOptions, Shell } from './model/index.js';
 import type { PlacedBed } from './order/index.js';
 import {
@@ -22,8 +29,14 @@ export interface RunContext {
   readonly summaries: readonly PublishedSummary[];
   /** Beds of the survey by key `section/bed`, with their places. */
   readonly placed: ReadonlyMap<string, PlacedBed>;
-  /** Relations of the table, and those derived from elevations. */
+  /** Relations of the table. */
   readonly relations: readonly RelationRecord[];
+  /** Superposition of all beds of the survey, measured or not: what lies on what. */
+  readonly stacking: readonly RelationRecord[];
+  /** Elevation of each bed by key, for staircase relations. */
+  readonly elevations: ReadonlyMap<string, number>;
+  /** Offsets that were taken out of the ratios, whose errors the beds carry. */
+  readonly offsets: readonly LaboratoryOffset[];
   /** Value of the gradient column by bed; null without `--gradient`. */
   readonly gradient: ReadonlyMap<string, number> | null;
   readonly options: RunOptions;
@@ -60,15 +73,19 @@ export const NOTHING: LeftOut = { setAside: new Set(), wide: new Set(), mixed: n
 
 /** One pass of design 7.1 to 7.7 over one clock. */
 export function runPass(context: RunContext, clock: Clock, set: ClockSet, left: LeftOut, random: Random): Pass {
-  const { shells, summaries, options } = context;
+  const { shells, summaries } = context;
   const imputation = clock.amino_acids.length > 1 ? set.index?.imputation : undefined;
   const input = { clock, shells, summaries, setAside: left.setAside, wide: left.wide, imputation };
-  const plain = clockData(input);
+  const plain = withLaboratoryErrors(clockData(input), shells, summaries, context.offsets);
+  return passOver(context, plain, left, random);
+}
+
+/** Design 7.3 to 7.7 over bed means that still hold any slope along the gradient. */
+export function passOver(context: RunContext, plain: ClockData, left: LeftOut, random: Random): Pass {
+  const { options } = context;
+  const { clock } = plain;
   const gradient = context.gradient === null ? null : slopeOf(plain, context.gradient, left.mixed);
-  const data =
-    gradient === null
-      ? plain
-      : clockData({ ...input, gradient: { slope: gradient.used ? gradient.slope : 0, values: gradient.values } });
+  const data = gradient === null ? plain : withSlope(plain, gradient);
   const zoning = findZones(data, {
     alpha: options.alpha,
     zones: clock.main ? options.zones : null,
@@ -101,12 +118,34 @@ function slopeOf(data: ClockData, values: ReadonlyMap<string, number>, mixed: Re
   return { ...fit, centre, values: new Map(beds.map((bed) => [bed.key, values.get(bed.key)! - centre])) };
 }
 
-/** Superposition among the clock's beds that have a mean, then the relations of the table; a pair stands once. */
-function relationsOf({ placed, relations }: RunContext, data: ClockData): RelationRecord[] {
+/** Bed means with the slope taken out where it is used; each bed keeps its distance from the centre. */
+function withSlope(plain: ClockData, { slope: fitted, used, values }: SlopeOfPass): ClockData {
+  const slope = used ? fitted : 0;
+  const beds = plain.beds.map((bed) => {
+    const gradient = values.get(bed.key) ?? 0;
+    return { ...bed, mean: bed.mean - slope * gradient, gradient };
+  });
+  return { ...plain, beds, slope };
+}
+
+/** Superposition among the clock's beds that have a mean, the relations of the table, then the staircase; a pair stands once. */
+function relationsOf(context: RunContext, data: ClockData): RelationRecord[] {
+  const { placed, relations } = context;
   const measured = data.beds.filter((bed) => bed.n > 0).flatMap((bed) => placed.get(bed.key) ?? []);
   const stated = new Set(relations.map((relation) => `${relation.lower}\u0001${relation.upper}`));
   const derived = sectionRelations(measured).filter(({ lower, upper }) => !stated.has(`${lower}\u0001${upper}`));
-  return [...derived, ...relations];
+  return [...derived, ...relations, ...(staircaseOf(context, data)?.relations ?? [])];
+}
+
+/** The staircase among the clock's beds that have a mean; null where none is asked for. */
+export function staircaseOf(context: RunContext, data: ClockData): Staircase | null {
+  const { staircase, staircase_certain } = context.options;
+  if (staircase === 'no') return null;
+  const beds = data.beds
+    .filter((bed) => bed.n > 0)
+    .map(({ key, section }) => ({ key, section, elevation_m: context.elevations.get(key) ?? null }));
+  const known = [...context.stacking, ...context.relations];
+  return staircaseRelations(beds, known, { along: staircase, certain: staircase_certain });
 }
 
 /** The order of one clock's beds, and how it was sampled. Beds are those with a mean. */

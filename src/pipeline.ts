@@ -1,13 +1,22 @@
 import { averageAnalyses, bedKey, type ClockSet, chooseClocks } from './beds/index.js';
 import { type ClockResult, clockFindings } from './clock-findings.js';
-import { orderClock, type RunContext, runPass } from './clock-run.js';
-import { sectionOrder } from './coast/index.js';
-import type { BedRecord, BedSite, Findings, Host, RunOptions, Survey } from './model/index.js';
-import { heightOf } from './order/index.js';
-import { settlePasses } from './passes.js';
+import { orderClock, type RunContext, runPass, staircaseOf } from './clock-run.js';
+import {
+  conversionRemarks,
+  correctAnalyses,
+  laboratoryOffsets,
+  laboratoryRemarks,
+  sectionOrder,
+  staircaseRemarks,
+  temperatureRemarks,
+} from './coast/index.js';
+import { type CombinedOutcome, combineClocks, combinedRows, type SettledClock } from './combined-run.js';
+import type { BedRecord, BedSite, Findings, Host, Remark, RunOptions, Survey } from './model/index.js';
+import { heightOf, sectionRelations } from './order/index.js';
+import { type Settled, settlePasses } from './passes.js';
 import { remarks } from './remarks.js';
 import { screenShells } from './screening/index.js';
-import { createRandom } from './statistics/index.js';
+import { createRandom, type Random } from './statistics/index.js';
 import { VERSION } from './version.js';
 
 /**
@@ -19,22 +28,24 @@ import { VERSION } from './version.js';
  * @throws Error when no clock can be made (no shell of the taxon, fraction or amino acid asked for)
  */
 export async function analyse(survey: Survey, options: RunOptions, host: Host): Promise<Findings> {
-  const { shells, summaries } = averageAnalyses(survey.analyses);
+  const offsets = laboratoryOffsets(survey.standards, survey.analyses);
+  const { shells, summaries } = averageAnalyses(correctAnalyses(survey.analyses, offsets));
   const screening = screenShells(shells, options.screening);
   const sets = chooseClocks(shells, summaries, options);
   if (sets.length === 0) throw new Error('no shell has a ratio of the taxon, fraction and amino acid asked for');
   const sections = sectionOrder(survey.beds);
   const sites = bedSites(survey.beds, sections, options.gradient);
+  const placed = survey.beds.map(({ section, bed, place }) => ({ key: bedKey(section, bed), section, place }));
   const context: RunContext = {
     shells,
     summaries,
-    placed: new Map(
-      survey.beds.map((bed) => {
-        const key = bedKey(bed.section, bed.bed);
-        return [key, { key, section: bed.section, place: bed.place }];
-      }),
-    ),
+    placed: new Map(placed.map((bed) => [bed.key, bed])),
     relations: survey.relations,
+    stacking: sectionRelations(placed),
+    elevations: new Map(
+      sites.flatMap((site) => (site.elevation_m === null ? [] : [[bedKey(site.section, site.bed), site.elevation_m]])),
+    ),
+    offsets,
     gradient:
       options.gradient === null
         ? null
@@ -44,8 +55,15 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
     options,
   };
   const random = createRandom(options.seed);
+  const runs = sets.map((set, at) => ({ set, settled: settleClock(set, random.fork(at)) }));
+  const combined = combineAll(runs);
   const results: ClockResult[] = [];
-  for (const [at, set] of sets.entries()) results.push(...(await runClocks(set, at)));
+  for (const [at, { run }] of combined.entries()) {
+    if (run === null) continue;
+    const rows = await rowsOfClocks(run, random.fork(2000 + at));
+    results.push(...rows.map((result) => combinedRows(result, run, options.reference_taxon!)));
+  }
+  for (const [at, run] of runs.entries()) results.push(...(await rowsOfClocks(run, random.fork(at))));
   const findings = {
     program: 'bedorder' as const,
     version: VERSION,
@@ -77,18 +95,28 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
     conflicts: results.flatMap((result) => result.conflicts),
     diagnostics: results.flatMap((result) => result.diagnostics),
     gradients: results.flatMap((result) => result.gradients),
+    conversions: combined.flatMap((outcome) => outcome.findings),
     votes: results.flatMap((result) => result.votes),
     shares: results.flatMap((result) => result.shares),
-    remarks: results.flatMap((result) => result.remarks),
+    remarks: [...surveyRemarks(), ...results.flatMap((result) => result.remarks)],
   };
   return { ...findings, remarks: remarks(findings) };
 
-  /** The main clock of a taxon and fraction in full, then each amino acid zoned by itself. */
-  async function runClocks(set: ClockSet, at: number): Promise<ClockResult[]> {
-    const own = random.fork(at);
+  /** Passes over the main clock of one taxon and fraction. */
+  function settleClock(set: ClockSet, own: Random): Settled {
+    host.progress(`zones of ${set.main.name}`, 0);
+    return settlePasses({ context, set, screening, random: own.fork(1) });
+  }
+
+  /** All taxa on the scale of the reference taxon, where one is asked for. */
+  function combineAll(clocks: readonly SettledClock[]): CombinedOutcome[] {
+    if (options.reference_taxon === null) return [];
+    return combineClocks(context, clocks, options.reference_taxon, random.fork(1000));
+  }
+
+  /** The order and all rows of a main clock, then each amino acid zoned by itself. */
+  async function rowsOfClocks({ set, settled }: SettledClock, own: Random): Promise<ClockResult[]> {
     const name = set.main.name;
-    host.progress(`zones of ${name}`, 0);
-    const settled = settlePasses({ context, set, screening, random: own.fork(1) });
     host.progress(`order of ${name}`, 0);
     const order = orderClock(settled.last, options.alpha, own.fork(2), (fraction) =>
       host.progress(`order of ${name}`, fraction),
@@ -98,6 +126,23 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
       return runPass(context, clock, set, settled.left, own.fork(100 + k));
     });
     return clockFindings({ context, set, settled, order, singles, sites, sections, host, random: own.fork(3) });
+  }
+
+  /** What is to be said of the coast, the laboratories and the taxa, beside what each clock says of itself. */
+  function surveyRemarks(): Remark[] {
+    const measured = new Set(runs.flatMap(({ settled }) => settled.last.data.beds.map((bed) => bed.key)));
+    const asked = runs.map(({ set }) => ({ clock: set.main.name, taxon: set.main.taxon, fraction: set.main.fraction }));
+    return [
+      ...temperatureRemarks(
+        sites.filter((site) => measured.has(bedKey(site.section, site.bed))),
+        options.gradient,
+      ),
+      ...conversionRemarks(combined.flatMap((outcome) => outcome.findings)),
+      ...laboratoryRemarks(survey.analyses, offsets, asked),
+      ...runs.flatMap(({ set, settled }) =>
+        staircaseRemarks(set.main.name, staircaseOf(context, settled.last.data), context.elevations.size),
+      ),
+    ];
   }
 }
 

@@ -263,6 +263,36 @@ export interface GradientFinding {
   readonly used: boolean;
 }
 
+/** How the ratios of one taxon were put on the scale of the reference taxon, or why they were not. */
+export interface ConversionFinding {
+  /** The combined clock; null where no taxon could be converted to its reference. */
+  readonly clock: string | null;
+  readonly taxon: string;
+  readonly reference: string;
+  readonly fraction: Fraction;
+  /** The two main clocks between which the line runs; null where the taxon or the reference has none in this fraction. */
+  readonly from_clock: string | null;
+  readonly to_clock: string | null;
+  /** Beds that hold both taxa, as `section/bed`. */
+  readonly paired_beds: readonly string[];
+  /** x_reference = intercept + slope · x on log ratios; null where there are too few pairs for a line. */
+  readonly slope: number | null;
+  readonly slope_se: number | null;
+  /** Fixed at 1 under five pairs. */
+  readonly slope_fixed: boolean | null;
+  readonly intercept: number | null;
+  readonly intercept_se: number | null;
+  /** Standard deviation of the pairs about the line beyond their errors, carried into every converted bed. */
+  readonly extra_scatter: number | null;
+  readonly chi_squared: number | null;
+  readonly df: number | null;
+  /** Beds whose mean on the combined clock rests on this conversion. */
+  readonly converted_beds: number;
+  readonly verdict: 'converted' | 'refused';
+  /** Why it was refused, or what to beware of; empty where there is nothing to say. */
+  readonly reason: string;
+}
+
 /** Two beds whose amino acids disagree on which is the older. */
 export interface AminoAcidVotes {
   readonly clock: string;
@@ -315,6 +345,7 @@ export interface Findings {
   readonly conflicts: readonly ConflictRow[];
   readonly diagnostics: readonly OrderDiagnostics[];
   readonly gradients: readonly GradientFinding[];
+  readonly conversions: readonly ConversionFinding[];
   readonly votes: readonly AminoAcidVotes[];
   readonly shares: readonly AminoAcidShare[];
   readonly remarks: readonly Remark[];

@@ -15,7 +15,9 @@ export type BedMark =
   | 'one shell'
   | 'near equilibrium'
   | 'no place in section'
-  | 'assumed scatter';
+  | 'assumed scatter'
+  /** Its mean rests, in part or whole, on another taxon's shells put on the scale of the reference taxon. */
+  | 'converted taxon';
 
 /** A mark of one screening rule on one shell, with the numbers behind it in a sentence. */
 export interface ScreeningMark {

@@ -57,6 +57,7 @@ export const BED_MARKS: Words<BedMark> = {
   'near equilibrium': 'the ratio is so near equilibrium that order is hardly resolved',
   'no place in section': 'neither level, height nor depth is known',
   'assumed scatter': 'the scatter between shells is assumed, not measured',
+  'converted taxon': 'the mean rests on shells of another taxon, converted to the reference taxon',
 };
 
 export const SHELL_STATUSES: Words<ShellStatus> = {

@@ -3,6 +3,7 @@ import type {
   AminoAcidVotes,
   BedSite,
   ConflictRow,
+  ConversionFinding,
   Evidence,
   Findings,
   GradientFinding,
@@ -148,6 +149,31 @@ const gradients = {
   used: c.yes('whether the slope was taken out'),
 } satisfies FieldsOf<GradientFinding>;
 
+const conversions = {
+  clock: c.textOrNone('combined clock; null where nothing was converted to this reference'),
+  taxon: c.taxon,
+  reference: c.text('taxon to whose scale the ratios are put'),
+  fraction: c.fraction,
+  from_clock: c.textOrNone('main clock of the taxon'),
+  to_clock: c.textOrNone('main clock of the reference'),
+  paired_beds: c.list(c.text('bed, as section/bed'), 'beds that hold both taxa'),
+  slope: c.plainOrNone('slope of the line between log ratios'),
+  slope_se: c.plainOrNone('its standard error'),
+  slope_fixed: { type: 'boolean', nullable: true, description: 'whether the slope was fixed at 1' },
+  intercept: c.logRatioOrNone('log ratio of the reference where that of the taxon is 0'),
+  intercept_se: c.logRatioOrNone('its standard error'),
+  extra_scatter: c.logRatioOrNone('standard deviation of the pairs about the line beyond their errors'),
+  chi_squared: c.plainOrNone('of the pairs about the line'),
+  df: c.plainOrNone('its degrees of freedom'),
+  converted_beds: c.count('beds whose mean rests on this conversion'),
+  verdict: {
+    type: 'choice',
+    description: 'whether the taxon was converted',
+    values: { converted: 'its beds stand on the combined clock', refused: 'the paired beds cannot support it' },
+  },
+  reason: c.text('why it was refused, or what to beware of'),
+} satisfies FieldsOf<ConversionFinding>;
+
 const votes = {
   clock: c.clock,
   bed_a: c.text('bed, as section/bed'),
@@ -208,6 +234,7 @@ const described = {
   conflicts: rows(conflicts, 'pairs of shells that contradict superposition'),
   diagnostics: rows(diagnostics, 'how well the order was sampled'),
   gradients: rows(gradients, 'slope along a gradient'),
+  conversions: rows(conversions, 'taxa put on the scale of the reference taxon'),
   votes: rows(votes, 'beds on whose order amino acids disagree'),
   shares: rows(shares, 'what each amino acid brings to an index'),
   remarks: rows(remarks, 'sentences for the reader'),

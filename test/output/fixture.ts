@@ -338,6 +338,7 @@ export const FINDINGS: Findings = {
     },
   ],
   gradients: [],
+  conversions: [],
   votes: [
     {
       clock,
