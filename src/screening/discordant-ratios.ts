@@ -14,12 +14,12 @@ interface Worst {
 
 /**
  * Marks shells that lie off their taxon's robust log–log line between two amino acids (settings key
- * `screening.discordance`, default 3.5 robust standard deviations). The limit is widened for the number of pairs a shell
- * is looked at in and for few shells, so that a clean shell is marked as rarely as by a single pair at the limit: 5 in 10,000. Needs 10 shells of
- * the taxon and fraction with both amino acids.
+ * `screening.discordance`, default 3.5 robust standard deviations). The limit is widened for the number of pairs a
+ * shell is looked at in and for few shells, so that a clean shell is marked as rarely as by a single pair at the
+ * limit: 5 in 10,000. Needs 10 shells of the taxon and fraction with both amino acids.
  *
- * Source: Kosnik and Kaufman 2008, Quaternary Geochronology 3, 328–341, 10.1016/j.quageo.2008.03.001 (relation of Asp to
- * Glu D/L).
+ * Source: Kosnik and Kaufman 2008, Quaternary Geochronology 3, 328–341, 10.1016/j.quageo.2008.03.001 (relation of Asp
+ * to Glu D/L).
  */
 export function discordantRatios(shells: readonly Shell[], limits: ScreeningLimits): ScreeningMark[] {
   const worst = new Map<number, Worst>();

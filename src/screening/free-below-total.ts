@@ -5,11 +5,11 @@ import { shown } from './rule.js';
 const TOLERANCE = 0.06;
 
 /**
- * Marks shells whose free amino acids are less racemized than the total of the same shell. Free amino acids come from the
- * most degraded protein and are always ahead; the reverse is a sign of contamination or of a mix-up. Both rows of the
- * shell are marked, because the ratios alone do not say which of the two is wrong. A shortfall of up to 6 % is left to
- * the error of the two analyses (reproducibility of Glu 3 %: Kaufman and Manley 1998, Quaternary Science Reviews 17,
- * 987–1000, 10.1016/S0277-3791(97)00086-3). Shells are paired by section, bed, taxon and shell.
+ * Marks shells whose free amino acids are less racemized than the total of the same shell. Free amino acids come from
+ * the most degraded protein and are always ahead; the reverse is a sign of contamination or of a mix-up. Both rows of
+ * the shell are marked, because the ratios alone do not say which of the two is wrong. A shortfall of up to 6 % is
+ * left to the error of the two analyses (reproducibility of Glu 3 %: Kaufman and Manley 1998, Quaternary Science
+ * Reviews 17, 987–1000, 10.1016/S0277-3791(97)00086-3). Shells are paired by section, bed, taxon and shell.
  */
 export function freeBelowTotal(shells: readonly Shell[], _limits: ScreeningLimits): ScreeningMark[] {
   const pairs = new Map<string, { THAA?: number; FAA?: number }>();

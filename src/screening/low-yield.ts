@@ -7,9 +7,10 @@ const FEWEST_WITH_YIELD = 5;
 
 /**
  * Marks shells whose total concentration is below a share of the median of their taxon and fraction (settings key
- * `screening.yield`, default 0.25). The total is over the amino acids that at least 80 % of the shells with concentrations
- * have; a shell without one of them is passed over, as its total would be low for no fault of its own. Needs 5 shells.
- * A median over all ages: shells lose amino acids with time, so in a survey of a long span the oldest may be marked.
+ * `screening.yield`, default 0.25). The total is over the amino acids that at least 80 % of the shells with
+ * concentrations have; a shell without one of them is passed over, as its total would be low for no fault of its own.
+ * Needs 5 shells. A median over all ages: shells lose amino acids with time, so in a survey of a long span the oldest
+ * may be marked.
  *
  * Source of the rule: concentrations as a sign of leaching, Kosnik and Kaufman 2008, 10.1016/j.quageo.2008.03.001.
  */

@@ -11,8 +11,8 @@ const MISS = 3;
 /**
  * Marks shells in which a slow amino acid is ahead of a fast one. Which is the faster is learned from the shells of
  * the taxon and fraction themselves, since it depends on both: a pair counts where at least 90 % of at least 10 shells
- * agree, and the curve of the pair expects that order at the shell's own ratios. The shell must reverse it and miss what is
- * usual by 3 robust standard deviations, widened for the number of pairs. The mark is never a refusal.
+ * agree, and the curve of the pair expects that order at the shell's own ratios. The shell must reverse it and miss
+ * what is usual by 3 robust standard deviations, widened for the number of pairs. The mark is never a refusal.
  *
  * Published order in *Mercenaria* and *Anadara*: Asp ≥ Ala > Leu > Val (Mirecki, MS thesis, University of Delaware,
  * udspace.udel.edu/handle/19716/13229).

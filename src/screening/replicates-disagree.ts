@@ -7,11 +7,11 @@ import { widenedLimit } from './widened-limit.js';
 const FEWEST_WITH_REPLICATES = 8;
 
 /**
- * Marks shells whose preparations disagree: the widest difference of log ratios between two of them is beyond the limit
- * (settings key `screening.replicates`, default 3.5) times the standard deviation of such a difference. That is √2 times
- * the within-shell standard deviation, learned for each taxon, fraction and amino acid as a median over shells, which a few bad shells do not move.
- * The limit is widened for few shells, for the number of amino acids and for the number of pairs of preparations.
- * Needs 8 shells with at least two preparations.
+ * Marks shells whose preparations disagree: the widest difference of log ratios between two of them is beyond the
+ * limit (settings key `screening.replicates`, default 3.5) times the standard deviation of such a difference. That is
+ * √2 times the within-shell standard deviation, learned for each taxon, fraction and amino acid as a median over
+ * shells, which a few bad shells do not move. The limit is widened for few shells, for the number of amino acids and
+ * for the number of pairs of preparations. Needs 8 shells with at least two preparations.
  *
  * Source of the rule: Kosnik and Kaufman 2008, Quaternary Geochronology 3, 328–341, 10.1016/j.quageo.2008.03.001.
  */

@@ -16,9 +16,9 @@ export interface RobustCurve {
 const EFFICIENCY_OF_MAD = 0.37;
 
 /**
- * Fits a polynomial by Tukey's bisquare, started from the medians of groups of neighbouring points so that wild points do
- * not lead it astray: a straight line under 30 points, a parabola under 120, a cubic from there, because pairs of amino acids bend
- * over a long range of ages. Beyond the inner 90 % of the points it runs on straight.
+ * Fits a polynomial by Tukey's bisquare, started from the medians of groups of neighbouring points so that wild points
+ * do not lead it astray: a straight line under 30 points, a parabola under 120, a cubic from there, because pairs of
+ * amino acids bend over a long range of ages. Beyond the inner 90 % of the points it runs on straight.
  *
  * Sources: Beaton and Tukey 1974, Technometrics 16, 147–185, 10.1080/00401706.1974.10489171; Rousseeuw and Croux 1993
  * (efficiency of the MAD), 10.1080/01621459.1993.10476408.

@@ -7,8 +7,8 @@ export type ScreeningRule = (shells: readonly Shell[], limits: ScreeningLimits) 
 export const FEWEST_SHELLS = 10;
 
 /**
- * Indices of the shells of each taxon and fraction: what is usual differs between taxa and fractions, so rules that learn
- * from the survey learn within one group.
+ * Indices of the shells of each taxon and fraction: what is usual differs between taxa and fractions, so rules that
+ * learn from the survey learn within one group.
  */
 export function groupsOfShells(shells: readonly Shell[]): number[][] {
   const groups = new Map<string, number[]>();

@@ -19,9 +19,9 @@ export interface BedScreeningMark {
 
 /**
  * Marks beds that lie so shallow that surface heat may have hastened racemization (`shallow burial`, settings key
- * `screening.burial_m`, default 1 m), beds of few shells (`provisional`, `screening.shells_a_bed`, default 5) and of one shell
- * (`one shell`). Both limits are common practice. A mark on a bed sets nothing aside. A bed without any shell gets no mark
- * for its number.
+ * `screening.burial_m`, default 1 m), beds of few shells (`provisional`, `screening.shells_a_bed`, default 5) and of
+ * one shell (`one shell`). Both limits are common practice. A mark on a bed sets nothing aside. A bed without any
+ * shell gets no mark for its number.
  *
  * @example
  * screenBeds([{ burial_m: 0.4, shells: 6 }]).map((mark) => mark.mark) // => ['shallow burial']

@@ -18,8 +18,8 @@ export const SCREENING_RULES: readonly ScreeningRule[] = [
 ];
 
 /**
- * All marks of all rules on the shells of a run (design 7.2), by shell and then in the order of {@link SCREENING_RULES}.
- * A shell gets a mark at most once a rule. Marks set nothing aside here; see `screenedOut`.
+ * All marks of all rules on the shells of a run (design 7.2), by shell and then in the order of {@link
+ * SCREENING_RULES}. A shell gets a mark at most once a rule. Marks set nothing aside here; see `screenedOut`.
  *
  * @param shells All shells of the run, of any taxa and fractions.
  * @param limits Limits of the rules; the defaults of the design when absent.

@@ -1,9 +1,9 @@
 import { normalCdf, normalQuantile, studentTQuantile } from '../statistics/index.js';
 
 /**
- * A limit in standard deviations widened so that its chance of marking a clean shell stays the same when a shell is looked
- * at several times (Bonferroni over `looks`), and when the standard deviation itself rests on few shells (Student's t in
- * place of the normal).
+ * A limit in standard deviations widened so that its chance of marking a clean shell stays the same when a shell is
+ * looked at several times (Bonferroni over `looks`), and when the standard deviation itself rests on few shells
+ * (Student's t in place of the normal).
  *
  * @param limit Limit in standard deviations for one look with a known standard deviation.
  * @param looks Number of comparisons a shell takes part in; at least 1.

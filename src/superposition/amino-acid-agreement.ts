@@ -23,17 +23,18 @@ const CORE = 0.975;
 /**
  * Tests for every shell whether its amino acids agree: whether their log ratios fit one extent of racemization. What
  * belongs together is learned from the clock's own beds, as a robust curve of each amino acid's bed median against x;
- * how sound shells vary about the curves is the trimmed covariance of all complete shells, so errors that amino acids share are
- * not taken for independent. The Mahalanobis distance from the curve, on one dimension fewer than amino acids (the
- * extent itself is free), follows an F distribution in sound shells. A shell of another zone lies on the curve, far along; an
- * altered or contaminated shell lies off it.
+ * how sound shells vary about the curves is the trimmed covariance of all complete shells, so errors that amino acids
+ * share are not taken for independent. The Mahalanobis distance from the curve, on one dimension fewer than amino
+ * acids (the extent itself is free), follows an F distribution in sound shells. A shell of another zone lies on the
+ * curve, far along; an altered or contaminated shell lies off it.
  *
  * @param logs Log ratios, one row a shell, one column an amino acid; NaN where not measured.
  * @param x The clock's log ratio of each shell.
  * @param bed Bed of each shell.
  * @param weights Weight of each amino acid in x.
- * @returns One entry a shell. An amino acid measured on fewer than 80 % of the shells takes no part. Null where one that
- * does is missing, where there is only one, or where fewer than 10 shells beyond the number of amino acids are complete.
+ * @returns One entry a shell. An amino acid measured on fewer than 80 % of the shells takes no part. Null where one
+ * that does is missing, where there is only one, or where fewer than 10 shells beyond the number of amino acids are
+ * complete.
  */
 export function aminoAcidAgreement(
   logs: readonly (readonly number[])[],

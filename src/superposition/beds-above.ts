@@ -1,8 +1,8 @@
 import type { RelationGraph } from '../order/index.js';
 
 /**
- * All beds above each bed, directly or through others, from the graph of certain relations. Beds merged by `same` relations
- * share what lies above them.
+ * All beds above each bed, directly or through others, from the graph of certain relations. Beds merged by `same`
+ * relations share what lies above them.
  *
  * @param graph Graph of the relations that hold for certain, circles excluded.
  * @returns For each bed the indices of the beds above it, rising.

@@ -2,9 +2,9 @@ import { normalQuantile, studentTQuantile } from '../statistics/index.js';
 
 /**
  * How many standard deviations of a difference two shells must contradict superposition by before it is called a
- * conflict: one-sided, Bonferroni over all pairs that superposition orders, so that in a survey where every bed is of one age (the worst
- * case) the chance of any conflict is at most alpha, whatever pairs share shells. Student's t where the scatter rests on few
- * degrees of freedom.
+ * conflict: one-sided, Bonferroni over all pairs that superposition orders, so that in a survey where every bed is of
+ * one age (the worst case) the chance of any conflict is at most alpha, whatever pairs share shells. Student's t where
+ * the scatter rests on few degrees of freedom.
  *
  * @param pairs Pairs of shells that superposition orders; under 1 counts as 1.
  * @param alpha Level over all pairs together. Default 0.05.

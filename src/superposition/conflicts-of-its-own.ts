@@ -2,9 +2,9 @@ import type { OwnBedResiduals } from './own-bed-residuals.js';
 import type { ShellConflicts } from './shell-conflicts.js';
 
 /**
- * Which shells have a conflict with a bed that their own bed's other shells are not reversed against. Where the means of two
- * beds are reversed (one-sided at 5 %), conflicts between their shells are a matter of the beds, not of the shells that happen
- * to lie furthest out.
+ * Which shells have a conflict with a bed that their own bed's other shells are not reversed against. Where the means
+ * of two beds are reversed (one-sided at 5 %), conflicts between their shells are a matter of the beds, not of the
+ * shells that happen to lie furthest out.
  */
 export function conflictsOfItsOwn(
   { conflicts, sorted }: ShellConflicts,

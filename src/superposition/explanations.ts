@@ -48,8 +48,8 @@ export interface Explanation {
 const SHELLS_A_BED = 5;
 
 /**
- * The five things that would explain a reversed relation, each with what is known for and against it. Beds that lie elsewhere
- * in the survey count by their own relations, amino acids by whether all show the reversal.
+ * The five things that would explain a reversed relation, each with what is known for and against it. Beds that lie
+ * elsewhere in the survey count by their own relations, amino acids by whether all show the reversal.
  */
 export function explanationsOf(reversed: ReversedRelation): Explanation[] {
   const { relation, lower, upper } = reversed;

@@ -18,8 +18,8 @@ export interface MixedAgeOptions {
 /** What the shells of one bed say of its being one age. */
 export interface MixedAge {
   /**
-   * `mixed age`: scatter beyond s, and two groups; `wide scatter`: scatter beyond s, but no two groups that so few shells
-   * could prove; `none`; `not tested` with fewer than 4 shells.
+   * `mixed age`: scatter beyond s, and two groups; `wide scatter`: scatter beyond s, but no two groups that so few
+   * shells could prove; `none`; `not tested` with fewer than 4 shells.
    */
   readonly verdict: 'mixed age' | 'wide scatter' | 'none' | 'not tested';
   /** Probability of so wide a scatter in a bed of one age, and the same adjusted by Holm over the beds tested. */
@@ -37,10 +37,11 @@ const FEWEST_SHELLS = 4;
 
 /**
  * Tests every bed for mixed age (design 7.9). First its scatter: the sum of squares about its mean against the pooled
- * scatter of the clock, which is robust and so not raised by the bed itself (F test, Holm over beds). Then, only where that is
- * too wide, two groups: the best split into two groups of at least two shells, by the share of the sum of squares that lies between
- * them, against the same share in normal samples of as many shells, simulated. That test scales with the bed's own
- * width, so a bed that is merely wide does not pass for two groups, and with 4 shells it seldom can prove any.
+ * scatter of the clock, which is robust and so not raised by the bed itself (F test, Holm over beds). Then, only where
+ * that is too wide, two groups: the best split into two groups of at least two shells, by the share of the sum of
+ * squares that lies between them, against the same share in normal samples of as many shells, simulated. That test
+ * scales with the bed's own width, so a bed that is merely wide does not pass for two groups, and with 4 shells it
+ * seldom can prove any.
  *
  * @param beds Log ratios of the shells of each bed, without those set aside.
  * @param random Seeded generator.

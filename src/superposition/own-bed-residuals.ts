@@ -30,14 +30,15 @@ export interface OwnBedResiduals {
 
 /**
  * Leave-one-out residuals of every shell from the other shells of its bed (design 7.9), with variance s²(1 + 1/n), s
- * from {@link robustScatter} so that odd shells do not hide themselves, Student's t, and Holm over all shells of the clock.
- * Odd shells are taken out one a bed at a time, the furthest first, and everything is worked out again, so that two in one
- * bed do not mask each other nor make their neighbours look odd. A bed of two cannot tell which is the odd one, so none is.
+ * from {@link robustScatter} so that odd shells do not hide themselves, Student's t, and Holm over all shells of the
+ * clock. Odd shells are taken out one a bed at a time, the furthest first, and everything is worked out again, so that
+ * two in one bed do not mask each other nor make their neighbours look odd. A bed of two cannot tell which is the odd
+ * one, so none is.
  *
  * @param shells Bed and log ratio of each shell; NaN is passed over.
  * @param excluded Shells that screening sets aside: tested, but never part of a mean.
- * @param options Level alpha (0.05), and the scatter to fall back on where repeated shells give fewer than 4 degrees of freedom:
- * that of published summaries, or the assumed one with df Infinity. Without one nothing is tested there.
+ * @param options Level alpha (0.05), and the scatter to fall back on where repeated shells give fewer than 4 degrees
+ * of freedom: that of published summaries, or the assumed one with df Infinity. Without one nothing is tested there.
  */
 export function ownBedResiduals(
   shells: readonly { readonly bed: number; readonly x: number }[],

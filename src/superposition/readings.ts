@@ -57,9 +57,10 @@ export interface ShellReadings {
 const DISAGREE = 0.01;
 
 /**
- * Reads every shell of a clock (design 7.9): how it stands to its own bed, whether its amino acids agree, what screening
- * says, which zone or bed its ratio fits, and with which shells it contradicts superposition. Statuses are worked out
- * anew from all shells; those that came in are not looked at, so the same beds, zones and relations give the same answer.
+ * Reads every shell of a clock (design 7.9): how it stands to its own bed, whether its amino acids agree, what
+ * screening says, which zone or bed its ratio fits, and with which shells it contradicts superposition. Statuses are
+ * worked out anew from all shells; those that came in are not looked at, so the same beds, zones and relations give
+ * the same answer.
  *
  * @throws RangeError when logs, marks or above do not match the clock's shells and beds.
  */
@@ -161,7 +162,10 @@ export function readShells(input: ReadingInput): ShellReadings {
   return { shells, residuals, conflicts, toSetAside };
 }
 
-/** High or low at the weaker level by its own bed, or at alpha where a least costly set speaks against it on the same side. */
+/**
+ * High or low at the weaker level by its own bed, or at alpha where a least costly set speaks against it on the same
+ * side.
+ */
 function directionOf(t: number | null, p: number | null, pulled: number, alpha: number): 'high' | 'low' | 'within' {
   if (t === null || p === null) return pulled === 0 ? 'within' : pulled > 0 ? 'high' : 'low';
   const level = Math.sign(t) === pulled ? alpha : alpha / 5;

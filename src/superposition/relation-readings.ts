@@ -10,9 +10,9 @@ export interface RelationReading {
 }
 
 /**
- * Weighs what would explain a relation that is reversed after odd shells were set aside (design 7.9): each explanation with
- * what speaks for it and against it, the one with most for and least against first. None is proved by ratios alone, so the reading
- * names the one that leads, or says that several stand level.
+ * Weighs what would explain a relation that is reversed after odd shells were set aside (design 7.9): each explanation
+ * with what speaks for it and against it, the one with most for and least against first. None is proved by ratios
+ * alone, so the reading names the one that leads, or says that several stand level.
  */
 export function readReversedRelation(reversed: ReversedRelation): RelationReading {
   const explanations = explanationsOf(reversed)

@@ -17,12 +17,12 @@ export interface RobustScatter {
 }
 
 /**
- * Pooled standard deviation of log ratios between the shells of one bed, when some shells may be odd. Each shell is either
- * sound, N(bed mean, s²), or odd, N(bed mean, s² + 0.5²), with 1 in 20 odd; s and the bed means are those of greatest
- * likelihood (EM from bed medians), s² divided by the sound shells less one a bed. A shell weighs in by its probability
- * of being sound: nearly fully up to 2 s, hardly beyond 4 s. What the weights take from the variance of sound shells is given
- * back. The degrees of freedom, 0.93 of the weights less one a bed, less 2, are what simulated clean beds of 3 to 7 shells
- * were worth (variance of s² over 1,500 runs), at the cautious end.
+ * Pooled standard deviation of log ratios between the shells of one bed, when some shells may be odd. Each shell is
+ * either sound, N(bed mean, s²), or odd, N(bed mean, s² + 0.5²), with 1 in 20 odd; s and the bed means are those of
+ * greatest likelihood (EM from bed medians), s² divided by the sound shells less one a bed. A shell weighs in by its
+ * probability of being sound: nearly fully up to 2 s, hardly beyond 4 s. What the weights take from the variance of
+ * sound shells is given back. The degrees of freedom, 0.93 of the weights less one a bed, less 2, are what simulated
+ * clean beds of 3 to 7 shells were worth (variance of s² over 1,500 runs), at the cautious end.
  *
  * Source: contaminated normal, Tukey 1960; EM, Dempster, Laird and Rubin 1977, 10.1111/j.2517-6161.1977.tb01600.x.
  *

@@ -20,7 +20,9 @@ export interface SectionOfBeds {
 export interface SectionCheckOptions {
   /** Level of the test over all sections together. Default 0.05. */
   readonly alpha?: number;
-  /** Degrees of freedom of the pooled scatter behind the standard errors; Infinity where it is known. Default Infinity. */
+  /**
+   * Degrees of freedom of the pooled scatter behind the standard errors; Infinity where it is known. Default Infinity.
+   */
   readonly df?: number;
   /** Draws at equal means a section. Default 999. */
   readonly simulations?: number;
@@ -33,7 +35,10 @@ export interface SectionCheck {
   readonly beds: number;
   /** Σ w (m − m*)² over the levels; null with fewer than two levels. */
   readonly statistic: number | null;
-  /** Probability of so large a statistic, or a larger one, where all beds are of one age: the case hardest to tell from order. */
+  /**
+   * Probability of so large a statistic, or a larger one, where all beds are of one age: the case hardest to tell from
+   * order.
+   */
   readonly p_order: number | null;
   readonly verdict: SectionRow['verdict'];
   /** Isotonic mean m* of each bed in input order; NaN where the bed has no mean. */
@@ -47,12 +52,13 @@ export interface SectionCheck {
  *
  * At equal means (the least favourable case of the hypothesis of order) the statistic follows a mixture of chi-squares
  * with k − l degrees of freedom, l being the number of distinct values in m*; the weights of the mixture are simulated
- * from the seeded generator, so p has no floor at 1/simulations. Where the scatter was estimated on df degrees of freedom,
- * F distributions take the place of chi-squares. A section is `inconsistent` where its p, adjusted by Holm over the
- * sections tested, is at most alpha: the chance that any section in order is so called is at most alpha.
+ * from the seeded generator, so p has no floor at 1/simulations. Where the scatter was estimated on df degrees of
+ * freedom, F distributions take the place of chi-squares. A section is `inconsistent` where its p, adjusted by Holm
+ * over the sections tested, is at most alpha: the chance that any section in order is so called is at most alpha.
  *
- * Sources: Barlow, Bartholomew, Bremner and Brunk 1972, Statistical Inference under Order Restrictions; Robertson, Wright and
- * Dykstra 1988, Order Restricted Statistical Inference, chapter 2; Holm 1979, Scandinavian Journal of Statistics 6, 65–70.
+ * Sources: Barlow, Bartholomew, Bremner and Brunk 1972, Statistical Inference under Order Restrictions; Robertson,
+ * Wright and Dykstra 1988, Order Restricted Statistical Inference, chapter 2; Holm 1979, Scandinavian Journal of
+ * Statistics 6, 65–70.
  *
  * @param random Seeded generator; each section draws from its own fork, so sections do not influence each other.
  * @throws RangeError when alpha, df or simulations make no sense.
@@ -120,7 +126,10 @@ function levelMean(beds: readonly PlacedBed[]): { mean: number; weight: number }
   return { mean: beds.reduce((sum, bed) => sum + bed.mean / (bed.se * bed.se), 0) / weight, weight };
 }
 
-/** P(statistic ≥ observed) at equal means: Σ over l of P(l distinct values) · P(χ² with k − l degrees of freedom ≥ observed). */
+/**
+ * P(statistic ≥ observed) at equal means: Σ over l of P(l distinct values) · P(χ² with k − l degrees of freedom ≥
+ * observed).
+ */
 function tailProbability(
   statistic: number,
   weights: readonly number[],

@@ -11,7 +11,9 @@ export interface ShellInOrder {
 /** A bed with those above it. */
 export interface BedInOrder {
   readonly section: string;
-  /** Indices of all beds that certain relations place above this one, directly or through others (transitively closed). */
+  /**
+   * Indices of all beds that certain relations place above this one, directly or through others (transitively closed).
+   */
   readonly above: readonly number[];
 }
 

@@ -16,12 +16,13 @@ export interface StatusCase {
 /**
  * Whether a shell is kept, doubtful or set aside (design 7.9). It is set aside
  * - by screening: high serine, or two marks of different rules;
- * - by its own bed, when a reading fits: adjusted p at most alpha / 2, two sound neighbours or more, and no more than a third of the
- *   bed standing apart;
+ * - by its own bed, when a reading fits: adjusted p at most alpha / 2, two sound neighbours or more, and no more than
+ *   a third of the bed standing apart;
  * - by superposition, when its own bed bears it out: every least costly set holds it, and its residual is at p ≤ alpha.
  *
- * The two tests share alpha, so that a survey without odd shells sets none aside by them in all but about alpha of cases. It is doubtful
- * where its residual alone is at p ≤ alpha / 5, where it is in a least costly set, or where screening marked it.
+ * The two tests share alpha, so that a survey without odd shells sets none aside by them in all but about alpha of
+ * cases. It is doubtful where its residual alone is at p ≤ alpha / 5, where it is in a least costly set, or where
+ * screening marked it.
  */
 export function statusOfShell({ own, marks, reading, cut, wholeBed, crowded, alpha }: StatusCase): ShellStatus {
   if (screenedOut(marks)) return 'set aside';
@@ -46,10 +47,11 @@ export interface ConfidenceCase {
 }
 
 /**
- * How sure a reading is; null without one. One point each for: an adjusted residual at p ≤ 0.01 (two), or at p ≤ 0.05 (one); four sound
- * neighbours or more; amino acids that clearly agree (p ≥ 0.05) or clearly disagree (p ≤ 0.001), or high serine for contamination; a zone
- * or bed that it fits, for reworking and intrusion; a conflict with superposition. High from 4 points, moderate from 3. A reading
- * that leaves two explanations open, or of a shell that is only doubtful, is never more than moderate. The points are a convention.
+ * How sure a reading is; null without one. One point each for: an adjusted residual at p ≤ 0.01 (two), or at p ≤ 0.05
+ * (one); four sound neighbours or more; amino acids that clearly agree (p ≥ 0.05) or clearly disagree (p ≤ 0.001), or
+ * high serine for contamination (two); a zone or bed that it fits, for reworking and intrusion; a conflict with
+ * superposition. High from 4 points, moderate from 3. A reading that leaves two explanations open, or of a shell that
+ * is only doubtful, is never more than moderate. The points are a convention.
  */
 export function confidenceOfReading(shell: ConfidenceCase): Confidence | null {
   const { own, reading, agreementP, marks } = shell;

@@ -19,18 +19,21 @@ export interface ShellsToSetAside {
 }
 
 /**
- * The least costly set of shells whose removal leaves no conflict (design 7.8), exact; among equal costs the fewest shells.
+ * The least costly set of shells whose removal leaves no conflict (design 7.8), exact; among equal costs the fewest
+ * shells.
  *
  * Conflicts are a strict partial order, so shells that may stay together are an antichain, and the cheapest set to
- * remove is the complement of the heaviest antichain. By the weighted form of Dilworth's theorem that is a minimum cut:
- * every shell is split in two, its lower half fed by the source and its upper half drained to the sink at its cost; a
- * conflict leads from the lower half of one shell to the upper half of the other without limit. The shells above by more than the
- * limit are a tail of each bed sorted by ratio, so one chain of nodes a bed stands for all its pairs.
+ * remove is the complement of the heaviest antichain. By the weighted form of Dilworth's theorem that is a minimum
+ * cut: every shell is split in two, its lower half fed by the source and its upper half drained to the sink at its
+ * cost; a conflict leads from the lower half of one shell to the upper half of the other without limit. The shells
+ * above by more than the limit are a tail of each bed sorted by ratio, so one chain of nodes a bed stands for all its
+ * pairs.
  *
- * All minimum cuts are the closed sets of the residual network (Picard and Queyranne 1980, 10.1007/BFb0120902); from its
- * strong components follows for each shell whether every, some or no least costly set holds it.
+ * All minimum cuts are the closed sets of the residual network (Picard and Queyranne 1980, 10.1007/BFb0120902); from
+ * its strong components follows for each shell whether every, some or no least costly set holds it.
  *
- * Sources: Dilworth 1950, Annals of Mathematics 51, 161–166, 10.2307/1969503; Ford and Fulkerson 1962, Flows in Networks.
+ * Sources: Dilworth 1950, Annals of Mathematics 51, 161–166, 10.2307/1969503; Ford and Fulkerson 1962, Flows in
+ * Networks.
  *
  * @param conflicts From `findShellConflicts`.
  * @param costs Cost of each shell, above 0; rounded to thousandths (at least 0.001), so that sums are exact.

@@ -13,7 +13,8 @@ const FEWEST = 2;
 
 /**
  * The split of at least four numbers into two groups of at least two that puts the largest share of the sum of squares
- * between the groups (the clustering criterion of Engelman and Hartigan 1969, Journal of the American Statistical Association 64, 1647–1648).
+ * between the groups (the clustering criterion of Engelman and Hartigan 1969, Journal of the American Statistical
+ * Association 64, 1647–1648).
  *
  * @example
  * bestSplit([5, 1, 1, 5]).share // => 1

@@ -15,7 +15,8 @@ describe('published facts behind screening', () => {
   });
 
   it('finds the unsuitable shells where they are 6 % of 481, and few others', () => {
-    // 6 % of 481 shells were unsuitable; high serine and the Asp–Glu D/L relation are among the signs: Kosnik and Kaufman
+    // 6 % of 481 shells were unsuitable; high serine and the Asp–Glu D/L relation are among the signs: Kosnik and
+    // Kaufman
     // 2008, Quaternary Geochronology 3, 328–341, abstract, seen. Reproducibility: Asp 2 %, Glu 3 %: Kaufman and Manley
     // 1998, seen. The shells here are invented.
     const random = createRandom(481);
@@ -34,7 +35,8 @@ describe('published facts behind screening', () => {
   });
 
   it('lets the published order of rates stand, and marks a shell that turns it round', () => {
-    // Asp >= Ala > Leu > Val in Mercenaria and Anadara: Mirecki, MS thesis, University of Delaware, handle/19716/13229, seen.
+    // Asp >= Ala > Leu > Val in Mercenaria and Anadara: Mirecki, MS thesis, University of Delaware, handle/19716/13229,
+    // seen.
     const random = createRandom(2);
     const shells = Array.from({ length: 60 }, (_, i) => {
       const x = -1.8 + 0.25 * (i % 4);

@@ -3,7 +3,8 @@ import { createRandom } from '../../src/statistics/index.js';
 import { checkRelations, checkSections, ownBedResiduals } from '../../src/superposition/index.js';
 
 describe('published values behind superposition', () => {
-  // Mercenaria, A/I, mean ± sd between shells, n: Mirecki, PhD thesis, University of Delaware, handle/19716/13230, seen.
+  // Mercenaria, A/I, mean ± sd between shells, n: Mirecki, PhD thesis, University of Delaware, handle/19716/13230,
+  // seen.
   const published = [
     { key: 'Gomez Pit/IIa', mean: 0.141, sd: 0.026, n: 55 },
     { key: 'Gomez Pit/IIc', mean: 0.335, sd: 0.028, n: 19 },
@@ -55,7 +56,8 @@ describe('published values behind superposition', () => {
     const values = [199.31, 199.53, 200.19, 200.82, 201.92, 201.95, 202.18, 245.57];
     const { shells } = ownBedResiduals(values.map((value) => ({ bed: 0, x: Math.log(value) })));
     expect(shells.map(({ odd }) => odd)).toEqual([false, false, false, false, false, false, false, true]);
-    // R: x <- log(c(199.31, 199.53, 200.19, 200.82, 201.92, 201.95, 202.18, 245.57)); x[8] - mean(x[1:7]) = 0.201074608 (computed)
+    // R: x <- log(c(199.31, 199.53, 200.19, 200.82, 201.92, 201.95, 202.18, 245.57)); x[8] - mean(x[1:7]) = 0.201074608
+    // (computed)
     expect(shells[7].residual).toBeCloseTo(0.201074608, 8);
   });
 });
