@@ -22,8 +22,10 @@ export interface DateRecord extends RowPlace {
 export type DateRelation = 'older' | 'as old' | 'one zone';
 
 /**
- * `agrees`: the dates alone put the older bed first, at alpha. `contradicts`: they put it last, at alpha over all pairs
- * together. `differs`: two dates of one zone are further apart than their errors. Otherwise `can't tell`.
+ * Of `older`: `agrees` where the dates alone put the older bed first, at alpha; `contradicts` where they put it last, at
+ * alpha over all pairs together. Of `as old` and `one zone`: `agrees` where the dates are no further apart than alpha
+ * allows; `contradicts` where they are, over all pairs together, and, of one zone, reach into the dates of another zone;
+ * `differs` where two dates of one zone are too far apart but reach into no other. Otherwise `can't tell`.
  */
 export type DateVerdict = 'agrees' | 'contradicts' | 'differs' | "can't tell";
 
@@ -48,9 +50,12 @@ export interface DatePairRow {
    * For `one zone` and `as old`, the date that is the higher stands as the younger, so it is at most 0.
    */
   readonly z: number | null;
-  /** Chance of dates this far the wrong way round although the relation holds, or of the relation being wrong, whichever is more. */
+  /**
+   * Chance of dates this far the wrong way round although the relation holds; where the relation is one of the less sure
+   * ones, no less than the chance that the relation is wrong. 1 where the limits leave nothing to compare.
+   */
   readonly p_contradiction: number;
-  /** The same, adjusted for the number of pairs (Holm). */
+  /** The same, adjusted for the number of pairs (Holm) and for the doubt of the order: to be held against alpha. */
   readonly p_adjusted: number;
   readonly verdict: DateVerdict;
 }

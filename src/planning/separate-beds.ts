@@ -69,7 +69,7 @@ function neighbours(
   if (needed === null || needed.more[0] + needed.more[1] === 0) {
     const why =
       gap <= 0
-        ? 'field relations put the first before the second, the ratios alone do not'
+        ? 'what is known of other beds puts the first before the second; the ratios of these two alone do not'
         : needed !== null
           ? 'their ratios alone would resolve them, but other relations pull on the order'
           : spreadVariance > 0 && Math.abs(gap) < 1.7 * Math.sqrt(spreadVariance)
