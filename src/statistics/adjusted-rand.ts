@@ -15,7 +15,7 @@ import { requireThat } from './check.js';
  */
 export function adjustedRandIndex(labelsA: ArrayLike<number | string>, labelsB: ArrayLike<number | string>): number {
   const n = labelsA.length;
-  requireThat(n > 0 && n === labelsB.length, 'adjustedRandIndex', `two lists of one length`, `${n}, ${labelsB.length}`);
+  requireThat(n > 0 && n === labelsB.length, 'adjustedRandIndex', 'two lists of one length', n, labelsB.length);
   const inA = new Map<number | string, number>();
   const inB = new Map<number | string, number>();
   const inBoth = new Map<number | string, Map<number | string, number>>();

@@ -20,7 +20,7 @@ export function splitChains(who: string, chains: ArrayLike<Numbers>): Float64Arr
   for (let c = 0; c < chains.length; c++) {
     const chain = chains[c];
     requireNumbers(who, `draws in chain ${c}`, chain, 4);
-    requireThat(chain.length === chains[0].length, who, `chains of one length`, `${chains[0].length}, ${chain.length}`);
+    requireThat(chain.length === chains[0].length, who, 'chains of one length', chains[0].length, chain.length);
     const draws = Float64Array.from(chain);
     halves.push(draws.slice(0, half), draws.slice(draws.length - half));
   }

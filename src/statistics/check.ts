@@ -27,7 +27,8 @@ export function requireNumbers(who: string, what: string, values: Numbers, atLea
 }
 
 /**
- * Refuses a number for which the test does not hold; write the test so that NaN fails it.
+ * Refuses numbers for which the test does not hold; write the test so that NaN fails it. Values are passed as they are,
+ * so that no text is made while all is well.
  *
  * @throws RangeError in the form `who needs wanted, got value`
  * @example
@@ -35,6 +36,6 @@ export function requireNumbers(who: string, what: string, values: Numbers, atLea
  * requireThat(2 > 0, 'studentTCdf', 'df > 0', 2); // => undefined
  * ```
  */
-export function requireThat(holds: boolean, who: string, wanted: string, got: unknown): void {
-  if (!holds) throw new RangeError(`${who} needs ${wanted}, got ${String(got)}`);
+export function requireThat(holds: boolean, who: string, wanted: string, ...got: unknown[]): void {
+  if (!holds) throw new RangeError(`${who} needs ${wanted}, got ${got.map(String).join(', ')}`);
 }

@@ -29,7 +29,7 @@ export function fUpperTail(f: number, df1: number, df2: number): number {
 
 function both(f: number, df1: number, df2: number, who: string): { lower: number; upper: number } {
   requireThat(f >= 0, who, 'f from 0 upwards', f);
-  requireThat(df1 > 0 && df2 > 0 && df1 < Infinity && df2 < Infinity, who, 'both df above 0', `${df1}, ${df2}`);
+  requireThat(df1 > 0 && df2 > 0 && df1 < Infinity && df2 < Infinity, who, 'both df above 0', df1, df2);
   const ratio = (df1 / df2) * f;
   if (ratio === Infinity) return { lower: 1, upper: 0 };
   return regularisedBeta(ratio / (1 + ratio), 1 / (1 + ratio), df1 / 2, df2 / 2);

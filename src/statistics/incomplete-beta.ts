@@ -22,7 +22,7 @@ const MOST_STEPS = 1_000_000;
  * ```
  */
 export function regularisedBeta(x: number, y: number, a: number, b: number): { lower: number; upper: number } {
-  requireThat(a > 0 && b > 0, 'regularisedBeta', 'a and b above 0', `${a}, ${b}`);
+  requireThat(a > 0 && b > 0, 'regularisedBeta', 'a and b above 0', a, b);
   requireThat(x >= 0 && x <= 1 && y >= 0 && y <= 1, 'regularisedBeta', 'x from 0 to 1', x);
   if (x === 0) return { lower: 0, upper: 1 };
   if (y === 0) return { lower: 1, upper: 0 };

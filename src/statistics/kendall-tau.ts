@@ -43,7 +43,7 @@ export interface KendallTauB {
 export function kendallTauB(x: Numbers, y: Numbers, { level = 0.95 }: KendallOptions = {}): KendallTauB {
   requireNumbers('kendallTauB', 'x', x, 2);
   requireNumbers('kendallTauB', 'y', y, 2);
-  requireThat(x.length === y.length, 'kendallTauB', 'two lists of one length', `${x.length}, ${y.length}`);
+  requireThat(x.length === y.length, 'kendallTauB', 'two lists of one length', x.length, y.length);
   requireThat(level > 0 && level < 1, 'kendallTauB', 'a level between 0 and 1', level);
   const n = x.length;
   let concordant = 0;

@@ -130,14 +130,18 @@ function levelsFromSink(
 function layOut(who: string, nodes: number, arcs: Arcs, source: number, sink: number): Omit<Residual, 'value'> {
   requireThat(Number.isInteger(nodes) && nodes >= 2, who, 'at least 2 nodes', nodes);
   const isNode = (v: number) => Number.isInteger(v) && v >= 0 && v < nodes;
-  requireThat(isNode(source) && isNode(sink) && source !== sink, who, 'two nodes as ends', `${source}, ${sink}`);
-  const { from, to, capacity } = arcs;
-  const count = from.length;
-  requireThat(to.length === count && capacity.length === count, who, 'lists of one length', `${count}, ${to.length}`);
+  requireThat(isNode(source) && isNode(sink) && source !== sink, who, 'two nodes as ends', source, sink);
+  const count = arcs.from.length;
+  const sameLength = arcs.to.length === count && arcs.capacity.length === count;
+  requireThat(sameLength, who, 'lists of one length', count, arcs.to.length, arcs.capacity.length);
+  // Copies of one known kind: the loops below stay fast whatever kinds of lists were seen before.
+  const from = copyOf(arcs.from);
+  const to = copyOf(arcs.to);
+  const capacity = copyOf(arcs.capacity);
   const start = new Int32Array(nodes + 1);
   let widest = 0;
   for (let e = 0; e < count; e++) {
-    requireThat(isNode(from[e]) && isNode(to[e]), who, `nodes from 0 to ${nodes - 1}`, `arc ${from[e]}, ${to[e]}`);
+    requireThat(isNode(from[e]) && isNode(to[e]), who, 'arcs between its nodes', from[e], to[e]);
     requireThat(capacity[e] >= 0, who, 'capacities from 0 upwards', capacity[e]);
     if (capacity[e] < Infinity && capacity[e] > widest) widest = capacity[e];
     start[from[e] + 1]++;
@@ -160,4 +164,10 @@ function layOut(who: string, nodes: number, arcs: Arcs, source: number, sink: nu
     place[e] = out;
   }
   return { start, head, mate, left, place, dust: 1e-12 * widest };
+}
+
+function copyOf(values: Numbers): Float64Array {
+  const copy = new Float64Array(values.length);
+  copy.set(values);
+  return copy;
 }

@@ -41,7 +41,7 @@ export function overlapOfNormals(mean1: number, sd1: number, mean2: number, sd2:
  */
 export function equalDensityCut(mean1: number, sd1: number, mean2: number, sd2: number): number | null {
   requireNormals('equalDensityCut', mean1, sd1, mean2, sd2);
-  requireThat(sd1 > 0 && sd2 > 0, 'equalDensityCut', 'standard deviations above 0', `${sd1}, ${sd2}`);
+  requireThat(sd1 > 0 && sd2 > 0, 'equalDensityCut', 'standard deviations above 0', sd1, sd2);
   if (mean1 === mean2) return null;
   const [narrowMean, narrow, wideMean, wide] = sd1 <= sd2 ? [mean1, sd1, mean2, sd2] : [mean2, sd2, mean1, sd1];
   const delta = Math.abs(wideMean - narrowMean) / narrow;
@@ -62,7 +62,7 @@ function crossings(delta: number, ratio: number): { left: number; right: number 
 
 function requireNormals(who: string, mean1: number, sd1: number, mean2: number, sd2: number): void {
   const finite = Number.isFinite(mean1) && Number.isFinite(mean2);
-  requireThat(finite, who, 'finite means', `${mean1}, ${mean2}`);
+  requireThat(finite, who, 'finite means', mean1, mean2);
   const spreads = sd1 >= 0 && sd2 >= 0 && sd1 < Infinity && sd2 < Infinity;
-  requireThat(spreads, who, 'standard deviations from 0 upwards', `${sd1}, ${sd2}`);
+  requireThat(spreads, who, 'standard deviations from 0 upwards', sd1, sd2);
 }

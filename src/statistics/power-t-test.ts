@@ -31,7 +31,7 @@ export function powerTTest(design: PowerDesign, n1: number, n2 = n1): number {
   requireThat(Number.isFinite(delta), 'powerTTest', 'a finite delta', delta);
   requireThat(sd > 0 && sd < Infinity, 'powerTTest', 'an sd above 0', sd);
   requireThat(alpha > 0 && alpha < 1, 'powerTTest', 'an alpha between 0 and 1', alpha);
-  requireThat(n1 >= 1 && n2 >= 1 && n1 + n2 > 2, 'powerTTest', 'groups of 1 or more, 3 together', `${n1}, ${n2}`);
+  requireThat(n1 >= 1 && n2 >= 1 && n1 + n2 > 2, 'powerTTest', 'groups of 1 or more, 3 together', n1, n2);
   const df = n1 + n2 - 2;
   const noncentrality = Math.abs(delta) / sd / Math.sqrt(1 / n1 + 1 / n2);
   const limit = -studentTQuantile(alpha / sides, df);

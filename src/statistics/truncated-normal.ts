@@ -26,7 +26,8 @@ export function sampleTruncatedNormal(random: Random, mean: number, sd: number, 
     low <= high && low < Infinity && high > -Infinity,
     'sampleTruncatedNormal',
     'low at most high, and something between them',
-    `low ${low}, high ${high}`,
+    low,
+    high,
   );
   if (low === high) return low;
   const a = (low - mean) / sd;

@@ -59,7 +59,8 @@ export function yorkLine(x: Numbers, y: Numbers, wx: Numbers, wy: Numbers, optio
     slopeSe: Math.sqrt(slopeVariance),
     intercept,
     interceptSe: Math.sqrt(1 / mass + centre ** 2 * slopeVariance),
-    covariance: -centre * slopeVariance,
+    // 0 − x, so that a given slope has 0 and not −0
+    covariance: 0 - centre * slopeVariance,
     chiSquared,
     df,
     p: df > 0 ? chiSquaredUpperTail(chiSquared, df) : 1,
@@ -82,9 +83,9 @@ function readPoints(x: Numbers, y: Numbers, wx: Numbers, wy: Numbers, options: Y
   const lists = [y, wx, wy, ...(typeof correlation === 'number' ? [] : [correlation])];
   for (const list of lists) requireThat(list.length === n, 'yorkLine', `lists of ${n} values each`, list.length);
   return Array.from(x, (xi, i) => {
-    requireThat(wx[i] > 0 && wy[i] > 0, 'yorkLine', 'weights above 0', `${wx[i]}, ${wy[i]} at index ${i}`);
+    requireThat(wx[i] > 0 && wy[i] > 0, 'yorkLine', 'weights above 0', wx[i], wy[i]);
     const some = wx[i] < Infinity || wy[i] < Infinity;
-    requireThat(some, 'yorkLine', 'an error in x or y of every point', `none at index ${i}`);
+    requireThat(some, 'yorkLine', 'an error in x or y of every point', wx[i], wy[i]);
     const r = typeof correlation === 'number' ? correlation : correlation[i];
     requireThat(r > -1 && r < 1, 'yorkLine', 'correlations between -1 and 1', r);
     const varianceX = 1 / wx[i];

@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import loadHighs from 'highs';
+import highsLoader from 'highs';
 import { describe, expect, it } from 'vitest';
 import { type Arcs, createRandom, maximumFlow, minimumCut } from '../../src/statistics/index.js';
 
@@ -76,7 +76,7 @@ describe('minimumCut', () => {
   });
 
   it('agrees with an exact linear solver on larger networks', async () => {
-    const highs = await loadHighs();
+    const highs = await (highsLoader as unknown as typeof highsLoader.default)();
     const random = createRandom(6);
     for (let round = 0; round < 8; round++) {
       const n = 30;
@@ -178,7 +178,7 @@ describe('minimumCut', () => {
   });
 
   it('refuses nodes and capacities out of range', () => {
-    expect(() => minimumCut(2, network([[0, 2, 1]]), 0, 1)).toThrow(/nodes from 0 to 1, got arc 0, 2/);
+    expect(() => minimumCut(2, network([[0, 2, 1]]), 0, 1)).toThrow(/arcs between its nodes, got 0, 2/);
     expect(() => minimumCut(2, network([[0, 1, -1]]), 0, 1)).toThrow(RangeError);
     expect(() => minimumCut(2, network([[0, 1, NaN]]), 0, 1)).toThrow(RangeError);
     expect(() => minimumCut(2, network([]), 1, 1)).toThrow(RangeError);
@@ -186,17 +186,18 @@ describe('minimumCut', () => {
     expect(() => maximumFlow(2, { from: [0], to: [1], capacity: [] }, 0, 1)).toThrow(RangeError);
   });
 
-  it('cuts 5,000 nodes and a million arcs in about a second', () => {
+  it('cuts 5,000 nodes and a million arcs in a fraction of a second', () => {
     const random = createRandom(7);
     const n = 5000;
     const count = 1_000_000;
     const from = new Int32Array(count).map(() => random.integer(n));
     const to = new Int32Array(count).map(() => random.integer(n));
     const capacity = new Float64Array(count).map(() => random.uniform());
-    const start = performance.now();
+    const start = process.cpuUsage().user;
     const cut = minimumCut(n, { from, to, capacity }, 0, n - 1);
-    // measured 0.11 s; the limit leaves room for a busy machine
-    expect(performance.now() - start).toBeLessThan(3000);
+    const seconds = (process.cpuUsage().user - start) / 1e6;
+    // time of the processor, which other programs on the machine hardly change; measured 0.1 to 0.2 s
+    expect(seconds).toBeLessThan(2);
     expect(cost({ from, to, capacity }, cut.sourceSide)).toBeCloseTo(cut.value, 6);
   });
 });
