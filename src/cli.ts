@@ -55,6 +55,31 @@ async function program(args: readonly string[]): Promise<void> {
     });
 
   root
+    .command('plan')
+    .description('what to collect or date next, and what it would settle')
+    .argument('<results>', 'results folder')
+    .option('--dates <n>', 'most beds to date (default: 3)')
+    .option('--out <file>', 'the whole plan as CSV (default: <results>-plan.csv, beside the folder)')
+    .option('--json', 'print the plan as JSON')
+    .action(async (results: string, options) => {
+      const { plan } = await import('./commands/plan.js');
+      status = await plan(results, options);
+    });
+
+  root
+    .command('dates')
+    .description('do these independent dates agree with the order')
+    .argument('<results>', 'results folder')
+    .argument('<dates>', 'dates table: section, bed, age_ka, error_ka, limit, method')
+    .option('--sheet <name>', 'sheet of an .xlsx (default: the first)')
+    .option('--out <file>', 'every pair as CSV (default: <results>-dates.csv, beside the folder)')
+    .option('--json', 'print what was found as JSON')
+    .action(async (results: string, table: string, options) => {
+      const { dates } = await import('./commands/dates.js');
+      status = await dates(results, table, options);
+    });
+
+  root
     .command('demo')
     .description('write the example survey of an invented coast, and run it')
     .argument('[folder]', 'where to write it (default: bedorder-demo)')
