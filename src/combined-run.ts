@@ -138,7 +138,14 @@ function settledWithoutShells(first: Pass, last: Pass, left: LeftOut, parts: rea
     data: { ...pass.data, shells: [], beds: pass.data.beds.map((bed) => ({ ...bed, shells: [] })) },
   });
   const shown = bare(last);
-  const readings = readShells({ data: shown.data, aminoAcids: [], logs: [], marks: [], above: [], zones: [] });
+  const readings = readShells({
+    data: shown.data,
+    aminoAcids: [],
+    logs: [],
+    marks: [],
+    above: shown.data.beds.map(() => []),
+    zones: [],
+  });
   const ages = shown.data.beds.map(({ key }) => {
     const own = parts.flatMap(({ settled }) => {
       const at = settled.last.data.beds.findIndex((bed) => bed.key === key);
