@@ -1,6 +1,6 @@
 import type { AminoAcid, ScreeningLimits, ScreeningMark, Shell } from '../model/index.js';
-import { pairCurves } from './pair-curves.js';
-import { groupsOfShells, shown } from './rule.js';
+import { type PairCurve, pairCurvesByGroup } from './pair-curves.js';
+import { shown } from './rule.js';
 import { widenedLimit } from './widened-limit.js';
 
 /** The worst pair of a shell so far. */
@@ -20,11 +20,16 @@ interface Worst {
  *
  * Source: Kosnik and Kaufman 2008, Quaternary Geochronology 3, 328–341, 10.1016/j.quageo.2008.03.001 (relation of Asp
  * to Glu D/L).
+ *
+ * @param curves Pairs of amino acids of each taxon and fraction; worked out from the shells when absent.
  */
-export function discordantRatios(shells: readonly Shell[], limits: ScreeningLimits): ScreeningMark[] {
+export function discordantRatios(
+  shells: readonly Shell[],
+  limits: ScreeningLimits,
+  curves: readonly (readonly PairCurve[])[] = pairCurvesByGroup(shells),
+): ScreeningMark[] {
   const worst = new Map<number, Worst>();
-  for (const members of groupsOfShells(shells)) {
-    const pairs = pairCurves(shells, members).filter((pair) => pair.curve.sd > 0);
+  for (const pairs of curves) {
     for (const { first, second, curve, points } of pairs) {
       const limit = widenedLimit(limits.discordance, pairs.length, curve.df);
       for (const { shell, difference, expected, sd } of points) {

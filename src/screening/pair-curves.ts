@@ -1,6 +1,6 @@
 import { AMINO_ACIDS, type AminoAcid, type Shell } from '../model/index.js';
 import { type RobustCurve, robustCurve } from './robust-curve.js';
-import { FEWEST_SHELLS } from './rule.js';
+import { FEWEST_SHELLS, groupsOfShells } from './rule.js';
 
 /** How two amino acids run together in one taxon and fraction. */
 export interface PairCurve {
@@ -59,4 +59,12 @@ export function pairCurves(shells: readonly Shell[], members: readonly number[])
     }
   });
   return curves;
+}
+
+/**
+ * The {@link pairCurves} of each taxon and fraction, those left out whose points all lie on the curve: with no scatter
+ * there is no measure of being off it.
+ */
+export function pairCurvesByGroup(shells: readonly Shell[]): PairCurve[][] {
+  return groupsOfShells(shells).map((members) => pairCurves(shells, members).filter((pair) => pair.curve.sd > 0));
 }

@@ -1,6 +1,6 @@
 import type { ScreeningLimits, ScreeningMark, Shell } from '../model/index.js';
-import { pairCurves } from './pair-curves.js';
-import { groupsOfShells, shown } from './rule.js';
+import { type PairCurve, pairCurvesByGroup } from './pair-curves.js';
+import { shown } from './rule.js';
 import { widenedLimit } from './widened-limit.js';
 
 /** Share of a taxon's shells that must show the same order before it counts as the taxon's order. */
@@ -16,11 +16,16 @@ const MISS = 3;
  *
  * Published order in *Mercenaria* and *Anadara*: Asp ≥ Ala > Leu > Val (Mirecki, MS thesis, University of Delaware,
  * udspace.udel.edu/handle/19716/13229).
+ *
+ * @param curves Pairs of amino acids of each taxon and fraction; worked out from the shells when absent.
  */
-export function rateOrder(shells: readonly Shell[], _limits: ScreeningLimits): ScreeningMark[] {
+export function rateOrder(
+  shells: readonly Shell[],
+  _limits: ScreeningLimits,
+  curves: readonly (readonly PairCurve[])[] = pairCurvesByGroup(shells),
+): ScreeningMark[] {
   const found = new Map<number, { readonly excess: number; readonly evidence: string }>();
-  for (const members of groupsOfShells(shells)) {
-    const pairs = pairCurves(shells, members).filter((pair) => pair.curve.sd > 0);
+  for (const pairs of curves) {
     for (const { first, second, curve, points } of pairs) {
       const ahead = points.filter((point) => point.difference > 0).length / points.length;
       if (ahead < TYPICAL && ahead > 1 - TYPICAL) continue;

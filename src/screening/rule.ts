@@ -1,7 +1,15 @@
 import type { ScreeningLimits, ScreeningMark, Shell } from '../model/index.js';
+import type { PairCurve } from './pair-curves.js';
 
-/** A screening rule: looks at all shells of a survey at once and marks the odd ones. A rule never drops a shell. */
-export type ScreeningRule = (shells: readonly Shell[], limits: ScreeningLimits) => ScreeningMark[];
+/**
+ * A screening rule: looks at all shells of a survey at once and marks the odd ones. A rule never drops a shell. Rules on
+ * pairs of amino acids take the curves of the pairs as well, so that they are drawn once for all.
+ */
+export type ScreeningRule = (
+  shells: readonly Shell[],
+  limits: ScreeningLimits,
+  curves?: readonly (readonly PairCurve[])[],
+) => ScreeningMark[];
 
 /** Fewest shells of one taxon and fraction from which a rule learns what is usual. */
 export const FEWEST_SHELLS = 10;

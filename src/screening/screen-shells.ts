@@ -3,6 +3,7 @@ import { discordantRatios } from './discordant-ratios.js';
 import { freeBelowTotal } from './free-below-total.js';
 import { highSerine } from './high-serine.js';
 import { lowYield } from './low-yield.js';
+import { pairCurvesByGroup } from './pair-curves.js';
 import { rateOrder } from './rate-order.js';
 import { replicatesDisagree } from './replicates-disagree.js';
 import type { ScreeningRule } from './rule.js';
@@ -28,7 +29,8 @@ export function screenShells(
   shells: readonly Shell[],
   limits: ScreeningLimits = DEFAULT_OPTIONS.screening,
 ): ScreeningMark[] {
-  const marks = SCREENING_RULES.flatMap((rule) => rule(shells, limits));
+  const curves = pairCurvesByGroup(shells);
+  const marks = SCREENING_RULES.flatMap((rule) => rule(shells, limits, curves));
   return marks
     .map((mark, order) => ({ mark, order }))
     .sort((a, b) => a.mark.shell - b.mark.shell || a.order - b.order)

@@ -1,4 +1,3 @@
-import { FEWEST_DEGREES_OF_FREEDOM } from '../beds/index.js';
 import { holm, studentTCdf } from '../statistics/index.js';
 import { robustScatter } from './robust-scatter.js';
 
@@ -28,6 +27,9 @@ export interface OwnBedResiduals {
   readonly tested: number;
 }
 
+/** Degrees of freedom of the robust scatter under which it is not used; about 4 of the classical one. */
+const FEWEST_ROBUST = 2;
+
 /**
  * Leave-one-out residuals of every shell from the other shells of its bed (design 7.9), with variance s²(1 + 1/n), s
  * from {@link robustScatter} so that odd shells do not hide themselves, Student's t, and Holm over all shells of the
@@ -53,7 +55,7 @@ export function ownBedResiduals(
   });
   const sound = shells.map((shell, index) => Number.isFinite(shell.x) && !excluded.has(index));
   const robust = robustScatter(members.map((list) => list.filter((i) => sound[i]).map((i) => shells[i].x)));
-  const { s, df } = robust.df >= FEWEST_DEGREES_OF_FREEDOM ? robust : (options.fallback ?? { s: Number.NaN, df: 0 });
+  const { s, df } = robust.df >= FEWEST_ROBUST ? robust : (options.fallback ?? { s: Number.NaN, df: 0 });
 
   for (;;) {
     const raw = shells.map((shell, index) => ownResidual(shell.x, index, members[shell.bed], sound, shells, s, df));
