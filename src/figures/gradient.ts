@@ -78,6 +78,7 @@ export function ratioAgainstGradient(view: ClockView): Figure | null {
         y2: (p) => p.y + 1.96 * p.se,
         stroke: INK,
         strokeWidth: 0.8,
+        render: tagged((i) => ({ 'data-b': beds[i].bed.id })),
       }),
       Plot.dot(beds, {
         x: 'x',

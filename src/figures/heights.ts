@@ -56,6 +56,7 @@ export function heightsAgainstRatio(view: ClockView): Figure | null {
         y: 'y',
         stroke: INK,
         strokeWidth: 0.8,
+        render: tagged((i) => ({ 'data-b': beds[i].bed.id })),
       }),
       Plot.dot(beds, {
         x: 'x',

@@ -56,6 +56,7 @@ export function ranksWithIntervals(view: ClockView): Figure | null {
               stroke: INK,
               strokeWidth: lineHeight * 0.6,
               strokeLinecap: 'round',
+              render: tagged((i) => ({ 'data-b': own[i].bed.id, class: 'rim' })),
             }),
             Plot.link(own, {
               x1: (line) => line.bed.order!.rank_low,

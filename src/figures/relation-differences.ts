@@ -49,6 +49,7 @@ export function relationDifferences(view: ClockView): Figure | null {
         y: 'y',
         stroke: (entry) => (entry.row.verdict_after === 'reversed' ? ALARM : INK),
         strokeWidth: 1.1,
+        render: tags,
       }),
       Plot.dot(rows, {
         x: (entry) => entry.row.difference!,

@@ -38,6 +38,7 @@ export function shellsByBed(view: ClockView): Figure | null {
     const bandTags = tagged((i) => ({ 'data-z': zoneTag(view, column.bands[i].zone) }));
     const byBed = tagged((i) => ({ 'data-b': beds[i].bed.id }));
     const means = beds.filter((line) => line.bed.row.log_mean !== null);
+    const ofMean = tagged((i) => ({ 'data-b': means[i].bed.id }));
     const ranges = column.bands.filter((band) => band.zone >= 0 && view.zoned && view.zones[band.zone].shells > 1);
     return housePlot(
       {
@@ -125,6 +126,7 @@ export function shellsByBed(view: ClockView): Figure | null {
             y: 'y',
             stroke: INK,
             strokeWidth: 1,
+            render: ofMean,
           }),
           Plot.link(means, {
             x1: (line) => line.bed.row.log_mean,
@@ -134,6 +136,7 @@ export function shellsByBed(view: ClockView): Figure | null {
             stroke: INK,
             strokeWidth: 1.6,
             strokeLinecap: 'butt',
+            render: ofMean,
           }),
           shellDots(view, points),
           Plot.axisX({

@@ -41,7 +41,9 @@ export function zonesTable(view: ClockView): Markup {
       cell: (row) => html`${ratio(row.shell_low)} to ${ratio(row.shell_high)}`,
       sort: (row) => row.shell_low,
     },
-    { head: 'stability', number: true, cell: (row) => figures(row.stability, 2) },
+    ...(view.zones.some((row) => row.stability !== null)
+      ? [{ head: 'stability', number: true, cell: (row: ClockView['zones'][number]) => figures(row.stability, 2) }]
+      : []),
     { head: 'against the next older', cell: (row) => older.get(row.zone)?.verdict ?? '–' },
     { head: 'overlap', number: true, cell: (row) => chance(older.get(row.zone)?.overlap ?? null) },
     { head: 'p (beds)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_difference ?? null) },

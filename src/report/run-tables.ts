@@ -53,9 +53,9 @@ export function zoneCountsTable(findings: Findings, views: readonly ClockView[])
     ...(views.length > 1 ? [{ head: 'clock', cell: (row: ZoneCountRow) => row.clock }] : []),
     { head: 'log likelihood', number: true, cell: (row) => figures(row.log_likelihood, 4) },
     { head: 'BIC', number: true, cell: (row) => figures(row.bic, 4) },
-    { head: 'gap', number: true, cell: (row) => figures(row.gap) },
-    { head: 'se of the gap', number: true, cell: (row) => figures(row.gap_se, 2) },
-    { head: 'silhouette', number: true, cell: (row) => figures(row.silhouette, 2) },
+    ...optional(rows, 'gap', (row) => row.gap),
+    ...optional(rows, 'se of the gap', (row) => row.gap_se),
+    ...optional(rows, 'silhouette', (row) => row.silhouette),
     { head: 'in use', cell: (row) => (row.chosen ? '✓ chosen' : '–') },
   ];
   return table('Criteria for the number of zones', columns, rows, (row) => ({ clock: names.get(row.clock)?.index }));
@@ -117,4 +117,9 @@ export function problemsTable(findings: Findings): Markup {
   ];
   const shown = findings.problems.slice(0, MOST_ROWS);
   return html`${table('Warnings about the input', columns, shown)}${cut(shown.length, findings.problems.length, 'problems.csv')}`;
+}
+
+/** A column of numbers, left out where no row has one. */
+function optional<Row>(rows: readonly Row[], head: string, value: (row: Row) => number | null): Column<Row>[] {
+  return rows.some((row) => value(row) !== null) ? [{ head, number: true, cell: (row) => figures(value(row), 2) }] : [];
 }

@@ -245,6 +245,17 @@ export const script = `'use strict';
     });
   }
 
+  // On paper the shorter tables stand open.
+  let opened = [];
+  addEventListener('beforeprint', () => {
+    opened = all('details:not([open])').filter((folded) => all('tbody tr', folded).length <= 250);
+    for (const folded of opened) folded.open = true;
+  });
+  addEventListener('afterprint', () => {
+    for (const folded of opened) folded.open = false;
+    opened = [];
+  });
+
   // A link to a row in a folded table opens it.
   const unfold = () => {
     const target = location.hash.length > 1 ? document.getElementById(decodeURIComponent(location.hash.slice(1))) : null;

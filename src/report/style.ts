@@ -90,7 +90,8 @@ summary{cursor:pointer;padding:.5rem 0;font:700 .9375rem/1.3 Helvetica,Arial,san
 .fig text{white-space:pre}
 .js .fig [data-b],.js .fig [data-z],.js .fig [data-s]{cursor:pointer}
 .lit .fig [data-b]:not(.on),.lit .fig .tie:not(.on),.lit .fig [data-s]:not(.on){opacity:.22}
-.fig circle.on,.fig path.on[data-s],.fig path.on[data-b],.fig rect.on[data-b]{stroke:var(--ink);stroke-width:2.2}
+.fig circle.on,.fig path.on[data-s],.fig line.on,.fig rect.on[data-b]{stroke:var(--ink);stroke-width:2.2}
+.fig path.rim.on{stroke-width:11}
 .fig text.on{font-weight:700}
 .fig g.on .edge{stroke-width:2.8}
 .fig .tie.on{stroke:var(--ink);stroke-width:1.6;stroke-opacity:1}
@@ -139,6 +140,7 @@ table{font-size:7pt}
 th,td{padding:.6mm 1mm}
 thead th,tbody th,td a[data-b],th a[data-b]{white-space:normal}
 .odd li{break-inside:avoid}
+details:not([open]),details>summary::marker{display:none;content:""}
 .long{min-width:30mm}
 thead th{position:static}
 tr{break-inside:avoid}
