@@ -1,5 +1,5 @@
 import type { Findings } from '../../model/index.js';
-import { counted, figure, type Style, safe, wrap } from '../terminal.js';
+import { counted, type Style, safe, wrap } from '../terminal.js';
 import { type ClockFacts, type ReadFacts, type SummaryFacts, summaryFacts } from './facts.js';
 import { relationsText, shellsText } from './field-text.js';
 import { orderText } from './order-text.js';
@@ -50,8 +50,8 @@ function clockText(facts: ClockFacts, style: Style): string[] {
   ];
 }
 
-// What an index rests on, and what was done along a gradient.
-function aboutClock({ shares, gradient }: ClockFacts): string[] {
+// What an index rests on; a slope along a gradient is told by the remarks.
+function aboutClock({ shares }: ClockFacts): string[] {
   const lines: string[] = [];
   if (shares.length > 1) {
     const verdicts = [...new Set(shares.map(({ verdict }) => verdict))];
@@ -60,12 +60,6 @@ function aboutClock({ shares, gradient }: ClockFacts): string[] {
       return `${acids.join(', ')} ${acids.length > 1 ? PLURAL[verdict] : verdict}`;
     });
     lines.push(wrap(`  Amino acids: ${words.join('; ')}.`, 78, 4));
-  }
-  if (gradient) {
-    const { column, slope, slope_low, slope_high, centre, used } = gradient;
-    const done = used ? `taken out: ratios hold at ${figure(centre)}` : 'left in, since BIC does not ask for it';
-    const slopeText = `${figure(slope)} per unit (95 % ${figure(slope_low)} to ${figure(slope_high)})`;
-    lines.push(wrap(`  Slope of the log ratio along ${safe(column)}: ${slopeText}, ${done}.`, 78, 4));
   }
   return lines;
 }
