@@ -1,5 +1,5 @@
 import type { SectionRow } from '../model/index.js';
-import { chiSquaredCdf, fCdf, holm, isotonicRegression, type Random } from '../statistics/index.js';
+import { chiSquaredUpperTail, fUpperTail, holm, isotonicRegression, type Random } from '../statistics/index.js';
 
 /** One bed of a section with its place in the order. */
 export interface PlacedBed {
@@ -150,7 +150,7 @@ function tailProbability(
   let p = 0;
   for (let distinct = 1; distinct < k; distinct++) {
     const free = k - distinct;
-    const tail = Number.isFinite(df) ? 1 - fCdf(statistic / free, free, df) : 1 - chiSquaredCdf(statistic, free);
+    const tail = Number.isFinite(df) ? fUpperTail(statistic / free, free, df) : chiSquaredUpperTail(statistic, free);
     p += ((counts[distinct] ?? 0) / simulations) * tail;
   }
   return Math.min(1, Math.max(0, p));
