@@ -121,16 +121,12 @@ function field({ relation, lower, upper }: ReversedRelation): Explanation {
     speaksFor.push(
       `it rests on ${relation.basis === 'superposition' ? 'a correlation' : `a ${relation.basis}`}, which can be misjudged`,
     );
-  } else if (
-    relation.basis === 'superposition' &&
-    relation.certainty === 'certain' &&
-    lower.section === upper.section
-  ) {
-    speaksAgainst.push('it is superposition within one section');
   }
   const others = lower.otherReversed + upper.otherReversed;
   const agreeing = lower.otherAgree + upper.otherAgree;
-  if (others === 0 && agreeing >= 2) speaksFor.push(`both beds agree with all else (${relations(agreeing)})`);
+  if (others === 0 && agreeing >= 2) {
+    speaksFor.push(`both beds agree with all else (${relations(agreeing)}), as they would with the two exchanged`);
+  }
   return { name: 'the field relation itself (overturned, slumped or mislabelled)', speaksFor, speaksAgainst };
 }
 

@@ -60,7 +60,7 @@ describe('readReversedRelation', () => {
 
   it('favours heat where the upper bed was buried shallowly', () => {
     const { reading } = readReversedRelation(
-      reversed({ upper: facts('A/2', { marks: ['shallow burial'], otherAgree: 2 }) }),
+      reversed({ upper: facts('A/2', { marks: ['shallow burial'], otherAgree: 1 }) }),
     );
     expect(reading).toBe('best supported: different temperature history or shallow burial');
   });
@@ -74,6 +74,22 @@ describe('readReversedRelation', () => {
       }),
     );
     expect(reading).toBe('best supported: the field relation itself (overturned, slumped or mislabelled)');
+  });
+
+  it('leaves reworking and an exchanged pair level in a section that is sound but for one relation', () => {
+    const { reading } = readReversedRelation(
+      reversed({
+        upper: facts('A/2', { otherAgree: 1, zone: 'Z2' }),
+        lower: facts('A/1', { otherAgree: 1, serineMeasured: 6, zone: 'Z1' }),
+        differences: [
+          { amino_acid: 'Asx', difference: -0.3, se: 0.05 },
+          { amino_acid: 'Val', difference: -0.3, se: 0.05 },
+        ],
+      }),
+    );
+    expect(reading).toMatch(/^equally supported: /);
+    expect(reading).toMatch(/all shells of A\/2 reworked/);
+    expect(reading).toMatch(/the field relation itself/);
   });
 
   it('says so where nothing known favours one', () => {
