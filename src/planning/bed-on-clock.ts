@@ -1,10 +1,13 @@
 import type { BedRow, Findings } from '../model/index.js';
 
-/** One bed of one clock as planning sees it. */
+/** One bed of one clock, or a deposit of several that are stated to be as old, as planning sees it. */
 export interface BedOnClock {
-  /** `section/bed`. */
+  /** `section/bed`; of a deposit, the bed with the fewest shells, where more of them tell most. */
   readonly key: string;
-  readonly section: string;
+  /** `section/bed` of all its beds. */
+  readonly members: readonly string[];
+  /** Share of the shells in each section. */
+  readonly sections: ReadonlyMap<string, number>;
   /** Shells behind the mean. */
   readonly shells: number;
   readonly mean: number;
@@ -19,7 +22,7 @@ export interface ClockInView {
   readonly clock: string;
   /** s: standard deviation between shells of one bed. */
   readonly scatter: number;
-  /** 2 tau² between two beds of different sections; 0 within a section, whose beds share one temperature history. */
+  /** 2 tau² between beds of two sections; 0 within a section, whose beds share one temperature history. */
   readonly spreadVariance: (a: BedOnClock, b: BedOnClock) => number;
   /** Degrees of freedom of the scatter: shells kept minus beds. */
   readonly df: number;
@@ -43,7 +46,8 @@ export function clocksInView(findings: Findings): ClockInView[] {
         return [
           {
             key: bedKey(row),
-            section: row.section,
+            members: [bedKey(row)],
+            sections: new Map([[row.section, 1]]),
             shells: row.shells,
             mean: row.log_mean,
             shellVariance,
@@ -53,13 +57,21 @@ export function clocksInView(findings: Findings): ClockInView[] {
         ];
       });
       const shells = beds.reduce((sum, bed) => sum + bed.shells, 0);
-      const between = 2 * (spread ?? 0) ** 2;
+      const shift = (spread ?? 0) ** 2;
       return {
         clock,
         scatter,
-        spreadVariance: (a: BedOnClock, b: BedOnClock) => (a.section === b.section ? 0 : between),
+        spreadVariance: (a: BedOnClock, b: BedOnClock) => shift * squaresApart(a.sections, b.sections),
         df: Math.max(1, shells - beds.length),
         beds,
       };
     });
+}
+
+/** Variance of the difference of two means of section shifts, each of variance 1. */
+function squaresApart(a: ReadonlyMap<string, number>, b: ReadonlyMap<string, number>): number {
+  let sum = 0;
+  for (const [section, share] of a) sum += (share - (b.get(section) ?? 0)) ** 2;
+  for (const [section, share] of b) if (!a.has(section)) sum += share ** 2;
+  return sum;
 }

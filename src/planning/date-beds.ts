@@ -8,7 +8,7 @@ import { type Soundness, soundnessOf } from './soundness.js';
 
 /**
  * Which beds to date so that the most others are bracketed, a line for every budget from 1 up. A bed is bracketed when one
- * dated bed is known to be older than it and another to be younger ({@link knownOrder}). The beds of a larger budget need
+ * dated bed is known to be older than it and another to be younger ({@link knownOrder}); one that is stated to be as old as a dated bed does not count. The beds of a larger budget need
  * not hold those of a smaller one.
  *
  * @param reversed beds in a relation that is reversed after setting aside

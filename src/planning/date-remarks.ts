@@ -23,7 +23,7 @@ export function dateRemarks({ dates, known, pairs, fewest, doubts, taus, alpha }
       'No two of the dates belong to beds whose order is known, so they say nothing for or against the order.',
     );
   } else {
-    const told = `Of ${pairs.length} ${pairs.length === 1 ? 'pair' : 'pairs'} of dates whose order is known, ${count('agrees')} agree, ${count("can't tell")} can't tell`;
+    const told = `Of ${pairs.length} ${pairs.length === 1 ? 'pair' : 'pairs'} of dates whose order is known, ${count('agrees')} ${count('agrees') === 1 ? 'agrees' : 'agree'}, ${count("can't tell")} can't tell`;
     const against = count('contradicts');
     remarks.push(
       against === 0

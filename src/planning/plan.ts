@@ -2,6 +2,7 @@ import type { Findings, Plan } from '../model/index.js';
 import { clocksInView } from './bed-on-clock.js';
 import { checkBeds, reversedRelations } from './check-beds.js';
 import { dateBeds } from './date-beds.js';
+import { withDeposits } from './deposits.js';
 import { knownOrder } from './known-order.js';
 import type { PlanSettings } from './plan-settings.js';
 import { percentInWords } from './plan-words.js';
@@ -46,15 +47,18 @@ export function plan(findings: Findings, options: PlanOptions = {}): Plan {
     throw new RangeError(`plan: alpha must lie between 0 and 1, got ${settings.alpha}`);
   }
   const known = knownOrder(findings, settings.alpha);
-  const clocks = clocksInView(findings).map((view) => ({ view, pairs: unresolvedPairs(view, known, settings.alpha) }));
+  const clocks = clocksInView(findings).map((view) => {
+    const deposits = withDeposits(view, known);
+    return { view, deposits, pairs: unresolvedPairs(deposits, known, settings.alpha) };
+  });
   const reversed = new Set(
     clocks.flatMap(({ view }) => reversedRelations(findings, view.clock).flatMap((row) => [row.lower, row.upper])),
   );
   const rows = [
     ...clocks.flatMap(({ view, pairs }) => checkBeds(findings, view, pairs, settings)),
     ...clocks.flatMap(({ view }) => separateZones(findings, view, settings)),
-    ...clocks.flatMap(({ view, pairs }) => strengthenBeds(view, pairs, options.strengthen ?? 10)),
-    ...clocks.flatMap(({ view, pairs }) => separateBeds(findings, view, pairs, settings)),
+    ...clocks.flatMap(({ deposits, pairs }) => strengthenBeds(deposits, pairs, options.strengthen ?? 10)),
+    ...clocks.flatMap(({ deposits, pairs }) => separateBeds(findings, deposits, pairs, settings)),
     ...(dates > 0 ? dateBeds(findings, known, reversed, dates) : []),
   ];
   return { rows, criterion: criterion(settings), notes: notes() };

@@ -1,9 +1,12 @@
 import type { Findings, PlanRow } from '../model/index.js';
 import { type BedOnClock, bedKey, type ClockInView } from './bed-on-clock.js';
 import { blankRow, type PlanSettings } from './plan-settings.js';
-import { dealInWords, gapInWords, pairsInWords, percentInWords } from './plan-words.js';
+import { dealInWords, gapInWords, joinedInWords, pairsInWords, percentInWords } from './plan-words.js';
 import { shellsNeeded } from './shells-needed.js';
-import { type UnresolvedPairs, varianceWith } from './unresolved-pairs.js';
+import { type UnresolvedPair, type UnresolvedPairs, varianceWith } from './unresolved-pairs.js';
+
+/** Standard errors by which the gap in the order falls short of the measured one before it is used instead. */
+const PULLED = 0.3;
 
 /**
  * Neighbours in the order that are not resolved, and the shells that would resolve them. Those whose shells settle most
@@ -16,15 +19,15 @@ export function separateBeds(
   settings: PlanSettings,
 ): PlanRow[] {
   const order = findings.order.filter((row) => row.clock === view.clock);
-  const bedOf = new Map(view.beds.map((bed) => [bed.key, bed]));
+  const depositOf = new Map(view.beds.flatMap((bed) => bed.members.map((key) => [key, bed] as const)));
   const rows: { row: PlanRow; worth: number }[] = [];
   for (let at = 0; at + 1 < order.length; at++) {
-    const [older, younger] = [bedOf.get(bedKey(order[at])), bedOf.get(bedKey(order[at + 1]))];
+    const [older, younger] = [depositOf.get(bedKey(order[at])), depositOf.get(bedKey(order[at + 1]))];
     // beds of one rank are stated to be as old
     if (order[at].resolved !== false || order[at].rank === order[at + 1].rank || !older || !younger) continue;
     const pair = pairs.of(older).find(({ b }) => b === younger);
     if (!pair) continue;
-    const row = neighbours(view, older, younger, settings, (more) => ({
+    const row = neighbours(view, pair, settings, (more) => ({
       chance: pairs.chance(pair, more),
       gained: pairs.gained(more),
     }));
@@ -36,19 +39,21 @@ export function separateBeds(
 
 function neighbours(
   view: ClockInView,
-  older: BedOnClock,
-  younger: BedOnClock,
+  { a: older, b: younger, gap: inOrder }: UnresolvedPair,
   settings: PlanSettings,
   worth: (more: ReadonlyMap<BedOnClock, number>) => { chance: number; gained: number },
 ): PlanRow {
   const gap = older.mean - younger.mean;
   const gapError = Math.sqrt(varianceWith(older, 0) + varianceWith(younger, 0));
   const spreadVariance = view.spreadVariance(older, younger);
+  // other beds can pull the two together in the order: then no more is promised than that smaller gap allows
+  const pulled = inOrder < gap - PULLED * Math.sqrt(gapError ** 2 + spreadVariance);
+  const used = pulled ? inOrder : gap;
   const needed =
-    gap > 0
+    used > 0
       ? shellsNeeded(
           {
-            gap,
+            gap: used,
             scatter: view.scatter,
             shells: [older.shells, younger.shells],
             fixedVariance: older.otherVariance + younger.otherVariance,
@@ -58,7 +63,7 @@ function neighbours(
           settings,
         )
       : null;
-  const measured = `gap ${gapInWords(gap, gapError)}`;
+  const measured = `gap ${gapInWords(gap, gapError)}${pulled ? `, in the order ${used.toFixed(3)},` : ''}`;
   const tied = Math.abs(gap) <= gapError ? '; the gap is within its error, so they may truly be as old' : '';
   const base = {
     ...blankRow(view.clock, 'separate beds'),
@@ -69,13 +74,15 @@ function neighbours(
   if (needed === null || needed.more[0] + needed.more[1] === 0) {
     const why =
       gap <= 0
-        ? 'what is known of other beds puts the first before the second; the ratios of these two alone do not'
-        : needed !== null
-          ? 'their ratios alone would resolve them, but other relations pull on the order'
-          : spreadVariance > 0 && Math.abs(gap) < 1.7 * Math.sqrt(spreadVariance)
-            ? `${measured} is no more than beds of one age differ between sections`
-            : `${measured} would need over ${settings.most} shells in a bed`;
-    const settles = `No number of shells is promised to split ${older.key} and ${younger.key}: ${why}${tied}.`;
+        ? 'other beds put the first before the second; the ratios of these two alone do not'
+        : used <= 0
+          ? `what is known of other beds leaves nothing of the gap ${gapInWords(gap, gapError)} in the order`
+          : needed !== null
+            ? 'their ratios alone would resolve them, but other beds pull on the order'
+            : spreadVariance > 0 && used < 1.7 * Math.sqrt(spreadVariance)
+              ? `the ${measured} is no more than beds of one age differ between sections`
+              : `the ${measured} would need over ${settings.most} shells in a bed`;
+    const settles = `No number of shells is promised to split ${named(older)} and ${named(younger)}: ${why}${tied}.`;
     return { ...base, settles };
   }
   const { chance, gained } = worth(
@@ -85,7 +92,7 @@ function neighbours(
     ]),
   );
   const settles =
-    `${dealInWords(base.beds, needed.more)}: whether ${older.key} is older than ${younger.key}, with ` +
+    `${dealInWords(base.beds, needed.more)}: whether ${named(older)} is older than ${named(younger)}, with ` +
     `${percentInWords(needed.power)} power if the ${measured} holds (chance from here ${percentInWords(chance)})${tied}. ` +
     `Over the whole order, ${pairsInWords(gained)} expected to be newly resolved.`;
   return {
@@ -97,4 +104,10 @@ function neighbours(
     pairs_gained: gained,
     settles,
   };
+}
+
+/** A deposit by its bed with the fewest shells, and the beds stated to be as old. */
+function named({ key, members }: BedOnClock): string {
+  const others = members.filter((member) => member !== key);
+  return others.length === 0 ? key : `${key} (as old as ${joinedInWords(others)})`;
 }

@@ -16,6 +16,7 @@ export type MoreShells = ReadonlyMap<BedOnClock, number>;
 
 /** The unresolved pairs of one clock, looked up by bed. */
 export interface UnresolvedPairs {
+  /** The pairs that a bed, or the deposit it belongs to, stands in; the deposit is `a`. */
   readonly of: (bed: BedOnClock) => readonly UnresolvedPair[];
   /** Expected number of pairs that the shells newly resolve in the whole order of the clock. */
   readonly gained: (more: MoreShells) => number;
@@ -24,14 +25,18 @@ export interface UnresolvedPairs {
 }
 
 /**
- * All pairs of beds whose order is not known at 1 − alpha, beds stated to be as old left out, and what more shells would
- * do to them: each pair's chance by {@link chanceFromHere}, summed.
+ * All pairs of deposits whose order is not known at 1 − alpha, and what more shells would do to them: each pair's chance by
+ * {@link chanceFromHere}, summed.
+ *
+ * @param view with beds stated to be as old joined into deposits
  */
 export function unresolvedPairs(view: ClockInView, known: KnownOrder, alpha: number): UnresolvedPairs {
   const limit = resolvingLimit(1 - alpha, view.df);
   const heavier = limit / normalQuantile(1 - alpha);
   const index = new Map(view.beds.map((bed) => [bed, known.indexOf.get(bed.key)!]));
-  const of = (bed: BedOnClock): UnresolvedPair[] => {
+  const depositOf = new Map(view.beds.flatMap((bed) => bed.members.map((key) => [key, bed] as const)));
+  const of = (asked: BedOnClock): UnresolvedPair[] => {
+    const bed = depositOf.get(asked.key)!;
     const at = index.get(bed)!;
     const found: UnresolvedPair[] = [];
     for (const other of view.beds) {
@@ -60,7 +65,8 @@ export function unresolvedPairs(view: ClockInView, known: KnownOrder, alpha: num
   return {
     of,
     chance,
-    gained: (more) => {
+    gained: (asked) => {
+      const more = new Map([...asked].map(([bed, count]) => [depositOf.get(bed.key)!, count]));
       let sum = 0;
       const done = new Set<BedOnClock>();
       for (const bed of more.keys()) {

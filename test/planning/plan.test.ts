@@ -61,6 +61,44 @@ describe('plan: separate beds', () => {
     expect(ofKind(plan(madeFindings(same, { relations: [tied] })).rows, 'separate beds')).toHaveLength(0);
   });
 
+  it('joins beds stated to be as old, as the order does', () => {
+    const relations = [{ lower: 'B/1', upper: 'B/2', kind: 'same' as const }];
+    const found = madeFindings([bed('A/1', -1.5, 5), bed('B/1', -1.44, 4), bed('B/2', -1.6, 4), bed('C/1', -3, 5)], {
+      relations,
+    });
+    // in the order the deposit of B stands at -1.52
+    const order = ['A/1', 'B/1', 'B/2', 'C/1'].map((key, at) => ({
+      ...found.order[0],
+      section: key[0],
+      bed: key[2],
+      rank: [1, 2, 2, 4][at],
+      resolved: [false, null, true, null][at],
+    }));
+    const pairs = found.pairs.map((row) =>
+      row.bed_a === 'A/1' && row.bed_b[0] === 'B'
+        ? { ...row, p_a_older: 0.69 }
+        : row.bed_a === 'B/1' && row.bed_b === 'B/2'
+          ? { ...row, p_a_older: 0 }
+          : row,
+    );
+    const rows = ofKind(plan({ ...found, order, pairs }).rows, 'separate beds');
+    expect(rows).toHaveLength(1);
+    expect(rows[0].gap).toBeCloseTo(0.02, 9);
+    expect(rows[0].settles).toMatch(/split A\/1 and B\/1 \(as old as B\/2\)/);
+    expect(ofKind(plan({ ...found, order, pairs }).rows, 'strengthen bed').map((row) => row.beds[0])).not.toContain(
+      'B/2',
+    );
+  });
+
+  it('takes the smaller gap where other beds pull two together in the order', () => {
+    const found = madeFindings([bed('A/1', -1.5, 4), bed('B/1', -1.57, 4), bed('C/1', -3, 5)]);
+    const alone = ofKind(plan(found).rows, 'separate beds')[0];
+    const pairs = found.pairs.map((row) => (row.bed_b === 'B/1' ? { ...row, p_a_older: 0.8 } : row));
+    const pulled = ofKind(plan({ ...found, pairs }).rows, 'separate beds')[0];
+    expect(pulled.total).toBeGreaterThan(alone.total!);
+    expect(pulled.settles).toMatch(/gap 0\.070 ± 0\.049 in ln\(D\/L\), in the order 0\.0\d+,/);
+  });
+
   it('resolves a pair in 75 to 85 % of surveys with the shells it asks for, by its own criterion', () => {
     for (const [seed, gap, few] of [
       [1, 0.07, 3],
