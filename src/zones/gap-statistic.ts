@@ -62,19 +62,22 @@ export function gapOf(within: readonly number[], references: readonly (readonly 
 }
 
 /**
- * The number of groups the gap statistic asks for: the smallest K with gap(K) ≥ gap(K + 1) − se(K + 1); the last K where
- * it climbs to the end.
+ * The number of groups the gap statistic asks for. `largest`: the smallest K whose gap lies within one standard error of the
+ * largest gap (Dudoit and Fridlyand 2002, doi:10.1186/gb-2002-3-7-research0036). `first`: the smallest K with
+ * gap(K) ≥ gap(K + 1) − se(K + 1), the rule of Tibshirani, Walther and Hastie. On a line, groups with even steps between
+ * them make the gap dip before it peaks, and the first rule stops at the dip; so `largest` is the default here.
  * @param gaps from 1 group upwards
  * @returns null when no gap is known
  * @example
- * groupsByGap([{ gap: 0.1, se: 0.05 }, { gap: 0.8, se: 0.05 }, { gap: 0.82, se: 0.05 }]) // => 2
+ * groupsByGap([{ gap: 0.1, se: 0.05 }, { gap: 0.0, se: 0.05 }, { gap: 0.8, se: 0.05 }]) // => 3
  */
-export function groupsByGap(gaps: readonly Gap[]): number | null {
-  for (let k = 1; k <= gaps.length; k++) {
-    const here = gaps[k - 1].gap;
-    if (here === null) return k > 1 ? k - 1 : null;
-    const next = gaps[k];
-    if (next === undefined || next.gap === null || here >= next.gap - next.se!) return k;
+export function groupsByGap(gaps: readonly Gap[], rule: 'largest' | 'first' = 'largest'): number | null {
+  const known = gaps.flatMap(({ gap, se }, at) => (gap === null || se === null ? [] : [{ k: at + 1, gap, se }]));
+  if (known.length === 0) return null;
+  if (rule === 'first') {
+    const stop = known.find(({ gap }, at) => at + 1 === known.length || gap >= known[at + 1].gap - known[at + 1].se);
+    return stop!.k;
   }
-  return null;
+  const top = known.reduce((best, entry) => (entry.gap > best.gap ? entry : best));
+  return known.find(({ gap }) => gap >= top.gap - top.se)!.k;
 }

@@ -88,15 +88,27 @@ export function findZones(data: ClockData, options: ZoningOptions): Zoning | nul
 function joinNeighbours(data: ClockData, beds: readonly number[], start: Mixture, options: ZoningOptions) {
   const values = beds.map((index) => data.beds[index].mean);
   const errors = beds.map((index) => data.beds[index].se);
-  let fit = start;
+  let fit = withoutEmptyZones(values, errors, start);
   for (;;) {
     const neighbours = testAll(data, beds, fit, options);
     const joinable = neighbours.flatMap((test, at) => (test.verdict === 'not distinct' ? [at] : []));
     if (joinable.length === 0) return { fit, neighbours };
     const at = joinable.reduce((most, next) => (neighbours[next].overlap > neighbours[most].overlap ? next : most));
     const labels = bestLabels(fit, beds.length).map((label) => (label > at ? label - 1 : label));
-    fit = fitMixture(values, errors, fit.k - 1, { start: labels });
+    fit = withoutEmptyZones(values, errors, fitMixture(values, errors, fit.k - 1, { start: labels }));
   }
+}
+
+/** Zones that are no bed's most probable one are no zones: found again with one fewer until every zone has a bed. */
+function withoutEmptyZones(values: readonly number[], errors: readonly number[], start: Mixture): Mixture {
+  let fit = start;
+  while (fit.k > 1) {
+    const labels = bestLabels(fit, values.length);
+    const held = [...new Set(labels)].sort((a, b) => a - b);
+    if (held.length === fit.k) return fit;
+    fit = fitMixture(values, errors, held.length, { start: labels.map((label) => held.indexOf(label)) });
+  }
+  return fit;
 }
 
 function testAll(data: ClockData, beds: readonly number[], fit: Mixture, options: ZoningOptions): NeighbourTest[] {

@@ -1,0 +1,229 @@
+import { describe, expect, it } from 'vitest';
+import type { Task } from '../../src/model/index.js';
+import { createRandom } from '../../src/statistics/index.js';
+import {
+  bootstrapLikelihoodRatio,
+  bootstrapP,
+  choiceSentence,
+  chooseModel,
+  gapStatistic,
+  groupsByGap,
+  meanSilhouette,
+  settleChoice,
+} from '../../src/zones/index.js';
+
+function beds(means: readonly number[], each: number, seed: number, error = 0.02, tau = 0) {
+  const random = createRandom(seed);
+  const values = means.flatMap((mean) =>
+    Array.from({ length: each }, () => mean + Math.hypot(error, tau) * random.normal()),
+  );
+  return { values, errors: values.map(() => error) };
+}
+
+/** A host without workers, which counts the repeats it was asked for. */
+function inPlace() {
+  const count = { repeats: 0 };
+  const map = async (tasks: readonly Task[]) =>
+    tasks.map(({ name, argument }) => {
+      expect(name).toBe('bootstrapLikelihoodRatio');
+      const own = structuredClone(argument) as Parameters<typeof bootstrapLikelihoodRatio>[0];
+      count.repeats += own.repeats;
+      return bootstrapLikelihoodRatio(own);
+    });
+  return { map, count };
+}
+
+describe('chooseModel', () => {
+  it('chooses the zones that are there, one zone, or the continuum', () => {
+    const three = beds([-2, -1.7, -1.4], 8, 1);
+    expect(chooseModel(three.values, three.errors)).toMatchObject({ bestZones: 3, verdict: 'zones' });
+    const one = beds([-2], 20, 2);
+    expect(chooseModel(one.values, one.errors).verdict).toBe('one zone');
+    const random = createRandom(3);
+    const even = Array.from({ length: 40 }, () => -2 + 0.8 * random.uniform());
+    expect(
+      chooseModel(
+        even,
+        even.map(() => 0.02),
+      ).verdict,
+    ).toBe('continuum');
+  });
+
+  it('says that two beds are too few', () => {
+    expect(chooseModel([-2, -1], [0.02, 0.02]).verdict).toBe('too few beds');
+  });
+
+  it('does not hang on the order of the beds', () => {
+    const { values, errors } = beds([-2, -1.7], 8, 4);
+    const forward = chooseModel(values, errors);
+    const backward = chooseModel([...values].reverse(), [...errors].reverse());
+    forward.bics.forEach((value, at) => {
+      expect(backward.bics[at]).toBeCloseTo(value, 5);
+    });
+  });
+});
+
+describe('settleChoice', () => {
+  it('runs nothing where BIC is clear', async () => {
+    const { values, errors } = beds([-2, -1.7, -1.4], 10, 1);
+    const { map, count } = inPlace();
+    const choice = chooseModel(values, errors);
+    const settled = await settleChoice(choice, errors, { alpha: 0.05, seed: 1, map });
+    expect(settled.choice).toEqual(choice);
+    expect(count.repeats).toBe(0);
+  });
+
+  it('keeps zones that are close to call only when a bootstrap supports them', async () => {
+    // one zone in truth, and BIC is fooled by both seeds: the bootstrap mends the first
+    for (const [seed, verdict] of [
+      [4, 'one zone'],
+      [7, 'zones'],
+    ] as const) {
+      const { values, errors } = beds([-2], 12, seed, 0.02, 0.03);
+      const choice = chooseModel(values, errors);
+      expect(choice.verdict).toBe('zones');
+      const { map, count } = inPlace();
+      const settled = await settleChoice(choice, errors, { alpha: 0.05, seed: 1, simulations: 199, map });
+      expect(settled.comparisons.map(({ simpler }) => simpler)).toEqual(['continuum', '1']);
+      expect(count.repeats).toBe(398);
+      expect(settled.choice.verdict).toBe(verdict);
+      const { p } = settled.comparisons[1];
+      expect(p > 0.05).toBe(verdict === 'one zone');
+    }
+  });
+
+  it('gives the same result however the repeats are shared out', () => {
+    const common = {
+      errors: Array.from({ length: 12 }, () => 0.02),
+      simpler: { kind: 'continuum' as const, low: -2, high: -1.5 },
+      zones: 2,
+      seed: 5,
+    };
+    const whole = bootstrapLikelihoodRatio({ ...common, first: 0, repeats: 10 });
+    const parts = [0, 5].flatMap((first) => bootstrapLikelihoodRatio({ ...common, first, repeats: 5 }));
+    expect(parts).toEqual(whole);
+  });
+
+  it('has p-values that are even where the simpler model holds', () => {
+    // 60 samples of one zone: p of 2 against 1 at or below 0.2 in about 12; 3 to 23 spans 99.9 % of chance
+    let low = 0;
+    for (let seed = 1; seed <= 60; seed++) {
+      const { values, errors } = beds([-2], 15, 1000 + seed, 0.02, 0.02);
+      const { mixtures } = chooseModel(values, errors, 0, 2);
+      const ratio = 2 * (mixtures[1].logLikelihood - mixtures[0].logLikelihood);
+      const { means, weights, tau } = mixtures[0];
+      const simpler = { kind: 'zones' as const, means, weights, tau };
+      const drawn = bootstrapLikelihoodRatio({ errors, simpler, zones: 2, seed, first: 0, repeats: 49 });
+      if (bootstrapP(ratio, drawn) <= 0.2) low++;
+    }
+    expect(low).toBeGreaterThanOrEqual(3);
+    expect(low).toBeLessThanOrEqual(23);
+  });
+});
+
+describe('gapStatistic', () => {
+  it('finds well parted groups, and one group in even values', () => {
+    const { values } = beds([-2, -1.2, -0.3], 10, 3);
+    const options = { random: createRandom(1) };
+    expect(
+      groupsByGap(
+        gapStatistic(
+          values,
+          values.map(() => 1),
+          options,
+        ),
+      ),
+    ).toBe(3);
+    const random = createRandom(8);
+    const even = Array.from({ length: 50 }, () => random.uniform());
+    expect(
+      groupsByGap(
+        gapStatistic(
+          even,
+          even.map(() => 1),
+          options,
+        ),
+      ),
+    ).toBe(1);
+  });
+
+  it('gives no gap where nothing scatters', () => {
+    expect(gapStatistic([-1, -1], [1, 1], { random: createRandom(1) })).toEqual([{ gap: null, se: null }]);
+    expect(groupsByGap([{ gap: null, se: null }])).toBeNull();
+  });
+
+  it('is unmoved by a change of scale', () => {
+    const { values } = beds([-2, -1.2], 8, 3);
+    const gaps = gapStatistic(
+      values,
+      values.map(() => 1),
+      { random: createRandom(1) },
+    );
+    const other = gapStatistic(
+      values.map((v) => 5 * v - 2),
+      values.map(() => 7),
+      { random: createRandom(1) },
+    );
+    gaps.forEach(({ gap }, at) => {
+      expect(other[at].gap).toBeCloseTo(gap!, 8);
+    });
+  });
+});
+
+describe('meanSilhouette', () => {
+  it('agrees with all distances taken one by one', () => {
+    const random = createRandom(4);
+    const values = Array.from({ length: 40 }, () => random.normal());
+    const labels = values.map(() => random.integer(4));
+    const mean = (from: number, group: number) => {
+      const others = values.filter((_, at) => labels[at] === group && at !== from);
+      return others.reduce((sum, other) => sum + Math.abs(values[from] - other), 0) / others.length;
+    };
+    const direct = values.map((_, at) => {
+      const a = mean(at, labels[at]);
+      const b = Math.min(...[0, 1, 2, 3].filter((group) => group !== labels[at]).map((group) => mean(at, group)));
+      return (b - a) / Math.max(a, b);
+    });
+    expect(meanSilhouette(values, labels)).toBeCloseTo(direct.reduce((sum, v) => sum + v, 0) / 40, 10);
+  });
+
+  it('is null with one group, counts a lone bed as 0, and refuses lists of two lengths', () => {
+    expect(meanSilhouette([1, 2], [0, 0])).toBeNull();
+    expect(meanSilhouette([1, 5], [0, 1])).toBe(0);
+    expect(() => meanSilhouette([1], [0, 1])).toThrow(RangeError);
+  });
+});
+
+describe('choiceSentence', () => {
+  const criteria = {
+    verdict: 'zones' as const,
+    zones: 3,
+    forced: null,
+    byBic: 3,
+    continuumByBic: false,
+    byGap: 2,
+    bySilhouette: 3,
+    comparisons: [],
+  };
+
+  it('names who agrees and who does not', () => {
+    expect(choiceSentence(criteria)).toBe(
+      'The data support 3 zones. BIC and the silhouette agree. The gap statistic prefers 2 zones.',
+    );
+  });
+
+  it('tells of bootstraps, of joined neighbours and of the number asked for', () => {
+    const comparisons = [{ simpler: 'continuum', zones: 3, ratio: 12, p: 0.012, repeats: 199 }];
+    expect(choiceSentence({ ...criteria, comparisons })).toContain(
+      'A bootstrap of 3 zones against a continuum gives p = 0.012, 199 simulations.',
+    );
+    expect(choiceSentence({ ...criteria, byBic: 4 })).toContain('were joined');
+    expect(choiceSentence({ ...criteria, forced: 5 })).toContain('5 zones are used, as you asked.');
+  });
+
+  it('says that none are supported', () => {
+    const none = choiceSentence({ ...criteria, verdict: 'continuum', zones: 1, continuumByBic: true });
+    expect(none).toContain('The data support no zones');
+    expect(none).not.toContain('silhouette');
+  });
+});
