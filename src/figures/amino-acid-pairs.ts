@@ -3,8 +3,8 @@ import { AMINO_ACIDS, type AminoAcid, type ByAminoAcid, type Findings } from '..
 import type { BedView, ClockView, ShellView } from './clock-view.js';
 import { type Figure, finishFigure, label } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks } from './house-plot.js';
+import { padded } from './numbers.js';
 import { type ShellPoint, shellDots } from './shell-dots.js';
-import { padded } from './shells-by-bed.js';
 import { shellSign } from './signs.js';
 import type { SvgNode } from './svg-node.js';
 import { FAINT, INK, MOST_SHELLS, PAPER, TYPE, WIDE } from './theme.js';

@@ -1,7 +1,7 @@
 import type { BedView, ClockView } from './clock-view.js';
 
 /** A line of a figure that lists beds: the head of a zone, or one bed. */
-export type BedLine =
+type BedLine =
   | { readonly kind: 'zone'; readonly zone: number; readonly y: number }
   | { readonly kind: 'bed'; readonly zone: number; readonly y: number; readonly bed: BedView };
 

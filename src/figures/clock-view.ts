@@ -59,10 +59,10 @@ export interface ClockView {
 }
 
 /** `section/bed` of a row. */
-export const bedKey = (row: { readonly section: string; readonly bed: string }) => `${row.section}/${row.bed}`;
+const bedKey = (row: { readonly section: string; readonly bed: string }) => `${row.section}/${row.bed}`;
 
 /** Every bed of the survey by `section/bed`, with its number: sites first, then beds no site is known of. */
-export function bedNumbers(findings: Findings): Map<string, number> {
+function bedNumbers(findings: Findings): Map<string, number> {
   const numbers = new Map<string, number>();
   for (const row of [...findings.sites, ...findings.beds])
     if (!numbers.has(bedKey(row))) numbers.set(bedKey(row), numbers.size);

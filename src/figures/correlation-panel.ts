@@ -1,8 +1,9 @@
 import type { ClockView } from './clock-view.js';
 import { inkOf } from './clock-view.js';
-import { CELL, drawSlice, missingZones, presence, presenceAcross, sectionHead } from './correlation-column.js';
+import { drawSlice, sectionHead } from './correlation-column.js';
 import { compactPanel } from './correlation-compact.js';
 import { bedHeight, layColumns, metreScale, type SectionColumn } from './correlation-layout.js';
+import { CELL, missingZones, presence, presenceAcross } from './correlation-presence.js';
 import { type Gap, openTies, tiesBetween } from './correlation-ties.js';
 import { panelAlt, panelCaption, panelEntries } from './correlation-words.js';
 import { type Figure, finishFigure, label } from './figure.js';

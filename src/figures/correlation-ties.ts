@@ -1,5 +1,6 @@
 import { type ClockView, inkOf, zoneTag } from './clock-view.js';
-import { contactOf, type Run, runsOf, type SectionColumn } from './correlation-layout.js';
+import type { SectionColumn } from './correlation-layout.js';
+import { contactOf, type Run, runsOf } from './correlation-runs.js';
 import { element, type SvgNode } from './svg-node.js';
 import { INK } from './theme.js';
 

@@ -2,7 +2,7 @@ import * as Plot from '@observablehq/plot';
 import { type ClockView, inkOf, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
-import { padded, short } from './shells-by-bed.js';
+import { padded, short } from './numbers.js';
 import { shorten } from './text-width.js';
 import { FAINT, INK, MOST_BEDS, PAPER, TYPE, WIDE } from './theme.js';
 import { zoneLegend } from './zone-legend.js';

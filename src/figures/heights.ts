@@ -2,7 +2,7 @@ import * as Plot from '@observablehq/plot';
 import { atCentre, type ClockView, inkOf } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
-import { padded } from './shells-by-bed.js';
+import { padded } from './numbers.js';
 import { INK, MOST_BEDS, TYPE, WIDE } from './theme.js';
 import { zoneLegend } from './zone-legend.js';
 

@@ -1,6 +1,6 @@
 import * as Plot from '@observablehq/plot';
 import { element, type SvgNode, svgDocument } from './svg-node.js';
-import { FONT, GRID, INK, SOFT, TYPE, WIDE } from './theme.js';
+import { FONT, INK, SOFT, TYPE, WIDE } from './theme.js';
 
 /** Attributes that tie an element to a bed, a shell or a zone. */
 export type Tags = Readonly<Record<string, string | number | undefined>>;
@@ -60,9 +60,6 @@ export const AXIS = {
   tickSize: 4,
   labelAnchor: 'center',
 } as const;
-
-/** Grid lines of the house. */
-export const GRID_LINES = { stroke: GRID, strokeOpacity: 1, strokeWidth: 0.75 } as const;
 
 /**
  * Round D/L values for the ticks of an axis in log ratios between `low` and `high`, thinned to keep `least` units apart

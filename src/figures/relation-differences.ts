@@ -3,8 +3,8 @@ import type { RelationRow } from '../model/index.js';
 import type { ClockView } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, tagged } from './house-plot.js';
+import { padded } from './numbers.js';
 import { everReversed, relationNumbers } from './reversed-marks.js';
-import { padded } from './shells-by-bed.js';
 import { shorten } from './text-width.js';
 import { ALARM, INK, PAPER, SOFT, TYPE, WIDE } from './theme.js';
 

@@ -3,7 +3,7 @@ import { quantile } from '../statistics/index.js';
 import { atCentre, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
-import { padded, ratio } from './shells-by-bed.js';
+import { padded, ratio } from './numbers.js';
 import { INK, SOFT, TYPE, WIDE } from './theme.js';
 
 const BINS = 90;

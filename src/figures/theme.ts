@@ -17,7 +17,6 @@ export const TYPE = { title: 12.5, label: 10, small: 9, tiny: 8.2 } as const;
 export const INK = '#1b1a19';
 export const SOFT = '#57534d';
 export const FAINT = '#8c867d';
-export const GRID = '#e2ddd5';
 export const PAPER = '#ffffff';
 /** For what contradicts the field: always together with a sign of its own. */
 export const ALARM = '#b3261e';
@@ -28,7 +27,7 @@ export const SWAPS: Readonly<Record<string, string>> = {
   [INK]: 'k',
   [SOFT]: 'm',
   [FAINT]: 'n',
-  [GRID]: 'g',
+
   [PAPER]: 'p',
   [ALARM]: 'a',
 };

@@ -2,7 +2,7 @@ import * as Plot from '@observablehq/plot';
 import { atCentre, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, tagged } from './house-plot.js';
-import { padded, ratio } from './shells-by-bed.js';
+import { padded, ratio } from './numbers.js';
 import { INK, NARROW, SOFT, TYPE } from './theme.js';
 
 const STEP = 40;

@@ -16,7 +16,7 @@ export const cut = (shown: number, all: number, file: string): Markup | null =>
     : null;
 
 /** A zone's name with its colour, which says nothing that the name doesn't. */
-export const zoneChip = (view: ClockView, zone: string | null): Markup => {
+const zoneChip = (view: ClockView, zone: string | null): Markup => {
   const index = view.zones.findIndex((row) => row.zone === zone);
   return index < 0 ? html`${zone ?? '–'}` : html`<span class="chip z${view.index}-${index}">${zone}</span>`;
 };

@@ -248,7 +248,7 @@ export const script = `'use strict';
   // On paper the shorter tables stand open.
   let opened = [];
   addEventListener('beforeprint', () => {
-    opened = all('details:not([open])').filter((folded) => all('tbody tr', folded).length <= 250);
+    opened = all('details:not([open])').filter((folded) => all('tbody tr', folded).length <= 60);
     for (const folded of opened) folded.open = true;
   });
   addEventListener('afterprint', () => {

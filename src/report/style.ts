@@ -86,7 +86,7 @@ summary{cursor:pointer;padding:.5rem 0;font:700 .9375rem/1.3 Helvetica,Arial,san
 .sources{font-size:.9375rem}
 #reader{position:fixed;left:50%;bottom:1rem;transform:translateX(-50%);width:max-content;max-width:min(56rem,calc(100vw - 2rem));padding:.55rem 1rem;background:var(--ink);color:var(--paper);border-radius:6px;font:.875rem/1.4 Helvetica,Arial,sans-serif;z-index:5;overflow-wrap:anywhere;box-shadow:0 3px 14px #0004}
 #reader[hidden]{display:none}
-.fig.fk,.fig .fk{fill:var(--ink)}.fig .sk{stroke:var(--ink)}.fig .fm{fill:var(--soft)}.fig .sm{stroke:var(--soft)}.fig .fn{fill:var(--faint)}.fig .sn{stroke:var(--faint)}.fig .fg{fill:var(--grid)}.fig .sg{stroke:var(--grid)}.fig .fp,.fig .paper{fill:var(--paper)}.fig .sp{stroke:var(--paper)}.fig .fa{fill:var(--alarm)}.fig .sa{stroke:var(--alarm)}
+.fig.fk,.fig .fk{fill:var(--ink)}.fig .sk{stroke:var(--ink)}.fig .fm{fill:var(--soft)}.fig .sm{stroke:var(--soft)}.fig .fn{fill:var(--faint)}.fig .sn{stroke:var(--faint)}.fig .fp,.fig .paper{fill:var(--paper)}.fig .sp{stroke:var(--paper)}.fig .fa{fill:var(--alarm)}.fig .sa{stroke:var(--alarm)}
 .fig text{white-space:pre}
 .js .fig [data-b],.js .fig [data-z],.js .fig [data-s]{cursor:pointer}
 .lit .fig [data-b]:not(.on),.lit .fig .tie:not(.on),.lit .fig [data-s]:not(.on){opacity:.22}

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { clockViews } from '../../src/figures/clock-view.js';
-import { contactOf, layColumns, metreScale, runsOf } from '../../src/figures/correlation-layout.js';
+import { layColumns, metreScale } from '../../src/figures/correlation-layout.js';
+import { contactOf, runsOf } from '../../src/figures/correlation-runs.js';
 import type { Findings } from '../../src/model/index.js';
 import { type FixtureOptions, fixture } from '../report/fixture.js';
 
