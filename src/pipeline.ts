@@ -137,7 +137,10 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
         sites.filter((site) => measured.has(bedKey(site.section, site.bed))),
         options.gradient,
       ),
-      ...conversionRemarks(combined.flatMap((outcome) => outcome.findings)),
+      ...conversionRemarks(
+        combined.flatMap((outcome) => outcome.findings),
+        options.reference_taxon,
+      ),
       ...laboratoryRemarks(survey.analyses, offsets, asked),
       ...runs.flatMap(({ set, settled }) =>
         staircaseRemarks(set.main.name, staircaseOf(context, settled.last.data), context.elevations.size),

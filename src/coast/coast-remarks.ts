@@ -236,8 +236,14 @@ export function staircaseRemarks(clock: string, staircase: Staircase | null, ele
   return remarks;
 }
 
-/** What is said of converting taxa to the reference (design 7.12). */
-export function conversionRemarks(conversions: readonly ConversionFinding[]): Remark[] {
+/**
+ * What is said of converting taxa to the reference (design 7.12).
+ * @param asked the reference taxon; null where none was asked for
+ */
+export function conversionRemarks(conversions: readonly ConversionFinding[], asked: string | null): Remark[] {
+  if (asked !== null && conversions.length === 0) {
+    return [caution(`No taxon beside ${asked} was analysed, so there is nothing to convert to it.`)];
+  }
   return conversions.map((one) => {
     if (one.verdict === 'refused') {
       return caution(

@@ -1,0 +1,83 @@
+import { describe, expect, it } from 'vitest';
+import { averageAnalyses, chooseClocks, clockData } from '../../src/beds/index.js';
+import { fitGradient } from '../../src/coast/gradient.js';
+import { adjustedRandIndex, createRandom } from '../../src/statistics/index.js';
+import { findZones } from '../../src/zones/index.js';
+import { type CoastOptions, simulateCoast } from './coast.js';
+import { meanOf, shareOf } from './zone-runs.js';
+
+/** One coast zoned with and without its gradient, the truth beside it. */
+function zoneWithGradient(options: CoastOptions & { readonly seed: number }) {
+  const { survey, truth } = simulateCoast(options);
+  const { shells, summaries } = averageAnalyses(survey.analyses);
+  const [set] = chooseClocks(shells, summaries, { taxon: null, fraction: null, amino_acid: null });
+  const input = { clock: set.main, shells, summaries };
+  const { beds } = clockData(input);
+  const column = beds.map((bed) => truth.beds.get(bed.key)!.gradient);
+  const centre = meanOf(column);
+  const values = new Map(beds.map((bed, at) => [bed.key, column[at] - centre]));
+  const fit = fitGradient(
+    beds.map((bed) => bed.mean),
+    beds.map((bed) => bed.se),
+    beds.map((bed) => values.get(bed.key)!),
+  )!;
+  const randOf = (slope: number): number => {
+    const data = clockData({ ...input, gradient: { slope, values } });
+    const zoning = findZones(data, { alpha: 0.05, zones: null, random: createRandom(1), simulations: 99 })!;
+    return adjustedRandIndex(
+      zoning.labels,
+      zoning.beds.map((at) => truth.beds.get(data.beds[at].key)!.zone),
+    );
+  };
+  const holds = fit.low <= truth.gradientSlope && fit.high >= truth.gradientSlope;
+  return { fit, holds, rand: randOf(fit.used ? fit.slope : 0), plain: randOf(0) };
+}
+
+const coasts = (seeds: number, options: CoastOptions) =>
+  Array.from({ length: seeds }, (_, i) => zoneWithGradient({ beds: 36, sections: 9, ...options, seed: i + 1 }));
+
+describe('a coast that warms by 8 °C, zones 0.35 apart', () => {
+  const runs = coasts(60, { zones: 4, spacing: 0.35, gradient: { slope: 0.06 } });
+
+  it('gives its zones back with the slope: mean Rand index at least 0.93, far below that without it', () => {
+    expect(meanOf(runs.map((run) => run.rand))).toBeGreaterThanOrEqual(0.93);
+    expect(meanOf(runs.map((run) => run.plain))).toBeLessThan(0.5);
+    expect(shareOf(runs, (run) => run.fit.used)).toBeGreaterThanOrEqual(0.95);
+  });
+
+  it('has its slope in the interval in at least 90 % of coasts', () => {
+    expect(shareOf(runs, (run) => run.holds)).toBeGreaterThanOrEqual(0.9);
+  });
+});
+
+describe('a coast with a smaller slope and few beds', () => {
+  const runs = coasts(60, { zones: 3, spacing: 0.35, beds: 18, sections: 6, spread: 0.03, gradient: { slope: 0.03 } });
+
+  it('has its slope in the interval in at least 90 % of coasts', () => {
+    expect(shareOf(runs, (run) => run.holds)).toBeGreaterThanOrEqual(0.9);
+  });
+});
+
+describe('coasts without a gradient', () => {
+  const flat = { gradient: { slope: 0 } };
+  const zoned = coasts(60, { zones: 4, spacing: 0.35, ...flat });
+  const close = coasts(60, { zones: 3, spacing: Math.log(1.2), ...flat });
+  const continuum = coasts(60, { zones: 'continuum', ...flat });
+
+  it('have 0 in the interval in at least 90 %, and lose at most 0.02 of their Rand index', () => {
+    for (const runs of [zoned, close]) {
+      expect(shareOf(runs, (run) => run.holds)).toBeGreaterThanOrEqual(0.9);
+      expect(meanOf(runs.map((run) => run.plain - run.rand))).toBeLessThanOrEqual(0.02);
+    }
+  });
+
+  it('seldom have a slope taken out that is not there', () => {
+    expect(shareOf(zoned, (run) => run.fit.used)).toBeLessThanOrEqual(0.15);
+    expect(shareOf(close, (run) => run.fit.used)).toBeLessThanOrEqual(0.15);
+  });
+
+  it('have 0 in the interval in at least 85 % where ages run on without zones, and a false slope in at most 20 %', () => {
+    expect(shareOf(continuum, (run) => run.holds)).toBeGreaterThanOrEqual(0.85);
+    expect(shareOf(continuum, (run) => run.fit.used)).toBeLessThanOrEqual(0.2);
+  });
+});
