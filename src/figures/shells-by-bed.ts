@@ -69,7 +69,7 @@ export function shellsByBed(view: ClockView): Figure | null {
   return finishFigure({
     name: `shells${view.suffix}`,
     title: `Log ratios of all shells by bed${view.heading}`,
-    caption: `One line a bed, ${view.zoned ? 'grouped by zone with the youngest zone and bed on top' : 'the youngest on top'}; older beds lie further to the right. Look for shells that stand apart from their own line${aside > 0 ? `: the ${aside} crossed ones were set aside` : ''}. ${ranges(view)}`,
+    caption: `One line a bed, ${view.zoned ? 'grouped by zone with the youngest zone and bed on top' : 'the youngest on top'}; older beds lie further to the right. Look for shells that stand apart from their own line${['', ': the crossed one was set aside'][aside] ?? `: the ${aside} crossed ones were set aside`}. ${ranges(view)}`,
     alt: `${shells.length} shells of ${view.clock.taxon} in ${view.beds.length} beds. ${view.zones.map((zone) => `${zone.zone}: ${zone.beds} beds, D/L ${ratio(zone.dl_mean)}`).join('; ')}. ${aside} shells set aside.`,
     width: WIDE,
     height: bottom + 44 + key.height,

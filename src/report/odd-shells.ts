@@ -4,7 +4,7 @@ import { html, type Markup } from './html.js';
 import { shellLink } from './links.js';
 import { counted, figures, ratio } from './numbers.js';
 
-const MOST = 400;
+const MOST = 250;
 
 /** Shells set aside or doubtful, each with its reading and what speaks for it; the surest first. */
 export function oddShells(view: ClockView, evidence: ReadonlyMap<string, readonly string[]>): Markup {

@@ -8,7 +8,7 @@ import type {
   SectionRow,
   ZoneCountRow,
 } from '../model/index.js';
-import { cut, MOST_ROWS } from './clock-tables.js';
+import { atMost, cut } from './clock-tables.js';
 import { html, type Markup } from './html.js';
 import { figures, pValue } from './numbers.js';
 import { type Column, table } from './table.js';
@@ -74,7 +74,7 @@ export function sectionsTable(findings: Findings, views: readonly ClockView[]): 
     { head: 'verdict', cell: (row) => row.verdict },
   ];
   const rows = findings.sections.filter((row) => index.has(row.clock));
-  const shown = rows.slice(0, MOST_ROWS);
+  const shown = atMost(rows);
   return html`${table('Sections', columns, shown, (row) => ({ clock: index.get(row.clock) }))}${cut(shown.length, rows.length, 'sections.csv')}`;
 }
 
@@ -102,7 +102,7 @@ export function votesTable(findings: Findings): Markup {
       cell: (row) => row.votes.map((vote) => `${vote.amino_acid}: ${vote.older} (${figures(vote.p, 2)})`).join('; '),
     },
   ];
-  const shown = findings.votes.slice(0, MOST_ROWS);
+  const shown = atMost(findings.votes);
   return html`${table('Beds whose amino acids disagree', columns, shown)}${cut(shown.length, findings.votes.length, 'results.json')}`;
 }
 
@@ -115,7 +115,7 @@ export function problemsTable(findings: Findings): Markup {
     { head: 'severity', cell: (row) => row.severity },
     { head: 'message', long: true, cell: (row) => row.message },
   ];
-  const shown = findings.problems.slice(0, MOST_ROWS);
+  const shown = atMost(findings.problems);
   return html`${table('Warnings about the input', columns, shown)}${cut(shown.length, findings.problems.length, 'problems.csv')}`;
 }
 

@@ -37,9 +37,8 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
     );
   const all: (Part | null)[] = [
     part('findings', 'What was found', 'Findings', [
-      html`<div class="lead">${views.map((view) => [views.length > 1 ? html`<h3>${view.clock.clock}</h3>` : '', findingsInSentences(view)])}</div>`,
+      html`<div class="lead">${views.map((view) => [views.length > 1 ? html`<h3>${view.clock.clock}</h3>` : '', findingsInSentences(view), zonesTable(view)])}</div>`,
       remarks(findings, 'finding'),
-      views.map(zonesTable),
     ]),
     part('shells', 'All shells, bed by bed', 'Shells by bed', drawn('shells')),
     part('correlation', 'Correlation along the coast', 'Correlation', drawn('correlation')),
