@@ -1,3 +1,4 @@
+import { aminoAcidFindings } from './amino-acid-findings.js';
 import { type ClockSet, testingDf } from './beds/index.js';
 import type { ClockOrder, Pass, RunContext, SlopeOfPass } from './clock-run.js';
 import { correlationTable, gradientRemarks } from './coast/index.js';
@@ -14,7 +15,6 @@ import type {
   CorrelationRow,
   Evidence,
   GradientFinding,
-  Host,
   OrderDiagnostics,
   OrderRow,
   PairRow,
@@ -26,17 +26,18 @@ import type {
   ZoneCountRow,
   ZoneRow,
 } from './model/index.js';
-import { heightOf, orderRows, pairRows } from './order/index.js';
+import { heightOf, MOST_BEDS_IN_PAIRS, orderRows, pairRows } from './order/index.js';
 import { MOST_PASSES, type Settled } from './passes.js';
 import { relationFindings } from './relation-findings.js';
 import { screenBeds } from './screening/index.js';
 import { adjustedRandIndex, type Random } from './statistics/index.js';
 import { checkSections, listConflicts } from './superposition/index.js';
+import type { ZoneSupport } from './zone-support.js';
 import {
   adjacentZonesRows,
-  assignZone,
   bedRows,
   isNearEquilibrium,
+  sameZone,
   shellRows,
   type Zoning,
   zoneCountRows,
@@ -74,7 +75,8 @@ export interface ClockFindingsInput {
   readonly singles: readonly Pass[];
   readonly sites: readonly BedSite[];
   readonly sections: readonly string[];
-  readonly host: Host;
+  /** null where no bed has a mean. */
+  readonly support: ZoneSupport | null;
   readonly random: Random;
 }
 
@@ -99,7 +101,7 @@ const EMPTY = {
 };
 
 /** Rows of the main clock of one taxon and fraction, then one clock row an amino acid. */
-export async function clockFindings(input: ClockFindingsInput): Promise<ClockResult[]> {
+export function clockFindings(input: ClockFindingsInput): ClockResult[] {
   const { settled, singles } = input;
   const main = mainResult(input);
   return [
@@ -113,7 +115,8 @@ export async function clockFindings(input: ClockFindingsInput): Promise<ClockRes
   ];
 }
 
-function mainResult({ context, settled, order, sites, sections, random }: ClockFindingsInput): ClockResult {
+function mainResult(input: ClockFindingsInput): ClockResult {
+  const { context, set, settled, support, order, singles, sites, sections, random } = input;
   const { last } = settled;
   const { data, zoning } = last;
   const { options, shells, summaries } = context;
@@ -130,13 +133,15 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
       marks: marks.get(bed.key) ?? [],
       reading: ages.get(bed.key)?.reading ?? '',
     }),
+    assign: support?.assign,
   });
   // tables list beds as the sites do: sections in coast order, the lowest bed first
   const position = new Map([...siteOf.keys()].map((key, at) => [key, at]));
   const beds = [...unsorted].sort(
     (a, b) => position.get(`${a.section}/${a.bed}`)! - position.get(`${b.section}/${b.bed}`)!,
   );
-  const zones = zoning === null ? [] : zoneRows(data, zoning);
+  const zones = zoning === null ? [] : zoneRows(data, zoning, support);
+  const aminoAcids = aminoAcidFindings(context, set, last, singles, random.fork(1));
   const relations = relationFindings({ settled, shells, beds, sites: siteOf });
   const zoneOf = new Map(beds.map((bed) => [`${bed.section}/${bed.bed}`, bed.zone]));
   const slope = last.gradient === null ? null : gradientFinding(last, last.gradient, options.gradient!);
@@ -144,17 +149,23 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
     ...EMPTY,
     clock: clockRow(last, 1),
     zones,
-    zone_counts: zoning === null ? [] : zoneCountRows(data, zoning),
+    zone_counts: zoning === null ? [] : zoneCountRows(data, zoning, support?.criteria),
     adjacent_zones: zoning === null ? [] : adjacentZonesRows(data, zoning),
     beds,
-    shells: shellRows(data, zoning, shells, (at) => ({
-      ...settled.readings.shells[at],
-      marks: settled.marks[at].map((mark) => mark.mark),
-    })),
+    shells: shellRows(
+      data,
+      zoning,
+      shells,
+      (at) => ({ ...settled.readings.shells[at], marks: settled.marks[at].map((mark) => mark.mark) }),
+      support?.assign,
+    ),
     evidence: [
       ...shellEvidence(settled, shells),
       ...bedEvidence(settled, marks, siteOf, options),
       ...relations.evidence,
+      ...(support === null
+        ? []
+        : [{ clock: data.clock.name, about: 'clock' as const, name: data.clock.name, sentences: [support.sentence] }]),
     ],
     conflicts: conflictRows(settled, shells),
     order:
@@ -172,12 +183,21 @@ function mainResult({ context, settled, order, sites, sections, random }: ClockF
     pairs:
       order === null
         ? []
-        : pairRows(data.clock.name, order.beds, order.posterior, order.ranking, sameZone(order.beds, zoning)),
+        : pairRows(
+            data.clock.name,
+            order.beds,
+            order.posterior,
+            order.ranking,
+            sameZoneOf(order.beds, zoning, support),
+          ),
     relations: relations.rows,
     sections: sectionRows(settled, siteOf, options.alpha, options.simulations, random),
     correlation: correlationTable(zones, beds, sections),
     diagnostics: order === null ? [] : [diagnosticsOf(data.clock.name, order)],
+    votes: aminoAcids.votes,
+    shares: aminoAcids.shares,
     remarks: [
+      ...aminoAcids.remarks,
       ...(settled.settled ? [] : [unsettledPasses(data.clock.name)]),
       ...(options.gradient === null ? [] : slopeRemarks(last, slope, context, options.gradient)),
     ],
@@ -241,15 +261,16 @@ function bedMarks(
   return marks;
 }
 
-/** Probability that two beds share a zone, from their own zone probabilities. */
-function sameZone(beds: readonly ClockBed[], zoning: Zoning | null) {
-  const probabilities = beds.map((bed) =>
-    zoning === null ? null : assignZone(bed.mean, bed.se, zoning.priors).probabilities,
+/** Probability that two beds share a zone, the doubt about the zones counted in where they were bootstrapped. */
+function sameZoneOf(beds: readonly ClockBed[], zoning: Zoning | null, support: ZoneSupport | null) {
+  if (zoning === null || support === null || beds.length > MOST_BEDS_IN_PAIRS) return () => null;
+  if (support.bootstraps.length === 0) return () => 1;
+  const same = sameZone(
+    beds.map((bed) => bed.mean),
+    beds.map((bed) => bed.se),
+    support.bootstraps,
   );
-  return (a: number, b: number): number | null => {
-    const [first, second] = [probabilities[a], probabilities[b]];
-    return first === null || second === null ? null : first.reduce((sum, p, zone) => sum + p * second[zone], 0);
-  };
+  return (a: number, b: number): number => same[a * beds.length + b];
 }
 
 function sectionRows(

@@ -21,7 +21,7 @@ import {
 } from './order/index.js';
 import { type Random, studentTCdf } from './statistics/index.js';
 import { checkRelations, type RelationCheck } from './superposition/relation-checks.js';
-import { findZones, type Zoning } from './zones/index.js';
+import { findZones, type ModelChoice, type Zoning } from './zones/index.js';
 
 /** What is the same for every clock of a run. */
 export interface RunContext {
@@ -82,19 +82,32 @@ export function runPass(context: RunContext, clock: Clock, set: ClockSet, left: 
 
 /** Design 7.3 to 7.7 over bed means that still hold any slope along the gradient. */
 export function passOver(context: RunContext, plain: ClockData, left: LeftOut, random: Random): Pass {
-  const { options } = context;
-  const { clock } = plain;
   const gradient = context.gradient === null ? null : slopeOf(plain, context.gradient, left.mixed);
   const data = gradient === null ? plain : withSlope(plain, gradient);
+  return zoneAndCheck(context, { data, gradient, relations: relationsOf(context, data) }, left, random);
+}
+
+/** The same pass with another choice of the number of zones, made on the same beds. */
+export function rezonePass(context: RunContext, pass: Pass, left: LeftOut, random: Random, choice: ModelChoice): Pass {
+  return zoneAndCheck(context, pass, left, random, choice);
+}
+
+function zoneAndCheck(
+  { options }: RunContext,
+  { data, gradient, relations }: Pick<Pass, 'data' | 'gradient' | 'relations'>,
+  left: LeftOut,
+  random: Random,
+  choice?: ModelChoice,
+): Pass {
   const zoning = findZones(data, {
     alpha: options.alpha,
-    zones: clock.main ? options.zones : null,
+    zones: data.clock.main ? options.zones : null,
     random: random.fork(1),
     extraParameters: gradient?.used ? 1 : 0,
     simulations: options.simulations,
     leaveOut: left.mixed,
+    choice,
   });
-  const relations = relationsOf(context, data);
   const checks = checkRelations(relations, data.beds, {
     alpha: options.alpha,
     df: testingDf(data.scatter),

@@ -18,6 +18,7 @@ import { remarks } from './remarks.js';
 import { screenShells } from './screening/index.js';
 import { createRandom, type Random } from './statistics/index.js';
 import { VERSION } from './version.js';
+import { supportZones } from './zone-support.js';
 
 /**
  * The whole way of the data: average, screen, choose clocks; for each clock find zones, check relations and read odd shells
@@ -117,15 +118,26 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
   /** The order and all rows of a main clock, then each amino acid zoned by itself. */
   async function rowsOfClocks({ set, settled }: SettledClock, own: Random): Promise<ClockResult[]> {
     const name = set.main.name;
+    const { settled: last, support } = await supportZones(context, settled, own.fork(5), host);
     host.progress(`order of ${name}`, 0);
-    const order = orderClock(settled.last, options.alpha, own.fork(2), (fraction) =>
+    const order = orderClock(last.last, options.alpha, own.fork(2), (fraction) =>
       host.progress(`order of ${name}`, fraction),
     );
     const singles = set.singles.map((clock, k) => {
       host.progress(`each amino acid of ${name}`, k / set.singles.length);
       return runPass(context, clock, set, settled.left, own.fork(100 + k));
     });
-    return clockFindings({ context, set, settled, order, singles, sites, sections, host, random: own.fork(3) });
+    return clockFindings({
+      context,
+      set,
+      settled: last,
+      support,
+      order,
+      singles,
+      sites,
+      sections,
+      random: own.fork(3),
+    });
   }
 
   /** What is to be said of the coast, the laboratories and the taxa, beside what each clock says of itself. */

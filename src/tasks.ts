@@ -1,7 +1,8 @@
 import type { Task } from './model/index.js';
+import { bootstrapLikelihoodRatio, bootstrapZones } from './zones/index.js';
 
 /** The pure functions that a host may run on workers, by name. */
-const TASKS: Readonly<Record<string, (argument: never) => unknown>> = {};
+const TASKS: Readonly<Record<string, (argument: never) => unknown>> = { bootstrapLikelihoodRatio, bootstrapZones };
 
 /**
  * Runs one task: what a worker thread, or a host without any, calls.

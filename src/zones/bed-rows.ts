@@ -1,5 +1,5 @@
 import type { BedMark, BedPlace, BedRow, ClockBed, ClockData, PublishedSummary, Shell } from '../model/index.js';
-import { assignZone } from './assignment.js';
+import { type Assignment, assignZone } from './assignment.js';
 import { zoneName } from './zone-rows.js';
 import type { Zoning } from './zoning.js';
 
@@ -17,6 +17,8 @@ export interface BedRowInput {
   readonly shells: readonly Shell[];
   readonly summaries: readonly PublishedSummary[];
   readonly notes: (bed: ClockBed) => BedNotes;
+  /** Zone of a log ratio with its error. Default: from the zones of the fit alone. */
+  readonly assign?: (x: number, error: number) => Assignment;
 }
 
 /** Rows of beds.csv for one clock, in the order of ClockData. D/L statistics are of the shells kept, on the D/L scale. */
@@ -29,9 +31,10 @@ export function bedRows(input: BedRowInput): BedRow[] {
     const key = `${summary.section}/${summary.bed}`;
     published.set(key, [...(published.get(key) ?? []), summary]);
   }
+  const assign = ({ priors }: Zoning) => input.assign ?? ((x: number, error: number) => assignZone(x, error, priors));
   return data.beds.map((bed) => {
     const { place, marks, reading } = notes(bed);
-    const assignment = zoning === null || bed.n === 0 ? null : assignZone(bed.mean, bed.se, zoning.priors);
+    const assignment = zoning === null || bed.n === 0 ? null : assign(zoning)(bed.mean, bed.se);
     return {
       clock: data.clock.name,
       section: bed.section,

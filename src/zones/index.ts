@@ -31,7 +31,7 @@ export type { BootstrapZones, BootstrapZonesArgument } from './stability.js';
 export { assignOverDraws, bootstrapZones, sameZone, stabilityOf, stabilityTasks, zoneMeanErrors } from './stability.js';
 export type { ZoneErrors } from './zone-errors.js';
 export { unbiasedSpread, zoneErrors } from './zone-errors.js';
-export type { CountCriteria } from './zone-rows.js';
+export type { CountCriteria, ZoneRowSupport } from './zone-rows.js';
 export { adjacentZonesRows, zoneCountRows, zoneName, zoneRows } from './zone-rows.js';
 export type { Zoning, ZoningOptions } from './zoning.js';
 export { bestLabels, findZones } from './zoning.js';

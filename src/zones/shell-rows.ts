@@ -1,5 +1,5 @@
 import type { ClockData, Confidence, Shell, ShellMark, ShellReading, ShellRow, ShellStatus } from '../model/index.js';
-import { assignZone } from './assignment.js';
+import { type Assignment, assignZone } from './assignment.js';
 import { zoneName } from './zone-rows.js';
 import type { Zoning } from './zoning.js';
 
@@ -15,17 +15,20 @@ export interface ShellNotes {
  * Rows of shells.csv for one clock. The zone is the shell's own, from its log ratio (gradient taken out) and the scatter;
  * the residual is against the mean of its bed's other kept shells.
  * @param notes by index into ClockData.shells
+ * @param assign zone of a log ratio with its error; default from the zones of the fit alone
  */
 export function shellRows(
   data: ClockData,
   zoning: Zoning | null,
   shells: readonly Shell[],
   notes: (at: number) => ShellNotes,
+  assign?: (x: number, error: number) => Assignment,
 ): ShellRow[] {
   return data.shells.map((clockShell, at) => {
     const shell = shells[clockShell.shell];
     const x = clockShell.x - data.slope * data.beds[clockShell.bed].gradient;
-    const assignment = zoning === null ? null : assignZone(x, data.scatter.s, zoning.priors);
+    const assignment =
+      zoning === null ? null : (assign?.(x, data.scatter.s) ?? assignZone(x, data.scatter.s, zoning.priors));
     const { status, marks, reading, confidence } = notes(at);
     return {
       clock: data.clock.name,

@@ -1,20 +1,29 @@
 import type { AdjacentZonesRow, ClockData, ZoneCountRow, ZoneRow } from '../model/index.js';
 import { studentTQuantile } from '../statistics/index.js';
-import { assignZone } from './assignment.js';
+import { type Assignment, assignZone } from './assignment.js';
 import type { Zoning } from './zoning.js';
 
 /** Name of a zone in tables: Z1 is the youngest. */
 export const zoneName = (zone: number): string => `Z${zone + 1}`;
 
-/** Rows of zones.csv for one clock, the youngest zone first. Stability comes from a bootstrap, null without one. */
-export function zoneRows(data: ClockData, zoning: Zoning, stability: readonly (number | null)[] = []): ZoneRow[] {
+/** What a bootstrap adds to the rows of zones.csv. */
+export interface ZoneRowSupport {
+  readonly stability: readonly (number | null)[];
+  /** Standard errors of the zone means. */
+  readonly meanErrors: readonly number[];
+  readonly assign: (x: number, error: number) => Assignment;
+}
+
+/** Rows of zones.csv for one clock, the youngest zone first. Without a bootstrap stability is null. */
+export function zoneRows(data: ClockData, zoning: Zoning, support: ZoneRowSupport | null = null): ZoneRow[] {
   const { fit, priors, df } = zoning;
   const shellSd = Math.hypot(data.scatter.s, fit.tau);
   // beds of mixed age found no zone, but stand in the one they fit best
-  const zoneOfBed = data.beds.map((bed) => (bed.n > 0 ? assignZone(bed.mean, bed.se, priors).zone : -1));
+  const assign = support?.assign ?? ((x: number, error: number) => assignZone(x, error, priors));
+  const zoneOfBed = data.beds.map((bed) => (bed.n > 0 ? assign(bed.mean, bed.se).zone : -1));
   return fit.means.map((mean, j) => {
     const members = data.beds.flatMap((_, bed) => (zoneOfBed[bed] === j ? [bed] : []));
-    const half = studentTQuantile(0.975, Math.max(1, df[j])) * priors.se[j];
+    const half = studentTQuantile(0.975, Math.max(1, df[j])) * (support?.meanErrors[j] ?? priors.se[j]);
     return {
       clock: data.clock.name,
       zone: zoneName(j),
@@ -25,7 +34,7 @@ export function zoneRows(data: ClockData, zoning: Zoning, stability: readonly (n
       dl_high: Math.exp(mean + half),
       shell_low: Math.exp(mean - shellSd),
       shell_high: Math.exp(mean + shellSd),
-      stability: stability[j] ?? null,
+      stability: support?.stability[j] ?? null,
     };
   });
 }
