@@ -37,7 +37,7 @@ export function aminoAcidFindings(
     { clock, alpha: options.alpha },
   );
   const shares = aminoAcidShares(set.index, clock);
-  return { votes, shares, remarks: [...shareRemarks(clock, shares), ...checkRemarks()] };
+  return { votes, shares, remarks: checkRemarks() };
 
   function checkRemarks(): Remark[] {
     const { data, zoning } = last;
@@ -65,17 +65,4 @@ export function aminoAcidFindings(
       { clock, level, text: `Grouping the beds by k-means on all amino acids ${said} (adjusted Rand index ${rand}).` },
     ];
   }
-}
-
-function shareRemarks(clock: string, shares: readonly AminoAcidShare[]): Remark[] {
-  const names = (verdict: AminoAcidShare['verdict']) =>
-    shares.filter((share) => share.verdict === verdict).map((share) => share.amino_acid);
-  const [carry, noise] = [names('carries the resolution'), names('adds noise')];
-  const parts = [
-    carry.length > 0
-      ? `${carry.join(', ')} ${carry.length > 1 ? 'carry' : 'carries'} the resolution of the index`
-      : null,
-    noise.length > 0 ? `${noise.join(', ')} ${noise.length > 1 ? 'add' : 'adds'} noise` : null,
-  ].filter((part) => part !== null);
-  return parts.length === 0 ? [] : [{ clock, level: 'finding', text: `${parts.join('; ')}.` }];
 }

@@ -9,7 +9,12 @@ export type Complaints = (message: string) => void;
 export type OptionReader<T> = (name: string, value: unknown, complain: Complaints) => T | undefined;
 
 /** Limits of the numbers that may be asked for. */
-export const OPTION_LIMITS = { zones: 50, simulations: 100_000, seed: 2 ** 32 - 1 } as const;
+export const OPTION_LIMITS = {
+  zones: 50,
+  simulations: 100_000,
+  seed: 2 ** 32 - 1,
+  alpha: { from: 1e-6, below: 0.5 },
+} as const;
 
 function wholeNumber(low: number, high: number, advice: string): OptionReader<number> {
   return (name, value, complain) => {
@@ -29,11 +34,11 @@ export const readSimulations = wholeNumber(1, OPTION_LIMITS.simulations, '999 is
 /** Seed of the random numbers. */
 export const readSeed = wholeNumber(0, OPTION_LIMITS.seed, '1 is the default.');
 
-/** Level of the tests: above 0, below 1. */
+/** Level of the tests: beyond these ends a test says always yes, or never. */
 export const readAlpha: OptionReader<number> = (name, value, complain) => {
   const number = asNumber(value);
-  if (number > 0 && number < 1) return number;
-  complain(`${name} ${shown(value)}: a probability above 0 and below 1 was wanted, such as 0.05.`);
+  if (number >= OPTION_LIMITS.alpha.from && number < OPTION_LIMITS.alpha.below) return number;
+  complain(`${name} ${shown(value)}: a probability from 0.000001 to below 0.5 was wanted, such as 0.05.`);
   return undefined;
 };
 

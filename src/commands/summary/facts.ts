@@ -41,6 +41,8 @@ export interface ClockFacts {
   readonly clock: ClockRow;
   /** Number of zones asked for with --zones; null where the data chose. */
   readonly forced: number | null;
+  /** How the number of zones was chosen and which criteria agree; null where nothing was chosen. */
+  readonly choice: string | null;
   readonly models: readonly ZoneCountRow[];
   /** Oldest first. */
   readonly zones: readonly ZoneRow[];
@@ -101,6 +103,7 @@ function clockFacts(findings: Findings, clock: ClockRow): ClockFacts {
     clock,
     forced: findings.options.zones,
     models: mine(findings.zone_counts),
+    choice: mine(findings.evidence).find(({ about }) => about === 'clock')?.sentences[0] ?? null,
     zones: [...mine(findings.zones)].sort((a, b) => b.dl_mean - a.dl_mean),
     adjacent: mine(findings.adjacent_zones),
     shares: mine(findings.shares),

@@ -4,7 +4,8 @@ import type { ClockFacts } from './facts.js';
 
 /** The zones of one clock: what decided on their number, and a table of them, oldest first. */
 export function zonesText(facts: ClockFacts, style: Style): string[] {
-  const lines = [wrap(`  ${style.bold(headline(facts))} ${decided(facts)}`.trimEnd(), 78, 2)];
+  const [first, ...more] = headline(facts).split(/(?<=\.) /);
+  const lines = [wrap(`  ${[style.bold(first), ...more, decided(facts)].join(' ')}`.trimEnd(), 78, 2)];
   const { zones } = facts;
   if (zones.length === 0) return lines;
   const withStability = zones.some(({ stability }) => stability !== null);
@@ -30,7 +31,8 @@ export function zonesText(facts: ClockFacts, style: Style): string[] {
   return [...lines, style.dim(top), ...rest, ...notDistinct(facts)];
 }
 
-function headline({ clock, forced }: ClockFacts): string {
+function headline({ clock, forced, choice }: ClockFacts): string {
+  if (choice !== null) return choice;
   const supported = {
     zones: `${clock.zones} zones are supported.`,
     'one zone': 'No separate zones are supported: all beds agree with one.',
@@ -42,7 +44,7 @@ function headline({ clock, forced }: ClockFacts): string {
   return `${counted(forced, 'zone')} asked for with --zones; ${meant}.`;
 }
 
-function decided({ models, clock, forced }: ClockFacts): string {
+function decided({ models, clock, forced, choice }: ClockFacts): string {
   if (models.length < 2) return '';
   const ordered = [...models].sort((a, b) => a.bic - b.bic);
   const rival = ordered.find((row) => (row.model === 'continuum') !== (ordered[0].model === 'continuum')) ?? ordered[1];
@@ -50,7 +52,7 @@ function decided({ models, clock, forced }: ClockFacts): string {
   const against = [...new Set([next, rival])].map((row) => `${gain(row, ordered[0])} above ${modelName(row, 'the')}`);
   const best = `BIC is lowest for ${modelName(ordered[0], 'the')} (${figure(ordered[0].bic, 4)}): `;
   const joined =
-    forced === null && clock.verdict === 'zones' && ordered[0].model !== String(clock.zones)
+    choice === null && forced === null && clock.verdict === 'zones' && ordered[0].model !== String(clock.zones)
       ? ` Neighbours that fail the overlap test were joined, which leaves ${clock.zones}.`
       : '';
   return `${best}${against.map((words) => words.replace(' above ', ' less than for ')).join(', ')}.${joined}`;
