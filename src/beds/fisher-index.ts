@@ -1,5 +1,7 @@
 import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
 import type { AminoAcid } from '../model/index.js';
+import { aminoAcidAgreement } from './amino-acid-agreement.js';
+import { imputationFrom } from './imputation.js';
 import type { Imputation } from './log-ratios.js';
 
 /** One amino acid's part in the index. */
@@ -14,13 +16,16 @@ export interface IndexShare {
 /** The index of several amino acids. */
 export interface FisherIndex {
   readonly shares: readonly IndexShare[];
-  readonly imputation: Imputation;
+  /** How gaps are filled; undefined where too few shells have every amino acid. */
+  readonly imputation: Imputation | undefined;
   /** `fisher`, or what stood in where beds or shells are too few to estimate covariances. */
   readonly basis: 'fisher' | 'separate resolutions' | 'equal weights';
   /** Pooled covariance of log ratios within beds, regularised; amino acids in order. */
   readonly within: readonly (readonly number[])[];
   /** Covariance of true bed values: errors of the bed means taken out, no variance below 0. */
   readonly between: readonly (readonly number[])[];
+  /** Variance between beds that each amino acid shares with no other; 0 where all agree. */
+  readonly own: readonly number[];
 }
 
 /**
@@ -32,7 +37,8 @@ export interface FisherIndex {
  * doi:10.1080/01621459.1989.10478752) by (p + 1)/(df + p + 1). Every ratio grows with age, so a negative weight could only
  * cancel shared error and would turn a contaminated amino acid's fall into a rise: such an amino acid gets weight 0 and
  * the rest are solved again. Shells more than 4 robust standard deviations from their bed's median take no part, so that
- * reworked shells do not bend the direction.
+ * reworked shells do not bend the direction. Variance between beds that an amino acid shares with no other is no age, and
+ * counts as error: see {@link aminoAcidAgreement}.
  *
  * @param rows log ratios, one row a shell, NaN where not measured
  * @param beds bed label of each row
@@ -51,19 +57,37 @@ export function fisherIndex(
   const counts = groups.map((group) => group.length);
   const between = betweenCovariance(bedMeans, counts, within, size);
   const total = within.map((row, i) => row.map((value, j) => value + between.covariance[i][j]));
-  const imputation = { mean: between.mean, covariance: total };
+  const complete = counts.reduce((sum, count) => sum + count, 0);
+  const imputation = imputationFrom(between.mean, total, complete, groups.length);
   const resolution = within.map((row, i) => (row[i] > 0 ? Math.max(0, between.covariance[i][i]) / row[i] : 0));
   const basis = df < 2 * size || groups.length < 4 ? (df < size ? 'equal weights' : 'separate resolutions') : 'fisher';
   const shrinkage = (size + 1) / (df + size + 1);
   const shrunk = within.map((row, i) => row.map((value, j) => (i === j ? value : value * (1 - shrinkage))));
-  const weights = weigh(basis, shrunk, between.raw, resolution, size);
+  const { own, alone } = aminoAcidAgreement({
+    covariance: between.covariance,
+    raw: between.raw,
+    within,
+    betweenDf: groups.length - 1,
+    withinDf: df,
+    shells: between.effective,
+  });
+  const weights =
+    alone === null
+      ? weigh(basis, withOwn(shrunk, own, between.effective), between.raw, resolution, size)
+      : codes.map((_, i) => (i === alone ? 1 : 0));
   return {
     shares: codes.map((amino_acid, i) => ({ amino_acid, weight: weights[i], resolution: resolution[i] })),
     imputation,
     basis,
     within: shrunk,
     between: between.covariance,
+    own,
   };
+}
+
+/** Within-bed covariance with each amino acid's own variance between beds, on the scale of one shell. */
+function withOwn(within: readonly (readonly number[])[], own: readonly number[], shells: number): number[][] {
+  return within.map((row, i) => row.map((value, j) => (i === j ? value + shells * own[i] : value)));
 }
 
 /**
@@ -228,9 +252,9 @@ function betweenCovariance(
   const df = Math.max(1, means.length - 1);
   const effective = n > 0 ? (n - counts.reduce((sum, count) => sum + count ** 2, 0) / n) / df : 1;
   for (const row of raw) for (let j = 0; j < size; j++) row[j] /= df;
-  const covariance = raw.map((row, i) => row.map((value, j) => (value - within[i][j]) / Math.max(effective, 1e-9)));
+  const covariance = raw.map((row, i) => row.map((value, j) => (effective > 0 ? (value - within[i][j]) / effective : 0)));
   for (let i = 0; i < size; i++) covariance[i][i] = Math.max(0, covariance[i][i]);
-  return { raw, covariance, mean };
+  return { raw, covariance, mean, effective };
 }
 
 function addOuter(target: number[][], row: readonly number[], mean: readonly number[], weight: number): void {

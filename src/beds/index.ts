@@ -1,3 +1,5 @@
+export type { Agreement, BedVariances } from './amino-acid-agreement.js';
+export { AGREES, aminoAcidAgreement } from './amino-acid-agreement.js';
 export { aminoAcidShares, CARRIES, HARDLY } from './amino-acid-shares.js';
 export type { Averages } from './averaging.js';
 export { averageAnalyses } from './averaging.js';
