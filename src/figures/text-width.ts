@@ -7,6 +7,8 @@ const WIDTHS = [
   260, 334, 584,
 ];
 
+const SLIMMEST = Math.min(...WIDTHS);
+
 /**
  * Width of a line of plain Helvetica (or Arial) in the unit of `size`. Letters beyond ASCII count as 0.6 of the size,
  * beyond Latin and Greek as a whole one.
@@ -34,7 +36,9 @@ export function textWidth(text: string, size: number): number {
 export function shorten(text: string, size: number, width: number): string {
   if (textWidth(text, size) <= width) return text;
   const letters = [...text];
-  for (let keep = letters.length - 1; keep > 1; keep--) {
+  // no more than so many of the slimmest letters fit, so a name of thousands of letters costs no more than a short one
+  const most = Math.ceil((width * 1000) / (size * SLIMMEST));
+  for (let keep = Math.min(letters.length - 1, most); keep > 1; keep--) {
     const head = Math.ceil(keep * 0.55);
     const short = `${letters.slice(0, head).join('')}…${letters.slice(letters.length - (keep - head)).join('')}`;
     if (textWidth(short, size) <= width) return short;

@@ -87,8 +87,7 @@ export function relationsTable(view: ClockView): Markup {
   const shown = atMost(rows);
   return html`${table(`Field relations on ${view.clock.clock}`, columns, shown, (row): RowTies => {
     const beds = [row.lower, row.upper].flatMap((key) => view.byKey.get(key)?.id ?? []);
-    const number = numbers.get(row);
-    return { id: number === undefined ? undefined : `relation-${view.index}-${number}`, beds, clock: view.index };
+    return { beds, clock: view.index };
   })}${cut(shown.length, rows.length, 'relations.csv')}`;
 }
 

@@ -8,6 +8,7 @@ import { type HtmlValue, html, type Markup } from './html.js';
 import { methods } from './methods.js';
 import { counted } from './numbers.js';
 import { oddShells } from './odd-shells.js';
+import { reversedRelations } from './reversed-relations.js';
 import { clocksTable, problemsTable, sectionsTable, sharesTable, votesTable, zoneCountsTable } from './run-tables.js';
 import { findingsInSentences } from './sentences.js';
 
@@ -26,14 +27,11 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
     figures
       .filter((figure) => views.some((view) => figure.name.replace(/-part-\d+$/, '') === kind + view.suffix))
       .map((figure) => figureBlock(figure, figures, views));
-  const evidence = new Map(
-    findings.evidence.filter((row) => row.about === 'shell').map((row) => [row.clock + row.name, row.sentences]),
-  );
-  const evidenceOf = (view: ClockView) =>
+  const evidenceOf = (view: ClockView, about: 'shell' | 'relation') =>
     new Map(
-      [...evidence].flatMap(([key, value]) =>
-        key.startsWith(view.clock.clock) ? [[key.slice(view.clock.clock.length), value] as const] : [],
-      ),
+      findings.evidence
+        .filter((row) => row.about === about && row.clock === view.clock.clock)
+        .map((row) => [row.name, row.sentences]),
     );
   const all: (Part | null)[] = [
     part('findings', 'What was found', 'Findings', [
@@ -45,6 +43,7 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
     part('order', 'Order of the beds', 'Order', drawn('ranks')),
     part('heights', 'Do older beds stand higher?', 'Heights', drawn('heights')),
     part('relations', 'Does the field agree?', 'Relations', [
+      views.map((view) => reversedRelations(view, evidenceOf(view, 'relation'))),
       drawn('relations'),
       views.some((view) => view.relations.length > 0)
         ? views.filter((view) => view.relations.length > 0).map(relationsTable)
@@ -55,7 +54,7 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
       'odd',
       'Shells set aside, and why',
       'Odd shells',
-      views.map((view) => oddShells(view, evidenceOf(view))),
+      views.map((view) => oddShells(view, evidenceOf(view, 'shell'))),
     ),
     part('number-of-zones', 'How many zones?', 'Number of zones', [
       html`<div class="figures">${[drawn('zones'), drawn('zone-counts')]}</div>`,

@@ -108,6 +108,8 @@ td a[data-b],th a[data-b]{white-space:nowrap}
 .odd p{margin:0;max-width:none}
 .odd .what{font:.9375rem/1.5 Helvetica,Arial,sans-serif}
 .odd .why{color:var(--soft);font-size:.9375rem;line-height:1.5;max-width:56rem}
+.odd .why li{padding:0;border:0}
+.odd ul.why{margin:.2rem 0 0;padding-left:1.1rem;list-style:disc}
 .figures{display:flex;flex-wrap:wrap;gap:0 2.2rem;align-items:flex-start}
 .figures figure{flex:1 1 22rem;min-width:0}
 .figures figure.wide{flex-basis:100%}

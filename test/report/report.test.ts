@@ -111,6 +111,27 @@ describe('the page', () => {
     expect(data.beds[0][2]).toContain(name);
   });
 
+  it('puts reversed relations first, each with its reading and evidence', () => {
+    const findings = fixture();
+    const worst = findings.relations.filter((row) => row.verdict_after === 'reversed').sort((a, b) => a.z! - b.z!)[0];
+    const html = renderReport({
+      ...findings,
+      evidence: [
+        {
+          clock: worst.clock,
+          about: 'relation',
+          name: `${worst.lower} > ${worst.upper}`,
+          sentences: ['First <word>.', 'Second word.'],
+        },
+      ],
+    });
+    const entry = between(html, '<li id="relation-0-R1"', '</ul></li>');
+    expect(words(entry)).toContain(worst.reading);
+    expect(entry).toContain('First &lt;word&gt;.');
+    expect(entry).toContain('<li>Second word.</li>');
+    expect(words(entry)).toContain(`${worst.lower} below ${worst.upper}: reversed`);
+  });
+
   it('shows cautions, settings, sources and input checksums', () => {
     const text = words(page());
     expect(text).toContain('The order is relative');
