@@ -19,6 +19,8 @@ export function remarks(findings: Findings): Remark[] {
 
 function doubts(findings: Findings, row: ClockRow): Remark[] {
   const said: (string | null)[] = [
+    aminoAcidsNotJoined(findings, row),
+    shellsWithoutValue(findings, row),
     unsettledSampling(findings, row),
     assumedScatter(findings, row),
     straddlingBeds(findings, row),
@@ -26,6 +28,24 @@ function doubts(findings: Findings, row: ClockRow): Remark[] {
     nothingToCheck(findings, row),
   ];
   return said.flatMap((text) => (text === null ? [] : [{ clock: row.clock, level: 'caution' as const, text }]));
+}
+
+function aminoAcidsNotJoined({ options }: Findings, { amino_acids }: ClockRow): string | null {
+  const wanted = options.amino_acid;
+  if (!Array.isArray(wanted) || wanted.length < 2 || amino_acids.length > 1) return null;
+  return `No shell of this taxon has all of ${wanted.join(', ')}, so they make no index: ${amino_acids[0]} is used alone.`;
+}
+
+function shellsWithoutValue(findings: Findings, { clock, taxon, fraction, amino_acids }: ClockRow): string | null {
+  // a clock of converted taxa has no row a shell
+  if (findings.conversions.some((conversion) => conversion.clock === clock)) return null;
+  const all = findings.shell_ratios.filter((shell) => shell.taxon === taxon && shell.fraction === fraction).length;
+  const missing = all - findings.shells.filter((shell) => shell.clock === clock && shell.taxon === taxon).length;
+  if (!(missing > 0)) return null;
+  const which = `${missing} of ${all} shells ${missing === 1 ? 'stands' : 'stand'} in no table of this clock`;
+  return amino_acids.length === 1
+    ? `${which}: ${amino_acids[0]} was not measured on ${missing === 1 ? 'it' : 'them'}.`
+    : `${which}: not all of ${amino_acids.join(', ')} were measured, and too few shells have them all to fill the gap.`;
 }
 
 function unsettledSampling(findings: Findings, { clock }: ClockRow): string | null {

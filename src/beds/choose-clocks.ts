@@ -62,8 +62,9 @@ function clocksOf(
     weights: [1],
     main,
   });
-  const chosen = chooseAminoAcids(measured, counts, counts.get('all')!, wanted);
-  if (chosen.length === 0) return null;
+  const asked = chooseAminoAcids(measured, counts, counts.get('all')!, wanted);
+  if (asked.length === 0) return null;
+  const chosen = bedsWithAll(asked, shells, summaries) > 0 ? asked : [mostMeasured(asked, counts)];
   if (chosen.length === 1) {
     const singles = measured.filter((code) => code !== chosen[0]).map((code) => single(code, false));
     return { main: single(chosen[0], true), index: null, singles };
@@ -115,5 +116,28 @@ function chooseAminoAcids(
   if (wanted !== null) return wanted.filter((code) => measured.includes(code));
   const enough = measured.filter((code) => counts.get(code)! >= SHARE_FOR_INDEX * all);
   if (enough.length > 0) return enough;
-  return [measured.reduce((most, code) => (counts.get(code)! > counts.get(most)! ? code : most))];
+  return [mostMeasured(measured, counts)];
+}
+
+function mostMeasured(codes: readonly AminoAcid[], counts: ReadonlyMap<AminoAcid | 'all', number>): AminoAcid {
+  return codes.reduce((most, code) => (counts.get(code)! > counts.get(most)! ? code : most));
+}
+
+/** Beds in which all of these were measured on one shell, or published together: an index needs them so. */
+function bedsWithAll(
+  codes: readonly AminoAcid[],
+  shells: readonly Shell[],
+  summaries: readonly PublishedSummary[],
+): number {
+  const beds = new Set<string>();
+  for (const { section, bed, ratios } of shells) {
+    if (codes.every((code) => ratios[code] !== undefined)) beds.add(bedKey(section, bed));
+  }
+  const published = new Map<string, Set<AminoAcid>>();
+  for (const { section, bed, amino_acid } of summaries) {
+    const key = bedKey(section, bed);
+    published.set(key, (published.get(key) ?? new Set()).add(amino_acid));
+  }
+  for (const [key, own] of published) if (codes.every((code) => own.has(code))) beds.add(key);
+  return beds.size;
 }

@@ -26,6 +26,8 @@ export interface FisherIndex {
   readonly between: readonly (readonly number[])[];
   /** Variance between beds that each amino acid shares with no other; 0 where all agree. */
   readonly own: readonly number[];
+  /** Shells a bed that the covariances rest on, beds of few shells counted for more. */
+  readonly shellsABed: number;
 }
 
 /**
@@ -59,7 +61,7 @@ export function fisherIndex(
   const total = within.map((row, i) => row.map((value, j) => value + between.covariance[i][j]));
   const complete = counts.reduce((sum, count) => sum + count, 0);
   const imputation = imputationFrom(between.mean, total, complete, groups.length);
-  const resolution = within.map((row, i) => (row[i] > 0 ? Math.max(0, between.covariance[i][i]) / row[i] : 0));
+  const resolution = within.map((row, i) => (row[i] > 1e-15 ? Math.max(0, between.covariance[i][i]) / row[i] : 0));
   const basis = df < 2 * size || groups.length < 4 ? (df < size ? 'equal weights' : 'separate resolutions') : 'fisher';
   const shrinkage = (size + 1) / (df + size + 1);
   const shrunk = within.map((row, i) => row.map((value, j) => (i === j ? value : value * (1 - shrinkage))));
@@ -82,6 +84,7 @@ export function fisherIndex(
     within: shrunk,
     between: between.covariance,
     own,
+    shellsABed: between.effective,
   };
 }
 
@@ -105,7 +108,7 @@ export function indexResolution(index: FisherIndex, without?: number): number {
   const weights =
     without === undefined
       ? kept.map((at) => index.shares[at].weight)
-      : weigh(index.basis, within, between, own, kept.length);
+      : weigh(index.basis, sub(withOwn(index.within, index.own, index.shellsABed)), between, own, kept.length);
   const form = (matrix: number[][]): number =>
     weights.reduce((sum, w, i) => sum + weights.reduce((row, v, j) => row + w * v * matrix[i][j], 0), 0);
   const error = form(within);
@@ -252,7 +255,9 @@ function betweenCovariance(
   const df = Math.max(1, means.length - 1);
   const effective = n > 0 ? (n - counts.reduce((sum, count) => sum + count ** 2, 0) / n) / df : 1;
   for (const row of raw) for (let j = 0; j < size; j++) row[j] /= df;
-  const covariance = raw.map((row, i) => row.map((value, j) => (effective > 0 ? (value - within[i][j]) / effective : 0)));
+  const covariance = raw.map((row, i) =>
+    row.map((value, j) => (effective > 0 ? (value - within[i][j]) / effective : 0)),
+  );
   for (let i = 0; i < size; i++) covariance[i][i] = Math.max(0, covariance[i][i]);
   return { raw, covariance, mean, effective };
 }

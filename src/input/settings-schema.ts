@@ -43,7 +43,7 @@ export const SETTINGS = z.strictObject({
   amino_acid: codes.optional(),
   fraction: word(['THAA', 'FAA']).optional(),
   zones: whole(1, 50).optional(),
-  alpha: number('a number above 0 and below 1 is wanted', (v) => v > 0 && v < 1).optional(),
+  alpha: number('a number from 0.000001 to below 0.5 is wanted', (v) => v >= 1e-6 && v < 0.5).optional(),
   gradient: name.optional(),
   reference_taxon: name.optional(),
   staircase: z.preprocess((value) => (value === false ? 'no' : value), word(['no', 'section', 'coast'])).optional(),

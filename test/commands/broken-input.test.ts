@@ -80,6 +80,8 @@ describe('broken options', () => {
     [['--zones', 'two'], /--zones two/],
     [['--zones', '2.5'], /--zones 2\.5/],
     [['--alpha', '2'], /--alpha 2: a probability/],
+    [['--alpha', '1e-300'], /--alpha 1e-300: a probability/],
+    [['--alpha', '0.5'], /--alpha 0.5: a probability/],
     [['--alpha', 'NaN'], /--alpha NaN/],
     [['--seed', '-1'], /--seed -1/],
     [['--simulations', '0'], /--simulations 0/],

@@ -97,8 +97,9 @@ screening:
   });
 
   it.each([
-    ['alpha: 1', 1, /above 0 and below 1/],
-    ['alpha: .nan', 1, /above 0 and below 1/],
+    ['alpha: 0.5', 1, /from 0.000001 to below 0.5/],
+    ['alpha: 1e-9', 1, /from 0.000001 to below 0.5/],
+    ['alpha: .nan', 1, /from 0.000001 to below 0.5/],
     ['alpha: five', 1, /"five" came/],
     ['seed: 1.5', 1, /whole number/],
     ['\nzones: 0', 2, /whole number/],
