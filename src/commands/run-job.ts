@@ -75,7 +75,8 @@ async function drawn(findings: Findings) {
   progress('drawing', 1);
   const { drawFigures } = await import('../figures/index.js');
   const { renderReport } = await import('../report/index.js');
-  return { report: renderReport(findings), figures: drawFigures(findings) };
+  const figures = drawFigures(findings);
+  return { report: renderReport(findings, figures), figures };
 }
 
 async function words(findings: Findings, out: string): Promise<Told> {

@@ -57,6 +57,7 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
       views.map((view) => oddShells(view, evidenceOf(view, 'shell'))),
     ),
     part('number-of-zones', 'How many zones?', 'Number of zones', [
+      views.map((view) => chosen(findings, view.clock.clock, views.length > 1)),
       html`<div class="figures">${[drawn('zones'), drawn('zone-counts')]}</div>`,
       folded('Criteria for every number of zones', counted(views.length, 'clock'), zoneCountsTable(findings, views)),
     ]),
@@ -101,6 +102,13 @@ function part(id: string, heading: string, short: string, body: HtmlValue): Part
 
 function folded(name: string, size: string, body: HtmlValue): Markup {
   return html`<details><summary>${name} <span class="size">${size}</span></summary>${body}</details>`;
+}
+
+/** How the number of zones of a clock was chosen, and which criteria agree. */
+function chosen(findings: Findings, clock: string, named: boolean): Markup[] {
+  return findings.evidence
+    .filter((entry) => entry.about === 'clock' && entry.clock === clock)
+    .map(({ sentences }) => html`<p>${named ? html`<b>${clock}:</b> ` : ''}${sentences.join(' ')}</p>`);
 }
 
 function remarks(findings: Findings, level: 'finding' | 'caution'): Markup | null {
