@@ -4,6 +4,9 @@ import { fUpperTail } from '../statistics/index.js';
 /** Correlation of true bed values above which two amino acids are said to see the same thing. */
 export const AGREES = 0.6;
 
+/** Share of an amino acid's variance between beds above which what it has of its own counts. */
+const OWN_SHARE = 0.2;
+
 /** What the beds' values of several amino acids are made of. */
 export interface BedVariances {
   /** Covariance of true bed values, errors of the means taken out. */
@@ -30,8 +33,9 @@ export interface Agreement {
  * How far amino acids agree on the beds. Age moves all of them together, so only what they share between beds can be age:
  * one common factor is fitted to the covariances between amino acids (principal axes with communalities, Harman and Jones
  * 1966, doi:10.1007/BF02289468), and what is left of each variance is its own. Amino acids that don't vary between beds (F
- * test, p above 0.01) take no part; own variation under twice the beds' errors is taken as none, so that where all agree the
- * index stays Fisher's. With two amino acids shared and own variance can't be parted. Where no two correlate above 0.6,
+ * test, p above 0.01) take no part; own variance under a fifth of the whole (amino acids slow down at different ages, which bends
+ * their curves against each other) or own variation under twice the beds' errors is taken as none, so that where all agree
+ * the index stays Fisher's. With two amino acids shared and own variance can't be parted. Where no two correlate above 0.6,
  * a mean would mix unlike things, and the one that resolves best stands alone.
  */
 export function aminoAcidAgreement(variances: BedVariances): Agreement {
@@ -54,7 +58,7 @@ export function aminoAcidAgreement(variances: BedVariances): Agreement {
   const own = covariance.map(() => 0);
   varied.forEach((i, at) => {
     const rest = covariance[i][i] - shared[at];
-    if (rest > (4 * within[i][i]) / shells) own[i] = rest;
+    if (rest > OWN_SHARE * covariance[i][i] && rest > (4 * within[i][i]) / shells) own[i] = rest;
   });
   return { own, alone: null };
 }
