@@ -136,7 +136,8 @@ export function sameZone(
   }
   for (let a = 0; a < n; a++) {
     same[a * n + a] = 1;
-    for (let b = 0; b < a; b++) same[b * n + a] = same[a * n + b];
+    // many small shares may add up to a hair above 1
+    for (let b = 0; b < a; b++) same[b * n + a] = same[a * n + b] = Math.min(1, same[a * n + b]);
   }
   return same;
 }
@@ -154,7 +155,7 @@ export function assignOverDraws(x: number, error: number, bootstraps: readonly B
       probabilities[j] += p / bootstraps.length;
     });
   }
-  return assignmentOf(probabilities);
+  return assignmentOf(probabilities.map((p) => Math.min(1, p)));
 }
 
 /**
