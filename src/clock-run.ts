@@ -122,10 +122,12 @@ function slopeOf(data: ClockData, values: ReadonlyMap<string, number>, mixed: Re
   if (beds.length === 0) return null;
   const centre = beds.reduce((sum, bed) => sum + values.get(bed.key)!, 0) / beds.length;
   const sound = beds.filter((bed) => !mixed.has(bed.key));
+  const sections = [...new Set(sound.map((bed) => bed.section))];
   const fit = fitGradient(
     sound.map((bed) => bed.mean),
     sound.map((bed) => bed.se),
     sound.map((bed) => values.get(bed.key)! - centre),
+    sound.map((bed) => sections.indexOf(bed.section)),
   );
   if (fit === null) return null;
   return { ...fit, centre, values: new Map(beds.map((bed) => [bed.key, values.get(bed.key)! - centre])) };

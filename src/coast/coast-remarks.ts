@@ -87,7 +87,11 @@ export function gradientRemarks(
             clock,
           )
         : caution(
-            `The ratios support no slope along ${column}; the best is ${slope}, ${bics}. None is taken out.`,
+            `The ratios support no slope along ${column}; the best is ${slope}, ${bics}. None is taken out.${
+              fit.bic_with < fit.bic_without
+                ? ' The BIC counts every bed as a witness; sections differ by something of their own, and with that in the interval it holds 0.'
+                : ''
+            }`,
             clock,
           ),
     );

@@ -1,5 +1,6 @@
 import { studentTQuantile } from '../statistics/index.js';
-import { bic, fitContinuum, fitMixture, MOST_ZONES } from '../zones/index.js';
+import { bestLabels, bic, fitContinuum, fitMixture, MOST_ZONES } from '../zones/index.js';
+import { sectionWidening } from './section-widening.js';
 import { type BedsOnGradient, climb, type Model, profileEnd, slopeProfile, takeOut } from './slope-profile.js';
 import { slopeValleys } from './slope-valleys.js';
 
@@ -7,13 +8,13 @@ import { slopeValleys } from './slope-valleys.js';
 export interface GradientFit {
   /** Change of the log ratio per unit of the column; of either sign. */
   readonly slope: number;
-  /** 95 % interval from the profile of the likelihood. */
+  /** 95 % interval from the profile of the likelihood, widened for what the beds of one section share. */
   readonly low: number;
   readonly high: number;
   /** BIC of the best model with and without the slope, which counts as one parameter. */
   readonly bicWith: number;
   readonly bicWithout: number;
-  /** Whether the BIC is lower with the slope: else none is taken out. */
+  /** Whether the BIC is lower with the slope and the interval leaves 0 out: else none is taken out. */
   readonly used: boolean;
 }
 
@@ -32,10 +33,12 @@ const VALLEYS = 4;
  * slopes are refined with the full mixtures and the continuum, compared by BIC in which the slope counts as one parameter;
  * the interval is where the profile of the likelihood stays within t²/2 of its top (Pawitan 2001, In All Likelihood,
  * chapter 2, from memory), t the 97.5 % point of Student's t on beds less zones less 1: 1.92 with very many beds, more
- * with few.
+ * with few. Beds of one section share one temperature history, so the interval is widened by what sections are found
+ * to have of their own (`sectionWidening`).
  * @param values bed means of log ratios
  * @param errors their standard errors
  * @param gradient value of the column less its mean, one a bed
+ * @param sections number of the section of each bed. Default: each bed stands by itself
  * @returns null with fewer than 4 beds, or when the column does not vary over them
  * @example
  * fitGradient([-2, -1.9, -1.8], [0.02, 0.02, 0.02], [-1, 0, 1]) // => null
@@ -44,11 +47,13 @@ export function fitGradient(
   values: readonly number[],
   errors: readonly number[],
   gradient: readonly number[],
+  sections: readonly number[] = values.map((_, at) => at),
 ): GradientFit | null {
   const reach = spanOf(gradient);
   if (!(reach > 0) || values.length < FEWEST_BEDS_FOR_SLOPE) return null;
   const all: BedsOnGradient = { values, errors, gradient };
-  const few = thinned(all);
+  const chosen = evenChoice(values.length);
+  const few = chosen === null ? all : picked(all, chosen);
   const limit = (1.5 * Math.max(spanOf(values), 4 * Math.max(...errors))) / reach;
   const { valleys, step } = slopeValleys(few, limit);
   const flat = bestModel(few, 0, null);
@@ -68,14 +73,17 @@ export function fitGradient(
   const n = values.length;
   const bicWith = bicOf(top, model, n) + Math.log(n);
   const width = step / 8;
-  return {
-    slope,
-    low: profileEnd(profile, slope, top - drop, -width),
-    high: profileEnd(profile, slope, top - drop, width),
-    bicWith,
-    bicWithout,
-    used: bicWith < bicWithout,
-  };
+  const ofSections = chosen === null ? sections : chosen.map((at) => sections[at]);
+  const wider = model === 'continuum' ? 1 : widening(few, model, slope, ofSections);
+  const low = slope - wider * (slope - profileEnd(profile, slope, top - drop, -width));
+  const high = slope + wider * (profileEnd(profile, slope, top - drop, width) - slope);
+  return { slope, low, high, bicWith, bicWithout, used: bicWith < bicWithout && (low > 0 || high < 0) };
+}
+
+function widening(beds: BedsOnGradient, zones: number, slope: number, sections: readonly number[]): number {
+  const { values, errors } = beds;
+  const fit = fitMixture(takeOut(beds, slope), errors, Math.min(zones, values.length), { tolerance: 1e-7 });
+  return sectionWidening(beds, bestLabels(fit, values.length), fit.tau, slope, sections).factor;
 }
 
 const spanOf = (values: readonly number[]): number => {
@@ -85,13 +93,15 @@ const spanOf = (values: readonly number[]): number => {
 };
 
 /** An even choice of beds that keeps to no rhythm of sections and levels: multiples of the golden ratio, modulo 1. */
-function thinned(all: BedsOnGradient): BedsOnGradient {
-  const n = all.values.length;
-  if (n <= MOST_BEDS_IN_SEARCH) return all;
+function evenChoice(n: number): number[] | null {
+  if (n <= MOST_BEDS_IN_SEARCH) return null;
   const golden = (Math.sqrt(5) - 1) / 2;
-  const chosen = all.values.flatMap((_, at) => ((at * golden) % 1 < MOST_BEDS_IN_SEARCH / n ? [at] : []));
+  return Array.from({ length: n }, (_, at) => at).filter((at) => (at * golden) % 1 < MOST_BEDS_IN_SEARCH / n);
+}
+
+function picked({ values, errors, gradient }: BedsOnGradient, chosen: readonly number[]): BedsOnGradient {
   const of = (list: readonly number[]): number[] => chosen.map((at) => list[at]);
-  return { values: of(all.values), errors: of(all.errors), gradient: of(all.gradient) };
+  return { values: of(values), errors: of(errors), gradient: of(gradient) };
 }
 
 const bicOf = (logLikelihood: number, model: Model, n: number): number =>
