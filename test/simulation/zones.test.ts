@@ -1,0 +1,112 @@
+import { describe, expect, it } from 'vitest';
+import { oneWayP } from './one-way-p.js';
+import { calibration, coverage, falseZones, fourAminoAcids, indexGain, recovery } from './zone-rates.js';
+import { shareOf, zoneCoasts } from './zone-runs.js';
+
+/*
+ * Rates over simulated coasts with a known truth, seeds from 1 upwards. Limits are those promised, not what was measured:
+ * with n coasts a true rate p is seen within 2 sqrt(p(1 − p)/n). `npm run rates` measures the same over many more coasts.
+ */
+
+const step = (percent: number): number => Math.log(1 + percent / 100);
+
+describe('zones where there are none', () => {
+  it('are found on at most 10 % of coasts: a continuum, one zone, one zone with a spread', () => {
+    expect(falseZones(60, { zones: 'continuum' })).toBeLessThanOrEqual(0.1);
+    expect(falseZones(60, { zones: 1 })).toBeLessThanOrEqual(0.1);
+    expect(falseZones(60, { zones: 1, spread: 0.04 })).toBeLessThanOrEqual(0.1);
+  });
+
+  it('are found on at most 10 % of coasts along which one zone slopes', () => {
+    // 2 % a degree over 8 degrees, no gradient asked for: the slope alone must not make zones
+    expect(falseZones(60, { zones: 1, gradient: { slope: 0.02 } })).toBeLessThanOrEqual(0.1);
+  });
+});
+
+describe('zones that are there', () => {
+  it('come back in number and in their beds: 4 zones 30 % apart, 3 zones 20 % apart', () => {
+    for (const coast of [
+      { zones: 4, spacing: step(30) },
+      { zones: 3, spacing: step(20) },
+    ]) {
+      const { rightNumber, rand } = recovery(40, coast);
+      expect(rightNumber).toBeGreaterThanOrEqual(0.9);
+      expect(rand).toBeGreaterThanOrEqual(0.95);
+    }
+  });
+
+  it('come back the surer the further apart, with more beds and with more shells', () => {
+    const near = recovery(25, { zones: 3, spacing: step(8) }).rand;
+    const far = recovery(25, { zones: 3, spacing: step(20) }).rand;
+    expect(far).toBeGreaterThan(near + 0.2);
+    const few = recovery(25, { zones: 3, spacing: step(10), beds: 15 }).rand;
+    const many = recovery(25, { zones: 3, spacing: step(10), beds: 60 }).rand;
+    expect(many).toBeGreaterThan(few + 0.1);
+    const poor = recovery(25, { zones: 3, spacing: step(12), shells: [2, 3] }).rand;
+    const rich = recovery(25, { zones: 3, spacing: step(12), shells: [8, 12] }).rand;
+    expect(rich).toBeGreaterThan(poor + 0.2);
+  });
+});
+
+describe('zone probabilities', () => {
+  it('are right as often as they say, within 5 points in every decile that holds 50 beds or more', () => {
+    const deciles = calibration(25, [
+      { zones: 4, spacing: step(30), spread: 0.03 },
+      { zones: 3, spacing: step(15), spread: 0.02 },
+      { zones: 3, spacing: step(12) },
+      { zones: 3, spacing: step(10) },
+      { zones: 3, spacing: step(12), shells: [1, 6], beds: 60 },
+    ]);
+    const judged = deciles.filter(({ beds }) => beds >= 50);
+    expect(judged.length).toBeGreaterThan(0);
+    for (const { said, right } of judged) expect(Math.abs(said - right)).toBeLessThan(0.05);
+  });
+});
+
+describe('the 95 % interval of a zone’s mean', () => {
+  it('covers the true mean of 93 to 97 % of zones or so, with a spread between beds too', () => {
+    const without = coverage(50, [
+      { zones: 4, spacing: step(30) },
+      { zones: 3, spacing: step(20) },
+    ]);
+    const withSpread = coverage(50, [
+      { zones: 4, spacing: step(30), spread: 0.02 },
+      { zones: 3, spacing: step(20), spread: 0.02 },
+    ]);
+    for (const { zones, covered } of [without, withSpread]) {
+      // 93 to 97 %, and twice the error of the share beside
+      const error = 2 * Math.sqrt((0.95 * 0.05) / zones);
+      expect(covered).toBeGreaterThan(0.93 - error / 2);
+      expect(covered).toBeLessThan(0.97 + error);
+    }
+  });
+});
+
+describe('beds of one zone that differ', () => {
+  it('stay one zone although a test of their shells gives p of 0.001, when a spread explains them', () => {
+    const runs = zoneCoasts(60, { zones: 1, spread: 0.04 });
+    const differing = runs.filter(({ data }) => {
+      const shells = data.beds.map((bed) => bed.shells.map((at) => data.shells[at].x));
+      return oneWayP(shells) <= 0.001;
+    });
+    expect(differing.length).toBeGreaterThan(50);
+    expect(shareOf(differing, ({ zoning }) => zoning.fit.k === 1)).toBeGreaterThanOrEqual(0.9);
+  });
+});
+
+describe('the index of four amino acids', () => {
+  it('groups beds better than the best single one, with zones 15 % apart', () => {
+    const { index, bestSingle } = indexGain(15, {
+      zones: 4,
+      spacing: step(15),
+      scatter: 0.06,
+      aminoAcids: fourAminoAcids(0),
+    });
+    expect(index).toBeGreaterThanOrEqual(bestSingle + 0.05);
+  });
+
+  it('is never worse by more than 0.02 when three of four are noise', () => {
+    const { index, bestSingle } = indexGain(40, { zones: 3, spacing: step(15), aminoAcids: fourAminoAcids(3) });
+    expect(index).toBeGreaterThanOrEqual(bestSingle - 0.02);
+  });
+});
