@@ -22,8 +22,10 @@ export interface ClockInView {
   readonly clock: string;
   /** s: standard deviation between shells of one bed. */
   readonly scatter: number;
-  /** 2 tau² between beds of two sections; 0 within a section, whose beds share one temperature history. */
-  readonly spreadVariance: (a: BedOnClock, b: BedOnClock) => number;
+  /** tau: standard deviation between the beds of one zone; null where no zones are in use. */
+  readonly spread: number | null;
+  /** 2 tau² between beds of two sections, or twice the tau² given; 0 within a section, whose beds share one temperature history. */
+  readonly spreadVariance: (a: BedOnClock, b: BedOnClock, spread2?: number) => number;
   /** Degrees of freedom of the scatter: shells kept minus beds. */
   readonly df: number;
   /** Beds with a mean. */
@@ -61,7 +63,9 @@ export function clocksInView(findings: Findings): ClockInView[] {
       return {
         clock,
         scatter,
-        spreadVariance: (a: BedOnClock, b: BedOnClock) => shift * squaresApart(a.sections, b.sections),
+        spread,
+        spreadVariance: (a: BedOnClock, b: BedOnClock, spread2: number = shift) =>
+          spread2 * squaresApart(a.sections, b.sections),
         df: Math.max(1, shells - beds.length),
         beds,
       };

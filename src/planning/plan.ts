@@ -68,7 +68,7 @@ function criterion({ alpha, power }: PlanSettings): string {
   return (
     `A pair of beds counts as resolved when the order gives one of them a probability of ${percentInWords(1 - alpha)} or more ` +
     `of being the older, as in order.csv. Numbers of shells give a power of ${percentInWords(power)}: of surveys with so many shells ` +
-    `in these beds, that share resolves the pair the right way round, if the gap between the two beds is truly as measured. ` +
+    `in these beds, that share resolves the pair the right way round, if the gap between the two beds is truly as measured and the zones stay as found. ` +
     'The chance from here also counts that the measured gap has an error of its own.'
   );
 }

@@ -3,6 +3,7 @@ import { type BedOnClock, bedKey, type ClockInView } from './bed-on-clock.js';
 import { blankRow, type PlanSettings } from './plan-settings.js';
 import { dealInWords, gapInWords, joinedInWords, pairsInWords, percentInWords } from './plan-words.js';
 import { shellsNeeded } from './shells-needed.js';
+import { spreadAfter } from './spread-after.js';
 import { type UnresolvedPair, type UnresolvedPairs, varianceWith } from './unresolved-pairs.js';
 
 /** Standard errors by which the gap in the order falls short of the measured one before it is used instead. */
@@ -27,8 +28,8 @@ export function separateBeds(
     if (order[at].resolved !== false || order[at].rank === order[at + 1].rank || !older || !younger) continue;
     const pair = pairs.of(older).find(({ b }) => b === younger);
     if (!pair) continue;
-    const row = neighbours(view, pair, settings, (more) => ({
-      chance: pairs.chance(pair, more),
+    const row = neighbours(view, pair, settings, (more, spreadVariance) => ({
+      chance: pairs.chance(pair, more, spreadVariance),
       gained: pairs.gained(more),
     }));
     rows.push({ row, worth: row.total === null ? -1 : (row.pairs_gained ?? 0) / row.total });
@@ -41,7 +42,7 @@ function neighbours(
   view: ClockInView,
   { a: older, b: younger, gap: inOrder }: UnresolvedPair,
   settings: PlanSettings,
-  worth: (more: ReadonlyMap<BedOnClock, number>) => { chance: number; gained: number },
+  worth: (more: ReadonlyMap<BedOnClock, number>, spreadVariance: number) => { chance: number; gained: number },
 ): PlanRow {
   const gap = older.mean - younger.mean;
   const gapError = Math.sqrt(varianceWith(older, 0) + varianceWith(younger, 0));
@@ -49,6 +50,8 @@ function neighbours(
   // other beds can pull the two together in the order: then no more is promised than that smaller gap allows
   const pulled = inOrder < gap - PULLED * Math.sqrt(gapError ** 2 + spreadVariance);
   const used = pulled ? inOrder : gap;
+  const spread2 = spreadAfter(view, [older, younger]);
+  const spreadVarianceAfter = (more: readonly [number, number]) => view.spreadVariance(older, younger, spread2(more));
   const needed =
     used > 0
       ? shellsNeeded(
@@ -60,7 +63,7 @@ function neighbours(
             spreadVariance,
             df: view.df,
           },
-          settings,
+          { ...settings, spreadVarianceAfter },
         )
       : null;
   const measured = `gap ${gapInWords(gap, gapError)}${pulled ? `, in the order ${used.toFixed(3)},` : ''}`;
@@ -72,6 +75,8 @@ function neighbours(
     gap_error: gapError,
   };
   if (needed === null || needed.more[0] + needed.more[1] === 0) {
+    // what would be left between beds of one age after a great many shells
+    const hidden = spreadVarianceAfter([settings.most, settings.most]);
     const why =
       gap <= 0
         ? 'other beds put the first before the second; the ratios of these two alone do not'
@@ -79,7 +84,7 @@ function neighbours(
           ? `what is known of other beds leaves nothing of the gap ${gapInWords(gap, gapError)} in the order`
           : needed !== null
             ? 'their ratios alone would resolve them, but other beds pull on the order'
-            : spreadVariance > 0 && used < 1.7 * Math.sqrt(spreadVariance)
+            : hidden > 0 && used < 1.7 * Math.sqrt(hidden)
               ? `the ${measured} is no more than beds of one age differ between sections`
               : `the ${measured} would need over ${settings.most} shells in a bed`;
     const settles = `No number of shells is promised to split ${named(older)} and ${named(younger)}: ${why}${tied}.`;
@@ -90,6 +95,7 @@ function neighbours(
       [older, needed.more[0]],
       [younger, needed.more[1]],
     ]),
+    spreadVarianceAfter(needed.more),
   );
   const settles =
     `${dealInWords(base.beds, needed.more)}: whether ${named(older)} is older than ${named(younger)}, with ` +

@@ -7,6 +7,8 @@ export interface ShellsNeededOptions extends ResolvingRule {
   readonly power?: number;
   /** Most shells a bed may have in the end; beyond it no number is promised. Default 50. */
   readonly most?: number;
+  /** Spread between beds that the larger survey would add, by the more shells. Default: the design's, whatever their number. */
+  readonly spreadVarianceAfter?: (more: readonly [number, number]) => number;
 }
 
 /** How many more shells either bed needs. */
@@ -60,11 +62,17 @@ export function shellsNeeded(design: PairDesign, options: ShellsNeededOptions = 
     const more = dealOut(design.shells, total);
     const shells: [number, number] = [design.shells[0] + more[0], design.shells[1] + more[1]];
     const df = typeof design.df === 'number' ? design.df + total : design.df;
-    return { more, power: resolvingPower({ ...design, shells, df }, options) };
+    const spreadVariance = options.spreadVarianceAfter?.(more) ?? design.spreadVariance;
+    return { more, power: resolvingPower({ ...design, shells, df, spreadVariance }, options) };
   };
   const enough = (total: number) => powerWith(total).power >= wanted;
   const top = Math.max(0, most - design.shells[0]) + Math.max(0, most - design.shells[1]);
   if (enough(0)) return powerWith(0);
+  if (options.spreadVarianceAfter) {
+    // a spread that grows with the shells can make the power fall again, so every number is tried
+    for (let total = 1; total <= top; total++) if (enough(total)) return powerWith(total);
+    return null;
+  }
   if (!enough(top)) return null;
   // the formula lands near the answer: halve the gap from there
   const guess = Math.ceil(2 * shellsInEach(design.gap, design.scatter, options)) - design.shells[0] - design.shells[1];

@@ -20,8 +20,8 @@ export interface UnresolvedPairs {
   readonly of: (bed: BedOnClock) => readonly UnresolvedPair[];
   /** Expected number of pairs that the shells newly resolve in the whole order of the clock. */
   readonly gained: (more: MoreShells) => number;
-  /** Chance that the shells resolve one pair. */
-  readonly chance: (pair: UnresolvedPair, more: MoreShells) => number;
+  /** Chance that the shells resolve one pair; the variance for spread is that of the clock unless given. */
+  readonly chance: (pair: UnresolvedPair, more: MoreShells, spreadVariance?: number) => number;
 }
 
 /**
@@ -51,13 +51,13 @@ export function unresolvedPairs(view: ClockInView, known: KnownOrder, alpha: num
     }
     return found;
   };
-  const chance = ({ a, b, gap }: UnresolvedPair, more: MoreShells) =>
+  const chance = ({ a, b, gap }: UnresolvedPair, more: MoreShells, spreadVariance = view.spreadVariance(a, b)) =>
     chanceFromHere(
       {
         gap,
         variance: varianceWith(a, 0) + varianceWith(b, 0),
         varianceAfter: varianceWith(a, more.get(a) ?? 0) + varianceWith(b, more.get(b) ?? 0),
-        spreadVariance: view.spreadVariance(a, b),
+        spreadVariance,
         limit,
       },
       alpha,
