@@ -46,6 +46,12 @@ export interface SupportedClock {
 /** Beds above which zones are so well known that fewer bootstraps do, and beds and shells take the fit's own zones. */
 const MANY_BEDS = 400;
 
+/** Beds a zone under which drawn samples miss it too often to say what is known of it. */
+const FEWEST_BEDS_TO_DRAW = 3;
+
+const smallestZone = ({ fit, labels }: Zoning): number =>
+  Math.min(...fit.means.map((_, zone) => labels.filter((label) => label === zone).length));
+
 /**
  * Settles the number of zones where BIC is close (parametric bootstrap of the likelihood ratio), then measures what the zones
  * rest on: gap statistic, silhouette, stability under drawn beds and shells (design 7.3 to 7.5).
@@ -101,7 +107,7 @@ export async function supportZones(
         comparisons,
       }),
       assign:
-        bootstraps.length === 0 || values.length > MANY_BEDS
+        bootstraps.length === 0 || values.length > MANY_BEDS || smallestZone(zoning) < FEWEST_BEDS_TO_DRAW
           ? (x, error) => assignZone(x, error, zoning.priors)
           : (x, error) => assignOverDraws(x, error, bootstraps),
     },

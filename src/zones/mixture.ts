@@ -1,3 +1,5 @@
+import { acceleratedClimb } from './accelerated-climb.js';
+import { type MixtureData, type MixtureState, maximisation } from './em-step.js';
 import { partition } from './partition.js';
 
 /** A normal mixture with known errors, fitted to bed means. Components go from the smallest mean (youngest) upwards. */
@@ -14,7 +16,7 @@ export interface Mixture {
 
 /** Options of {@link fitMixture}. */
 export interface MixtureOptions {
-  /** Stop when the log-likelihood gains less than this in an iteration. Default 1e-9. */
+  /** Stop when the log-likelihood gains less than this in a step. Default 1e-9, more for more than 20 beds. */
   readonly tolerance?: number;
   /** Default 2000. */
   readonly iterations?: number;
@@ -23,8 +25,6 @@ export interface MixtureOptions {
   /** Parameters near the answer, in place of all other starts: one climb, for refits of drawn samples. Default none. */
   readonly near?: Pick<Mixture, 'means' | 'weights' | 'tau'>;
 }
-
-const LOG_ROOT_TWO_PI = 0.9189385332046727;
 
 /**
  * Fits m_b ~ Σ π_k N(μ_k, tau² + se_b²) by expectation and conditional maximisation (Dempster, Laird and Rubin 1977,
@@ -42,7 +42,8 @@ export function fitMixture(
 ): Mixture {
   const variances = Float64Array.from(errors, (se) => se * se);
   const floor = varianceFloor(values);
-  if (options.near !== undefined) return climbFrom(options.near, values, variances, floor, options);
+  const data = { values, variances, floor };
+  if (options.near !== undefined) return climbFrom(data, options.near, options);
   const starts = options.start === undefined ? [] : [options.start];
   starts.push(
     partition(
@@ -55,7 +56,7 @@ export function fitMixture(
   if (flat.some((label, bed) => label !== starts[starts.length - 1][bed])) starts.push(flat);
   let best: Mixture | null = null;
   for (const start of starts) {
-    const fit = maximise(values, variances, k, start, floor, options);
+    const fit = climbFromPartition(data, k, start, options);
     if (best === null || fit.logLikelihood > best.logLikelihood) best = fit;
   }
   return best!;
@@ -68,74 +69,41 @@ function varianceFloor(values: readonly number[]): number {
 }
 
 /** From a partition. */
-function maximise(
-  values: readonly number[],
-  variances: Float64Array,
-  k: number,
-  start: readonly number[],
-  floor: number,
-  options: MixtureOptions,
-): Mixture {
-  const responsibilities = new Float64Array(values.length * k);
+function climbFromPartition(data: MixtureData, k: number, start: readonly number[], options: MixtureOptions): Mixture {
+  const responsibilities = new Float64Array(data.values.length * k);
   start.forEach((label, bed) => {
     responsibilities[bed * k + label] = 1;
   });
-  const tau2 = startingSpread(values, variances, start, k);
-  return climb({ k, means: new Float64Array(k), tau2, responsibilities }, values, variances, floor, options);
+  const tau2 = startingSpread(data.values, data.variances, start, k);
+  const blank = { means: new Float64Array(k), weights: new Float64Array(k), tau2 };
+  return climb(data, maximisation(data, blank, responsibilities), responsibilities, options);
 }
 
 /** From parameters. Weights are kept off 0, from which they could not rise. */
-function climbFrom(
-  near: NonNullable<MixtureOptions['near']>,
-  values: readonly number[],
-  variances: Float64Array,
-  floor: number,
-  options: MixtureOptions,
-): Mixture {
-  const k = near.means.length;
-  const means = Float64Array.from(near.means);
-  const weights = Float64Array.from(near.weights, (weight) => Math.max(weight, 0.5 / values.length));
-  const responsibilities = new Float64Array(values.length * k);
-  expectation(values, variances, means, weights, near.tau ** 2, floor, responsibilities);
-  return climb({ k, means, tau2: near.tau ** 2, responsibilities }, values, variances, floor, options);
+function climbFrom(data: MixtureData, near: NonNullable<MixtureOptions['near']>, options: MixtureOptions): Mixture {
+  const state = {
+    means: Float64Array.from(near.means),
+    weights: Float64Array.from(near.weights, (weight) => Math.max(weight, 0.5 / data.values.length)),
+    tau2: near.tau ** 2,
+  };
+  return climb(data, state, new Float64Array(data.values.length * near.means.length), options);
 }
 
 function climb(
-  start: { k: number; means: Float64Array; tau2: number; responsibilities: Float64Array },
-  values: readonly number[],
-  variances: Float64Array,
-  floor: number,
-  { tolerance = 1e-9, iterations = 2000 }: MixtureOptions,
+  data: MixtureData,
+  start: MixtureState,
+  buffer: Float64Array,
+  { tolerance = 1e-9 * Math.max(1, data.values.length / 20), iterations = 2000 }: MixtureOptions,
 ): Mixture {
-  const n = values.length;
-  const { k, means, responsibilities } = start;
-  let { tau2 } = start;
-  const weights = new Float64Array(k);
-  let logLikelihood = Number.NEGATIVE_INFINITY;
-  for (let iteration = 0; iteration < iterations; iteration++) {
-    for (let j = 0; j < k; j++) {
-      let sumR = 0;
-      let sumRW = 0;
-      let sumRWX = 0;
-      for (let bed = 0; bed < n; bed++) {
-        const r = responsibilities[bed * k + j];
-        const w = r / Math.max(tau2 + variances[bed], floor);
-        sumR += r;
-        sumRW += w;
-        sumRWX += w * values[bed];
-      }
-      weights[j] = sumR / n;
-      if (sumRW > 0) means[j] = sumRWX / sumRW;
-    }
-    tau2 = spreadGiven(values, variances, means, responsibilities, k, floor, tau2);
-    const next = expectation(values, variances, means, weights, tau2, floor, responsibilities);
-    if (next - logLikelihood < tolerance && iteration > 2) {
-      logLikelihood = Math.max(next, logLikelihood);
-      break;
-    }
-    logLikelihood = next;
-  }
-  return sorted({ k, means: [...means], weights: [...weights], tau: Math.sqrt(tau2), logLikelihood, responsibilities });
+  const { state, logLikelihood, responsibilities } = acceleratedClimb(data, start, buffer, tolerance, iterations);
+  return sorted({
+    k: state.means.length,
+    means: [...state.means],
+    weights: [...state.weights],
+    tau: Math.sqrt(state.tau2),
+    logLikelihood,
+    responsibilities,
+  });
 }
 
 function startingSpread(
@@ -155,83 +123,6 @@ function startingSpread(
     excess += (values[bed] - sums[label] / counts[label]) ** 2 - variances[bed];
   });
   return Math.max(0, excess / values.length);
-}
-
-/** Fills the responsibilities for the present parameters and gives the log-likelihood. */
-function expectation(
-  values: readonly number[],
-  variances: Float64Array,
-  means: Float64Array,
-  weights: Float64Array,
-  tau2: number,
-  floor: number,
-  responsibilities: Float64Array,
-): number {
-  const k = means.length;
-  let total = 0;
-  const logs = new Float64Array(k);
-  for (let bed = 0; bed < values.length; bed++) {
-    const variance = Math.max(tau2 + variances[bed], floor);
-    const constant = -LOG_ROOT_TWO_PI - 0.5 * Math.log(variance);
-    let largest = Number.NEGATIVE_INFINITY;
-    for (let j = 0; j < k; j++) {
-      const d = values[bed] - means[j];
-      logs[j] = weights[j] > 0 ? Math.log(weights[j]) + constant - (0.5 * d * d) / variance : Number.NEGATIVE_INFINITY;
-      if (logs[j] > largest) largest = logs[j];
-    }
-    let sum = 0;
-    for (let j = 0; j < k; j++) sum += Math.exp(logs[j] - largest);
-    for (let j = 0; j < k; j++) responsibilities[bed * k + j] = Math.exp(logs[j] - largest) / sum;
-    total += largest + Math.log(sum);
-  }
-  return total;
-}
-
-/**
- * The spread tau² that maximises the expected log-likelihood for given responsibilities and means:
- * the root of Σ (D_b − tau² − se_b²)/(tau² + se_b²)², D_b the expected squared distance of bed b from its zone; 0 when
- * the slope at 0 is not upward.
- */
-function spreadGiven(
-  values: readonly number[],
-  variances: Float64Array,
-  means: Float64Array,
-  responsibilities: Float64Array,
-  k: number,
-  floor: number,
-  last: number,
-): number {
-  const n = values.length;
-  const distances = new Float64Array(n);
-  let largest = 0;
-  for (let bed = 0; bed < n; bed++) {
-    let sum = 0;
-    for (let j = 0; j < k; j++) sum += responsibilities[bed * k + j] * (values[bed] - means[j]) ** 2;
-    distances[bed] = sum;
-    if (sum > largest) largest = sum;
-  }
-  let low = 0;
-  let high = largest;
-  // Newton's steps from the last spread, halving the bracket where a step would leave it.
-  let tau2 = 0;
-  for (let step = 0; step < 60 && high - low > 1e-13 * (1 + high); step++) {
-    let slope = 0;
-    let bend = 0;
-    for (let bed = 0; bed < n; bed++) {
-      const v = Math.max(tau2 + variances[bed], floor);
-      const ratio = distances[bed] / v;
-      slope += (ratio - 1) / v;
-      bend += (1 - 2 * ratio) / (v * v);
-    }
-    if (slope > 0) low = tau2;
-    else if (tau2 === 0) return 0;
-    else high = tau2;
-    const newton = tau2 - slope / bend;
-    const next = step === 0 && last > 0 ? last : newton > low && newton < high ? newton : (low + high) / 2;
-    if (step > 1 && Math.abs(next - tau2) <= 1e-12 * (1e-6 + tau2)) return next;
-    tau2 = next;
-  }
-  return tau2;
 }
 
 function sorted(fit: Mixture): Mixture {
