@@ -42,13 +42,19 @@ export function aminoAcidFindings(
   function checkRemarks(): Remark[] {
     const { data, zoning } = last;
     if (zoning === null || zoning.fit.k < 2) return [];
+    // each amino acid has its own slope along a gradient, which would else look like zones
+    const slopes = data.clock.amino_acids.map(
+      (code) => singles.find((pass) => pass.data.clock.amino_acids[0] === code)?.data.slope ?? data.slope,
+    );
     const means = zoning.beds.map((at) =>
-      data.clock.amino_acids.map((code) => {
+      data.clock.amino_acids.map((code, k) => {
         const ratios = data.beds[at].shells
           .filter((shell) => !data.shells[shell].setAside)
           .map((shell) => shells[data.shells[shell].shell].ratios[code])
           .filter((ratio) => ratio !== undefined);
-        return ratios.reduce((sum, ratio) => sum + Math.log(ratio), 0) / ratios.length;
+        return (
+          ratios.reduce((sum, ratio) => sum + Math.log(ratio), 0) / ratios.length - slopes[k] * data.beds[at].gradient
+        );
       }),
     );
     const check = kmeansCheck({

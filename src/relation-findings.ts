@@ -96,9 +96,10 @@ function groupByAminoAcid({ settled, shells }: RelationFindingsInput): AminoAcid
   if (codes.size < 2) return [];
   return [...codes].map((amino_acid) => {
     const groups = data.beds.map((bed) =>
+      // the slope of the clock stands in for that of each amino acid
       bed.shells.flatMap((at) => {
         const ratio = shells[data.shells[at].shell].ratios[amino_acid];
-        return data.shells[at].setAside || ratio === undefined ? [] : [Math.log(ratio)];
+        return data.shells[at].setAside || ratio === undefined ? [] : [Math.log(ratio) - data.slope * bed.gradient];
       }),
     );
     return { amino_acid, groups, s: pooledScatter(groups).s };

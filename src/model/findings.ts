@@ -90,10 +90,11 @@ export interface BedRow {
   /** Shells behind the mean. */
   readonly shells: number;
   readonly set_aside: number;
-  /** Arithmetic mean and standard deviation of D/L of the shells kept. */
+  /** Arithmetic mean, standard deviation and standard error of D/L of the shells kept, as measured: no gradient taken out. */
   readonly dl_mean: number | null;
   readonly dl_sd: number | null;
   readonly dl_se: number | null;
+  /** Mean log ratio with any gradient that is used taken out, and its standard error. */
   readonly log_mean: number | null;
   readonly log_se: number | null;
   readonly zone: string | null;

@@ -26,7 +26,7 @@ export const zones = {
   zone: c.zone,
   beds: c.count('beds of the zone'),
   shells: c.count('shells behind those beds'),
-  dl_mean: c.ratio('mean of the zone, from its mean log ratio'),
+  dl_mean: c.ratio('mean of the zone, from its mean log ratio, with any gradient that is used taken out'),
   dl_low: c.ratio('lower end of the 95 % interval of the zone mean'),
   dl_high: c.ratio('upper end of the 95 % interval of the zone mean'),
   shell_low: c.ratio('zone mean less 1 standard deviation of its shells'),
