@@ -60,7 +60,7 @@ export interface SectionCheck {
  * Wright and Dykstra 1988, Order Restricted Statistical Inference, chapter 2; Holm 1979, Scandinavian Journal of
  * Statistics 6, 65–70.
  *
- * @param random Seeded generator; each section draws from its own fork, so sections do not influence each other.
+ * @param random Seeded generator; each pattern of weights draws from a fork of its own.
  * @throws RangeError when alpha, df or simulations make no sense.
  * @example
  * const beds = [{ rank: 1, mean: -0.9, se: 0.03 }, { rank: 2, mean: -0.6, se: 0.03 }, { rank: 3, mean: -1.2, se: 0.03 }];
@@ -78,7 +78,15 @@ export function checkSections(
   if (!(df > 0)) throw new RangeError(`checkSections: df must be above 0, got ${df}`);
   if (!(simulations >= 1)) throw new RangeError(`checkSections: simulations must be at least 1, got ${simulations}`);
 
-  const tests = sections.map((section, index) => testSection(section, random.fork(index), df, simulations));
+  // sections of equally weighted beds share the weights of the mixture, which alone are simulated
+  const mixtures = new Map<string, readonly number[]>();
+  const mixtureOf = (weights: readonly number[]): readonly number[] => {
+    const key = weights.map((weight) => (weight / weights[0]).toPrecision(6)).join(' ');
+    const known = mixtures.get(key) ?? simulateDistinct(weights, random.fork(mixtures.size), simulations);
+    mixtures.set(key, known);
+    return known;
+  };
+  const tests = sections.map((section) => testSection(section, mixtureOf, df));
   const tested = tests.filter((test) => test.p !== null);
   const adjusted = holm(tested.map((test) => test.p ?? 1));
   const adjustedOf = new Map(tested.map((test, index) => [test, adjusted[index] ?? 1]));
@@ -97,7 +105,11 @@ interface SectionTest {
   readonly fitted: readonly number[];
 }
 
-function testSection(section: SectionOfBeds, random: Random, df: number, simulations: number): SectionTest {
+function testSection(
+  section: SectionOfBeds,
+  mixtureOf: (weights: readonly number[]) => readonly number[],
+  df: number,
+): SectionTest {
   const ranks = [...new Set(section.beds.filter(hasMean).map((bed) => bed.rank))].sort((a, b) => a - b);
   const levels = ranks.map((rank) => levelMean(section.beds.filter((bed) => bed.rank === rank && hasMean(bed))));
   const beds = section.beds.filter(hasMean).length;
@@ -113,7 +125,7 @@ function testSection(section: SectionOfBeds, random: Random, df: number, simulat
     (sum, level, i) => sum + level.weight * (level.mean - (fit[i] ?? level.mean)) ** 2,
     0,
   );
-  const p = statistic > 0 ? tailProbability(statistic, weights, random, df, simulations) : 1;
+  const p = statistic > 0 ? tailProbability(statistic, mixtureOf(weights), df) : 1;
   return { beds, statistic, p, fitted };
 }
 
@@ -126,32 +138,36 @@ function levelMean(beds: readonly PlacedBed[]): { mean: number; weight: number }
   return { mean: beds.reduce((sum, bed) => sum + bed.mean / (bed.se * bed.se), 0) / weight, weight };
 }
 
+/** Share of draws at equal means whose isotonic regression has l distinct values, at index l. */
+function simulateDistinct(weights: readonly number[], random: Random, simulations: number): number[] {
+  const shares = new Array<number>(weights.length + 1).fill(0);
+  const sd = weights.map((weight) => 1 / Math.sqrt(weight));
+  for (let draw = 0; draw < simulations; draw++) {
+    const fit = isotonicRegression(
+      sd.map((value) => value * random.normal()),
+      weights,
+    );
+    // isotonic values only rise, so equal ones stand side by side
+    let distinct = 1;
+    for (let at = 1; at < fit.length; at++) if (fit[at] !== fit[at - 1]) distinct++;
+    shares[distinct] += 1 / simulations;
+  }
+  return shares;
+}
+
 /**
  * P(statistic ≥ observed) at equal means: Σ over l of P(l distinct values) · P(χ² with k − l degrees of freedom ≥
  * observed).
  */
-function tailProbability(
-  statistic: number,
-  weights: readonly number[],
-  random: Random,
-  df: number,
-  simulations: number,
-): number {
-  const k = weights.length;
-  const counts = new Array<number>(k + 1).fill(0);
-  for (let draw = 0; draw < simulations; draw++) {
-    const fit = isotonicRegression(
-      weights.map((weight) => random.normal() / Math.sqrt(weight)),
-      [...weights],
-    );
-    const distinct = new Set(fit).size;
-    counts[distinct] = (counts[distinct] ?? 0) + 1;
-  }
+function tailProbability(statistic: number, shares: readonly number[], df: number): number {
+  const k = shares.length - 1;
   let p = 0;
   for (let distinct = 1; distinct < k; distinct++) {
+    if (shares[distinct] === 0) continue;
     const free = k - distinct;
-    const tail = Number.isFinite(df) ? fUpperTail(statistic / free, free, df) : chiSquaredUpperTail(statistic, free);
-    p += ((counts[distinct] ?? 0) / simulations) * tail;
+    p +=
+      shares[distinct] *
+      (Number.isFinite(df) ? fUpperTail(statistic / free, free, df) : chiSquaredUpperTail(statistic, free));
   }
   return Math.min(1, Math.max(0, p));
 }
