@@ -1,21 +1,16 @@
 // Along the coast
 
-export {
-  conversionRemarks,
-  gradientRemarks,
-  laboratoryRemarks,
-  someOf,
-  staircaseRemarks,
-  temperatureRemarks,
-} from './coast-remarks.js';
 export { correlationTable } from './correlation-table.js';
 export { fitGradient, type GradientFit } from './gradient.js';
+export { gradientRemarks, temperatureRemarks } from './gradient-remarks.js';
 export { sectionOrder } from './section-order.js';
 export { ONE_TERRACE_M, type Staircase, staircaseRelations } from './staircase.js';
+export { staircaseRemarks } from './staircase-remarks.js';
 
 // Several taxa
 
 export { type CombinedTaxa, type ConvertedTaxon, combineTaxa, withoutSlope } from './combine-taxa.js';
+export { conversionRemarks } from './conversion-remarks.js';
 export {
   type BedOfTaxon,
   type ConversionLine,
@@ -28,3 +23,4 @@ export {
 
 export { withLaboratoryErrors } from './laboratory-errors.js';
 export { correctAnalyses, type LaboratoryOffset, laboratoryOffsets } from './laboratory-offsets.js';
+export { laboratoryRemarks } from './laboratory-remarks.js';

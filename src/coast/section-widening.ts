@@ -79,5 +79,5 @@ export function sectionWidening(
   const df = 1 / (share ** 2 / Math.max(1, count - 2) + (1 - share) ** 2 / free);
   const factor =
     (Math.sqrt((ofSections + ofBeds) / assumed) * studentTQuantile(0.975, df)) / studentTQuantile(0.975, free);
-  return { sharedSd: Math.sqrt(sharedVariance), factor: factor > 1 ? factor : 1 };
+  return { sharedSd: Math.sqrt(sharedVariance), factor: Number.isFinite(factor) ? Math.max(1, factor) : 1 };
 }
