@@ -7,7 +7,16 @@ import {
   staircaseRelations,
   withLaboratoryErrors,
 } from './coast/index.js';
-import type { Clock, ClockBed, ClockData, PublishedSummary, RelationRecord, RunOptions, Shell } from './model/index.js';
+import type {
+  Clock,
+  ClockBed,
+  ClockData,
+  Host,
+  PublishedSummary,
+  RelationRecord,
+  RunOptions,
+  Shell,
+} from './model/index.js';
 import type { PlacedBed } from './order/index.js';
 import {
   keptRelations,
@@ -174,12 +183,7 @@ export interface ClockOrder {
 }
 
 /** Design 7.6 on the last pass of a clock. */
-export function orderClock(
-  pass: Pass,
-  alpha: number,
-  random: Random,
-  onProgress?: (fraction: number) => void,
-): ClockOrder | null {
+export async function orderClock(pass: Pass, alpha: number, random: Random, host: Host): Promise<ClockOrder | null> {
   const { data, zoning, relations, checks } = pass;
   const beds = data.beds.filter((bed) => bed.n > 0);
   if (beds.length === 0) return null;
@@ -200,7 +204,7 @@ export function orderClock(
   );
   const sections = [...new Set(beds.map((bed) => bed.section))];
   const sectionNumber = new Map(sections.map((section, at) => [section, at]));
-  const posterior = samplePosterior(
+  const posterior = await samplePosterior(
     {
       means: beds.map((bed) => bed.mean),
       se: beds.map((bed) => bed.se),
@@ -210,7 +214,11 @@ export function orderClock(
       tau,
       scatterDf: df,
     },
-    { random, onProgress },
+    {
+      seed: random.integer(2 ** 31),
+      map: host.map,
+      onProgress: (fraction) => host.progress(`order of ${data.clock.name}`, fraction),
+    },
   );
   const leftOut = relations.filter((relation, at) => relation.certainty === 'probable' || reversed[at]).length;
   return {

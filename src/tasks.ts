@@ -1,8 +1,13 @@
 import type { Task } from './model/index.js';
+import { chainDraws } from './order/index.js';
 import { bootstrapLikelihoodRatio, bootstrapZones } from './zones/index.js';
 
 /** The pure functions that a host may run on workers, by name. */
-const TASKS: Readonly<Record<string, (argument: never) => unknown>> = { bootstrapLikelihoodRatio, bootstrapZones };
+const TASKS: Readonly<Record<string, (argument: never) => unknown>> = {
+  bootstrapLikelihoodRatio,
+  bootstrapZones,
+  chainDraws,
+};
 
 /**
  * Runs one task: what a worker thread, or a host without any, calls.

@@ -49,7 +49,7 @@ async function runInPlace(
   onDone: (done: number) => void,
   workers: number,
 ): Promise<number> {
-  if (tasks.length === 0) return 0;
+  if (tasks.length === 0 || (workers > 1 && tasks.length > 1 && tasks[0].heavy === true)) return 0;
   const { runTask } = await import('../tasks.js');
   const start = performance.now();
   for (let i = 0; i < tasks.length; i++) {

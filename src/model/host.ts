@@ -5,6 +5,8 @@
 export interface Task {
   readonly name: string;
   readonly argument: unknown;
+  /** Known to be long: worth a thread of its own without trying how long it takes. Default false. */
+  readonly heavy?: boolean;
 }
 
 /** Runs every task and gives the results in the same order, whatever the number of workers. */

@@ -1,3 +1,4 @@
+export { type ChainDraws, type ChainDrawsArgument, chainDraws } from './chain-draws.js';
 export type { GibbsChain, OrderModel } from './gibbs-chain.js';
 export { gibbsChain } from './gibbs-chain.js';
 export { keptRelations } from './kept-relations.js';

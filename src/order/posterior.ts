@@ -1,9 +1,13 @@
-import { effectiveSampleSize, type Random, splitRHat } from '../statistics/index.js';
-import { type GibbsChain, gibbsChain, type OrderModel } from './gibbs-chain.js';
+import type { TaskMapper } from '../model/index.js';
+import { effectiveSampleSize, splitRHat } from '../statistics/index.js';
+import type { ChainDraws } from './chain-draws.js';
+import type { OrderModel } from './gibbs-chain.js';
 
 /** How the posterior is sampled. */
 export interface PosteriorOptions {
-  readonly random: Random;
+  readonly seed: number;
+  /** Runs the chains, which are tasks named `chainDraws`. */
+  readonly map: TaskMapper;
   /** Default 4. */
   readonly chains?: number;
   /** Draws kept a chain. Default 1000, fewer where there are very many beds. */
@@ -36,66 +40,56 @@ const PLAIN = { rankNormalise: false };
 /** Deposits watched for convergence; more would cost time and add little. */
 const WATCHED = 200;
 
+/** Draws times beds of one chain that are worth a thread without trying. */
+const HEAVY = 3e5;
+
 /**
  * Samples the order of all beds under superposition (design 7.6) and reports how well the chains have settled: smallest
  * effective sample size and largest split R-hat over beds. While fewer than 400 effective draws or an R-hat of 1.01 or more
- * are seen, the chains run on with twice the sweeps between draws.
+ * are seen, the chains run again with twice the sweeps between draws.
  */
-export function samplePosterior(model: OrderModel, options: PosteriorOptions): OrderPosterior {
+export async function samplePosterior(model: OrderModel, options: PosteriorOptions): Promise<OrderPosterior> {
   const beds = model.means.length;
-  const chains = options.chains ?? 4;
+  const { nodes } = model.graph;
+  const { seed, map, chains = 4, onProgress } = options;
   const draws = options.draws ?? Math.max(100, Math.min(1000, Math.floor(4e6 / (chains * Math.max(1, beds)))));
   const most = beds > 1000 ? 1 : (options.thinning ?? 16);
-  const running = Array.from({ length: chains }, (_, at) => gibbsChain(model, options.random.fork(at)));
-  for (const chain of running) for (let sweep = 0; sweep < Math.max(50, draws / 4); sweep++) chain.next();
+  const step = Math.max(1, Math.ceil(nodes / WATCHED));
+  const watched = Array.from({ length: Math.ceil(nodes / step) }, (_, at) => at * step);
   for (let thinning = 1; ; thinning *= 2) {
-    const sample = collect(model, running, draws, thinning, options.onProgress);
-    const converged = sample.essMin >= ENOUGH_DRAWS && sample.rhatMax < SETTLED;
-    if (converged || thinning * 2 > most) return { beds, draws: draws * chains, chains, converged, ...sample };
+    const heavy = beds * draws * thinning > HEAVY;
+    const tasks = Array.from({ length: chains }, (_, chain) => {
+      const argument = { model, seed, chain, draws, thinning, watched };
+      return { name: 'chainDraws', argument, heavy };
+    });
+    const drawn = (await map(tasks, (done) => onProgress?.(done / chains))) as ChainDraws[];
+    const judged = judge(drawn, watched.length);
+    const converged = judged.essMin >= ENOUGH_DRAWS && judged.rhatMax < SETTLED;
+    if (converged || thinning * 2 > most) {
+      return { beds, draws: draws * chains, ranks: joinRanks(drawn, beds, draws), chains, converged, ...judged };
+    }
   }
 }
 
-function collect(
-  model: OrderModel,
-  chains: readonly GibbsChain[],
-  draws: number,
-  thinning: number,
-  onProgress: PosteriorOptions['onProgress'],
-) {
-  const { graph } = model;
-  const beds = model.means.length;
-  const total = draws * chains.length;
-  const ranks = new Uint32Array(beds * total);
-  const sizes = new Float64Array(graph.nodes);
-  for (const node of graph.node) sizes[node]++;
-  const step = Math.max(1, Math.ceil(graph.nodes / WATCHED));
-  const watched = Array.from({ length: Math.ceil(graph.nodes / step) }, (_, at) => at * step);
-  const traces = watched.map(() => chains.map(() => new Float64Array(draws)));
-  const order = Array.from({ length: graph.nodes }, (_, node) => node);
-  const rankOf = new Uint32Array(graph.nodes);
-  chains.forEach((chain, c) => {
-    for (let draw = 0; draw < draws; draw++) {
-      let theta = chain.next();
-      for (let extra = 1; extra < thinning; extra++) theta = chain.next();
-      watched.forEach((node, at) => {
-        traces[at][c][draw] = theta[node];
-      });
-      // nearly in order from the draw before, which the sort makes use of
-      order.sort((a, b) => theta[b] - theta[a] || a - b);
-      let rank = 1;
-      for (const node of order) {
-        rankOf[node] = rank;
-        rank += sizes[node];
-      }
-      for (let bed = 0; bed < beds; bed++) ranks[bed * total + c * draws + draw] = rankOf[graph.node[bed]];
-    }
-    onProgress?.((c + 1) / chains.length);
-  });
+function judge(drawn: readonly ChainDraws[], watched: number): { essMin: number; rhatMax: number } {
   let essMin = Number.POSITIVE_INFINITY;
   let rhatMax = 1;
-  for (const trace of traces) {
-    essMin = Math.min(essMin, effectiveSampleSize(trace, PLAIN));
-    rhatMax = Math.max(rhatMax, splitRHat(trace, PLAIN));
+  for (let at = 0; at < watched; at++) {
+    const traces = drawn.map((chain) => chain.traces[at]);
+    essMin = Math.min(essMin, effectiveSampleSize(traces, PLAIN));
+    rhatMax = Math.max(rhatMax, splitRHat(traces, PLAIN));
   }
-  return { ranks, essMin, rhatMax };
+  return { essMin, rhatMax };
+}
+
+/** The draws of all chains one after the other, for each bed. */
+function joinRanks(drawn: readonly ChainDraws[], beds: number, draws: number): Uint32Array {
+  const total = draws * drawn.length;
+  const ranks = new Uint32Array(beds * total);
+  drawn.forEach((chain, c) => {
+    for (let bed = 0; bed < beds; bed++) {
+      ranks.set(chain.ranks.subarray(bed * draws, (bed + 1) * draws), bed * total + c * draws);
+    }
+  });
+  return ranks;
 }

@@ -1,0 +1,54 @@
+import { createRandom } from '../statistics/index.js';
+import { gibbsChain, type OrderModel } from './gibbs-chain.js';
+
+/** Argument of {@link chainDraws}: plain data, so that it can go to a worker. */
+export interface ChainDrawsArgument {
+  readonly model: OrderModel;
+  readonly seed: number;
+  /** Number of the chain: each draws from a stream of its own. */
+  readonly chain: number;
+  readonly draws: number;
+  /** Sweeps between two draws that are kept. */
+  readonly thinning: number;
+  /** Deposits whose draws are kept for judging the chains. */
+  readonly watched: readonly number[];
+}
+
+/** What one chain gives. */
+export interface ChainDraws {
+  /** Rank of bed b in draw d at `b * draws + d`; 1 is the oldest, beds of one deposit share a rank. */
+  readonly ranks: Uint32Array;
+  /** Draws of each watched deposit. */
+  readonly traces: readonly Float64Array[];
+}
+
+/** One chain of the posterior from its start, the first quarter (50 sweeps at least) not kept. A task for the host. */
+export function chainDraws({ model, seed, chain, draws, thinning, watched }: ChainDrawsArgument): ChainDraws {
+  const { graph } = model;
+  const beds = model.means.length;
+  const running = gibbsChain(model, createRandom(seed).fork(chain));
+  for (let sweep = 0; sweep < Math.max(50, (draws * thinning) / 4); sweep++) running.next();
+  const ranks = new Uint32Array(beds * draws);
+  const traces = watched.map(() => new Float64Array(draws));
+  const sizes = new Float64Array(graph.nodes);
+  for (const node of graph.node) sizes[node]++;
+  const order = Array.from({ length: graph.nodes }, (_, node) => node);
+  const rankOf = new Uint32Array(graph.nodes);
+  for (let draw = 0; draw < draws; draw++) {
+    let theta = running.next();
+    for (let extra = 1; extra < thinning; extra++) theta = running.next();
+    const now = theta;
+    watched.forEach((node, at) => {
+      traces[at][draw] = now[node];
+    });
+    // nearly in order from the draw before, which the sort makes use of
+    order.sort((a, b) => now[b] - now[a] || a - b);
+    let rank = 1;
+    for (const node of order) {
+      rankOf[node] = rank;
+      rank += sizes[node];
+    }
+    for (let bed = 0; bed < beds; bed++) ranks[bed * draws + draw] = rankOf[graph.node[bed]];
+  }
+  return { ranks, traces };
+}
