@@ -311,7 +311,7 @@ describe('plan of any findings', () => {
     const { findings } = datedCoast(createRandom(42), { perZone: 250 });
     const before = performance.now();
     plan({ ...findings, pairs: [] });
-    expect(performance.now() - before).toBeLessThan(15000);
+    expect(performance.now() - before).toBeLessThan(30000);
   });
 
   it('states its criterion', () => {
