@@ -1,3 +1,4 @@
+import { LEAST_SCATTER } from './beds/index.js';
 import type { ClockRow, Findings, Remark } from './model/index.js';
 
 /**
@@ -57,6 +58,9 @@ function unsettledSampling(findings: Findings, { clock }: ClockRow): string | nu
 
 function assumedScatter(findings: Findings, { clock, scatter }: ClockRow): string | null {
   if (!findings.beds.some((bed) => bed.clock === clock && bed.marks.includes('assumed scatter'))) return null;
+  if (scatter === LEAST_SCATTER) {
+    return `Shells of one bed have all but equal ratios, closer than one shell analysed twice: a scatter of ${scatter} is assumed on log ratios, and every error rests on it. Look for rows copied or rounded.`;
+  }
   return `Too few repeated shells to estimate their scatter: ${scatter} is assumed on log ratios (shells of one bed differ by 5 to 10 %), and every error rests on it.`;
 }
 

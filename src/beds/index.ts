@@ -14,4 +14,4 @@ export { clockLogRatio } from './log-ratios.js';
 export type { LogSummary } from './log-summary.js';
 export { logSummary } from './log-summary.js';
 export type { PublishedScatter } from './scatter.js';
-export { ASSUMED_SCATTER, FEWEST_DEGREES_OF_FREEDOM, pooledScatter, testingDf } from './scatter.js';
+export { ASSUMED_SCATTER, FEWEST_DEGREES_OF_FREEDOM, LEAST_SCATTER, pooledScatter, testingDf } from './scatter.js';

@@ -3,6 +3,12 @@ import type { Scatter } from '../model/index.js';
 /** Scatter assumed where the clock has too few repeated shells: shells of one bed differ by 5 to 10 % (common practice). */
 export const ASSUMED_SCATTER = 0.07;
 
+/**
+ * No shells of one bed agree better than this on log ratios: one preparation analysed twice differs by more (1 to 3 %, common
+ * practice). Less than that are copies, or ratios rounded until they are equal, and would make every difference certain.
+ */
+export const LEAST_SCATTER = 0.005;
+
 /** Degrees of freedom under which the scatter is assumed, not estimated. */
 export const FEWEST_DEGREES_OF_FREEDOM = 4;
 
@@ -16,7 +22,8 @@ export interface PublishedScatter {
  * Pooled standard deviation of log ratios between the shells of one bed: s² = Σ SS / Σ (n − 1) (design 7.1).
  * @param beds log ratios of the shells of each bed
  * @param published standard deviations that published summaries give, pooled with n − 1
- * @returns the scatter, its degrees of freedom, and whether 0.07 was assumed because those are fewer than 4
+ * @returns the scatter, its degrees of freedom, and whether it was assumed: 0.07 because those are fewer than 4, or
+ *   {@link LEAST_SCATTER} because the shells agree better than can be
  * @example
  * pooledScatter([[-1.1, -1.0, -0.9], [-2.05, -1.95, -2, -2]]).df // => 5
  */
@@ -38,7 +45,8 @@ export function pooledScatter(
     df += n - 1;
   }
   if (df < FEWEST_DEGREES_OF_FREEDOM) return { s: ASSUMED_SCATTER, df, assumed: true };
-  return { s: Math.sqrt(sumOfSquares / df), df, assumed: false };
+  const s = Math.sqrt(sumOfSquares / df);
+  return s >= LEAST_SCATTER ? { s, df, assumed: false } : { s: LEAST_SCATTER, df, assumed: true };
 }
 
 /**

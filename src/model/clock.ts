@@ -47,7 +47,7 @@ export interface ClockBed {
 export interface Scatter {
   readonly s: number;
   readonly df: number;
-  /** True when df was under 4 and s = 0.07 was assumed. */
+  /** True when df was under 4 and s = 0.07 was assumed, or shells agree better than can be and s = 0.005 was. */
   readonly assumed: boolean;
 }
 

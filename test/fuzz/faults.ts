@@ -76,7 +76,10 @@ function outOfRange(findings: Findings): string[] {
     hold(`order ${row.bed}: ${row.p_older_than_next}`, share(row.p_older_than_next));
   }
   for (const row of findings.pairs)
-    hold(`pair ${row.bed_a} ${row.bed_b}: ${row.p_a_older} ${row.p_same_zone}`, share(row.p_a_older) && share(row.p_same_zone));
+    hold(
+      `pair ${row.bed_a} ${row.bed_b}: ${row.p_a_older} ${row.p_same_zone}`,
+      share(row.p_a_older) && share(row.p_same_zone),
+    );
   for (const row of findings.relations)
     hold(`relation ${row.lower} > ${row.upper}: ${row.p_reversed}`, share(row.p_reversed));
   for (const row of findings.sections) hold(`section ${row.section}: ${row.p_order}`, share(row.p_order));

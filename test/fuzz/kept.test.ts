@@ -1,0 +1,12 @@
+import { expect, it } from 'vitest';
+import { KEPT } from './kept/index.js';
+import { outcomeOf } from './outcome.js';
+import { PATIENCE } from './try-many.js';
+
+it.each(KEPT)('$name', async ({ files, refused }) => {
+  const start = performance.now();
+  const outcome = await outcomeOf(files);
+  expect(outcome.kind).toBe(refused ? 'refused' : 'done');
+  if (outcome.kind === 'refused') expect(outcome.messages.join('\n')).toMatch(refused!);
+  expect(performance.now() - start).toBeLessThan(PATIENCE);
+});
