@@ -79,7 +79,10 @@ function meanError(error: number, shells: number, residuals: readonly number[], 
 
 function priorsOf(fit: Mixture): ZonePriors {
   const { means, weights } = fit;
-  return { means, weights, tau: unbiasedSpread(fit, fit.responsibilities.length / fit.k), se: means.map(() => 0) };
+  const beds = fit.responsibilities.length / fit.k;
+  // drawing beds more than once shrinks their spread about the zones by (n − K)/n again
+  const tau = unbiasedSpread(fit, beds) * Math.sqrt(beds / Math.max(1, beds - fit.k));
+  return { means, weights, tau, se: means.map(() => 0) };
 }
 
 /** Repeats a task. */
