@@ -7,7 +7,7 @@
  * @returns from −1 to 1; null with one group
  * @throws RangeError when the two lists differ in length
  * @example
- * meanSilhouette([1, 2, 9, 10], [0, 0, 1, 1]) // => 0.87395833
+ * meanSilhouette([1, 2, 9, 10], [0, 0, 1, 1]) // => 0.8745098
  */
 export function meanSilhouette(values: readonly number[], labels: readonly number[]): number | null {
   if (values.length !== labels.length) {
