@@ -22,6 +22,7 @@ function doubts(findings: Findings, row: ClockRow): Remark[] {
   const said: (string | null)[] = [
     aminoAcidsNotJoined(findings, row),
     shellsWithoutValue(findings, row),
+    fewerZonesThanAsked(findings, row),
     unsettledSampling(findings, row),
     assumedScatter(findings, row),
     straddlingBeds(findings, row),
@@ -35,6 +36,11 @@ function aminoAcidsNotJoined({ options }: Findings, { amino_acids }: ClockRow): 
   const wanted = options.amino_acid;
   if (!Array.isArray(wanted) || wanted.length < 2 || amino_acids.length > 1) return null;
   return `No shell of this taxon has all of ${wanted.join(', ')}, so they make no index: ${amino_acids[0]} is used alone.`;
+}
+
+function fewerZonesThanAsked({ options }: Findings, { zones }: ClockRow): string | null {
+  if (options.zones === null || zones === 0 || zones >= options.zones) return null;
+  return `${options.zones} zones were asked for; the beds fill ${zones}, so that many are used.`;
 }
 
 function shellsWithoutValue(findings: Findings, { clock, taxon, fraction, amino_acids }: ClockRow): string | null {

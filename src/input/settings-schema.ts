@@ -23,14 +23,17 @@ const codes = z
   });
 
 /** Limits of screening in a settings file. */
-export const SCREENING = z.strictObject({
-  serine_ratio: aboveZero.optional(),
-  discordance: aboveZero.optional(),
-  replicates: aboveZero.optional(),
-  yield: number('a number from 0 to 1 is wanted', (v) => v >= 0 && v <= 1).optional(),
-  burial_m: number('a number from 0 is wanted', (v) => v >= 0 && v <= 1e6).optional(),
-  shells_a_bed: whole(1, 1_000_000).optional(),
-});
+export const SCREENING = z.strictObject(
+  {
+    serine_ratio: aboveZero.optional(),
+    discordance: aboveZero.optional(),
+    replicates: aboveZero.optional(),
+    yield: number('a number from 0 to 1 is wanted', (v) => v >= 0 && v <= 1).optional(),
+    burial_m: number('a number from 0 is wanted', (v) => v >= 0 && v <= 1e6).optional(),
+    shells_a_bed: whole(1, 1_000_000).optional(),
+  },
+  (issue) => (issue.code === 'invalid_type' ? 'limits are wanted, one a line below it' : undefined),
+);
 
 /** The settings file, keys with `_`: each command-line option under its own name. */
 export const SETTINGS = z.strictObject({

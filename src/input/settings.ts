@@ -79,6 +79,9 @@ function validate({ values, lineOf }: ParsedSettings, problems: ProblemList, fil
 }
 
 function shown(value: unknown): string {
+  // as YAML writes what JSON has no word for
+  if (typeof value === 'number' && !Number.isFinite(value))
+    return Number.isNaN(value) ? '.nan' : value > 0 ? '.inf' : '-.inf';
   const text = typeof value === 'string' ? `"${value}"` : (JSON.stringify(value) ?? String(value));
   return text.length > 60 ? `${text.slice(0, 60)}…` : text;
 }

@@ -47,7 +47,7 @@ export interface Zoning {
 /**
  * Finds the zones of one clock (design 7.3): mixtures and the continuum are compared by BIC; neighbours that the overlap
  * test calls `not distinct` are joined, the least distinct first, until none is left. With `zones` forced, that many are
- * fitted and none joined; `verdict` keeps saying what the data support.
+ * fitted (fewer where a zone would hold no bed) and none joined; `verdict` keeps saying what the data support.
  * @returns null when no bed has a mean
  */
 export function findZones(data: ClockData, options: ZoningOptions): Zoning | null {
@@ -65,7 +65,8 @@ export function findZones(data: ClockData, options: ZoningOptions): Zoning | nul
   let { fit, neighbours } = joined;
   if (forced) {
     const k = Math.min(options.zones!, beds.length);
-    fit = choice.mixtures[k - 1] ?? fitMixture(values, errors, k);
+    // more than the beds can fill leaves zones without any: they are dropped, and the number in use says so
+    fit = withoutEmptyZones(values, errors, choice.mixtures[k - 1] ?? fitMixture(values, errors, k));
     neighbours = testAll(data, beds, fit, options);
   }
   const { se, df } = zoneErrors(fit, errors, data.scatter.df, values);
