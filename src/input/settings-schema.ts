@@ -32,7 +32,7 @@ export const SCREENING = z.strictObject(
     burial_m: number('a number from 0 is wanted', (v) => v >= 0 && v <= 1e6).optional(),
     shells_a_bed: whole(1, 1_000_000).optional(),
   },
-  (issue) => (issue.code === 'invalid_type' ? 'limits are wanted, one a line below it' : undefined),
+  { error: (issue) => (issue.code === 'invalid_type' ? 'limits are wanted, one a line below it' : undefined) },
 );
 
 /** The settings file, keys with `_`: each command-line option under its own name. */
