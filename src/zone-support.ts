@@ -155,7 +155,7 @@ function countCriteria(
 async function drawZones({ data, zoning }: Pass, simulations: number, seed: number, host: Host) {
   if (zoning === null || zoning.fit.k < 2) return [];
   const beds = zoning.beds.map((bed) => data.beds[bed]);
-  const repeats = Math.min(simulations, beds.length > MANY_BEDS ? 40 : 200);
+  const repeats = Math.min(simulations, beds.length > MANY_BEDS ? 20 : 200);
   const residuals = beds.flatMap((bed) => {
     const kept = bed.shells.map((at) => data.shells[at]).filter((shell) => !shell.setAside);
     if (kept.length < 2) return [];

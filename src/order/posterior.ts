@@ -52,7 +52,7 @@ export async function samplePosterior(model: OrderModel, options: PosteriorOptio
   const beds = model.means.length;
   const { nodes } = model.graph;
   const { seed, map, chains = 4, onProgress } = options;
-  const draws = options.draws ?? Math.max(100, Math.min(1000, Math.floor(4e6 / (chains * Math.max(1, beds)))));
+  const draws = options.draws ?? Math.max(100, Math.min(1000, Math.floor(2.4e6 / (chains * Math.max(1, beds)))));
   const most = beds > 1000 ? 1 : (options.thinning ?? 16);
   const step = Math.max(1, Math.ceil(nodes / WATCHED));
   const watched = Array.from({ length: Math.ceil(nodes / step) }, (_, at) => at * step);
