@@ -31,11 +31,14 @@ export function spreadAfter(
     const variance = varianceWith(bed, 0);
     others.set(variance, (others.get(variance) ?? 0) + 1);
   }
+  const variances = Float64Array.from(others.keys());
+  const counts = Float64Array.from(others.values());
   return (more) => {
     const own = pair.map((bed, at) => varianceWith(bed, more[at]));
     const score = (t: number) => {
       let sum = 0;
-      for (const [variance, count] of others) sum += (count * (now - t)) / (t + variance) ** 2;
+      for (let at = 0; at < counts.length; at++) sum += counts[at] / (t + variances[at]) ** 2;
+      sum *= now - t;
       own.forEach((variance, at) => {
         sum += (squares[at] - t) / (t + variance) ** 2;
       });
@@ -44,7 +47,8 @@ export function spreadAfter(
     if (score(0) <= 0) return 0;
     let low = 0;
     let high = Math.max(now, ...squares);
-    for (let step = 0; step < 40; step++) {
+    // to a millionth of the bracket
+    for (let step = 0; step < 20; step++) {
       const middle = (low + high) / 2;
       if (score(middle) > 0) low = middle;
       else high = middle;

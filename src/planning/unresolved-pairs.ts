@@ -35,10 +35,16 @@ export function unresolvedPairs(view: ClockInView, known: KnownOrder, alpha: num
   const heavier = limit / normalQuantile(1 - alpha);
   const index = new Map(view.beds.map((bed) => [bed, known.indexOf.get(bed.key)!]));
   const depositOf = new Map(view.beds.flatMap((bed) => bed.members.map((key) => [key, bed] as const)));
-  const of = (asked: BedOnClock): UnresolvedPair[] => {
+  const found = new Map<BedOnClock, readonly UnresolvedPair[]>();
+  const of = (asked: BedOnClock): readonly UnresolvedPair[] => {
     const bed = depositOf.get(asked.key)!;
+    const own = found.get(bed) ?? pairsOf(bed);
+    found.set(bed, own);
+    return own;
+  };
+  const pairsOf = (bed: BedOnClock): UnresolvedPair[] => {
     const at = index.get(bed)!;
-    const found: UnresolvedPair[] = [];
+    const open: UnresolvedPair[] = [];
     for (const other of view.beds) {
       const to = index.get(other)!;
       const p = known.olderThan(at, to);
@@ -47,9 +53,9 @@ export function unresolvedPairs(view: ClockInView, known: KnownOrder, alpha: num
       const z = normalQuantile(Math.max(p, alpha));
       const variance =
         heavier * heavier * (varianceWith(bed, 0) + varianceWith(other, 0)) + view.spreadVariance(bed, other);
-      found.push({ a: bed, b: other, gap: z * Math.sqrt(variance) });
+      open.push({ a: bed, b: other, gap: z * Math.sqrt(variance) });
     }
-    return found;
+    return open;
   };
   const chance = ({ a, b, gap }: UnresolvedPair, more: MoreShells, spreadVariance = view.spreadVariance(a, b)) =>
     chanceFromHere(
