@@ -33,8 +33,7 @@ export function readResults(folder: string): Findings {
 }
 
 function locate(folder: string): string {
-  const found = statSync(folder, { throwIfNoEntry: false });
-  if (found && !found.isDirectory()) return folder;
+  if (isFile(folder)) return folder;
   const path = join(folder, 'results.json');
   try {
     const places = placesOf(folder);
@@ -44,6 +43,15 @@ function locate(folder: string): string {
     // what can't be put right is told of below, by what is missing
   }
   return path;
+}
+
+function isFile(path: string): boolean {
+  try {
+    return statSync(path).isFile();
+  } catch {
+    // what is not there, or can't be looked at, is told of when it is read
+    return false;
+  }
 }
 
 // while a living run moves its results into place, for a moment none are there

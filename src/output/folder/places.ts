@@ -1,6 +1,6 @@
 import { existsSync, lstatSync, realpathSync, statSync } from 'node:fs';
 import { basename, dirname, join, parse, relative, resolve } from 'node:path';
-import { refused } from './output-error.js';
+import { inWords, refused } from './output-error.js';
 
 /** Where the results go, and the hidden places beside them that a run uses on its way. */
 export interface Places {
@@ -26,13 +26,21 @@ export interface Places {
 export function placesOf(given: string): Places {
   if (given.trim() === '' || given.includes('\0'))
     throw refused('--out wants the name of a folder; an empty name came.');
-  const target = followed(given, resolve(given));
+  const target = followedInWords(given);
   if (parse(target).root === target) throw refused(`--out ${given} is the root folder. Give a folder inside it.`);
   if (!relative(target, process.cwd()).startsWith('..') && sameRoot(target, process.cwd())) {
     throw refused(`--out ${given} is the folder you are in, or one above it. Give the name of a new folder.`);
   }
   const beside = (ending: string) => join(dirname(target), `.${basename(target)}.bedorder-${ending}`);
   return { given, target, fresh: beside('new'), old: beside('old'), lock: beside('lock') };
+}
+
+function followedInWords(given: string): string {
+  try {
+    return followed(given, resolve(given));
+  } catch (error) {
+    throw inWords(error, given);
+  }
 }
 
 function followed(given: string, path: string): string {

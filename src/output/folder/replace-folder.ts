@@ -80,7 +80,7 @@ function moveIntoPlace({ target, fresh, old }: Places, reached: (step: Step) => 
 
 /** Refuses a target that holds anything but results of ours as they were written. */
 export function refuseForeign({ target, given }: Places): void {
-  const state = inspectFolder(target);
+  const state = inspectedInWords(target, given);
   if (state.kind !== 'foreign') return;
   const shown = state.names.slice(0, 8).map((name) => `  ${name}`);
   const more = state.names.length > 8 ? [`  … and ${state.names.length - 8} more`] : [];
@@ -88,6 +88,14 @@ export function refuseForeign({ target, given }: Places): void {
     [`${given} is left as it is, since ${state.why}:`, ...shown, ...more].join('\n') +
       '\nMove them elsewhere, or give another folder with --out.',
   );
+}
+
+function inspectedInWords(target: string, given: string): ReturnType<typeof inspectFolder> {
+  try {
+    return inspectFolder(target);
+  } catch (error) {
+    throw inWords(error, given);
+  }
 }
 
 // folders made on the way to a target that was never written are taken back

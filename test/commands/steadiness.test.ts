@@ -1,0 +1,162 @@
+import { spawn } from 'node:child_process';
+import { createHash } from 'node:crypto';
+import {
+  cpSync,
+  existsSync,
+  mkdirSync,
+  mkdtempSync,
+  readdirSync,
+  readFileSync,
+  rmSync,
+  symlinkSync,
+  writeFileSync,
+} from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { bedorder, builtOnce, ROOT } from './program.js';
+
+/* Whole runs of the program that are killed, starved of disk, or sent to places where they must not write. */
+
+let home: string;
+let cli: string;
+const survey = ['shells.csv', '--simulations', '9', '--quiet'];
+const run = (more: readonly string[]) => bedorder(['run', ...survey, ...more], { cwd: home });
+
+beforeAll(async () => {
+  home = mkdtempSync(join(tmpdir(), 'bedorder-'));
+  cpSync(join(ROOT, 'examples/summaries'), home, { recursive: true });
+  cli = join(await builtOnce(), 'cli.js');
+});
+afterAll(() => rmSync(home, { recursive: true, force: true }));
+
+function digest(folder: string): string {
+  const hash = createHash('sha256');
+  for (const name of readdirSync(folder, { recursive: true, encoding: 'utf8' }).sort()) {
+    if (name.includes('.')) hash.update(`${name}\n`).update(readFileSync(join(folder, name)));
+  }
+  return hash.digest('hex');
+}
+
+/** Files beside the results that a run may leave when it is killed; the next run takes them away. */
+const leftovers = () => readdirSync(home).filter((name) => name.startsWith('.'));
+
+it('a run killed at any of 50 moments leaves results that the next command finds whole, old or new', async () => {
+  await run(['--out', 'killed', '--seed', '2']);
+  const second = digest(join(home, 'killed'));
+  const start = performance.now();
+  await run(['--out', 'killed', '--seed', '1']);
+  const length = performance.now() - start;
+  const first = digest(join(home, 'killed'));
+  expect(second).not.toBe(first);
+  const met = { killed: 0, ended: 0 };
+  for (let kill = 0; kill < 50; kill++) {
+    const args = [cli, 'run', ...survey, '--out', 'killed', '--seed', String(1 + (kill % 2))];
+    const child = spawn(process.execPath, args, { cwd: home, stdio: 'ignore' });
+    const ended = new Promise<NodeJS.Signals | null>((resolve) => child.once('close', (_, signal) => resolve(signal)));
+    // the second half of a run is when it writes
+    await new Promise((resolve) => setTimeout(resolve, length * (0.3 + 0.75 * Math.random())));
+    child.kill('SIGKILL');
+    if ((await ended) === 'SIGKILL') met.killed++;
+    else met.ended++;
+    const told = await bedorder(['explain', 'killed', 'Flint Row/lower'], { cwd: home });
+    expect(told.stderr).toBe('');
+    expect(told.status).toBe(0);
+    expect([first, second]).toContain(digest(join(home, 'killed')));
+  }
+  expect(met.killed).toBeGreaterThan(10);
+  await run(['--out', 'killed', '--seed', '1']);
+  expect(digest(join(home, 'killed'))).toBe(first);
+  expect(leftovers()).toEqual([]);
+});
+
+describe('places where nothing can be written', () => {
+  // stands for a full disk: the system lets no file grow beyond 16 kB
+  it.runIf(process.platform === 'linux')(
+    'no room for the files: a message, status 1, the old results whole',
+    async () => {
+      await run(['--out', 'roomy', '--seed', '3']);
+      const before = digest(join(home, 'roomy'));
+      const command = `ulimit -f 16; exec "${process.execPath}" "${cli}" run ${survey.join(' ')} --out roomy`;
+      const child = spawn('bash', ['-c', command], { cwd: home, stdio: ['ignore', 'ignore', 'pipe'] });
+      let stderr = '';
+      child.stderr.on('data', (piece) => {
+        stderr += piece;
+      });
+      const status = await new Promise((resolve) => child.once('close', resolve));
+      expect(stderr).toMatch(/could not write to roomy.*Check the disk|disk is full/);
+      expect(stderr).not.toMatch(/fault of its own/);
+      expect(status).toBe(1);
+      expect(digest(join(home, 'roomy'))).toBe(before);
+      expect(leftovers()).toEqual([]);
+    },
+  );
+
+  // /sys takes no folder of anyone's, root included
+  it.runIf(existsSync('/sys/kernel'))('a folder that may not be written', async () => {
+    const { status, stderr } = await run(['--out', '/sys/bedorder-results']);
+    expect(stderr).toMatch(/no permission to write \/sys\/bedorder-results.*--out/);
+    expect(status).toBe(2);
+  });
+
+  it('a path through a file', async () => {
+    const { status, stderr } = await run(['--out', 'shells.csv/results']);
+    expect(stderr).toMatch(/is a file, not a folder/);
+    expect(status).toBe(2);
+  });
+
+  it('a name that no system takes', async () => {
+    const { status, stderr } = await run(['--out', 'x'.repeat(5_000)]);
+    expect(stderr).toMatch(/too long for this system/);
+    expect(status).toBe(2);
+  });
+});
+
+describe('what is not ours', () => {
+  it('a table that went away is named, and nothing is written', async () => {
+    const { status, stderr } = await run(['--beds', 'gone.csv', '--out', 'nothing']);
+    expect(stderr).toMatch(/gone\.csv/);
+    expect(status).toBe(2);
+    expect(existsSync(join(home, 'nothing'))).toBe(false);
+  });
+
+  it('a link to results stays a link, and what it leads to is replaced', async () => {
+    mkdirSync(join(home, 'disk'));
+    symlinkSync(join(home, 'disk'), join(home, 'link'));
+    expect((await run(['--out', 'link'])).status).toBe(0);
+    expect((await run(['--out', 'link', '--seed', '4'])).status).toBe(0);
+    expect(readdirSync(join(home, 'disk'))).toContain('beds.csv');
+    expect(leftovers()).toEqual([]);
+  });
+
+  it('a link to a folder of yours is refused, and the folder left as it was', async () => {
+    mkdirSync(join(home, 'photos'));
+    writeFileSync(join(home, 'photos/cliff.jpg'), 'x');
+    symlinkSync(join(home, 'photos'), join(home, 'album'));
+    const { status, stderr } = await run(['--out', 'album']);
+    expect(stderr).toMatch(/cliff\.jpg/);
+    expect(status).toBe(2);
+    expect(readdirSync(join(home, 'photos'))).toEqual(['cliff.jpg']);
+  });
+});
+
+describe('results that can not be read', () => {
+  it.each([
+    ['a path through a file', 'shells.csv/results'],
+    ['a name that no system takes', 'x'.repeat(5_000)],
+    ['an empty folder', 'empty'],
+    ['a file of another kind', 'shells.csv'],
+  ])('%s', async (_, path) => {
+    mkdirSync(join(home, 'empty'), { recursive: true });
+    for (const args of [
+      ['explain', path, 'A/1'],
+      ['plan', path],
+      ['dates', path, 'shells.csv'],
+    ]) {
+      const { status, stderr } = await bedorder(args, { cwd: home });
+      expect(status, stderr).toBe(2);
+      expect(stderr).not.toMatch(/fault of its own/);
+      expect(stderr.length).toBeGreaterThan(20);
+    }
+  });
+});
