@@ -14,6 +14,7 @@ import { type CombinedOutcome, combineClocks, combinedRows, type SettledClock } 
 import type { BedRecord, BedSite, Findings, Host, Remark, RunOptions, Survey } from './model/index.js';
 import { heightOf, sectionRelations } from './order/index.js';
 import { type Settled, settlePasses } from './passes.js';
+import { planOfRun } from './planning/index.js';
 import { remarks } from './remarks.js';
 import { screenShells } from './screening/index.js';
 import { createRandom, type Random } from './statistics/index.js';
@@ -22,7 +23,7 @@ import { supportZones } from './zone-support.js';
 
 /**
  * The whole way of the data: average, screen, choose clocks; for each clock find zones, check relations and read odd shells
- * until nothing changes, then order the beds; and put down all that was found (design 7).
+ * until nothing changes, then order the beds; put down all that was found, and what to collect or date next (design 7).
  * @param survey what was read, with warnings only
  * @param options every option has a value; see DEFAULT_OPTIONS
  * @param host maps tasks and hears of progress; results do not depend on it
@@ -65,7 +66,7 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
     results.push(...rows.map((result) => combinedRows(result, run, options.reference_taxon!)));
   }
   for (const [at, run] of runs.entries()) results.push(...(await rowsOfClocks(run, random.fork(at))));
-  const findings = {
+  const findings: Findings = {
     program: 'bedorder' as const,
     version: VERSION,
     options,
@@ -100,8 +101,12 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
     votes: results.flatMap((result) => result.votes),
     shares: results.flatMap((result) => result.shares),
     remarks: [...surveyRemarks(), ...results.flatMap((result) => result.remarks)],
+    plan: [],
+    plan_criterion: '',
+    plan_notes: [],
   };
-  return { ...findings, remarks: remarks(findings) };
+  host.progress('planning', 1);
+  return { ...findings, remarks: remarks(findings), ...planOfRun(findings) };
 
   /** Passes over the main clock of one taxon and fraction. */
   function settleClock(set: ClockSet, own: Random): Settled {

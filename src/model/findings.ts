@@ -1,6 +1,7 @@
 import type { AminoAcid, ByAminoAcid, Fraction } from './amino-acid.js';
 import type { BedMark, Confidence, ShellMark, ShellReading, ShellStatus } from './mark.js';
 import type { RunOptions } from './options.js';
+import type { PlanRow } from './plan.js';
 import type { Problem } from './problem.js';
 import type { BedPlace, InputFile, RelationBasis } from './survey.js';
 
@@ -350,4 +351,10 @@ export interface Findings {
   readonly votes: readonly AminoAcidVotes[];
   readonly shares: readonly AminoAcidShare[];
   readonly remarks: readonly Remark[];
+  /** What to collect or date next; empty where it was left out, as plan_notes then say. */
+  readonly plan: readonly PlanRow[];
+  /** When a pair counts as resolved, and with what power the numbers of shells are worked out. */
+  readonly plan_criterion: string;
+  /** What the reader must know to use the plan, most important first. */
+  readonly plan_notes: readonly string[];
 }

@@ -19,6 +19,7 @@ import type { AnyFields, FieldsOf } from './shape.js';
 import { beds, shells } from './tables/beds.js';
 import * as c from './tables/columns.js';
 import { correlation, order, pairs } from './tables/order.js';
+import { plan } from './tables/plan.js';
 import { problems, relations, sections } from './tables/relations.js';
 import { adjacent_zones, clocks, zone_counts, zones } from './tables/zones.js';
 
@@ -238,6 +239,9 @@ const described = {
   votes: rows(votes, 'beds on whose order amino acids disagree'),
   shares: rows(shares, 'what each amino acid brings to an index'),
   remarks: rows(remarks, 'sentences for the reader'),
+  plan: rows(plan, 'what to collect or date next'),
+  plan_criterion: c.text('when a pair counts as resolved, and with what power shells are counted'),
+  plan_notes: c.list(c.text('sentence'), 'what to know when using the plan'),
 } satisfies FieldsOf<Findings>;
 
 /** Every part of results.json, described; the order here is the order in the file. */

@@ -8,7 +8,7 @@ import { MARKER } from './folder/inspect.js';
 import { geoJson } from './geojson.js';
 import { resultsPieces } from './results-json.js';
 import { tableColumns } from './table-columns.js';
-import { TABLES } from './tables/index.js';
+import { TABLES, type Table } from './tables/index.js';
 
 /** What is drawn of the findings elsewhere, and only stored here. */
 export interface Drawings {
@@ -39,7 +39,7 @@ export async function writeResults(findings: Findings, drawings: Drawings, folde
     const columns = tableColumns(table, findings);
     const rows = findings[table.name] as readonly never[];
     const path = `${table.name}.csv`;
-    await write(path, table.description, csvPieces<never>(path, columns, rows), columns);
+    await write(path, titleOf(table, findings), csvPieces<never>(path, columns, rows), columns);
   }
   await write('results.json', 'Everything that was found, for programs', resultsPieces(findings));
   await write('deposits.geojson', 'Beds with coordinates, for a map', [geoJson(findings)]);
@@ -49,6 +49,17 @@ export async function writeResults(findings: Findings, drawings: Drawings, folde
   }
   writePieces(join(folder, MARKER), [dataPackage(files)]);
   return files;
+}
+
+/** What a table is, and the clocks on which its errors rest on a scatter that was assumed. */
+function titleOf({ description, scatterless }: Table, { clocks, beds }: Findings): string {
+  if (scatterless) return description;
+  const assumed = clocks.filter(({ clock }) =>
+    beds.some((bed) => bed.clock === clock && bed.marks.includes('assumed scatter')),
+  );
+  if (assumed.length === 0) return description;
+  const names = assumed.map(({ clock, scatter }) => `${scatter} on ${clock}`).join(', ');
+  return `${description}. Every error in it rests on a scatter that was assumed: ${names}`;
 }
 
 function writePieces(path: string, pieces: Iterable<string>): { readonly bytes: number; readonly sha256: string } {

@@ -10,5 +10,6 @@ export { type JudgeDatesOptions, judgeDates } from './judge-dates.js';
 export { type KnownOrder, knownOrder } from './known-order.js';
 // The plan
 export { type PlanOptions, plan } from './plan.js';
+export { MOST_BEDS_PLANNED, planOfRun } from './plan-of-run.js';
 export { chanceFromHere, type PairDesign, type PresentPair, type ResolvingRule, resolvingPower } from './power.js';
 export { type ShellsNeeded, type ShellsNeededOptions, shellsInEach, shellsNeeded } from './shells-needed.js';

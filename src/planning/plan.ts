@@ -61,7 +61,7 @@ export function plan(findings: Findings, options: PlanOptions = {}): Plan {
     ...clocks.flatMap(({ deposits, pairs }) => separateBeds(findings, deposits, pairs, settings)),
     ...(dates > 0 ? dateBeds(findings, known, reversed, dates) : []),
   ];
-  return { rows, criterion: criterion(settings), notes: notes() };
+  return { rows, criterion: criterion(settings), notes: notes(findings) };
 }
 
 function criterion({ alpha, power }: PlanSettings): string {
@@ -73,8 +73,16 @@ function criterion({ alpha, power }: PlanSettings): string {
   );
 }
 
-function notes(): string[] {
+function notes(findings: Findings): string[] {
+  const assumed = findings.clocks.filter(
+    ({ clock, main }) =>
+      main && findings.beds.some((bed) => bed.clock === clock && bed.marks.includes('assumed scatter')),
+  );
   return [
+    ...assumed.map(
+      ({ clock, scatter }) =>
+        `On ${clock} a scatter of ${scatter} between the shells of one bed is assumed, and every number of shells rests on it: a few beds of 5 shells would measure it.`,
+    ),
     'Shells are those that pass screening: collect a few more for those that will not.',
     'More shells from one place in a bed settle that place; take them from across the bed.',
     'A date bounds its bed only where the dated material is as old as the deposit; shells reworked into it are not.',

@@ -47,7 +47,7 @@ describe('run', () => {
     const names = Object.keys(bytesOf(join(home, 'first'))).filter((name) => !name.startsWith('figures'));
     expect(names.join(' ')).toBe(
       'adjacent_zones.csv beds.csv clocks.csv correlation.csv datapackage.json deposits.geojson order.csv pairs.csv ' +
-        'problems.csv relations.csv report.html results.json sections.csv shells.csv zone_counts.csv zones.csv',
+        'plan.csv problems.csv relations.csv report.html results.json sections.csv shells.csv zone_counts.csv zones.csv',
     );
     expect(readdirSync(home).filter((name) => name.startsWith('.'))).toEqual([]);
   });

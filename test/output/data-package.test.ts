@@ -52,6 +52,21 @@ describe('datapackage.json', () => {
     }
   });
 
+  it('says in the title of each table that its errors rest on a scatter that was assumed', async () => {
+    const own = mkdtempSync(join(tmpdir(), 'bedorder-'));
+    try {
+      const beds = FINDINGS.beds.map((bed) => ({ ...bed, marks: ['assumed scatter' as const] }));
+      await writeResults({ ...FINDINGS, beds }, { report: '', figures: [] }, own);
+      const { resources } = JSON.parse(readFileSync(join(own, 'datapackage.json'), 'utf8'));
+      const said = resources.filter((one: { title: string }) => one.title.includes('scatter that was assumed'));
+      const tables = resources.filter((one: { path: string }) => one.path.endsWith('.csv'));
+      expect(said.length).toBe(tables.length - 1);
+      expect(described.resources.filter((one) => JSON.stringify(one).includes('was assumed'))).toEqual([]);
+    } finally {
+      rmSync(own, { recursive: true });
+    }
+  });
+
   it('describes the tables as they are: headers, and cells that fit their type', () => {
     let cells = 0;
     for (const { path, schema } of described.resources) {

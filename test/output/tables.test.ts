@@ -19,6 +19,7 @@ const CONTRACT = {
   relations: 'clock, lower, upper, basis, kind, certainty, difference, z, p_reversed, verdict, verdict_after, reading',
   sections: 'clock, section, beds, relations, statistic, p_order, verdict',
   correlation: 'clock, zone, Low cliff, "north", section zone',
+  plan: 'clock, kind, rank, beds, shells, total, gap, gap_error, power, chance, pairs_gained, beds_bracketed, proven_best, settles',
   problems: 'file, line, column, severity, message',
 };
 

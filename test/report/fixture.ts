@@ -9,6 +9,7 @@ import {
   type ShellRatios,
   type ShellRow,
 } from '../../src/model/index.js';
+import { planOfRun } from '../../src/planning/index.js';
 
 /** Size and troubles of an invented survey. */
 export interface FixtureOptions {
@@ -82,7 +83,7 @@ function generator(seed: number): { uniform: () => number; normal: () => number 
   return { uniform, normal };
 }
 
-/** Findings of an invented survey, complete enough to draw; numbers are plausible, none is an engine's. */
+/** Findings of an invented survey, complete enough to draw; numbers are plausible, and only the plan is an engine's. */
 export function fixture(options: FixtureOptions = {}): Findings {
   const sections = options.sections ?? 12;
   const bedCount = options.beds ?? 36;
@@ -335,7 +336,7 @@ export function fixture(options: FixtureOptions = {}): Findings {
     }),
   );
 
-  return {
+  const findings: Findings = {
     program: 'bedorder',
     version: '1.0.0',
     options: { ...DEFAULT_OPTIONS, gradient: options.gradient ? 'cmat_c' : null },
@@ -483,7 +484,11 @@ export function fixture(options: FixtureOptions = {}): Findings {
         text: 'Groups that were found from the data flatter the p-values of the tests between them.',
       },
     ],
+    plan: [],
+    plan_criterion: '',
+    plan_notes: [],
   };
+  return { ...findings, ...planOfRun(findings) };
 }
 
 const round = (value: number) => Math.round(value * 100) / 100;

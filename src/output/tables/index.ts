@@ -1,6 +1,7 @@
 import type { AnyFields } from '../shape.js';
 import { beds, shells } from './beds.js';
 import { correlation, order, pairs } from './order.js';
+import { plan } from './plan.js';
 import { problems, relations, sections } from './relations.js';
 import { adjacent_zones, clocks, zone_counts, zones } from './zones.js';
 
@@ -10,6 +11,8 @@ export interface Table {
   readonly description: string;
   /** Columns in the order in which they stand in the file. */
   readonly columns: AnyFields;
+  /** No value in it rests on the scatter between shells. */
+  readonly scatterless?: true;
 }
 
 /** Names of the tables; with `.csv` added, of their files. */
@@ -25,6 +28,7 @@ export type TableName =
   | 'relations'
   | 'sections'
   | 'correlation'
+  | 'plan'
   | 'problems';
 
 /** The tables of the results folder, in the order in which they are best read. */
@@ -44,5 +48,6 @@ export const TABLES: readonly Table[] = [
   { name: 'relations', description: 'Field relations against the ratios', columns: relations },
   { name: 'sections', description: 'Whether each section agrees with its own superposition', columns: sections },
   { name: 'correlation', description: 'Beds of each zone, one column a section in coast order', columns: correlation },
-  { name: 'problems', description: 'Warnings about the input', columns: problems },
+  { name: 'plan', description: 'What to collect or date next, and what it would settle', columns: plan },
+  { name: 'problems', description: 'Warnings about the input', columns: problems, scatterless: true },
 ];
