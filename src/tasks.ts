@@ -1,9 +1,10 @@
 import type { Task } from './model/index.js';
 import { chainDraws } from './order/index.js';
-import { bootstrapLikelihoodRatio, bootstrapZones } from './zones/index.js';
+import { bootstrapLead, bootstrapLikelihoodRatio, bootstrapZones } from './zones/index.js';
 
 /** The pure functions that a host may run on workers, by name. */
 const TASKS: Readonly<Record<string, (argument: never) => unknown>> = {
+  bootstrapLead,
   bootstrapLikelihoodRatio,
   bootstrapZones,
   chainDraws,

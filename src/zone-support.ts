@@ -70,7 +70,7 @@ export async function supportZones(
   const errors = before.beds.map((bed) => data.beds[bed].se);
   const values = before.beds.map((bed) => data.beds[bed].mean);
   host.progress(`number of zones of ${name}`, 0);
-  const { choice, comparisons } = await settleChoice(before.choice, errors, {
+  const { choice, comparisons } = await settleChoice(before.choice, values, errors, {
     alpha: options.alpha,
     seed: seedFrom(random.fork(1)),
     simulations: options.simulations,
@@ -102,6 +102,7 @@ export async function supportZones(
         forced: options.zones,
         byBic: before.choice.bestZones,
         continuumByBic: before.choice.continuumBic < before.choice.bics[before.choice.bestZones - 1],
+        beforeJoining: choice.verdict === 'zones' ? choice.bestZones : 1,
         byGap,
         bySilhouette,
         comparisons,

@@ -13,6 +13,8 @@ export interface Criteria {
   readonly byBic: number;
   readonly continuumByBic: boolean;
   /** null where the statistic is not to be had. */
+  /** Zones after the bootstraps and before neighbours were joined; 1 where there were none. */
+  readonly beforeJoining: number;
   readonly byGap: number | null;
   readonly bySilhouette: number | null;
   readonly comparisons: readonly Comparison[];
@@ -21,11 +23,12 @@ export interface Criteria {
 /**
  * How the number of zones was chosen and which criteria agree, in sentences for the page.
  * @example
- * choiceSentence({ verdict: 'zones', zones: 3, forced: null, byBic: 3, continuumByBic: false, byGap: 3, bySilhouette: 3, comparisons: [] })
+ * choiceSentence({ verdict: 'zones', zones: 3, forced: null, byBic: 3, continuumByBic: false,
+ *   beforeJoining: 3, byGap: 3, bySilhouette: 3, comparisons: [] })
  * // => 'The data support 3 zones. BIC, the gap statistic and the silhouette agree.'
  */
 export function choiceSentence(criteria: Criteria): string {
-  const { verdict, zones, forced, byBic, continuumByBic, byGap, bySilhouette, comparisons } = criteria;
+  const { verdict, zones, forced, byBic, continuumByBic, beforeJoining, byGap, bySilhouette, comparisons } = criteria;
   const supported = SUPPORT[verdict]?.(zones);
   if (verdict === 'too few beds') return forced === null ? supported : `${supported} ${forcedText(forced)}`;
   const sentences = [supported];
@@ -41,10 +44,17 @@ export function choiceSentence(criteria: Criteria): string {
   if (agree.length > 0)
     sentences.push(`${upper(list(agree.map(({ name }) => name)))} ${agree.length > 1 ? 'agree' : 'agrees'}.`);
   for (const { name, says, text } of other) sentences.push(`${upper(text ?? `${name} prefers ${zoneCount(says!)}`)}.`);
-  if (!continuumByBic && byBic > settled && verdict === 'zones' && !comparisons.some((c) => c.zones === byBic)) {
+  if (verdict === 'zones' && beforeJoining > settled) {
     sentences.push('Neighbours that the overlap test does not tell apart were joined.');
   }
-  sentences.push(...comparisons.map((comparison) => comparisonText(comparison, settled)));
+  const bicForZones = byBic > 1 && !continuumByBic;
+  sentences.push(
+    ...whetherText(
+      comparisons.filter(({ of }) => of === 'any'),
+      bicForZones,
+    ),
+    ...comparisons.filter(({ of }) => of === 'one more').map((comparison) => oneMoreText(comparison, settled)),
+  );
   if (forced !== null) sentences.push(forcedText(forced));
   return sentences.join(' ');
 }
@@ -56,13 +66,28 @@ const SUPPORT: Record<ClockVerdict, (zones: number) => string> = {
   'too few beds': () => 'There are too few beds to look for zones.',
 };
 
-function comparisonText({ simpler, zones, p, repeats }: Comparison, settled: number): string {
-  const rival = simpler === 'continuum' ? 'a continuum' : zoneCount(Number(simpler));
-  const outcome = `p = ${p < 0.001 ? p.toExponential(0) : Number(p.toPrecision(2))}, ${repeats} simulations`;
-  const note =
-    zones > settled && Number(simpler) === settled && p <= 0.05 ? '; BIC asks for more, so the simpler stands' : '';
-  return `A bootstrap of ${zoneCount(zones)} against ${rival} gives ${outcome}${note}.`;
+/** Whether there are zones at all, where a bootstrap decided it. */
+function whetherText(tests: readonly Comparison[], bicForZones: boolean): string[] {
+  if (tests.length === 0) return [];
+  const rival = (test: Comparison): string =>
+    `${test.simpler === 'continuum' ? 'a continuum' : 'one zone'} (${outcome(test)})`;
+  const against = tests.find(({ p, level }) => !(p <= level));
+  const how = 'A bootstrap that makes the whole choice again in samples without zones';
+  if (against !== undefined) {
+    return [`${how} does not rule out ${rival(against)}${bicForZones ? ', so no zones are taken' : ''}.`];
+  }
+  return [`${how} finds ${list(tests.map(rival))} unlikely${bicForZones ? '' : ', and decides for zones'}.`];
 }
+
+function oneMoreText(test: Comparison, settled: number): string {
+  const { simpler, zones, p, level } = test;
+  const note =
+    zones > settled && Number(simpler) === settled && p <= level ? '; BIC asks for more, so the simpler stands' : '';
+  return `A bootstrap of ${zoneCount(zones)} against ${zoneCount(Number(simpler))} gives ${outcome(test)}${note}.`;
+}
+
+const outcome = ({ p, repeats }: Comparison): string =>
+  `p = ${p < 0.001 ? p.toExponential(0) : Number(p.toPrecision(2))}, ${repeats} simulations`;
 
 const forcedText = (forced: number): string =>
   `${upper(zoneCount(forced))} ${forced === 1 ? 'is' : 'are'} used, as you asked.`;

@@ -45,7 +45,8 @@ export function bootstrapLikelihoodRatio(argument: LikelihoodRatioArgument): num
   });
 }
 
-function drawTrue(model: NullModel, random: ReturnType<typeof createRandom>): number {
+/** A true log ratio of a bed, drawn from a model. */
+export function drawTrue(model: NullModel, random: ReturnType<typeof createRandom>): number {
   const u = random.uniform();
   if (model.kind === 'continuum') return model.low + (model.high - model.low) * u;
   let sum = 0;
@@ -69,13 +70,4 @@ function simplerLogLikelihood(model: NullModel, values: readonly number[], error
 export function nullModel(fit: Mixture | Continuum): NullModel {
   if ('low' in fit) return { kind: 'continuum', low: fit.low, high: fit.high };
   return { kind: 'zones', means: fit.means, weights: fit.weights, tau: fit.tau };
-}
-
-/**
- * Share of the drawn ratios at or above that of the data, the data counted in: never 0.
- * @example
- * bootstrapP(5, [1, 2, 6, 0]) // => 0.4
- */
-export function bootstrapP(ratio: number, drawn: readonly number[]): number {
-  return (1 + drawn.filter((value) => value >= ratio).length) / (drawn.length + 1);
 }

@@ -57,5 +57,9 @@ export function chooseModel(
 function verdictOf(n: number, best: number, bics: readonly number[], continuumBic: number): ClockVerdict {
   if (n < FEWEST_BEDS) return 'too few beds';
   if (best > 1 && bics[best - 1] < continuumBic) return 'zones';
-  return continuumBic < bics[0] - 2 ? 'continuum' : 'one zone';
+  return withoutZones(bics[0], continuumBic);
 }
+
+/** What is said where there are no zones. */
+export const withoutZones = (oneZoneBic: number, continuumBic: number): 'continuum' | 'one zone' =>
+  continuumBic < oneZoneBic - 2 ? 'continuum' : 'one zone';

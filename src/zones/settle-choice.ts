@@ -1,6 +1,8 @@
-import type { TaskMapper } from '../model/index.js';
-import { bootstrapP, type LikelihoodRatioArgument, nullModel } from './likelihood-ratio.js';
-import { FEWEST_BEDS, type ModelChoice } from './model-choice.js';
+import type { ClockVerdict, TaskMapper } from '../model/index.js';
+import { bootstrapInRounds } from './bootstrap-rounds.js';
+import { type LeadArgument, leadOfFits, leadOfZones, rivalModel } from './lead-of-zones.js';
+import { type LikelihoodRatioArgument, nullModel } from './likelihood-ratio.js';
+import { FEWEST_BEDS, type ModelChoice, withoutZones } from './model-choice.js';
 
 /** Difference of BIC above which the richer model stands without a bootstrap ("very strong", Kass and Raftery 1995). */
 export const CLEAR_BIC = 10;
@@ -8,14 +10,31 @@ export const CLEAR_BIC = 10;
 /** Difference of BIC under which one zone more is tested although BIC is against it ("not worth more than a bare mention"). */
 export const NEAR_BIC = 2;
 
-/** One model held against a richer one by a parametric bootstrap of their likelihood ratio. */
+/** Whether there are zones at all is judged at this share of alpha: 0.03 where alpha is 0.05. */
+export const STRICTER = 0.6;
+
+/** Of the two models without zones the worse is held against zones too where its BIC is as near as this ("strong" beyond). */
+const NEAR_RIVAL = 6;
+
+/** Beds above which the number of repeats is held down: every one takes long, and BIC misses little. */
+const MANY_BEDS = 400;
+const FEW_REPEATS = 199;
+
+/** One model held against richer ones by a parametric bootstrap. */
 export interface Comparison {
+  /**
+   * `any`: a model without zones against zones in any number, by {@link leadOfZones}. `one more`: K − 1 zones against K, by
+   * the likelihood ratio 2(ln L richer − ln L simpler).
+   */
+  readonly of: 'any' | 'one more';
   /** `1` … `K`, or `continuum`. */
   readonly simpler: string;
+  /** Of the richer model; with `any` the number of lowest BIC. */
   readonly zones: number;
-  /** 2(ln L richer − ln L simpler). */
-  readonly ratio: number;
+  readonly statistic: number;
   readonly p: number;
+  /** The richer model stands when p is at most this. */
+  readonly level: number;
   readonly repeats: number;
 }
 
@@ -30,84 +49,118 @@ export interface SettledChoice {
 export interface SettleOptions {
   readonly alpha: number;
   readonly seed: number;
-  /** Most repeats a comparison; it stops earlier once p is plainly on one side of alpha. Default 999. */
+  /** Most repeats a comparison; it stops earlier once p is plainly on one side of the level. Default 999. */
   readonly simulations?: number;
   readonly map: TaskMapper;
 }
 
-/** Repeats a task: enough to be worth handing over, few enough to share out. */
-const REPEATS_A_TASK = 50;
-
-/** Tasks between looks at whether the answer is plain already. */
-const TASKS_A_ROUND = 4;
+/** Bed means of log ratios and their standard errors. */
+interface Beds {
+  readonly values: readonly number[];
+  readonly errors: readonly number[];
+}
 
 /**
- * Where BIC is close, asks a parametric bootstrap of the likelihood ratio (McLachlan 1987, doi:10.2307/2347790).
+ * Where BIC is not clear, asks parametric bootstraps (McLachlan 1987, doi:10.2307/2347790): first whether there are zones at
+ * all, then how many.
  *
- * The best number of zones K must hold against K − 1 zones, and against the continuum, wherever the lead in BIC is under
- * 10; with p above alpha the simpler model is taken, and is tested in turn. So the bootstrap can only take zones away, and
- * it runs only where it decides. One zone more is tested where its BIC is within 2 of the best; a small p there is reported
- * and changes nothing, since BIC asks for more than p ≤ 0.05.
+ * *Whether*: unless the best mixture of two zones or more leads the continuum and the single zone by 10 or more in BIC, its
+ * lead is compared with those in samples of the better of these two (of both where they are near each other), in which the
+ * number of zones is chosen anew. Zones stand when p ≤ 0.6 alpha, whether BIC is for them or against: it asks so much more
+ * of three zones than of a continuum that it misses many that are there, and with a dozen beds it sees many that are not.
+ * The level leaves room for the ends of the rival being estimates, so that no more than about alpha of coasts without zones
+ * are given some. Nothing is drawn where BIC is against zones and they do not even lead in Akaike's criterion.
+ *
+ * *How many*: K zones, the lowest BIC, must hold against K − 1 at alpha wherever their lead in BIC is under 10; else K − 1 are
+ * taken and tested in turn. One zone more is tested where its BIC is within 2 of the best; a small p there is reported and
+ * changes nothing, since BIC asks for more than p ≤ 0.05.
  * @param choice by BIC
- * @param errors standard errors of the bed means that were chosen from
+ * @param values bed means that were chosen from
+ * @param errors their standard errors
  */
 export async function settleChoice(
   choice: ModelChoice,
+  values: readonly number[],
   errors: readonly number[],
   options: SettleOptions,
 ): Promise<SettledChoice> {
-  const comparisons: Comparison[] = [];
-  let zones = choice.bestZones;
-  let verdict = choice.verdict;
-  if (errors.length < FEWEST_BEDS || verdict === 'too few beds') return { choice, comparisons };
-  while (verdict === 'zones') {
-    if (choice.continuumBic - choice.bics[zones - 1] < CLEAR_BIC) {
-      const against = await compare(choice, 'continuum', zones, errors, options);
-      comparisons.push(against);
-      if (against.p > options.alpha) {
-        verdict = choice.continuumBic < choice.bics[0] - 2 ? 'continuum' : 'one zone';
-        break;
-      }
-    }
-    if (choice.bics[zones - 2] - choice.bics[zones - 1] >= CLEAR_BIC) break;
-    const against = await compare(choice, zones - 1, zones, errors, options);
+  const { bics, mixtures } = choice;
+  if (values.length < FEWEST_BEDS || choice.verdict === 'too few beds' || mixtures.length < 2) {
+    return { choice, comparisons: [] };
+  }
+  const few = values.length > MANY_BEDS ? FEW_REPEATS : Number.POSITIVE_INFINITY;
+  const limited = { ...options, simulations: Math.min(options.simulations ?? 999, few) };
+  const beds = { values, errors };
+  const best = 2 + bics.slice(1).reduce((least, bic, at, rest) => (bic < rest[least] ? at : least), 0);
+  const { zones: supported, comparisons } = await anyZones(choice, best, beds, limited);
+  if (!supported) return { choice: { ...choice, verdict: withoutZones(bics[0], choice.continuumBic) }, comparisons };
+  let zones = best;
+  while (zones > 2 && bics[zones - 2] - bics[zones - 1] < CLEAR_BIC) {
+    const against = await oneMore(choice, zones, errors, limited);
     comparisons.push(against);
     if (against.p <= options.alpha) break;
     zones--;
-    if (zones === 1) verdict = choice.continuumBic < choice.bics[0] - 2 ? 'continuum' : 'one zone';
-    // the continuum beats what is left: no zones after all
-    else if (choice.continuumBic < choice.bics[zones - 1]) verdict = 'continuum';
   }
-  if (verdict === 'zones' && zones === choice.bestZones && zones < choice.bics.length) {
-    if (choice.bics[zones] - choice.bics[zones - 1] < NEAR_BIC) {
-      comparisons.push(await compare(choice, zones, zones + 1, errors, options));
-    }
+  if (zones === best && zones < bics.length && bics[zones] - bics[zones - 1] < NEAR_BIC) {
+    comparisons.push(await oneMore(choice, zones + 1, errors, limited));
   }
-  const settled = verdict === 'zones' ? { ...choice, bestZones: zones } : { ...choice, verdict };
-  return { choice: settled, comparisons };
+  return { choice: { ...choice, bestZones: zones, verdict: 'zones' satisfies ClockVerdict }, comparisons };
 }
 
-async function compare(
-  choice: ModelChoice,
-  simpler: number | 'continuum',
+type Limited = SettleOptions & { readonly simulations: number };
+
+async function anyZones(choice: ModelChoice, best: number, { values, errors }: Beds, options: Limited) {
+  const { mixtures, continuum, bics, continuumBic } = choice;
+  const rivals = [
+    { simpler: 'continuum', bic: continuumBic, model: continuum },
+    { simpler: '1', bic: bics[0], model: mixtures[0] },
+  ].sort((a, b) => a.bic - b.bic);
+  const comparisons: Comparison[] = [];
+  if (rivals[0].bic - bics[best - 1] >= CLEAR_BIC) return { zones: true, comparisons };
+  if (choice.verdict !== 'zones' && !(leadOfFits(mixtures, continuum) > 0)) return { zones: false, comparisons };
+  const level = STRICTER * options.alpha;
+  const statistic = leadOfZones(values, errors);
+  for (const { simpler, model } of rivals.filter(({ bic }) => bic - rivals[0].bic < NEAR_RIVAL)) {
+    const drawn = { errors, rival: rivalModel(model, values.length), seed: options.seed };
+    const { p, repeats } = await bootstrapInRounds({
+      observed: statistic,
+      level,
+      ...options,
+      task: (first, number) => {
+        const argument: LeadArgument = { ...drawn, first, repeats: number };
+        return { name: 'bootstrapLead', argument };
+      },
+    });
+    comparisons.push({ of: 'any', simpler, zones: best, statistic, p, level, repeats });
+    if (!(p <= level)) return { zones: false, comparisons };
+  }
+  return { zones: true, comparisons };
+}
+
+async function oneMore(
+  { mixtures }: ModelChoice,
   zones: number,
   errors: readonly number[],
-  { alpha, seed, simulations = 999, map }: SettleOptions,
+  { alpha, seed, simulations, map }: Limited,
 ): Promise<Comparison> {
-  const model = simpler === 'continuum' ? choice.continuum : choice.mixtures[simpler - 1];
-  const ratio = 2 * (choice.mixtures[zones - 1].logLikelihood - model.logLikelihood);
-  const drawn: number[] = [];
-  while (drawn.length < simulations) {
-    const round = Math.min(TASKS_A_ROUND * REPEATS_A_TASK, simulations - drawn.length);
-    const tasks = Array.from({ length: Math.ceil(round / REPEATS_A_TASK) }, (_, at) => {
-      const first = drawn.length + at * REPEATS_A_TASK;
-      const repeats = Math.min(REPEATS_A_TASK, round - at * REPEATS_A_TASK);
-      const argument: LikelihoodRatioArgument = { errors, simpler: nullModel(model), zones, seed, first, repeats };
+  const model = mixtures[zones - 2];
+  const statistic = 2 * (mixtures[zones - 1].logLikelihood - model.logLikelihood);
+  const { p, repeats } = await bootstrapInRounds({
+    observed: statistic,
+    level: alpha,
+    simulations,
+    map,
+    task: (first, number) => {
+      const argument: LikelihoodRatioArgument = {
+        errors,
+        simpler: nullModel(model),
+        zones,
+        seed,
+        first,
+        repeats: number,
+      };
       return { name: 'bootstrapLikelihoodRatio', argument };
-    });
-    drawn.push(...((await map(tasks)) as number[][]).flat());
-    const distance = Math.abs(bootstrapP(ratio, drawn) - alpha);
-    if (distance > 3 * Math.sqrt((alpha * (1 - alpha)) / drawn.length)) break;
-  }
-  return { simpler: String(simpler), zones, ratio, p: bootstrapP(ratio, drawn), repeats: drawn.length };
+    },
+  });
+  return { of: 'one more', simpler: String(zones - 1), zones, statistic, p, level: alpha, repeats };
 }

@@ -46,22 +46,25 @@ export interface CountCriteria {
   readonly silhouette: number | null;
 }
 
-/** Rows of zone_counts.csv for one clock: every mixture, then the continuum. `chosen` marks the model of lowest BIC. */
+/**
+ * Rows of zone_counts.csv for one clock: every mixture, then the continuum.
+ * `chosen` marks the one in use after everything: bootstraps where BIC was not clear, joining, a number asked for.
+ */
 export function zoneCountRows(
   data: ClockData,
   zoning: Zoning,
   criteria: ReadonlyMap<number, CountCriteria> = new Map(),
 ): ZoneCountRow[] {
-  const { choice, verdict } = zoning;
+  const { choice, fit: inUse, verdict, forced } = zoning;
   const none: CountCriteria = { gap: null, gap_se: null, silhouette: null };
-  const chosen = verdict === 'zones' || choice.verdict === 'zones' ? choice.bestZones : 1;
+  const byContinuum = !forced && verdict === 'continuum';
   const rows: ZoneCountRow[] = choice.mixtures.map((fit, at) => ({
     clock: data.clock.name,
     model: String(fit.k),
     log_likelihood: fit.logLikelihood,
     bic: choice.bics[at],
     ...(criteria.get(fit.k) ?? none),
-    chosen: verdict !== 'continuum' && fit.k === chosen,
+    chosen: !byContinuum && fit.k === inUse.k,
   }));
   rows.push({
     clock: data.clock.name,
@@ -69,7 +72,7 @@ export function zoneCountRows(
     log_likelihood: choice.continuum.logLikelihood,
     bic: choice.continuumBic,
     ...none,
-    chosen: verdict === 'continuum',
+    chosen: byContinuum,
   });
   return rows;
 }

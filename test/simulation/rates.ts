@@ -19,7 +19,7 @@ interface Line {
   readonly promised: string;
 }
 
-function measure(): Line[] {
+async function measure(): Promise<Line[]> {
   const lines: Line[] = [];
   const add = (coasts: string, what: string, measured: string, promised = ''): void => {
     lines.push({ coasts, what, measured, promised });
@@ -31,7 +31,7 @@ function measure(): Line[] {
     ['one zone sloping 2 % a degree over 8 degrees, no gradient asked for', { zones: 1, gradient: { slope: 0.02 } }],
     ['one zone sloping 5 % a degree over 8 degrees, no gradient asked for', { zones: 1, gradient: { slope: 0.05 } }],
   ];
-  for (const [name, coast] of none) add(name, 'called zones', percent(falseZones(SEEDS, coast)), '≤ 10 %');
+  for (const [name, coast] of none) add(name, 'called zones', percent(await falseZones(SEEDS, coast)), '≤ 10 %');
 
   const there: readonly (readonly [string, CoastOptions & { zones: number }, boolean])[] = [
     ['4 zones 30 % apart', { zones: 4, spacing: step(30) }, true],
@@ -45,13 +45,13 @@ function measure(): Line[] {
     ['3 zones 20 % apart, spread 0.02', { zones: 3, spacing: step(20), spread: 0.02 }, false],
   ];
   for (const [name, coast, promised] of there) {
-    const { rightNumber, rand } = recovery(SEEDS, coast);
+    const { rightNumber, rand } = await recovery(SEEDS, coast);
     add(name, 'right number of zones', percent(rightNumber), promised ? '≥ 90 %' : '');
     add(name, 'mean adjusted Rand index with the truth', rand.toFixed(3), promised ? '≥ 0.95' : '');
   }
 
   for (const spread of [0, 0.02]) {
-    const { zones, covered } = coverage(SEEDS, [
+    const { zones, covered } = await coverage(SEEDS, [
       { zones: 4, spacing: step(30), spread },
       { zones: 3, spacing: step(20), spread },
     ]);
@@ -70,7 +70,7 @@ function measure(): Line[] {
     { zones: 3, spacing: step(10) },
     { zones: 3, spacing: step(12), shells: [1, 6] as const, beds: 60 },
   ];
-  for (const { from, beds, said, right } of calibration(SEEDS_FOR_PROBABILITIES, mixed)) {
+  for (const { from, beds, said, right } of await calibration(SEEDS_FOR_PROBABILITIES, mixed)) {
     if (beds < 50) continue;
     const name = `zones 10 to 30 % apart, spread 0 to 0.03: ${beds} beds given ${from.toFixed(1)} to ${(from + 0.1).toFixed(1)}`;
     add(name, `right, where ${percent(said)} was said`, percent(right), 'within 5 points');
@@ -78,7 +78,7 @@ function measure(): Line[] {
 
   for (const noise of [0, 3]) {
     const coast = { zones: 4, spacing: step(15), scatter: 0.06, aminoAcids: fourAminoAcids(noise) };
-    const { index, bestSingle } = indexGain(SEEDS / 4, coast);
+    const { index, bestSingle } = await indexGain(SEEDS / 4, coast);
     add(
       `4 zones 15 % apart, scatter 6 %, four amino acids${noise === 0 ? '' : `, ${noise} of them noise`}`,
       'mean Rand index of the index less that of the best single one',
@@ -94,7 +94,9 @@ const table = [
   '',
   '| simulated coasts | rate | measured | promised |',
   '| --- | --- | --- | --- |',
-  ...measure().map(({ coasts, what, measured, promised }) => `| ${coasts} | ${what} | ${measured} | ${promised} |`),
+  ...(await measure()).map(
+    ({ coasts, what, measured, promised }) => `| ${coasts} | ${what} | ${measured} | ${promised} |`,
+  ),
 ].join('\n');
 
 const README = 'README.md';

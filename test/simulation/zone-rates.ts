@@ -22,8 +22,8 @@ const bootstrapsOf = ({ data, zoning }: ZoneRun) =>
   });
 
 /** Share of coasts on which zones were found although there are none. */
-export const falseZones = (seeds: number, coast: CoastOptions): number =>
-  shareOf(zoneCoasts(seeds, coast), ({ zoning }) => zoning.verdict === 'zones');
+export const falseZones = async (seeds: number, coast: CoastOptions): Promise<number> =>
+  shareOf(await zoneCoasts(seeds, coast), ({ zoning }) => zoning.verdict === 'zones');
 
 /** How zones that are there come back. */
 export interface Recovery {
@@ -34,12 +34,12 @@ export interface Recovery {
 }
 
 /** How zones that are there come back. */
-export function recovery(
+export async function recovery(
   seeds: number,
   coast: CoastOptions & { zones: number },
   clock?: (set: ClockSet) => Clock,
-): Recovery {
-  const runs = zoneCoasts(seeds, coast, clock ? { clock } : {});
+): Promise<Recovery> {
+  const runs = await zoneCoasts(seeds, coast, clock ? { clock } : {});
   return {
     rightNumber: shareOf(runs, ({ zoning }) => zoning.fit.k === coast.zones),
     rand: meanOf(runs.map(({ rand }) => rand)),
@@ -55,14 +55,14 @@ export interface Decile {
 }
 
 /** Of beds given 0.9, are 90 % right? Over coasts on which the number of zones came out right, or was given. */
-export function calibration(
+export async function calibration(
   seeds: number,
   coasts: readonly (CoastOptions & { zones: number })[],
   given = false,
-): Decile[] {
+): Promise<Decile[]> {
   const deciles = Array.from({ length: 10 }, () => ({ beds: 0, said: 0, right: 0 }));
   for (const coast of coasts) {
-    for (const run of zoneCoasts(seeds, coast, given ? { zones: coast.zones } : {})) {
+    for (const run of await zoneCoasts(seeds, coast, given ? { zones: coast.zones } : {})) {
       const { data, zoning, truth } = run;
       if (zoning.fit.k !== coast.zones) continue;
       const bootstraps = bootstrapsOf(run);
@@ -81,14 +81,14 @@ export function calibration(
 }
 
 /** Share of zones whose true mean lies within the 95 % interval, on coasts with the right number of zones. */
-export function coverage(
+export async function coverage(
   seeds: number,
   coasts: readonly (CoastOptions & { zones: number })[],
-): { zones: number; covered: number } {
+): Promise<{ zones: number; covered: number }> {
   let zones = 0;
   let hits = 0;
   for (const coast of coasts) {
-    for (const run of zoneCoasts(seeds, coast)) {
+    for (const run of await zoneCoasts(seeds, coast)) {
       const { zoning, truth } = run;
       if (zoning.fit.k !== coast.zones) continue;
       const se = zoneMeanErrors(zoning.priors.se, bootstrapsOf(run));
@@ -114,16 +114,16 @@ export interface IndexGain {
 }
 
 /** Mean adjusted Rand index with the truth: of the index, and of the amino acid that does best over all coasts. */
-export function indexGain(seeds: number, coast: CoastOptions): IndexGain {
+export async function indexGain(seeds: number, coast: CoastOptions): Promise<IndexGain> {
   const useful = coast.aminoAcids!.filter(({ noise }) => !noise).map(({ code }) => code);
   const index: number[] = [];
   const singles = useful.map((): number[] => []);
   for (let seed = 1; seed <= seeds; seed++) {
-    index.push(zoneCoast({ ...coast, seed }).rand);
-    useful.forEach((code, at) => {
+    index.push((await zoneCoast({ ...coast, seed })).rand);
+    for (const [at, code] of useful.entries()) {
       const clock = (set: ClockSet) => set.singles.find(({ amino_acids }) => amino_acids[0] === code)!;
-      singles[at].push(zoneCoast({ ...coast, seed }, { clock }).rand);
-    });
+      singles[at].push((await zoneCoast({ ...coast, seed }, { clock })).rand);
+    }
   }
   return { index: meanOf(index), bestSingle: Math.max(...singles.map(meanOf)) };
 }

@@ -1,8 +1,9 @@
 import { type ClockSet, chooseClocks } from '../../src/beds/choose-clocks.js';
 import { averageAnalyses, clockData } from '../../src/beds/index.js';
 import type { Clock, ClockData } from '../../src/model/index.js';
-import { adjustedRandIndex, createRandom } from '../../src/statistics/index.js';
-import { findZones, type Zoning } from '../../src/zones/index.js';
+import { adjustedRandIndex, createRandom, type Random } from '../../src/statistics/index.js';
+import { runTask } from '../../src/tasks.js';
+import { findZones, settleChoice, type Zoning } from '../../src/zones/index.js';
 import type { TrueBed } from './coast.js';
 import { type CoastOptions, simulateCoast } from './coast.js';
 
@@ -23,15 +24,19 @@ export interface ZoneRunOptions {
   readonly zones?: number;
 }
 
-/** Draws a coast and finds its zones the way a run does, without screening. Repeats behind overlaps are few, for speed. */
-export function zoneCoast(coast: CoastOptions, { clock, zones }: ZoneRunOptions = {}): ZoneRun {
+/**
+ * Draws a coast and finds its zones the way a run does, without screening: by BIC, and on the main clock by bootstraps where
+ * BIC is not clear. Repeats are few, for speed.
+ */
+export async function zoneCoast(coast: CoastOptions, { clock, zones }: ZoneRunOptions = {}): Promise<ZoneRun> {
   const { survey, truth } = simulateCoast(coast);
   const { shells, summaries } = averageAnalyses(survey.analyses);
   const [set] = chooseClocks(shells, summaries, { taxon: null, fraction: null, amino_acid: null });
   const chosen = clock === undefined ? set.main : clock(set);
   const data = clockData({ clock: chosen, shells, summaries, imputation: set.index?.imputation });
   const random = createRandom(coast.seed ?? 1);
-  const zoning = findZones(data, { alpha: 0.05, zones: zones ?? null, random, simulations: 199 })!;
+  const settled = zones === undefined && clock === undefined;
+  const zoning = await (settled ? settledZones(data, random) : zonesByBic(data, random, zones ?? null));
   const beds = zoning.beds.map((index) => truth.beds.get(data.beds[index].key)!);
   const rand = adjustedRandIndex(
     zoning.labels,
@@ -40,9 +45,35 @@ export function zoneCoast(coast: CoastOptions, { clock, zones }: ZoneRunOptions 
   return { data, zoning, truth: beds, rand };
 }
 
+const ALPHA = 0.05;
+const SIMULATIONS = 399;
+
+const zonesByBic = (data: ClockData, random: Random, zones: number | null): Zoning =>
+  findZones(data, { alpha: ALPHA, zones, random, simulations: 199 })!;
+
+/** Zones of a clock after the bootstraps that a run makes where BIC is not clear. */
+export async function settledZones(data: ClockData, random: Random): Promise<Zoning> {
+  const first = zonesByBic(data, random, null);
+  const { choice, comparisons } = await settleChoice(
+    first.choice,
+    first.beds.map((bed) => data.beds[bed].mean),
+    first.beds.map((bed) => data.beds[bed].se),
+    {
+      alpha: ALPHA,
+      seed: random.fork(1).integer(2 ** 31),
+      simulations: SIMULATIONS,
+      map: async (tasks) => tasks.map(runTask),
+    },
+  );
+  if (comparisons.length === 0) return first;
+  return findZones(data, { alpha: ALPHA, zones: null, random, simulations: 199, choice })!;
+}
+
 /** The same coast over many seeds, from 1 upwards. */
-export function zoneCoasts(seeds: number, coast: CoastOptions, options: ZoneRunOptions = {}): ZoneRun[] {
-  return Array.from({ length: seeds }, (_, i) => zoneCoast({ ...coast, seed: i + 1 }, options));
+export async function zoneCoasts(seeds: number, coast: CoastOptions, options: ZoneRunOptions = {}): Promise<ZoneRun[]> {
+  const runs: ZoneRun[] = [];
+  for (let seed = 1; seed <= seeds; seed++) runs.push(await zoneCoast({ ...coast, seed }, options));
+  return runs;
 }
 
 export const meanOf = (values: readonly number[]): number =>

@@ -11,46 +11,46 @@ import { shareOf, zoneCoasts } from './zone-runs.js';
 const step = (percent: number): number => Math.log(1 + percent / 100);
 
 describe('zones where there are none', () => {
-  it('are found on at most 10 % of coasts: a continuum, one zone, one zone with a spread', () => {
-    expect(falseZones(60, { zones: 'continuum' })).toBeLessThanOrEqual(0.1);
-    expect(falseZones(60, { zones: 1 })).toBeLessThanOrEqual(0.1);
-    expect(falseZones(60, { zones: 1, spread: 0.04 })).toBeLessThanOrEqual(0.1);
+  it('are found on at most 10 % of coasts: a continuum, one zone, one zone with a spread', async () => {
+    expect(await falseZones(60, { zones: 'continuum' })).toBeLessThanOrEqual(0.1);
+    expect(await falseZones(60, { zones: 1 })).toBeLessThanOrEqual(0.1);
+    expect(await falseZones(60, { zones: 1, spread: 0.04 })).toBeLessThanOrEqual(0.1);
   });
 
-  it('are found on at most 10 % of coasts along which one zone slopes', () => {
+  it('are found on at most 10 % of coasts along which one zone slopes', async () => {
     // 2 % a degree over 8 degrees, no gradient asked for: the slope alone must not make zones
-    expect(falseZones(60, { zones: 1, gradient: { slope: 0.02 } })).toBeLessThanOrEqual(0.1);
+    expect(await falseZones(60, { zones: 1, gradient: { slope: 0.02 } })).toBeLessThanOrEqual(0.1);
   });
 });
 
 describe('zones that are there', () => {
-  it('come back in number and in their beds: 4 zones 30 % apart, 3 zones 20 % apart', () => {
+  it('come back in number and in their beds: 4 zones 30 % apart, 3 zones 20 % apart', async () => {
     for (const coast of [
       { zones: 4, spacing: step(30) },
       { zones: 3, spacing: step(20) },
     ]) {
-      const { rightNumber, rand } = recovery(40, coast);
+      const { rightNumber, rand } = await recovery(40, coast);
       expect(rightNumber).toBeGreaterThanOrEqual(0.9);
       expect(rand).toBeGreaterThanOrEqual(0.95);
     }
   });
 
-  it('come back the surer the further apart, with more beds and with more shells', () => {
-    const near = recovery(25, { zones: 3, spacing: step(8) }).rand;
-    const far = recovery(25, { zones: 3, spacing: step(20) }).rand;
+  it('come back the surer the further apart, with more beds and with more shells', async () => {
+    const near = (await recovery(25, { zones: 3, spacing: step(8) })).rand;
+    const far = (await recovery(25, { zones: 3, spacing: step(20) })).rand;
     expect(far).toBeGreaterThan(near + 0.2);
-    const few = recovery(25, { zones: 3, spacing: step(10), beds: 15 }).rand;
-    const many = recovery(25, { zones: 3, spacing: step(10), beds: 60 }).rand;
+    const few = (await recovery(25, { zones: 3, spacing: step(10), beds: 15 })).rand;
+    const many = (await recovery(25, { zones: 3, spacing: step(10), beds: 60 })).rand;
     expect(many).toBeGreaterThan(few + 0.1);
-    const poor = recovery(25, { zones: 3, spacing: step(12), shells: [2, 3] }).rand;
-    const rich = recovery(25, { zones: 3, spacing: step(12), shells: [8, 12] }).rand;
+    const poor = (await recovery(25, { zones: 3, spacing: step(12), shells: [2, 3] })).rand;
+    const rich = (await recovery(25, { zones: 3, spacing: step(12), shells: [8, 12] })).rand;
     expect(rich).toBeGreaterThan(poor + 0.2);
   });
 });
 
 describe('zone probabilities', () => {
-  it('are right as often as they say, within 5 points in every decile that holds 50 beds or more', () => {
-    const deciles = calibration(25, [
+  it('are right as often as they say, within 5 points in every decile that holds 50 beds or more', async () => {
+    const deciles = await calibration(25, [
       { zones: 4, spacing: step(30), spread: 0.03 },
       { zones: 3, spacing: step(15), spread: 0.02 },
       { zones: 3, spacing: step(12) },
@@ -64,12 +64,12 @@ describe('zone probabilities', () => {
 });
 
 describe('the 95 % interval of a zone’s mean', () => {
-  it('covers the true mean of 93 to 97 % of zones or so, with a spread between beds too', () => {
-    const without = coverage(50, [
+  it('covers the true mean of 93 to 97 % of zones or so, with a spread between beds too', async () => {
+    const without = await coverage(50, [
       { zones: 4, spacing: step(30) },
       { zones: 3, spacing: step(20) },
     ]);
-    const withSpread = coverage(50, [
+    const withSpread = await coverage(50, [
       { zones: 4, spacing: step(30), spread: 0.02 },
       { zones: 3, spacing: step(20), spread: 0.02 },
     ]);
@@ -83,8 +83,8 @@ describe('the 95 % interval of a zone’s mean', () => {
 });
 
 describe('beds of one zone that differ', () => {
-  it('stay one zone although a test of their shells gives p of 0.001, when a spread explains them', () => {
-    const runs = zoneCoasts(60, { zones: 1, spread: 0.04 });
+  it('stay one zone although a test of their shells gives p of 0.001, when a spread explains them', async () => {
+    const runs = await zoneCoasts(60, { zones: 1, spread: 0.04 });
     const differing = runs.filter(({ data }) => {
       const shells = data.beds.map((bed) => bed.shells.map((at) => data.shells[at].x));
       return oneWayP(shells) <= 0.001;
@@ -95,8 +95,8 @@ describe('beds of one zone that differ', () => {
 });
 
 describe('the index of four amino acids', () => {
-  it('groups beds better than the best single one, with zones 15 % apart', () => {
-    const { index, bestSingle } = indexGain(15, {
+  it('groups beds better than the best single one, with zones 15 % apart', async () => {
+    const { index, bestSingle } = await indexGain(15, {
       zones: 4,
       spacing: step(15),
       scatter: 0.06,
@@ -105,8 +105,8 @@ describe('the index of four amino acids', () => {
     expect(index).toBeGreaterThanOrEqual(bestSingle + 0.05);
   });
 
-  it('is never worse by more than 0.02 when three of four are noise', () => {
-    const { index, bestSingle } = indexGain(40, { zones: 3, spacing: step(15), aminoAcids: fourAminoAcids(3) });
+  it('is never worse by more than 0.02 when three of four are noise', async () => {
+    const { index, bestSingle } = await indexGain(40, { zones: 3, spacing: step(15), aminoAcids: fourAminoAcids(3) });
     expect(index).toBeGreaterThanOrEqual(bestSingle - 0.02);
   });
 });
