@@ -56,6 +56,10 @@ export interface ClockView {
   readonly gradient: GradientFinding | null;
   /** Whether the clock's beds are grouped into zones that the data support or that were asked for. */
   readonly zoned: boolean;
+  /** Taxa on it, where it holds several on the scale of a reference taxon; null for a clock of one taxon. */
+  readonly combined: readonly string[] | null;
+  /** The scatter that was assumed and on which every error of the clock rests; null where it was measured. */
+  readonly assumedScatter: number | null;
 }
 
 /** `section/bed` of a row. */
@@ -119,8 +123,16 @@ export function clockViews(findings: Findings): ClockView[] {
       relations: own(findings.relations),
       gradient: findings.gradients.find((gradient) => gradient.clock === clock.clock) ?? null,
       zoned: zones.length > 1,
+      combined: combinedTaxa(findings, clock),
+      assumedScatter: beds.some((bed) => bed.row.marks.includes('assumed scatter')) ? clock.scatter : null,
     };
   });
+}
+
+/** Taxa that conversions brought onto a clock, the reference first. */
+function combinedTaxa(findings: Findings, { clock }: ClockRow): string[] | null {
+  const own = findings.conversions.filter((row) => row.clock === clock && row.verdict === 'converted');
+  return own.length === 0 ? null : [...new Set(own.flatMap((row) => [row.reference, row.taxon]))];
 }
 
 /** Ink of a zone by its index; the plain one where there is none. */

@@ -11,10 +11,12 @@ export interface DateFacts {
   readonly doubts: readonly DateDoubt[];
   readonly taus: readonly DateTau[];
   readonly alpha: number;
+  /** Main clocks whose scatter was assumed, so that their order rests on it. */
+  readonly assumed: readonly string[];
 }
 
 /** The dates against the order in sentences, most important first. */
-export function dateRemarks({ dates, known, pairs, fewest, doubts, taus, alpha }: DateFacts): string[] {
+export function dateRemarks({ dates, known, pairs, fewest, doubts, taus, alpha, assumed }: DateFacts): string[] {
   const count = (verdict: DatePairRow['verdict']) => pairs.filter((row) => row.verdict === verdict).length;
   const remarks: string[] = [];
   const strangers = [...new Set(dates.map(bedKey).filter((key) => !known.indexOf.has(key)))];
@@ -43,6 +45,11 @@ export function dateRemarks({ dates, known, pairs, fewest, doubts, taus, alpha }
         ? '; under 5 dates it has no interval'
         : `, 95 % interval ${low.toFixed(2)} to ${high.toFixed(2)}`;
     remarks.push(`${clock}: Kendall's tau-b between order and ${used} dates is ${tau_b.toFixed(2)}${interval}.`);
+  }
+  if (assumed.length > 0) {
+    remarks.push(
+      `The order on ${assumed.join(', ')} rests on a scatter between shells that was assumed, not measured.`,
+    );
   }
   if (strangers.length > 0) {
     remarks.push(`Not in these results, so not used: ${strangers.join(', ')}.`);

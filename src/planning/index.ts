@@ -1,6 +1,7 @@
 /** The planning room: what to collect or date next, and incoming dates against the order. Works from Findings alone. */
 
 // What it rests on
+export { assumedScatter } from './assumed-scatter.js';
 export { type BedsToDate, type BedsToDateOptions, bedsToDate } from './beds-to-date.js';
 export { type Bounded, boundedBy, type OlderAndYounger } from './bracketing.js';
 export { compareDates, type DateComparison, type DatedAge } from './compare-dates.js';

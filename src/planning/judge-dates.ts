@@ -1,5 +1,6 @@
 import type { DateDoubt, DatePairRow, DateRecord, DatesJudgement, DateVerdict, Findings } from '../model/index.js';
 import { holm } from '../statistics/index.js';
+import { assumedScatter } from './assumed-scatter.js';
 import { bedKey } from './bed-on-clock.js';
 import { includes } from './bit-set.js';
 import { compareDates } from './compare-dates.js';
@@ -84,7 +85,16 @@ export function judgeDates(
   const doubts = doubtsOf(fewest, conflicts, dates);
   const pairs = rows.sort((a, b) => rankOf(a.verdict) - rankOf(b.verdict) || a.p_adjusted - b.p_adjusted);
   const taus = datesAgainstOrder(findings, dates);
-  const remarks = dateRemarks({ dates, known, pairs, fewest: fewest.fewest, doubts, taus, alpha });
+  const remarks = dateRemarks({
+    dates,
+    known,
+    pairs,
+    fewest: fewest.fewest,
+    doubts,
+    taus,
+    alpha,
+    assumed: assumedScatter(findings).map(({ clock }) => clock),
+  });
   return { pairs, fewest: fewest.fewest, doubts, taus, remarks };
 }
 

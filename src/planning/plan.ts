@@ -1,4 +1,5 @@
 import type { Findings, Plan } from '../model/index.js';
+import { assumedScatter } from './assumed-scatter.js';
 import { clocksInView } from './bed-on-clock.js';
 import { checkBeds, reversedRelations } from './check-beds.js';
 import { dateBeds } from './date-beds.js';
@@ -74,12 +75,8 @@ function criterion({ alpha, power }: PlanSettings): string {
 }
 
 function notes(findings: Findings): string[] {
-  const assumed = findings.clocks.filter(
-    ({ clock, main }) =>
-      main && findings.beds.some((bed) => bed.clock === clock && bed.marks.includes('assumed scatter')),
-  );
   return [
-    ...assumed.map(
+    ...assumedScatter(findings).map(
       ({ clock, scatter }) =>
         `On ${clock} a scatter of ${scatter} between the shells of one bed is assumed, and every number of shells rests on it: a few beds of 5 shells would measure it.`,
     ),

@@ -49,10 +49,23 @@ export function zonesTable(view: ClockView): Markup {
     { head: 'p (beds)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_difference ?? null) },
     { head: 'p (shells)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_mann_whitney ?? null) },
   ];
-  return table(`Zones of ${view.clock.clock}`, columns, view.zones, (row) => ({
+  return html`${table(`Zones of ${view.clock.clock}`, columns, view.zones, (row) => ({
     zone: zoneTag(view, view.zones.indexOf(row)),
     clock: view.index,
-  }));
+  }))}${zonesKey(view)}`;
+}
+
+/** What the columns of the zone table mean, and how much they are worth. */
+function zonesKey(view: ClockView): Markup | null {
+  const said = [
+    view.zones.some((row) => row.stability !== null)
+      ? 'Stability: how much of a zone comes back when beds and shells are drawn again, from 0 to 1 (mean Jaccard similarity); from 0.75 up a zone is stable, under 0.6 it should not be believed.'
+      : '',
+    view.adjacent.length > 0
+      ? 'Overlap: the share of shells that could be of either zone. The p-values, by the means of beds and by the ranks of shells, test groups that were found in these same data and so come out too small: a large one speaks against two zones, a small one does not prove them.'
+      : '',
+  ].filter((words) => words !== '');
+  return said.length === 0 ? null : html`<p class="note">${said.join(' ')}</p>`;
 }
 
 const VERDICT_ORDER = { reversed: 0, 'not tested': 3, tied: 1, agrees: 2 } as const;

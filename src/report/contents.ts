@@ -13,7 +13,7 @@ ${views.filter((view) => view.zoned).map(zoneKeys)}
 <p class="sidehead">Show only</p>
 ${views.length > 1 ? html`<label>clock <select data-filter="clock"><option value="">all</option>${views.map((view) => html`<option value="${view.index}">${view.clock.clock}</option>`)}</select></label>` : ''}
 <label>section <select data-filter="section"><option value="">all</option>${sectionsOf(views).map((section, i) => html`<option value="${i}">${section}</option>`)}</select></label>
-<label>zone <select data-filter="zone"><option value="">all</option>${views.filter((view) => view.zoned).flatMap((view) => view.zones.map((zone, i) => html`<option value="${zoneTag(view, i)}">${zone.zone}${views.length > 1 ? `, ${view.clock.taxon}` : ''}</option>`))}</select></label>
+<label>zone <select data-filter="zone"><option value="">all</option>${views.filter((view) => view.zoned).flatMap((view) => view.zones.map((zone, i) => html`<option value="${zoneTag(view, i)}">${zone.zone}${views.length > 1 ? `, ${view.clock.clock}` : ''}</option>`))}</select></label>
 <p class="count" aria-live="polite"></p>
 </form>
 <p class="hint" hidden>Point at a bed, shell or zone to light it up everywhere; click to hold it. On a figure, the arrow keys step through beds and shells. <kbd>Esc</kbd> lets go.</p>

@@ -11,7 +11,11 @@ export function findingsInSentences(view: ClockView): Markup {
 
 function groups(view: ClockView): Markup {
   const { clock, zones } = view;
-  const what = html`${counted(clock.shells, 'shell')} of <i>${clock.taxon}</i> from ${counted(clock.beds, 'bed')} in ${counted(view.sections.length, 'section')} were compared by ${clock.amino_acids.length > 1 ? html`the index of ${listed(clock.amino_acids)}` : html`${clock.amino_acids[0] ?? 'D/L'}`} (${clock.fraction}).`;
+  const taxa =
+    view.combined === null
+      ? html`<i>${clock.taxon}</i>`
+      : html`all taxa (${listed(view.combined.map((taxon) => html`<i>${taxon}</i>`))}), put on the scale of <i>${clock.taxon}</i>,`;
+  const what = html`${counted(clock.shells, 'shell')} of ${taxa} from ${counted(clock.beds, 'bed')} in ${counted(view.sections.length, 'section')} were compared by ${clock.amino_acids.length > 1 ? html`the index of ${listed(clock.amino_acids)}` : html`${clock.amino_acids[0] ?? 'D/L'}`} (${clock.fraction}).`;
   const range = zones.length > 0 ? [zones[0], zones[zones.length - 1]] : null;
   const forced =
     clock.verdict !== 'zones' && view.zoned
@@ -60,6 +64,7 @@ function field(view: ClockView): Markup | null {
 }
 
 function odd(view: ClockView): Markup | null {
+  if (view.combined !== null) return html`Its shells are screened and read on the clock of each taxon.`;
   const aside = view.beds.flatMap((bed) => bed.shells).filter((shell) => shell.row.status === 'set aside');
   if (aside.length === 0) return html`No shell was set aside.`;
   const kinds = new Map<string, typeof aside>();

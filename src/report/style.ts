@@ -74,7 +74,8 @@ th[aria-sort=descending] button::after{content:" ↓"}
 .find input{padding:.3rem .5rem;border:1px solid var(--faint);border-radius:3px;background:var(--paper);color:var(--ink);font:inherit;width:14rem;max-width:100%}
 .verdict{white-space:nowrap}
 .verdict.bad{color:var(--alarm);font-weight:700}
-.note,.size{color:var(--soft);font-size:.875rem;font-weight:400}
+.note,.size,.lead .note{color:var(--soft);font-size:.875rem;line-height:1.5;font-weight:400}
+ul.note{padding-left:1.1rem}
 details{border-top:1px solid var(--line);padding:.2rem 0}
 details:last-of-type{border-bottom:1px solid var(--line)}
 summary{cursor:pointer;padding:.5rem 0;font:700 .9375rem/1.3 Helvetica,Arial,sans-serif}

@@ -41,6 +41,19 @@ describe('names', () => {
 });
 
 describe('what is told', () => {
+  it('of a bed: the lines of the plan that ask for its shells, or to date it', () => {
+    expect(told('A')).toContain('In the plan\n  =3 more shells; which of two is older');
+    expect(told('=B')).toContain('To date\n  one date brackets none');
+    expect(told('=B')).not.toContain('In the plan');
+  });
+
+  it('last, that errors rest on a scatter that was assumed', () => {
+    const beds = FINDINGS.beds.map((bed) => ({ ...bed, marks: ['assumed scatter' as const] }));
+    const text = explanation({ ...FINDINGS, beds }, ['A/3'], PLAIN).replace(/\s+/g, ' ');
+    expect(text).toContain('On Mya THAA Ile a scatter of 0.0612345678 between shells of one bed is assumed');
+    expect(told('A/3')).not.toContain('is assumed');
+  });
+
   it('of a bed: values, zone, rank, marks, relations, shells, and what would change', () => {
     const text = told('A');
     for (const words of [
@@ -63,7 +76,8 @@ describe('what is told', () => {
   it('of a bed that straddles, what it straddles, and how many shells would tell it from the next', () => {
     const text = told('@1+1');
     expect(text).toContain('It straddles the two');
-    expect(text).toMatch(/To tell it from the next bed, Low cliff, "north"\/A/);
+    const unplanned = explanation({ ...FINDINGS, plan: [] }, ['@1+1'], PLAIN).replace(/\n {4}/g, ' ');
+    expect(unplanned).toMatch(/To tell it from the next bed, Low cliff, "north"\/A/);
   });
 
   it('of a shell: its ratios, residual, reading with confidence, evidence, conflicts, and what would settle it', () => {

@@ -30,6 +30,21 @@ describe('the summary', () => {
     }
   });
 
+  it('ends with the best of the plan: where to collect, and what to date', () => {
+    expect(flat(FINDINGS)).toContain('Next =3 more shells; which of two is older');
+    const [shells, date] = FINDINGS.plan;
+    const dated = {
+      ...date,
+      beds_bracketed: 1,
+      settles: 'Dating St. No/A and B brackets 1 of 3. No other 2 beds bracket more. But B is odd.',
+    };
+    const checked = { ...shells, kind: 'check bed' as const, settles: 'Look again.' };
+    const said = flat({ ...FINDINGS, plan: [shells, checked, date, dated] });
+    expect(said).toContain('Next Look again. Next Dating St. No/A and B brackets 1 of 3. Written out');
+    expect(flat({ ...FINDINGS, plan: [], plan_notes: ['Too many beds.'] })).toContain('Next Too many beds. Written');
+    expect(JSON.parse(summaryJson(FINDINGS, 'out')).next).toEqual([shells.settles]);
+  });
+
   it.each<[object, string]>([
     [{ verdict: 'continuum', zones: 1 }, 'No zones are supported: the ratios run on without gaps.'],
     [{ verdict: 'one zone', zones: 1 }, 'No separate zones are supported: all beds agree with one.'],

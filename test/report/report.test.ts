@@ -38,6 +38,7 @@ describe('the page', () => {
       'odd',
       'number-of-zones',
       'gradient',
+      'next',
       'tables',
       'methods',
       'cautions',

@@ -12,7 +12,11 @@ export function explainBed(findings: Findings, name: string): Passage[] {
   const rows = findings.beds.filter((row) => bedKey(row) === name);
   const where = site ? siteSentences(site) : [];
   if (rows.length === 0) where.push('It has no shells on a main clock, so it is in no zone and no order.');
-  return [...passage(name, where), ...rows.flatMap((row) => onClock(findings, row, name))];
+  return [
+    ...passage(name, where),
+    ...rows.flatMap((row) => onClock(findings, row, name)),
+    ...passage('To date', datingSentences(findings, name)),
+  ];
 }
 
 function siteSentences(site: BedSite): string[] {
@@ -46,6 +50,7 @@ function onClock(findings: Findings, row: BedRow, name: string): Passage[] {
     ...passage('Shells', shells.map(shellLine)),
     ...passage('Amino acids that disagree', voteSentences(findings, clock, name)),
     ...passage('What would change this', bedChanges(findings, row)),
+    ...passage('In the plan', planSentences(findings, clock, name)),
   ];
 }
 
@@ -101,6 +106,17 @@ function voteSentences(findings: Findings, clock: string, name: string): string[
       return `Which of ${bed_a} and ${bed_b} is older: ${words.join(', ')}.`;
     });
 }
+
+/** Lines of the plan that ask for shells of the bed; of several sizes of one collection, the middle one. */
+function planSentences(findings: Findings, clock: string, name: string): string[] {
+  const own = findings.plan.filter((row) => row.clock === clock && row.beds.includes(name));
+  const lines = own.filter((row) => row.kind !== 'strengthen bed' || row.total === 5);
+  return lines.slice(0, 6).map(({ settles }) => settles);
+}
+
+/** Lines of the plan that would date the bed. */
+const datingSentences = (findings: Findings, name: string): string[] =>
+  findings.plan.filter((row) => row.kind === 'date beds' && row.beds.includes(name)).map(({ settles }) => settles);
 
 function capital(text: string): string {
   return text.charAt(0).toUpperCase() + text.slice(1);

@@ -10,7 +10,9 @@ const POWER = 0.8;
 /** What would move a bed into another zone, or settle its place in the order. */
 export function bedChanges(findings: Findings, row: BedRow): string[] {
   if (row.log_mean === null) return ['Shells that can be kept would give it a mean.'];
-  return [...zoneChange(findings, row), ...neighbourChange(findings, row)];
+  // where the run made a plan, it says better what its neighbours would take
+  const planned = findings.plan.some(({ clock }) => clock === row.clock);
+  return [...zoneChange(findings, row), ...(planned ? [] : neighbourChange(findings, row))];
 }
 
 function zoneChange(findings: Findings, row: BedRow): string[] {

@@ -3,7 +3,7 @@ import { type Style, safe, wrap } from '../terminal.js';
 import { explainBed } from './bed.js';
 import { findName, type Named } from './find-name.js';
 import { explainRelation } from './relation.js';
-import type { Passage } from './says.js';
+import { assumedPassage, type Passage } from './says.js';
 import { explainShell } from './shell.js';
 
 /**
@@ -13,7 +13,7 @@ import { explainShell } from './shell.js';
  * @throws OutputError when the name is not known or may mean several things.
  */
 export function explanation(findings: Findings, names: readonly string[], style: Style): string {
-  const passages = passagesOf(findings, findName(findings, names));
+  const passages = [...passagesOf(findings, findName(findings, names)), ...assumedPassage(findings)];
   return `${passages.map((one) => passageText(one, style)).join('\n\n')}\n`;
 }
 

@@ -1,4 +1,5 @@
 import type { Evidence, Findings } from '../../model/index.js';
+import { assumedScatter } from '../../planning/index.js';
 
 /** A part of an explanation: a heading and its sentences. */
 export interface Passage {
@@ -21,6 +22,17 @@ export function evidenceOf(
   return findings.evidence
     .filter((row) => row.clock === clock && row.about === about && row.name === name)
     .flatMap(({ sentences }) => sentences);
+}
+
+/** Said last, where the errors of a clock rest on a scatter that was assumed. */
+export function assumedPassage(findings: Findings): Passage[] {
+  return passage(
+    'What it rests on',
+    assumedScatter(findings).map(
+      ({ clock, scatter }) =>
+        `On ${clock} a scatter of ${scatter} between shells of one bed is assumed, and every error and probability rests on it.`,
+    ),
+  );
 }
 
 /** `section/bed` of a row. */

@@ -12,6 +12,7 @@ import type {
   ZoneCountRow,
   ZoneRow,
 } from '../../model/index.js';
+import { bestAdvice } from './advice.js';
 
 /** What the summary of a run tells; printed as it is with `--json`. */
 export interface SummaryFacts {
@@ -23,6 +24,8 @@ export interface SummaryFacts {
   /** Sentences about the whole run. */
   readonly findings: readonly string[];
   readonly cautions: readonly string[];
+  /** The best of the plan: where to collect, and what to date. */
+  readonly next: readonly string[];
   readonly written: string;
 }
 
@@ -79,6 +82,7 @@ export function summaryFacts(findings: Findings, out: string): SummaryFacts {
     read: readFacts(findings),
     clocks: findings.clocks.filter(({ main }) => main).map((clock) => clockFacts(findings, clock)),
     ...remarksOf(findings, null),
+    next: bestAdvice(findings),
     written: out,
   };
 }

@@ -74,13 +74,15 @@ function cautions(texts: readonly string[], style: Style, indent: string): strin
   return texts.map((text) => wrap(`${indent}${style.yellow('Caution:')} ${safe(text)}`, 78, indent.length + 2));
 }
 
-function nextText({ written, clocks }: SummaryFacts, style: Style): string[] {
+function nextText({ written, clocks, next }: SummaryFacts, style: Style): string[] {
+  const advice = next.map((text) => wrap(`${style.bold('Next')} ${safe(text)}`, 78, 2));
   const place = `${style.bold('Written')} ${safe(written)}: report.html to read first, tables and figures beside it.`;
-  const lines = [wrap(place, 78, 2)];
+  const lines = [...advice, wrap(place, 78, 2)];
   const name = exampleName(clocks);
   if (name !== null) {
     lines.push('More on one bed, shell or relation:', `  bedorder explain ${inShell(written)} ${inShell(name)}`);
   }
+  lines.push('What to collect or date next, in full:', `  bedorder plan ${inShell(written)}`);
   return lines;
 }
 
