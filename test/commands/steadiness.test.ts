@@ -14,6 +14,9 @@ import {
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { placesOf } from '../../src/output/folder/places.js';
+import { recoverFolder } from '../../src/output/folder/recover.js';
+import { readResults } from '../../src/output/read-results.js';
 import { bedorder, builtOnce, ROOT } from './program.js';
 
 /* Whole runs of the program that are killed, starved of disk, or sent to places where they must not write. */
@@ -41,34 +44,40 @@ function digest(folder: string): string {
 /** Files beside the results that a run may leave when it is killed; the next run takes them away. */
 const leftovers = () => readdirSync(home).filter((name) => name.startsWith('.'));
 
-it('a run killed at any of 50 moments leaves results that the next command finds whole, old or new', async () => {
-  await run(['--out', 'killed', '--seed', '2']);
-  const second = digest(join(home, 'killed'));
-  const start = performance.now();
-  await run(['--out', 'killed', '--seed', '1']);
-  const length = performance.now() - start;
-  const first = digest(join(home, 'killed'));
-  expect(second).not.toBe(first);
-  const met = { killed: 0, ended: 0 };
-  for (let kill = 0; kill < 50; kill++) {
-    const args = [cli, 'run', ...survey, '--out', 'killed', '--seed', String(1 + (kill % 2))];
-    const child = spawn(process.execPath, args, { cwd: home, stdio: 'ignore' });
-    const ended = new Promise<NodeJS.Signals | null>((resolve) => child.once('close', (_, signal) => resolve(signal)));
-    // the second half of a run is when it writes
-    await new Promise((resolve) => setTimeout(resolve, length * (0.3 + 0.75 * Math.random())));
-    child.kill('SIGKILL');
-    if ((await ended) === 'SIGKILL') met.killed++;
-    else met.ended++;
-    const told = await bedorder(['explain', 'killed', 'Flint Row/lower'], { cwd: home });
-    expect(told.stderr).toBe('');
-    expect(told.status).toBe(0);
-    expect([first, second]).toContain(digest(join(home, 'killed')));
-  }
-  expect(met.killed).toBeGreaterThan(10);
-  await run(['--out', 'killed', '--seed', '1']);
-  expect(digest(join(home, 'killed'))).toBe(first);
-  expect(leftovers()).toEqual([]);
-});
+// two lanes of 25 kills, each in a folder of its own
+it.concurrent.each(['lane-1', 'lane-2'])(
+  'a run killed at any of 25 moments leaves results that are found whole, old or new: %s',
+  async (out) => {
+    const told = await bedorder(['run', ...survey, '--out', out, '--seed', '2'], { cwd: home });
+    expect(told.status, told.stderr).toBe(0);
+    const second = digest(join(home, out));
+    const start = performance.now();
+    await run(['--out', out, '--seed', '1']);
+    const length = performance.now() - start;
+    const first = digest(join(home, out));
+    expect(second).not.toBe(first);
+    let killed = 0;
+    for (let kill = 0; kill < 25; kill++) {
+      const args = [cli, 'run', ...survey, '--out', out, '--seed', String(1 + (kill % 2))];
+      const child = spawn(process.execPath, args, { cwd: home, stdio: 'ignore' });
+      const ended = new Promise<NodeJS.Signals | null>((resolve) =>
+        child.once('close', (_, signal) => resolve(signal)),
+      );
+      // most of them in the second half of a run, which is when it writes
+      await new Promise((resolve) => setTimeout(resolve, length * (0.3 + 0.75 * Math.random())));
+      child.kill('SIGKILL');
+      if ((await ended) === 'SIGKILL') killed++;
+      // what any command does first that reads results
+      recoverFolder(placesOf(join(home, out)));
+      expect(readResults(join(home, out)).options.seed).toBeGreaterThan(0);
+      expect([first, second]).toContain(digest(join(home, out)));
+    }
+    expect(killed).toBeGreaterThan(5);
+    await run(['--out', out, '--seed', '1']);
+    expect(digest(join(home, out))).toBe(first);
+    expect(leftovers().filter((name) => name.includes(out))).toEqual([]);
+  },
+);
 
 describe('places where nothing can be written', () => {
   // stands for a full disk: the system lets no file grow beyond 16 kB

@@ -12,7 +12,7 @@ const home = mkdtempSync(join(tmpdir(), 'bedorder-'));
 afterAll(() => rmSync(home, { recursive: true, force: true }));
 
 const first = Number(process.env.FUZZ_FIRST ?? 1);
-const count = Math.min(24, Number(process.env.FUZZ_COUNT ?? 24));
+const count = Math.min(100, Number(process.env.FUZZ_COUNT ?? 12));
 
 it.each(Array.from({ length: count }, (_, k) => first + 7 * k))(
   'mutant %i ends with 0 or with 2 and a message',
