@@ -67,7 +67,7 @@ export function gradientRemarks(
     );
   } else {
     const slope = `${shown(fit.slope)} per unit of ${column} (95 % ${shown(fit.slope_low)} to ${shown(fit.slope_high)}) in log ratio`;
-    const bics = `BIC ${shown(fit.bic_with, 5)} with the slope, ${shown(fit.bic_without, 5)} without`;
+    const bics = `BIC ${shown(fit.bic_with, 4)} with the slope, ${shown(fit.bic_without, 4)} without`;
     remarks.push(
       fit.used
         ? finding(

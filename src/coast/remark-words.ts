@@ -6,8 +6,8 @@ export const caution = (text: string, clock: string | null = null): Remark => ({
 /** A remark on what was found. */
 export const finding = (text: string, clock: string | null = null): Remark => ({ clock, level: 'finding', text });
 
-/** A number with so many significant digits. */
-export const shown = (value: number, digits = 3): string => String(Number(value.toPrecision(digits)));
+/** A number with so many significant digits, and a true minus sign. */
+export const shown = (value: number, digits = 3): string => String(Number(value.toPrecision(digits))).replace('-', '−');
 
 /** A number with its noun. */
 export const counted = (n: number, one: string, many = `${one}s`): string => `${n} ${n === 1 ? one : many}`;

@@ -68,9 +68,9 @@ export function shellsByBed(view: ClockView): Figure | null {
   const aside = shells.filter((shell) => shell.row.status === 'set aside').length;
   return finishFigure({
     name: `shells${view.suffix}`,
-    title: `Log ratios of all shells by bed${view.heading}`,
-    caption: `One line a bed, ${view.zoned ? 'grouped by zone with the youngest zone and bed on top' : 'the youngest on top'}; older beds lie further to the right. Look for shells that stand apart from their own line${['', ': the crossed one was set aside'][aside] ?? `: the ${aside} crossed ones were set aside`}. ${ranges(view)}`,
-    alt: `${shells.length} shells of ${view.clock.taxon} in ${view.beds.length} beds. ${view.zones.map((zone) => `${zone.zone}: ${zone.beds} beds, D/L ${ratio(zone.dl_mean)}`).join('; ')}. ${aside} shells set aside.`,
+    title: `${shells.length === 0 ? 'Mean log ratios of the beds' : 'Log ratios of all shells by bed'}${view.heading}`,
+    caption: `One line a bed, ${view.zoned ? 'grouped by zone with the youngest zone and bed on top' : 'the youngest on top'}; older beds lie further to the right. ${whatToSee(view, shells.length, aside)} ${ranges(view)}`,
+    alt: `${view.clock.shells} shells of ${view.combined?.join(' and ') ?? view.clock.taxon} in ${view.beds.length} beds. ${view.zones.map((zone) => `${zone.zone}: ${zone.beds} beds, D/L ${ratio(zone.dl_mean)}`).join('; ')}. ${aside} shells set aside.`,
     width: WIDE,
     height: bottom + 44 + key.height,
     body: [...body, key.node],
@@ -94,3 +94,12 @@ const ranges = (view: ClockView) =>
       : '',
     view.gradient?.used ? `The slope along ${view.gradient.column} is taken out of every ratio.` : '',
   ].join(' ');
+
+/** What the reader should look for: odd shells where shells are drawn, else how the means lie. */
+function whatToSee(view: ClockView, shells: number, aside: number): string {
+  if (shells > 0)
+    return `Look for shells that stand apart from their own line${['', ': the crossed one was set aside'][aside] ?? `: the ${aside} crossed ones were set aside`}.`;
+  return view.combined === null
+    ? 'Only means were published, so no shell is drawn; look for beds whose interval reaches into another zone.'
+    : 'Shells stand in the figures of their own taxa; look for beds whose interval reaches into another zone.';
+}

@@ -99,8 +99,7 @@ export function zoneRanges(view: ClockView): Figure | null {
   return finishFigure({
     name: `zones${view.suffix}`,
     title: `The zones and how far neighbours overlap${view.heading}`,
-    caption:
-      'Boxes span one standard deviation of shells either side of the zone mean; the heavy line above a box is the 95 % interval of the mean, and the ticks below are single shells. Beside each pair of neighbours stand the verdict and the overlap coefficient of their shells: 0 apart, 1 alike, 0.32 where the boxes just touch.',
+    caption: `Boxes span one standard deviation of shells either side of the zone mean; the heavy line above a box is the 95 % interval of the mean${view.beds.some((bed) => bed.shells.length > 0) ? ', and the ticks below are single shells' : ''}. Beside each pair of neighbours stand the verdict and the overlap coefficient of their shells: 0 apart, 1 alike, 0.32 where the boxes just touch.`,
     alt: `${view.zones.map((zone) => `${zone.zone}: D/L ${ratio(zone.dl_mean)}, shells ${ratio(zone.shell_low)} to ${ratio(zone.shell_high)}`).join('; ')}. ${view.adjacent.map((row) => `${row.younger} and ${row.older}: ${row.verdict}, overlap ${overlapText(row.overlap)}`).join('; ')}.`,
     width: NARROW,
     height: bottom + 42,

@@ -72,7 +72,7 @@ function doubtful(known: KnownOrder, chosen: readonly number[], sound: ReadonlyM
     const instead =
       best === -1
         ? ''
-        : `; ${known.beds[best]} in its place brackets ${bestCount.bracketed}${chosen.length === 1 ? ` and bounds ${bestCount.bounded}` : ''}`;
+        : `; ${known.beds[best]} in its place ${chosen.length === 1 ? `bounds ${bestCount.bounded}` : `brackets ${bestCount.bracketed}`}`;
     return [`But ${key} ${joinedInWords(doubts)}${instead}.`];
   });
 }

@@ -1,6 +1,6 @@
 import { type ClockView, zoneTag } from '../figures/clock-view.js';
 import { relationNumbers } from '../figures/reversed-marks.js';
-import type { RelationRow } from '../model/index.js';
+import type { RelationRow, ZoneRow } from '../model/index.js';
 import { html, listed, type Markup } from './html.js';
 import { bedLink, shellLink } from './links.js';
 import { chance, figures, pValue, ratio } from './numbers.js';
@@ -24,7 +24,7 @@ const zoneChip = (view: ClockView, zone: string | null): Markup => {
 /** Zones of one clock. */
 export function zonesTable(view: ClockView): Markup {
   const older = new Map(view.adjacent.map((row) => [row.younger, row]));
-  const columns: Column<ClockView['zones'][number]>[] = [
+  const columns: Column<ZoneRow>[] = [
     { head: 'zone', cell: (row) => zoneChip(view, row.zone) },
     { head: 'beds', number: true, cell: (row) => row.beds },
     { head: 'shells', number: true, cell: (row) => row.shells },
@@ -42,27 +42,39 @@ export function zonesTable(view: ClockView): Markup {
       sort: (row) => row.shell_low,
     },
     ...(view.zones.some((row) => row.stability !== null)
-      ? [{ head: 'stability', number: true, cell: (row: ClockView['zones'][number]) => figures(row.stability, 2) }]
+      ? [{ head: 'stability', number: true, cell: (row: ZoneRow) => row.stability?.toFixed(2) ?? '–' }]
       : []),
-    { head: 'against the next older', cell: (row) => older.get(row.zone)?.verdict ?? '–' },
-    { head: 'overlap', number: true, cell: (row) => chance(older.get(row.zone)?.overlap ?? null) },
-    { head: 'p (beds)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_difference ?? null) },
-    { head: 'p (shells)', number: true, cell: (row) => pValue(older.get(row.zone)?.p_mann_whitney ?? null) },
+    ...(view.adjacent.length > 0
+      ? [
+          { head: 'against the next older', cell: (row: ZoneRow) => older.get(row.zone)?.verdict ?? '–' },
+          { head: 'overlap', number: true, cell: (row: ZoneRow) => chance(older.get(row.zone)?.overlap ?? null) },
+          { head: 'p (beds)', number: true, cell: (row: ZoneRow) => pValue(older.get(row.zone)?.p_difference ?? null) },
+        ]
+      : []),
+    ...(view.adjacent.some((row) => row.p_mann_whitney !== null)
+      ? [
+          {
+            head: 'p (shells)',
+            number: true,
+            cell: (row: ZoneRow) => pValue(older.get(row.zone)?.p_mann_whitney ?? null),
+          },
+        ]
+      : []),
   ];
-  return html`${table(`Zones of ${view.clock.clock}`, columns, view.zones, (row) => ({
+  return table(`Zones of ${view.clock.clock}`, columns, view.zones, (row) => ({
     zone: zoneTag(view, view.zones.indexOf(row)),
     clock: view.index,
-  }))}${zonesKey(view)}`;
+  }));
 }
 
-/** What the columns of the zone table mean, and how much they are worth. */
-function zonesKey(view: ClockView): Markup | null {
+/** What the columns of the zone tables mean, and how much they are worth. */
+export function zonesKey(views: readonly ClockView[]): Markup | null {
   const said = [
-    view.zones.some((row) => row.stability !== null)
+    views.some((view) => view.zones.some((row) => row.stability !== null))
       ? 'Stability: how much of a zone comes back when beds and shells are drawn again, from 0 to 1 (mean Jaccard similarity); from 0.75 up a zone is stable, under 0.6 it should not be believed.'
       : '',
-    view.adjacent.length > 0
-      ? 'Overlap: the share of shells that could be of either zone. The p-values, by the means of beds and by the ranks of shells, test groups that were found in these same data and so come out too small: a large one speaks against two zones, a small one does not prove them.'
+    views.some((view) => view.adjacent.length > 0)
+      ? 'Overlap: how far the shells of two zones share one range, 0 apart and 1 alike. The p-values, by the means of beds and by the ranks of shells, test groups that were found in these same data and so come out too small: a large one speaks against two zones, a small one does not prove them.'
       : '',
   ].filter((words) => words !== '');
   return said.length === 0 ? null : html`<p class="note">${said.join(' ')}</p>`;
@@ -83,7 +95,7 @@ export function relationsTable(view: ClockView): Markup {
   const verdict = (value: RelationRow['verdict']) =>
     html`<span class="verdict ${value === 'reversed' ? 'bad' : ''}"><span aria-hidden="true">${SIGN[value]}</span> ${value}</span>`;
   const columns: Column<RelationRow>[] = [
-    { head: 'no.', cell: (row) => numbers.get(row) ?? '' },
+    ...(numbers.size > 0 ? [{ head: 'no.', cell: (row: RelationRow) => numbers.get(row) ?? '' }] : []),
     { head: 'lower', cell: (row) => bedLink(view, row.lower) },
     { head: 'upper', cell: (row) => bedLink(view, row.upper) },
     {
@@ -95,7 +107,9 @@ export function relationsTable(view: ClockView): Markup {
     { head: 'z', number: true, cell: (row) => figures(row.z, 2), sort: (row) => row.z },
     { head: 'all shells', cell: (row) => verdict(row.verdict) },
     { head: 'after setting aside', cell: (row) => verdict(row.verdict_after) },
-    { head: 'reading', long: true, cell: (row) => row.reading },
+    ...(rows.some((row) => row.reading !== '')
+      ? [{ head: 'reading', long: true, cell: (row: RelationRow) => row.reading }]
+      : []),
   ];
   const shown = atMost(rows);
   return html`${table(`Field relations on ${view.clock.clock}`, columns, shown, (row): RowTies => {

@@ -89,21 +89,16 @@ function zones(findings: Findings, views: readonly ClockView[], cite: Cite): Htm
   if (looked.length === 0) {
     return views.length === 0 ? null : 'Too few beds have a mean to look for zones.';
   }
-  const counts = looked.flatMap((view) => view.counts);
   const bootstrapped = findings.evidence.some(
     (entry) => entry.about === 'clock' && entry.sentences.some((sentence) => /bootstrap/i.test(sentence)),
   );
-  const printed = [
-    counts.some((row) => row.gap !== null) ? html`the gap statistic${cite('tibshirani', 'dudoit')}` : null,
-    counts.some((row) => row.silhouette !== null) ? html`the silhouette${cite('rousseeuw')}` : null,
-  ].filter((one) => one !== null);
   return [
     html`Zones come from a normal mixture with known errors and one spread, fitted by expectation and conditional maximisation${cite('dempster', 'meng')} from the exact partition of bed means${cite('fisherGroups', 'wang')}, for every number of zones, beside a continuum as the rival. The lowest BIC${cite('schwarz')} wins, with differences read after Kass and Raftery${cite('kass')}`,
     bootstrapped
       ? html`; where it is close, a parametric bootstrap of the likelihood ratio decides${cite('mclachlan')}`
       : '',
     '.',
-    printed.length > 0 ? html` Beside it are printed ${listed(printed)}.` : '',
+    beside(looked, cite),
     findings.options.zones === null
       ? ''
       : ` ${findings.options.zones} ${findings.options.zones === 1 ? 'zone was' : 'zones were'} asked for, and the choice only says what the data support.`,
@@ -111,6 +106,15 @@ function zones(findings: Findings, views: readonly ClockView[], cite: Cite): Htm
       ? html` The stability of a zone is the mean Jaccard similarity between it and the zone most like it when beds and shells are drawn again${cite('hennig')}; the same draws carry the doubt about the zones into the probabilities of beds.`
       : '',
   ];
+}
+
+function beside(looked: readonly ClockView[], cite: Cite): Markup | null {
+  const counts = looked.flatMap((view) => view.counts);
+  const printed = [
+    counts.some((row) => row.gap !== null) ? html`the gap statistic${cite('tibshirani', 'dudoit')}` : null,
+    counts.some((row) => row.silhouette !== null) ? html`the silhouette${cite('rousseeuw')}` : null,
+  ].filter((one) => one !== null);
+  return printed.length === 0 ? null : html` Beside it are printed ${listed(printed)}.`;
 }
 
 function neighbours(findings: Findings, views: readonly ClockView[], cite: Cite): HtmlValue {

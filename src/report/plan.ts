@@ -18,6 +18,9 @@ const KINDS = Object.keys(HEADINGS) as PlanKind[];
 /** Lines of one kind shown as sentences; the table holds them all. */
 const SHOWN = 6;
 
+/** Beds of one clock shown that gain the order most. */
+const MOST_BEDS = 8;
+
 /** What to collect or date next: the best lines in words, all of them in a table, and what counts as resolved. */
 export function planSection(findings: Findings, views: readonly ClockView[]): HtmlValue {
   const { plan } = findings;
@@ -55,30 +58,35 @@ function lines(rows: readonly PlanRow[], views: readonly ClockView[], named: boo
     .slice(0, SHOWN)
     .map(
       (row) =>
-        html`<li${ties(row, views)}><p class="why">${named && row.clock !== null ? html`<b>${row.clock}:</b> ` : ''}${row.settles}</p></li>`,
+        html`<li${ties(row, views)}><p>${named && row.clock !== null ? html`<b>${row.clock}:</b> ` : ''}${row.settles}</p></li>`,
     )}</ol>${more > 0 ? html`<p class="note">${counted(more, 'more line')} in the table.</p>` : ''}`;
 }
 
-/** The beds that gain most, a row a bed, a column for every number of further shells. */
+/** The beds that gain most, a table a clock: a row a bed, a column for every number of further shells. */
 function strengthen(rows: readonly PlanRow[], views: readonly ClockView[], named: boolean): Markup {
-  const sizes = [...new Set(rows.map((row) => row.total ?? 0))];
-  const gain = (of: PlanRow, size: number) =>
-    rows.find((row) => row.clock === of.clock && row.beds[0] === of.beds[0] && row.total === size)?.pairs_gained ??
-    null;
-  const shown = rows.filter((row) => row.total === sizes[0]);
-  const columns: Column<PlanRow>[] = [
-    { head: 'bed', cell: (row) => links(row, views) },
-    ...(named ? [{ head: 'clock', cell: (row: PlanRow) => row.clock ?? '' }] : []),
-    { head: 'shells now', number: true, cell: (row) => bedOf(row, views)?.row.shells ?? '–' },
-    ...sizes.map(
-      (size): Column<PlanRow> => ({
-        head: `with ${size} more`,
-        number: true,
-        cell: (row) => gain(row, size)?.toFixed(1) ?? '–',
-      }),
-    ),
-  ];
-  return html`${table('Pairs of beds newly resolved', columns, shown, (row) => rowTies(row, views))}<p class="note">Pairs of beds in the whole order expected to be newly resolved by so many more shells from one bed.</p>`;
+  const clocks = [...new Set(rows.map((row) => row.clock))];
+  const most = named ? 5 : MOST_BEDS;
+  const tables = clocks.map((clock) => {
+    const own = rows.filter((row) => row.clock === clock && row.rank <= most);
+    const sizes = [...new Set(own.map((row) => row.total ?? 0))];
+    const gain = (of: PlanRow, size: number) =>
+      own.find((row) => row.beds[0] === of.beds[0] && row.total === size)?.pairs_gained ?? null;
+    const columns: Column<PlanRow>[] = [
+      { head: 'bed', cell: (row) => links(row, views) },
+      { head: 'shells now', number: true, cell: (row) => bedOf(row, views)?.row.shells ?? '–' },
+      ...sizes.map(
+        (size): Column<PlanRow> => ({
+          head: `with ${size} more`,
+          number: true,
+          cell: (row) => gain(row, size)?.toFixed(1) ?? '–',
+        }),
+      ),
+    ];
+    const shown = own.filter((row) => row.total === sizes[0]);
+    const caption = `Pairs of beds newly resolved${named ? `, ${clock ?? ''}` : ''}`;
+    return html`${named ? html`<p><b>${clock}</b></p>` : ''}<div class="slim">${table(caption, columns, shown, (row) => rowTies(row, views))}</div>`;
+  });
+  return html`${tables}<p class="note">Pairs of beds in the whole order expected to be newly resolved by so many more shells from one bed.</p>`;
 }
 
 function folded(plan: readonly PlanRow[], views: readonly ClockView[], named: boolean): Markup {

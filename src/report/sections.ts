@@ -3,7 +3,7 @@ import type { Figure } from '../figures/index.js';
 import type { Findings } from '../model/index.js';
 import { assumedNote } from './assumed-note.js';
 import { cautions } from './cautions.js';
-import { bedsTable, correlationTable, relationsTable, shellsTable, zonesTable } from './clock-tables.js';
+import { bedsTable, correlationTable, relationsTable, shellsTable, zonesKey, zonesTable } from './clock-tables.js';
 import { conversions } from './conversions.js';
 import { figureBlock } from './figure-block.js';
 import { type HtmlValue, html, type Markup } from './html.js';
@@ -44,7 +44,7 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
   const single = views.filter((view) => view.combined === null);
   const all: (Part | null)[] = [
     part('findings', 'What was found', 'Findings', [
-      html`<div class="lead">${views.map((view) => [views.length > 1 ? html`<h3>${view.clock.clock}</h3>` : '', findingsInSentences(view), zonesTable(view)])}</div>`,
+      html`<div class="lead">${views.map((view) => [views.length > 1 ? html`<h3>${view.clock.clock}</h3>` : '', findingsInSentences(view), zonesTable(view)])}${zonesKey(views)}</div>`,
       remarks(findings, 'finding'),
       toCautions(findings),
     ]),
@@ -56,7 +56,9 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
       views.map((view) => reversedRelations(view, evidenceOf(view, 'relation'))),
       drawn('relations'),
       views.some((view) => view.relations.length > 0)
-        ? views.filter((view) => view.relations.length > 0).map(relationsTable)
+        ? views
+            .filter((view) => view.relations.length > 0)
+            .map((view) => [views.length > 1 ? html`<h3>Every relation${view.heading}</h3>` : '', relationsTable(view)])
         : null,
     ]),
     part('amino-acids', 'Do the amino acids agree?', 'Amino acids', drawn('amino-acids')),
@@ -107,7 +109,10 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
         : '',
     ]),
     partOf('methods', 'Methods, settings and sources', 'Methods', methods(findings, views)),
-    partOf('cautions', 'Cautions', 'Cautions', [remarks(findings, 'caution'), cautions()]),
+    partOf('cautions', 'Cautions', 'Cautions', [
+      remarks(findings, 'caution'),
+      cautions(findings.remarks.filter(({ level }) => level === 'caution').map(({ text }) => text)),
+    ]),
   ];
   return all.filter((one) => one !== null);
 }

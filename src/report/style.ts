@@ -111,6 +111,7 @@ td a[data-b],th a[data-b]{white-space:nowrap}
 .odd .why{color:var(--soft);font-size:.9375rem;line-height:1.5;max-width:56rem}
 .odd .why li{padding:0;border:0}
 .odd ul.why{margin:.2rem 0 0;padding-left:1.1rem;list-style:disc}
+.slim{max-width:44rem}
 .figures{display:flex;flex-wrap:wrap;gap:0 2.2rem;align-items:flex-start}
 .figures figure{flex:1 1 22rem;min-width:0}
 .figures figure.wide{flex-basis:100%}
@@ -120,11 +121,15 @@ td a[data-b],th a[data-b]{white-space:nowrap}
 .toc{columns:2;column-gap:1rem}
 .hint{padding-bottom:.8rem}
 }
+@media (max-width:46rem){
+.wide figcaption::before{content:"The drawing scrolls sideways. "}
+}
 @media (max-width:40rem){
 .lead p{font-size:1.06rem}
 .figbox{padding:.5rem;margin-left:-.4rem;margin-right:-.4rem}
 }
 @media print{
+.wide figcaption::before{content:none!important}
 @page{size:A4;margin:15mm}
 :root{--ink:#000;--soft:#333;--faint:#777;--grid:#ddd;--paper:#fff;--page:#fff;--alarm:#000;--link:#000;--line:#999}
 html{color-scheme:light}
@@ -142,6 +147,8 @@ figure.narrow{max-width:100mm}
 table{font-size:7pt}
 th,td{padding:.6mm 1mm}
 thead th,tbody th,td a[data-b],th a[data-b]{white-space:normal}
+tbody th:has(a),td:has(a[data-b]){min-width:23mm}
+td .chip,th .chip{font-size:6.5pt}
 .odd li{break-inside:avoid}
 details:not([open]),details>summary::marker{display:none;content:""}
 .long{min-width:30mm}
