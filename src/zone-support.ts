@@ -7,6 +7,7 @@ import {
   assignOverDraws,
   assignZone,
   type BootstrapZones,
+  bedScatters,
   bestLabels,
   type CountCriteria,
   choiceSentence,
@@ -75,6 +76,7 @@ export async function supportZones(
     seed: seedFrom(random.fork(1)),
     simulations: options.simulations,
     map: host.map,
+    scatters: bedScatters(data, before.beds),
   });
   const changed = choice.bestZones !== before.choice.bestZones || choice.verdict !== before.choice.verdict;
   const last = changed ? rezonePass(context, settled.last, settled.left, random.fork(2), choice) : settled.last;

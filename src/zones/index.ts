@@ -36,5 +36,7 @@ export type { ZoneErrors } from './zone-errors.js';
 export { unbiasedSpread, zoneErrors } from './zone-errors.js';
 export type { CountCriteria, ZoneRowSupport } from './zone-rows.js';
 export { adjacentZonesRows, zoneCountRows, zoneName, zoneRows } from './zone-rows.js';
+export type { BedScatter } from './zone-scales.js';
+export { bedScatters, zoneScales } from './zone-scales.js';
 export type { Zoning, ZoningOptions } from './zoning.js';
 export { bestLabels, findZones } from './zoning.js';

@@ -1,6 +1,6 @@
 import { createRandom } from '../statistics/index.js';
 import { type Continuum, fitContinuum } from './continuum.js';
-import { drawTrue, type NullModel } from './likelihood-ratio.js';
+import { drawBed, type NullModel } from './likelihood-ratio.js';
 import { fitMixture, type Mixture } from './mixture.js';
 import { MOST_ZONES } from './model-choice.js';
 import { unbiasedSpread } from './zone-errors.js';
@@ -78,7 +78,7 @@ export function bootstrapLead({ errors, rival, seed, first, repeats }: LeadArgum
   return Array.from({ length: repeats }, (_, at) => {
     const own = random.fork(first + at);
     return leadOfZones(
-      errors.map((error) => drawTrue(rival, own) + error * own.normal()),
+      errors.map((error) => drawBed(rival, error, own)),
       errors,
     );
   });

@@ -1,6 +1,6 @@
-import { createRandom } from '../statistics/index.js';
-import { type Continuum, fitContinuum } from './continuum.js';
-import { fitMixture, type Mixture } from './mixture.js';
+import { createRandom, type Random } from '../statistics/index.js';
+import { fitContinuum } from './continuum.js';
+import { fitMixture } from './mixture.js';
 
 /** The simpler model of a comparison, plain data: what samples are drawn from. */
 export type NullModel =
@@ -9,6 +9,8 @@ export type NullModel =
       readonly means: readonly number[];
       readonly weights: readonly number[];
       readonly tau: number;
+      /** Errors of the beds of each zone in units of those stated. Default 1. */
+      readonly scales?: readonly number[];
     }
   | { readonly kind: 'continuum'; readonly low: number; readonly high: number };
 
@@ -39,16 +41,18 @@ export function bootstrapLikelihoodRatio(argument: LikelihoodRatioArgument): num
   const random = createRandom(argument.seed);
   return Array.from({ length: repeats }, (_, at) => {
     const own = random.fork(first + at);
-    const values = errors.map((error) => drawTrue(simpler, own) + error * own.normal());
+    const values = errors.map((error) => drawBed(simpler, error, own));
     const richer = fitMixture(values, errors, zones, QUICK).logLikelihood;
     return 2 * (richer - simplerLogLikelihood(simpler, values, errors));
   });
 }
 
-/** A true log ratio of a bed, drawn from a model. */
-export function drawTrue(model: NullModel, random: ReturnType<typeof createRandom>): number {
+/** A bed mean drawn from a model. */
+export function drawBed(model: NullModel, error: number, random: Random): number {
+  if (model.kind === 'continuum') {
+    return model.low + (model.high - model.low) * random.uniform() + error * random.normal();
+  }
   const u = random.uniform();
-  if (model.kind === 'continuum') return model.low + (model.high - model.low) * u;
   let sum = 0;
   let zone = model.weights.length - 1;
   for (let j = 0; j < model.weights.length; j++) {
@@ -58,16 +62,11 @@ export function drawTrue(model: NullModel, random: ReturnType<typeof createRando
       break;
     }
   }
-  return model.means[zone] + model.tau * random.normal();
+  const own = error * (model.scales?.[zone] ?? 1);
+  return model.means[zone] + model.tau * random.normal() + own * random.normal();
 }
 
 function simplerLogLikelihood(model: NullModel, values: readonly number[], errors: readonly number[]): number {
   if (model.kind === 'continuum') return fitContinuum(values, errors, 1e-6).logLikelihood;
   return fitMixture(values, errors, model.means.length, QUICK).logLikelihood;
-}
-
-/** A fitted model as the simpler one of a comparison. */
-export function nullModel(fit: Mixture | Continuum): NullModel {
-  if ('low' in fit) return { kind: 'continuum', low: fit.low, high: fit.high };
-  return { kind: 'zones', means: fit.means, weights: fit.weights, tau: fit.tau };
 }

@@ -1,8 +1,9 @@
 import type { ClockVerdict, TaskMapper } from '../model/index.js';
 import { bootstrapInRounds } from './bootstrap-rounds.js';
 import { type LeadArgument, leadOfFits, leadOfZones, rivalModel } from './lead-of-zones.js';
-import { type LikelihoodRatioArgument, nullModel } from './likelihood-ratio.js';
+import type { LikelihoodRatioArgument } from './likelihood-ratio.js';
 import { FEWEST_BEDS, type ModelChoice, withoutZones } from './model-choice.js';
+import { type BedScatter, zoneScales } from './zone-scales.js';
 
 /** Difference of BIC above which the richer model stands without a bootstrap ("very strong", Kass and Raftery 1995). */
 export const CLEAR_BIC = 10;
@@ -52,6 +53,8 @@ export interface SettleOptions {
   /** Most repeats a comparison; it stops earlier once p is plainly on one side of the level. Default 999. */
   readonly simulations?: number;
   readonly map: TaskMapper;
+  /** Scatter of the shells of each bed, for zones that scatter unequally. Default: all scatter as their errors say. */
+  readonly scatters?: readonly BedScatter[];
 }
 
 /** Bed means of log ratios and their standard errors. */
@@ -72,7 +75,8 @@ interface Beds {
  * are given some. Nothing is drawn where BIC is against zones and they do not even lead in Akaike's criterion.
  *
  * *How many*: K zones, the lowest BIC, must hold against K − 1 at alpha wherever their lead in BIC is under 10; else K − 1 are
- * taken and tested in turn. One zone more is tested where its BIC is within 2 of the best; a small p there is reported and
+ * taken and tested in turn. The samples of K − 1 zones scatter as the shells of each zone do, for a zone whose shells scatter
+ * more than all others would else be split in two. One zone more is tested where its BIC is within 2 of the best; a small p there is reported and
  * changes nothing, since BIC asks for more than p ≤ 0.05.
  * @param choice by BIC
  * @param values bed means that were chosen from
@@ -141,9 +145,12 @@ async function oneMore(
   { mixtures }: ModelChoice,
   zones: number,
   errors: readonly number[],
-  { alpha, seed, simulations, map }: Limited,
+  { alpha, seed, simulations, map, scatters }: Limited,
 ): Promise<Comparison> {
   const model = mixtures[zones - 2];
+  const { means, weights, tau } = model;
+  const scales = scatters === undefined ? undefined : zoneScales(model, scatters);
+  const simpler = { kind: 'zones' as const, means, weights, tau, scales };
   const statistic = 2 * (mixtures[zones - 1].logLikelihood - model.logLikelihood);
   const { p, repeats } = await bootstrapInRounds({
     observed: statistic,
@@ -153,7 +160,7 @@ async function oneMore(
     task: (first, number) => {
       const argument: LikelihoodRatioArgument = {
         errors,
-        simpler: nullModel(model),
+        simpler,
         zones,
         seed,
         first,

@@ -26,6 +26,12 @@ async function measure(): Promise<Line[]> {
   };
   const none: readonly (readonly [string, CoastOptions])[] = [
     ['a continuum', { zones: 'continuum' }],
+    [
+      'a continuum of 12 beds, its range 1.5 in ln D/L',
+      { zones: 'continuum', continuumRange: 1.5, beds: 12, sections: 4 },
+    ],
+    ['a continuum of 20 beds, its range 0.4', { zones: 'continuum', continuumRange: 0.4, beds: 20, sections: 5 }],
+    ['a continuum of 60 beds', { zones: 'continuum', beds: 60, sections: 20 }],
     ['one zone', { zones: 1 }],
     ['one zone, spread 0.04 between beds', { zones: 1, spread: 0.04 }],
     ['one zone sloping 2 % a degree over 8 degrees, no gradient asked for', { zones: 1, gradient: { slope: 0.02 } }],

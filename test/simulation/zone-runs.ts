@@ -3,7 +3,7 @@ import { averageAnalyses, clockData } from '../../src/beds/index.js';
 import type { Clock, ClockData } from '../../src/model/index.js';
 import { adjustedRandIndex, createRandom, type Random } from '../../src/statistics/index.js';
 import { runTask } from '../../src/tasks.js';
-import { findZones, settleChoice, type Zoning } from '../../src/zones/index.js';
+import { bedScatters, findZones, settleChoice, type Zoning } from '../../src/zones/index.js';
 import type { TrueBed } from './coast.js';
 import { type CoastOptions, simulateCoast } from './coast.js';
 
@@ -63,6 +63,7 @@ export async function settledZones(data: ClockData, random: Random): Promise<Zon
       seed: random.fork(1).integer(2 ** 31),
       simulations: SIMULATIONS,
       map: async (tasks) => tasks.map(runTask),
+      scatters: bedScatters(data, first.beds),
     },
   );
   if (comparisons.length === 0) return first;
