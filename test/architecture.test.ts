@@ -38,6 +38,19 @@ describe('the rooms of the house', () => {
     expect(bare).toEqual([]);
   });
 
+  it('says of every export what it is', () => {
+    const bare = files.flatMap(({ path, text }) => {
+      const lines = text.split('\n');
+      return lines.flatMap((line, at) =>
+        /^export (async )?(function\*?|const|interface|class|type \w+\b(?! *\{))/.test(line) &&
+        !lines[at - 1]?.trim().endsWith('*/')
+          ? [`${path}:${at + 1} ${line}`]
+          : [],
+      );
+    });
+    expect(bare).toEqual([]);
+  });
+
   it('lets no Node module be reached from the library', () => {
     const byPath = new Map(files.map((file) => [file.path, file]));
     const reached = new Set<string>();

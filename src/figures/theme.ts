@@ -15,8 +15,11 @@ export const TYPE = { title: 12.5, label: 10, small: 9, tiny: 8.2 } as const;
 
 /** Inks of a figure on white; the page swaps them by class in dark mode. */
 export const INK = '#1b1a19';
+/** Ink of less weight. */
 export const SOFT = '#57534d';
+/** Ink of the least weight. */
 export const FAINT = '#8c867d';
+/** The ground of a figure. */
 export const PAPER = '#ffffff';
 /** For what contradicts the field: always together with a sign of its own. */
 export const ALARM = '#b3261e';

@@ -11,8 +11,10 @@ import type { BedPlace, InputFile, RelationBasis } from './survey.js';
  * D/L values are on the D/L scale; `log_*`, `scatter`, `spread`, `difference`, `residual` are in log ratios (no unit).
  */
 
+/** What the data of a clock support: several zones, one, a continuum without zones, or nothing for want of beds. */
 export type ClockVerdict = 'zones' | 'one zone' | 'continuum' | 'too few beds';
 
+/** One clock: what was zoned, and what was found of it (clocks.csv). */
 export interface ClockRow {
   readonly clock: string;
   readonly taxon: string;
@@ -34,6 +36,7 @@ export interface ClockRow {
   readonly rand_with_main: number | null;
 }
 
+/** One aminozone of a clock (zones.csv). */
 export interface ZoneRow {
   readonly clock: string;
   /** Z1 is the youngest. */
@@ -51,6 +54,7 @@ export interface ZoneRow {
   readonly stability: number | null;
 }
 
+/** One model of the number of zones with its criteria (zone_counts.csv). */
 export interface ZoneCountRow {
   readonly clock: string;
   /** `1` … `K`, or `continuum`. */
@@ -63,8 +67,10 @@ export interface ZoneCountRow {
   readonly chosen: boolean;
 }
 
+/** Whether two neighbouring zones are distinct; `not resolved` where too few shells or beds can tell. */
 export type AdjacentVerdict = 'distinct' | 'not distinct' | 'not resolved';
 
+/** Two neighbouring zones held against each other (adjacent_zones.csv). */
 export interface AdjacentZonesRow {
   readonly clock: string;
   readonly older: string;
@@ -81,6 +87,7 @@ export interface AdjacentZonesRow {
   readonly verdict: AdjacentVerdict;
 }
 
+/** One bed on one main clock (beds.csv). */
 export interface BedRow {
   readonly clock: string;
   readonly section: string;
@@ -107,6 +114,7 @@ export interface BedRow {
   readonly reading: string;
 }
 
+/** One shell on its main clock (shells.csv). */
 export interface ShellRow {
   readonly clock: string;
   readonly section: string;
@@ -127,6 +135,7 @@ export interface ShellRow {
   readonly confidence: Confidence | null;
 }
 
+/** One bed in the order of its clock (order.csv). */
 export interface OrderRow {
   readonly clock: string;
   /** 1 is the oldest. */
@@ -142,6 +151,7 @@ export interface OrderRow {
   readonly resolved: boolean | null;
 }
 
+/** Two beds and the probability of their order (pairs.csv). */
 export interface PairRow {
   readonly clock: string;
   /** `section/bed`. */
@@ -151,8 +161,10 @@ export interface PairRow {
   readonly p_same_zone: number | null;
 }
 
+/** What the ratios say of a field relation. */
 export type RelationVerdict = 'agrees' | 'tied' | 'reversed' | 'not tested';
 
+/** One field relation against the ratios of one clock (relations.csv). */
 export interface RelationRow {
   readonly clock: string;
   readonly lower: string;
@@ -171,6 +183,7 @@ export interface RelationRow {
   readonly reading: string;
 }
 
+/** One section against its own superposition (sections.csv). */
 export interface SectionRow {
   readonly clock: string;
   readonly section: string;

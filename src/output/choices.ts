@@ -18,11 +18,13 @@ import type {
 
 type Words<T extends string> = Readonly<Record<T, string>>;
 
+/** Fractions in words. */
 export const FRACTIONS: Words<Fraction> = {
   THAA: 'total hydrolysable amino acids',
   FAA: 'free amino acids',
 };
 
+/** Amino acids by their codes. */
 export const AMINO_ACID_NAMES: Words<AminoAcid> = {
   Asx: 'aspartic acid with asparagine',
   Glx: 'glutamic acid with glutamine',
@@ -36,6 +38,7 @@ export const AMINO_ACID_NAMES: Words<AminoAcid> = {
   Met: 'methionine',
 };
 
+/** Verdicts on a clock in words. */
 export const CLOCK_VERDICTS: Words<ClockVerdict> = {
   zones: 'the ratios fall into separate zones',
   'one zone': 'all beds agree with a single zone',
@@ -43,12 +46,14 @@ export const CLOCK_VERDICTS: Words<ClockVerdict> = {
   'too few beds': 'too few beds to tell',
 };
 
+/** Verdicts on neighbouring zones in words. */
 export const ADJACENT_VERDICTS: Words<AdjacentVerdict> = {
   distinct: 'the zones differ and hardly overlap',
   'not distinct': 'the zones do not differ, or overlap too much',
   'not resolved': 'too few shells or beds for any test to decide',
 };
 
+/** Marks on a bed in words. */
 export const BED_MARKS: Words<BedMark> = {
   'shallow burial': 'covered by less than the limit, so warmed by the sun',
   provisional: 'fewer shells than a bed should have',
@@ -60,12 +65,14 @@ export const BED_MARKS: Words<BedMark> = {
   'converted taxon': 'the mean rests on shells of another taxon, converted to the reference taxon',
 };
 
+/** Statuses of a shell in words. */
 export const SHELL_STATUSES: Words<ShellStatus> = {
   kept: 'counts in the means',
   doubtful: 'counts in the means, but is named',
   'set aside': 'left out of the means for a stated reason',
 };
 
+/** Marks on a shell in words. */
 export const SHELL_MARKS: Words<ShellMark> = {
   'high serine': 'L-Ser/L-Asp at or above the limit: younger amino acids have come in',
   'discordant ratios': 'off the line that two amino acids of the taxon share',
@@ -75,6 +82,7 @@ export const SHELL_MARKS: Words<ShellMark> = {
   'low yield': 'concentrations are far below the median of the taxon',
 };
 
+/** Readings of a shell in words. */
 export const SHELL_READINGS: Words<ShellReading> = {
   none: 'nothing odd',
   'reworked from an older deposit': 'high ratio, amino acids agree, screening clean',
@@ -85,12 +93,14 @@ export const SHELL_READINGS: Words<ShellReading> = {
   'intruded or contaminated': 'low ratio; one amino acid alone cannot tell which',
 };
 
+/** How sure a reading is, in words. */
 export const CONFIDENCES: Words<Confidence> = {
   high: 'several independent facts agree',
   moderate: 'the main facts agree',
   low: 'one fact, or facts that disagree',
 };
 
+/** What a relation rests on, in words. */
 export const BASES: Words<RelationBasis> = {
   superposition: 'one bed lies on the other',
   'cross-cutting': 'one deposit cuts the other',
@@ -100,16 +110,19 @@ export const BASES: Words<RelationBasis> = {
   marker: 'a marker bed ties them',
 };
 
+/** Kinds of relation in words. */
 export const RELATION_KINDS: Words<'older' | 'same'> = {
   older: 'lower is older than upper',
   same: 'both are as old',
 };
 
+/** How sure a relation is, in words. */
 export const CERTAINTIES: Words<'certain' | 'probable'> = {
   certain: 'binds the order',
   probable: 'is checked, but does not bind the order',
 };
 
+/** Verdicts on a relation in words. */
 export const RELATION_VERDICTS: Words<RelationVerdict> = {
   agrees: 'the ratios say the same',
   tied: 'the ratios cannot tell the two beds apart',
@@ -117,17 +130,20 @@ export const RELATION_VERDICTS: Words<RelationVerdict> = {
   'not tested': 'a bed has no mean on this clock',
 };
 
+/** Verdicts on a section in words. */
 export const SECTION_VERDICTS: Words<SectionRow['verdict']> = {
   consistent: 'the ratios of the section agree with its order',
   inconsistent: 'the ratios of the section contradict its order',
   'not tested': 'fewer than two beds with a mean',
 };
 
+/** Severities of a problem in words. */
 export const SEVERITIES: Words<'error' | 'warning'> = {
   error: 'refuses the survey',
   warning: 'lets the survey through',
 };
 
+/** Parts of the input files in words. */
 export const INPUT_ROLES: Words<InputFile['role']> = {
   shells: 'laboratory data',
   beds: 'places and heights of the beds',

@@ -1,71 +1,11 @@
+import { sha256Bytes } from '../statistics/index.js';
+
 /**
  * SHA-256 of a text in UTF-8, as base64: the page's content security policy names its one script and one style by it.
- * Written out because figures and report use no module of Node (FIPS 180-4).
  * @example
  * ```ts
  * sha256Base64('abc') // => 'ungWv48Bz+pBQUDeXa4iI7ADYaOWF3qctBD/YfIAFa0='
  * ```
  */
-export function sha256Base64(text: string): string {
-  const bytes = new TextEncoder().encode(text);
-  const blocks = Math.ceil((bytes.length + 9) / 64);
-  const view = new DataView(new ArrayBuffer(blocks * 64));
-  bytes.forEach((byte, i) => {
-    view.setUint8(i, byte);
-  });
-  view.setUint8(bytes.length, 0x80);
-  view.setUint32(blocks * 64 - 8, Math.floor((bytes.length * 8) / 2 ** 32));
-  view.setUint32(blocks * 64 - 4, (bytes.length * 8) >>> 0);
-  const hash = Uint32Array.from(START);
-  const w = new Uint32Array(64);
-  for (let block = 0; block < blocks; block++) {
-    for (let t = 0; t < 16; t++) w[t] = view.getUint32(block * 64 + t * 4);
-    for (let t = 16; t < 64; t++) {
-      const s0 = turn(w[t - 15], 7) ^ turn(w[t - 15], 18) ^ (w[t - 15] >>> 3);
-      const s1 = turn(w[t - 2], 17) ^ turn(w[t - 2], 19) ^ (w[t - 2] >>> 10);
-      w[t] = w[t - 16] + s0 + w[t - 7] + s1;
-    }
-    let [a, b, c, d, e, f, g, h] = hash;
-    for (let t = 0; t < 64; t++) {
-      const one = (h + (turn(e, 6) ^ turn(e, 11) ^ turn(e, 25)) + ((e & f) ^ (~e & g)) + ROUND[t] + w[t]) | 0;
-      const two = ((turn(a, 2) ^ turn(a, 13) ^ turn(a, 22)) + ((a & b) ^ (a & c) ^ (b & c))) | 0;
-      h = g;
-      g = f;
-      f = e;
-      e = (d + one) | 0;
-      d = c;
-      c = b;
-      b = a;
-      a = (one + two) | 0;
-    }
-    [a, b, c, d, e, f, g, h].forEach((word, i) => {
-      hash[i] += word;
-    });
-  }
-  let binary = '';
-  for (const word of hash)
-    for (let shift = 24; shift >= 0; shift -= 8) binary += String.fromCharCode((word >>> shift) & 255);
-  return btoa(binary);
-}
-
-const turn = (word: number, by: number) => (word >>> by) | (word << (32 - by));
-
-const PRIMES = Array.from({ length: 312 }, (_, i) => i).filter(
-  (n) => n > 1 && !Array.from({ length: Math.floor(Math.sqrt(n)) - 1 }, (_, k) => k + 2).some((d) => n % d === 0),
-);
-
-/** The first 32 bits of the fraction of a root, exact by whole numbers: floor(root(n) * 2^32) mod 2^32. */
-function fractionOfRoot(prime: number, degree: 2n | 3n): number {
-  const target = BigInt(prime) << (32n * degree);
-  let low = 0n;
-  let high = 1n << 40n;
-  while (high - low > 1n) {
-    const middle = (low + high) >> 1n;
-    if (middle ** degree <= target) low = middle;
-    else high = middle;
-  }
-  return Number(low & 0xffffffffn);
-}
-
-const START = PRIMES.slice(0, 8).map((prime) => fractionOfRoot(prime, 2n));
-const ROUND = PRIMES.slice(0, 64).map((prime) => fractionOfRoot(prime, 3n));
+export const sha256Base64 = (text: string): string =>
+  btoa(String.fromCharCode(...sha256Bytes(new TextEncoder().encode(text))));

@@ -39,7 +39,9 @@ export function table<Row>(
 }
 
 function cell<Row>(column: Column<Row>, row: Row, index: number): Markup {
-  const value = column.sort?.(row);
+  const exact = column.sort?.(row);
+  // as many digits as any table shows
+  const value = typeof exact === 'number' ? Number(exact.toPrecision(6)) : exact;
   const name = column.number ? 'num' : column.long ? 'long' : null;
   const attributes = html`${attribute('class', name ?? undefined)}${attribute('data-v', value ?? undefined)}`;
   return index === 0

@@ -1,6 +1,7 @@
 import { allEqual, chainVariances, rankNormalised, splitChains } from './chains.js';
 import type { Numbers } from './check.js';
 
+/** Options of the checks of sampled chains. */
 export interface ChainOptions {
   /** Judge normal scores of the ranks instead of the draws themselves, so that heavy tails don't blind it. Default true. */
   readonly rankNormalise?: boolean;

@@ -3,6 +3,7 @@ import { requireNumbers, requireThat } from './check.js';
 import { farthest } from './grubbs.js';
 import { studentTQuantile } from './student-t.js';
 
+/** One step: the most extreme value left, and its limit. */
 export interface EsdStep {
   /** Place in the list of the value taken out at this step. */
   readonly index: number;
@@ -11,6 +12,7 @@ export interface EsdStep {
   readonly limit: number;
 }
 
+/** Outliers found, and every step. */
 export interface GeneralizedEsd {
   /** Places of the outliers in the list, most extreme first. */
   readonly outliers: readonly number[];

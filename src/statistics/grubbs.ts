@@ -3,6 +3,7 @@ import { requireThat } from './check.js';
 import { studentTCdf, studentTQuantile } from './student-t.js';
 import { momentsOf } from './summary.js';
 
+/** Options of the test for one outlier. */
 export interface GrubbsOptions {
   /** Which values may be the odd one: the farthest on either side, only the largest, or only the smallest. Default both. */
   readonly side?: 'both' | 'high' | 'low';
@@ -10,6 +11,7 @@ export interface GrubbsOptions {
   readonly alpha?: number;
 }
 
+/** Outcome of the test for one outlier. */
 export interface Grubbs {
   /** Distance of the odd value from the mean in standard deviations. */
   readonly g: number;

@@ -62,3 +62,7 @@ export { splitRHat } from './split-r-hat.js';
 // Rates of reaction
 
 export { rateIncreasePerDegree } from './arrhenius.js';
+
+// Fingerprints of files
+
+export { sha256Bytes } from './sha256.js';

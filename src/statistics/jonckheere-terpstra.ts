@@ -7,6 +7,7 @@ import { waysToDeal } from './ways-to-deal.js';
 /** Up to this many values, none tied, the exact distribution is worked out. */
 const EXACT_UP_TO = 100;
 
+/** Outcome of the test for a trend over ordered groups. */
 export interface JonckheereTerpstra {
   /** Pairs of values in which the later group's is the larger; ties count one half. */
   readonly j: number;

@@ -8,11 +8,13 @@ import { tieSizes } from './ranks.js';
 /** Up to this many values, none tied, the exact distribution is worked out. */
 const EXACT_UP_TO = 100;
 
+/** Options of the test of tau-b. */
 export interface KendallOptions {
   /** Confidence of the interval, default 0.95. */
   readonly level?: number;
 }
 
+/** Kendall's tau-b and its test. */
 export interface KendallTauB {
   /** −1 to 1; NaN when one of the lists has only one value. */
   readonly tau: number;

@@ -7,6 +7,7 @@ import { waysToDeal } from './ways-to-deal.js';
 /** Up to this product of the two group sizes the exact distribution is worked out. */
 const EXACT_UP_TO = 2500;
 
+/** Outcome of the comparison of two samples by ranks. */
 export interface MannWhitney {
   /** Number of pairs in which the value of the first group is the larger one; ties count one half. */
   readonly u: number;

@@ -1,5 +1,6 @@
 import { type Arcs, type Residual, saturate } from './maximum-flow.js';
 
+/** A cheapest cut and its sides. */
 export interface MinimumCut {
   /** Capacity of the cut, which is the greatest flow. */
   readonly value: number;

@@ -3,6 +3,7 @@ import { requireThat } from './check.js';
 import { fUpperTail } from './f-distribution.js';
 import { momentsOf, requireSummary, type Summary } from './summary.js';
 
+/** Outcome of the analysis of variance of one factor. */
 export interface OneWayAnova {
   readonly f: number;
   readonly p: number;

@@ -2,6 +2,7 @@ import { requireThat } from './check.js';
 import { noncentralT } from './noncentral-t.js';
 import { studentTQuantile } from './student-t.js';
 
+/** A comparison of two means that is being planned. */
 export interface PowerDesign {
   /** True difference of the two means. */
   readonly delta: number;

@@ -2,6 +2,7 @@ import type { Numbers } from './check.js';
 import { requireThat } from './check.js';
 import { oneWayAnova } from './one-way-anova.js';
 
+/** Variance between and within groups. */
 export interface VarianceComponents {
   /** Variance between groups beyond what scatter within them gives; 0 where the estimate is below 0. */
   readonly between: number;

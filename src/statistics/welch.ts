@@ -3,6 +3,7 @@ import { requireThat } from './check.js';
 import { studentTCdf, studentTQuantile } from './student-t.js';
 import { requireSummary, type Summary, summarise } from './summary.js';
 
+/** Outcome of Welch's t test. */
 export interface Welch {
   /** First mean minus second. */
   readonly difference: number;
@@ -17,6 +18,7 @@ export interface Welch {
   readonly high: number;
 }
 
+/** Options of Welch's t test. */
 export interface WelchOptions {
   /** Confidence of the interval, default 0.95. */
   readonly level?: number;

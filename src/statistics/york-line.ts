@@ -2,6 +2,7 @@ import type { Numbers } from './check.js';
 import { requireNumbers, requireThat } from './check.js';
 import { chiSquaredUpperTail } from './chi-squared.js';
 
+/** Options of the line with errors in both. */
 export interface YorkOptions {
   /** Correlation of the two errors of a point, between −1 and 1; one number for all or one a point. Default 0. */
   readonly correlation?: number | Numbers;
@@ -9,6 +10,7 @@ export interface YorkOptions {
   readonly slope?: number;
 }
 
+/** A line with errors in both, and its fit. */
 export interface YorkLine {
   readonly slope: number;
   /** 0 when the slope was given. */

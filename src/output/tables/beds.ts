@@ -3,6 +3,7 @@ import { BED_MARKS, CONFIDENCES, SHELL_MARKS, SHELL_READINGS, SHELL_STATUSES } f
 import type { FieldsOf } from '../shape.js';
 import * as c from './columns.js';
 
+/** Columns of beds.csv. */
 export const beds = {
   clock: c.clock,
   section: c.section,
@@ -25,6 +26,7 @@ export const beds = {
   reading: c.text('what the tool reads from the bed'),
 } satisfies FieldsOf<BedRow>;
 
+/** Columns of shells.csv. */
 export const shells = {
   clock: c.clock,
   section: c.section,

@@ -33,6 +33,7 @@ const error = (which: string) =>
 const limit = (which: string) =>
   ({ type: 'choice', values: DATE_LIMITS, description: `how the date bounds the ${which} bed` }) as const;
 
+/** Columns of dates.csv. */
 export const dates = {
   older: c.text('bed that should be the older, as section/bed'),
   younger: c.text('the other bed'),

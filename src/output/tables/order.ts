@@ -2,6 +2,7 @@ import type { CorrelationRow, OrderRow, PairRow } from '../../model/index.js';
 import type { FieldsOf } from '../shape.js';
 import * as c from './columns.js';
 
+/** Columns of order.csv. */
 export const order = {
   clock: c.clock,
   rank: { type: 'integer', minimum: 1, description: 'place in the order; 1 is the oldest' },
@@ -14,6 +15,7 @@ export const order = {
   resolved: { type: 'boolean', nullable: true, description: 'whether that probability reaches 1 - alpha' },
 } satisfies FieldsOf<OrderRow>;
 
+/** Columns of pairs.csv. */
 export const pairs = {
   clock: c.clock,
   bed_a: c.text('bed, as section/bed'),

@@ -10,6 +10,7 @@ const PLAN_KINDS: Readonly<Record<PlanKind, string>> = {
   'date beds': 'beds to date so that the most others are bracketed',
 };
 
+/** Columns of plan.csv. */
 export const plan = {
   clock: c.textOrNone('clock; empty where the line rests on all main clocks together'),
   kind: { type: 'choice', values: PLAN_KINDS, description: 'what is asked for' },

@@ -3,6 +3,7 @@ import { BASES, CERTAINTIES, RELATION_KINDS, RELATION_VERDICTS, SECTION_VERDICTS
 import type { FieldsOf } from '../shape.js';
 import * as c from './columns.js';
 
+/** Columns of relations.csv. */
 export const relations = {
   clock: c.clock,
   lower: c.text('bed said to be the older, as section/bed'),
@@ -18,6 +19,7 @@ export const relations = {
   reading: c.text('what would explain a reversed relation'),
 } satisfies FieldsOf<RelationRow>;
 
+/** Columns of sections.csv. */
 export const sections = {
   clock: c.clock,
   section: c.section,
@@ -28,6 +30,7 @@ export const sections = {
   verdict: { type: 'choice', values: SECTION_VERDICTS, description: 'whether ratios and order agree' },
 } satisfies FieldsOf<SectionRow>;
 
+/** Columns of problems.csv. */
 export const problems = {
   file: c.text('input file, without folders'),
   line: { type: 'integer', nullable: true, minimum: 1, description: 'line of the file; the header is line 1' },

@@ -3,6 +3,7 @@ import { ADJACENT_VERDICTS, CLOCK_VERDICTS } from '../choices.js';
 import type { FieldsOf } from '../shape.js';
 import * as c from './columns.js';
 
+/** Columns of clocks.csv. */
 export const clocks = {
   clock: c.clock,
   taxon: c.taxon,
@@ -21,6 +22,7 @@ export const clocks = {
   rand_with_main: c.plainOrNone('adjusted Rand index with the zones of the main clock, over the beds they share'),
 } satisfies FieldsOf<ClockRow>;
 
+/** Columns of zones.csv. */
 export const zones = {
   clock: c.clock,
   zone: c.zone,
@@ -34,6 +36,7 @@ export const zones = {
   stability: c.shareOrNone('mean Jaccard similarity over bootstraps; 1 is a zone that always comes back'),
 } satisfies FieldsOf<ZoneRow>;
 
+/** Columns of zone_counts.csv. */
 export const zone_counts = {
   clock: c.clock,
   model: c.text('number of zones, or `continuum`'),
@@ -45,6 +48,7 @@ export const zone_counts = {
   chosen: c.yes('whether this model is in use'),
 } satisfies FieldsOf<ZoneCountRow>;
 
+/** Columns of adjacent_zones.csv. */
 export const adjacent_zones = {
   clock: c.clock,
   older: c.text('older zone of the two'),
