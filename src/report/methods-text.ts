@@ -25,11 +25,12 @@ export function methodsText(findings: Findings, views: readonly ClockView[], cit
 
 function averages(findings: Findings, views: readonly ClockView[], cite: Cite): HtmlValue {
   const single = findings.shell_ratios.length > 0;
-  const named = new Map<string, number>();
-  for (const { clock, status } of findings.shells)
-    if (status !== 'set aside') named.set(clock, (named.get(clock) ?? 0) + 1);
   const published = views.some(
-    (view) => view.combined === null && view.clock.shells > (named.get(view.clock.clock) ?? 0),
+    (view) =>
+      view.combined === null &&
+      view.beds.some(
+        ({ row, shells }) => row.shells > shells.filter((shell) => shell.row.status !== 'set aside').length,
+      ),
   );
   const assumed = views.some((view) => view.assumedScatter !== null);
   return [
