@@ -1,9 +1,10 @@
-import { cpSync, existsSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { cpSync, mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { expect, it } from 'vitest';
 import { bedorder, ROOT } from '../commands/program.js';
+import { holdAgainstGolden } from './compare.js';
 
 /** What the terminal shows of each example; `npm run golden` writes it anew, to be read as a diff. */
 const EXAMPLES: Readonly<Record<string, readonly string[]>> = {
@@ -24,9 +25,7 @@ it.each(Object.entries(EXAMPLES))('the summary of %s', async (name, options) => 
     expect(status, stderr).toBe(0);
     const shown = `${stderr}\n${stdout}`;
     for (const line of stdout.split('\n')) expect(line.length, line).toBeLessThanOrEqual(80);
-    if (process.env.GOLDEN === 'write') writeFileSync(golden, shown);
-    expect(existsSync(golden), `no ${golden}: run npm run golden`).toBe(true);
-    expect(shown).toBe(readFileSync(golden, 'utf8'));
+    holdAgainstGolden(golden, shown);
   } finally {
     rmSync(home, { recursive: true, force: true });
   }
