@@ -1,5 +1,5 @@
 import type { ClockVerdict } from '../model/index.js';
-import type { Comparison } from './settle-choice.js';
+import type { Comparison } from './compare-models.js';
 
 /** What each criterion says of the number of zones. */
 export interface Criteria {
@@ -53,7 +53,7 @@ export function choiceSentence(criteria: Criteria): string {
       comparisons.filter(({ of }) => of === 'any'),
       bicForZones,
     ),
-    ...comparisons.filter(({ of }) => of === 'one more').map((comparison) => oneMoreText(comparison, settled)),
+    ...comparisons.filter(({ of }) => of === 'these').map((comparison) => theseText(comparison, settled)),
   );
   if (forced !== null) sentences.push(forcedText(forced));
   return sentences.join(' ');
@@ -79,11 +79,12 @@ function whetherText(tests: readonly Comparison[], bicForZones: boolean): string
   return [`${how} finds ${list(tests.map(rival))} unlikely${bicForZones ? '' : ', and decides for zones'}.`];
 }
 
-function oneMoreText(test: Comparison, settled: number): string {
+function theseText(test: Comparison, settled: number): string {
   const { simpler, zones, p, level } = test;
+  const rival = simpler === 'continuum' ? 'a continuum' : zoneCount(Number(simpler));
   const note =
     zones > settled && Number(simpler) === settled && p <= level ? '; BIC asks for more, so the simpler stands' : '';
-  return `A bootstrap of ${zoneCount(zones)} against ${zoneCount(Number(simpler))} gives ${outcome(test)}${note}.`;
+  return `A bootstrap of ${zoneCount(zones)} against ${rival} gives ${outcome(test)}${note}.`;
 }
 
 const outcome = ({ p, repeats }: Comparison): string =>

@@ -1,7 +1,6 @@
 import type { ClockVerdict, TaskMapper } from '../model/index.js';
-import { bootstrapInRounds } from './bootstrap-rounds.js';
-import { type LeadArgument, leadOfFits, leadOfZones, rivalModel } from './lead-of-zones.js';
-import type { LikelihoodRatioArgument } from './likelihood-ratio.js';
+import { anyNumber, type Comparison, nullModel, these, zonesModel } from './compare-models.js';
+import { leadOfFits, leadOfZones, rivalModel } from './lead-of-zones.js';
 import { FEWEST_BEDS, type ModelChoice, withoutZones } from './model-choice.js';
 import { type BedScatter, zoneScales } from './zone-scales.js';
 
@@ -14,30 +13,21 @@ export const NEAR_BIC = 2;
 /** Whether there are zones at all is judged at this share of alpha: 0.03 where alpha is 0.05. */
 export const STRICTER = 0.6;
 
+/** One zone more is taken at this share of alpha, since the number is the best of several tried: 0.025 where alpha is 0.05. */
+export const ONE_MORE = 0.5;
+
 /** Of the two models without zones the worse is held against zones too where its BIC is as near as this ("strong" beyond). */
 const NEAR_RIVAL = 6;
 
-/** Beds above which the number of repeats is held down: every one takes long, and BIC misses little. */
+/**
+ * Beds under which a search over every number of zones nearly always ends near one zone a bed, so that its lead tells nothing:
+ * the number of lowest BIC is tested by itself, at alpha.
+ */
+const FEWEST_TO_SEARCH = 10;
+
+/** Beds above which BIC misses little and is not overruled in favour of zones, and repeats, which take long, are fewer. */
 const MANY_BEDS = 400;
 const FEW_REPEATS = 199;
-
-/** One model held against richer ones by a parametric bootstrap. */
-export interface Comparison {
-  /**
-   * `any`: a model without zones against zones in any number, by {@link leadOfZones}. `one more`: K − 1 zones against K, by
-   * the likelihood ratio 2(ln L richer − ln L simpler).
-   */
-  readonly of: 'any' | 'one more';
-  /** `1` … `K`, or `continuum`. */
-  readonly simpler: string;
-  /** Of the richer model; with `any` the number of lowest BIC. */
-  readonly zones: number;
-  readonly statistic: number;
-  readonly p: number;
-  /** The richer model stands when p is at most this. */
-  readonly level: number;
-  readonly repeats: number;
-}
 
 /** A choice after the bootstraps that were called for. */
 export interface SettledChoice {
@@ -57,6 +47,8 @@ export interface SettleOptions {
   readonly scatters?: readonly BedScatter[];
 }
 
+type Limited = SettleOptions & { readonly simulations: number };
+
 /** Bed means of log ratios and their standard errors. */
 interface Beds {
   readonly values: readonly number[];
@@ -72,12 +64,14 @@ interface Beds {
  * number of zones is chosen anew. Zones stand when p ≤ 0.6 alpha, whether BIC is for them or against: it asks so much more
  * of three zones than of a continuum that it misses many that are there, and with a dozen beds it sees many that are not.
  * The level leaves room for the ends of the rival being estimates, so that no more than about alpha of coasts without zones
- * are given some. Nothing is drawn where BIC is against zones and they do not even lead in Akaike's criterion.
+ * are given some. Nothing is drawn where BIC is against zones and they do not even lead in Akaike's criterion. Fewer than 10
+ * beds keep the number that BIC chose when it holds against the continuum by itself with p ≤ alpha; BIC is not overruled in
+ * favour of zones there, nor with more than 400 beds.
  *
- * *How many*: K zones, the lowest BIC, must hold against K − 1 at alpha wherever their lead in BIC is under 10; else K − 1 are
- * taken and tested in turn. The samples of K − 1 zones scatter as the shells of each zone do, for a zone whose shells scatter
- * more than all others would else be split in two. One zone more is tested where its BIC is within 2 of the best; a small p there is reported and
- * changes nothing, since BIC asks for more than p ≤ 0.05.
+ * *How many*: K zones, the lowest BIC, must hold against K − 1 with p ≤ alpha/2 (alpha under 10 beds) wherever their lead in
+ * BIC is under 10; else K − 1 are taken and tested in turn. The samples of K − 1 zones scatter as the shells of each zone do,
+ * for a zone whose shells scatter more than all others would else be split in two. One zone more is tested where its BIC is
+ * within 2 of the best; a small p there is reported and changes nothing, since BIC asks for more.
  * @param choice by BIC
  * @param values bed means that were chosen from
  * @param errors their standard errors
@@ -102,7 +96,7 @@ export async function settleChoice(
   while (zones > 2 && bics[zones - 2] - bics[zones - 1] < CLEAR_BIC) {
     const against = await oneMore(choice, zones, errors, limited);
     comparisons.push(against);
-    if (against.p <= options.alpha) break;
+    if (against.p <= against.level) break;
     zones--;
   }
   if (zones === best && zones < bics.length && bics[zones] - bics[zones - 1] < NEAR_BIC) {
@@ -110,8 +104,6 @@ export async function settleChoice(
   }
   return { choice: { ...choice, bestZones: zones, verdict: 'zones' satisfies ClockVerdict }, comparisons };
 }
-
-type Limited = SettleOptions & { readonly simulations: number };
 
 async function anyZones(choice: ModelChoice, best: number, { values, errors }: Beds, options: Limited) {
   const { mixtures, continuum, bics, continuumBic } = choice;
@@ -121,53 +113,30 @@ async function anyZones(choice: ModelChoice, best: number, { values, errors }: B
   ].sort((a, b) => a.bic - b.bic);
   const comparisons: Comparison[] = [];
   if (rivals[0].bic - bics[best - 1] >= CLEAR_BIC) return { zones: true, comparisons };
-  if (choice.verdict !== 'zones' && !(leadOfFits(mixtures, continuum) > 0)) return { zones: false, comparisons };
-  const level = STRICTER * options.alpha;
-  const statistic = leadOfZones(values, errors);
-  for (const { simpler, model } of rivals.filter(({ bic }) => bic - rivals[0].bic < NEAR_RIVAL)) {
-    const drawn = { errors, rival: rivalModel(model, values.length), seed: options.seed };
-    const { p, repeats } = await bootstrapInRounds({
-      observed: statistic,
-      level,
-      ...options,
-      task: (first, number) => {
-        const argument: LeadArgument = { ...drawn, first, repeats: number };
-        return { name: 'bootstrapLead', argument };
-      },
-    });
-    comparisons.push({ of: 'any', simpler, zones: best, statistic, p, level, repeats });
-    if (!(p <= level)) return { zones: false, comparisons };
+  const few = values.length < FEWEST_TO_SEARCH;
+  const near = few
+    ? rivals.filter(({ simpler, bic }) => (simpler === 'continuum' || best === 2) && bic - bics[best - 1] < CLEAR_BIC)
+    : rivals.filter(({ bic }) => bic - rivals[0].bic < NEAR_RIVAL);
+  if (choice.verdict !== 'zones') {
+    const hopeless = few || values.length > MANY_BEDS || !(leadOfFits(mixtures, continuum) > 0);
+    if (hopeless) return { zones: false, comparisons };
+  }
+  const level = few ? options.alpha : STRICTER * options.alpha;
+  const lead = few ? 0 : leadOfZones(values, errors);
+  for (const { simpler, model } of near) {
+    const against = few
+      ? await these(nullModel(model), model, mixtures[best - 1], errors, { ...options, level })
+      : await anyNumber(rivalModel(model, values.length), lead, errors, { ...options, level });
+    comparisons.push({ ...against, simpler, zones: best });
+    if (!(against.p <= level)) return { zones: false, comparisons };
   }
   return { zones: true, comparisons };
 }
 
-async function oneMore(
-  { mixtures }: ModelChoice,
-  zones: number,
-  errors: readonly number[],
-  { alpha, seed, simulations, map, scatters }: Limited,
-): Promise<Comparison> {
+async function oneMore({ mixtures }: ModelChoice, zones: number, errors: readonly number[], options: Limited) {
   const model = mixtures[zones - 2];
-  const { means, weights, tau } = model;
-  const scales = scatters === undefined ? undefined : zoneScales(model, scatters);
-  const simpler = { kind: 'zones' as const, means, weights, tau, scales };
-  const statistic = 2 * (mixtures[zones - 1].logLikelihood - model.logLikelihood);
-  const { p, repeats } = await bootstrapInRounds({
-    observed: statistic,
-    level: alpha,
-    simulations,
-    map,
-    task: (first, number) => {
-      const argument: LikelihoodRatioArgument = {
-        errors,
-        simpler,
-        zones,
-        seed,
-        first,
-        repeats: number,
-      };
-      return { name: 'bootstrapLikelihoodRatio', argument };
-    },
-  });
-  return { of: 'one more', simpler: String(zones - 1), zones, statistic, p, level: alpha, repeats };
+  const scales = options.scatters === undefined ? undefined : zoneScales(model, options.scatters);
+  const level = (errors.length < FEWEST_TO_SEARCH ? 1 : ONE_MORE) * options.alpha;
+  const test = await these({ ...zonesModel(model), scales }, model, mixtures[zones - 1], errors, { ...options, level });
+  return { ...test, simpler: String(zones - 1), zones };
 }

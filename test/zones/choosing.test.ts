@@ -320,7 +320,7 @@ describe('choiceSentence', () => {
     expect(choiceSentence({ ...criteria, comparisons })).toContain(
       'A bootstrap that makes the whole choice again in samples without zones finds a continuum (p = 0.012, 199 simulations) and one zone (p = 4e-4, 4999 simulations) unlikely.',
     );
-    const more = { ...any({ simpler: '2' }), of: 'one more' as const };
+    const more = { ...any({ simpler: '2' }), of: 'these' as const };
     expect(choiceSentence({ ...criteria, comparisons: [more] })).toContain(
       'A bootstrap of 3 zones against 2 zones gives p = 0.012, 199 simulations.',
     );
