@@ -8,7 +8,7 @@ export interface WorkerHost extends Host {
 }
 
 /** Milliseconds of work left from which threads are worth their start. */
-const WORTH_THREADS = 150;
+const WORTH_THREADS = 400;
 
 interface Answer {
   readonly index: number;
