@@ -46,7 +46,7 @@ describe('stages of raised beaches in south-west Britain, shells drawn about the
   });
 
   it('do so for most draws of 4 to 8 shells a bed, 10 beds a stage', async () => {
-    // of these 20 draws 16 do; over 200 draws of the same shells without the rest of a run some 85 % do (zones.test.ts)
+    // of these 20 draws 16 do; over 200 draws of the same shells without the rest of a run 85 % do (zones.test.ts)
     let three = 0;
     for (let seed = 1; seed <= 20; seed++) {
       const shells = drawn(seed, 10, (random) => 4 + random.integer(5));

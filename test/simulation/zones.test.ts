@@ -59,7 +59,10 @@ describe('zone probabilities', () => {
     ]);
     const judged = deciles.filter(({ beds }) => beds >= 50);
     expect(judged.length).toBeGreaterThan(0);
-    for (const { said, right } of judged) expect(Math.abs(said - right)).toBeLessThan(0.05);
+    for (const { beds, said, right } of judged) {
+      // 5 points, and twice the error of the share beside; `npm run rates` judges over ten times as many coasts
+      expect(Math.abs(said - right)).toBeLessThan(0.05 + 2 * Math.sqrt((said * (1 - said)) / beds));
+    }
   });
 });
 
