@@ -10,7 +10,7 @@ export const CLEAR_BIC = 10;
 /** Difference of BIC under which one zone more is tested although BIC is against it ("not worth more than a bare mention"). */
 export const NEAR_BIC = 2;
 
-/** Whether there are zones at all is judged at this share of alpha: 0.03 where alpha is 0.05. */
+/** Zones that BIC is against are taken at this share of alpha: 0.03 where alpha is 0.05. */
 export const STRICTER = 0.6;
 
 /** One zone more is taken at this share of alpha, since the number is the best of several tried: 0.025 where alpha is 0.05. */
@@ -61,10 +61,10 @@ interface Beds {
  *
  * *Whether*: unless the best mixture of two zones or more leads the continuum and the single zone by 10 or more in BIC, its
  * lead is compared with those in samples of the better of these two (of both where they are near each other), in which the
- * number of zones is chosen anew. Zones stand when p ≤ 0.6 alpha, whether BIC is for them or against: it asks so much more
- * of three zones than of a continuum that it misses many that are there, and with a dozen beds it sees many that are not.
- * The level leaves room for the ends of the rival being estimates, so that no more than about alpha of coasts without zones
- * are given some. Nothing is drawn where BIC is against zones and they do not even lead in Akaike's criterion. Fewer than 10
+ * number of zones is chosen anew. Zones that BIC is for stand when p ≤ alpha, those that it is against when p ≤ 0.6 alpha: it
+ * asks so much more of three zones than of a continuum that it misses many that are there, and with a dozen beds it sees
+ * many that are not. The stricter level leaves room for the ends of the rival being estimates, so that no more than about
+ * alpha of coasts without zones are given some. Nothing is drawn where BIC is against zones and they do not even lead in Akaike's criterion. Fewer than 10
  * beds keep the number that BIC chose when it holds against the continuum by itself with p ≤ alpha; BIC is not overruled in
  * favour of zones there, nor with more than 400 beds.
  *
@@ -121,7 +121,7 @@ async function anyZones(choice: ModelChoice, best: number, { values, errors }: B
     const hopeless = few || values.length > MANY_BEDS || !(leadOfFits(mixtures, continuum) > 0);
     if (hopeless) return { zones: false, comparisons };
   }
-  const level = few ? options.alpha : STRICTER * options.alpha;
+  const level = (few || choice.verdict === 'zones' ? 1 : STRICTER) * options.alpha;
   const lead = few ? 0 : leadOfZones(values, errors);
   for (const { simpler, model } of near) {
     const against = few

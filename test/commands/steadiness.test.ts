@@ -77,6 +77,8 @@ it.concurrent.each(['lane-1', 'lane-2'])(
     expect(digest(join(home, out))).toBe(first);
     expect(leftovers().filter((name) => name.includes(out))).toEqual([]);
   },
+  // 54 whole runs: some minutes where other tests keep both cores busy
+  400_000,
 );
 
 describe('places where nothing can be written', () => {
