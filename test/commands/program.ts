@@ -71,7 +71,8 @@ export function runNode(args: readonly string[], options: SpawnOptionsWithoutStd
   return new Promise((resolve, reject) => {
     const child = spawn(process.execPath, args, {
       ...options,
-      env: { ...process.env, FORCE_COLOR: '', ...options.env },
+      // with both set, Node warns on standard error
+      env: { ...process.env, FORCE_COLOR: undefined, ...options.env },
     });
     let stdout = '';
     let stderr = '';
