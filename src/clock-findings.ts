@@ -3,28 +3,18 @@ import { type ClockSet, testingDf } from './beds/index.js';
 import type { ClockOrder, Pass, RunContext, SlopeOfPass } from './clock-run.js';
 import { correlationTable, gradientRemarks } from './coast/index.js';
 import type {
-  AdjacentZonesRow,
-  AminoAcidShare,
-  AminoAcidVotes,
   BedMark,
-  BedRow,
   BedSite,
   ClockBed,
   ClockRow,
   ConflictRow,
-  CorrelationRow,
   Evidence,
+  Findings,
   GradientFinding,
   OrderDiagnostics,
-  OrderRow,
-  PairRow,
-  RelationRow,
   Remark,
   SectionRow,
   Shell,
-  ShellRow,
-  ZoneCountRow,
-  ZoneRow,
 } from './model/index.js';
 import { heightOf, MOST_BEDS_IN_PAIRS, orderRows, pairRows } from './order/index.js';
 import { MOST_PASSES, type Settled } from './passes.js';
@@ -44,26 +34,29 @@ import {
   zoneRows,
 } from './zones/index.js';
 
+/** Tables and lists of the findings that are made clock by clock. */
+type ByClock =
+  | 'zones'
+  | 'zone_counts'
+  | 'adjacent_zones'
+  | 'beds'
+  | 'shells'
+  | 'order'
+  | 'pairs'
+  | 'relations'
+  | 'sections'
+  | 'correlation'
+  | 'evidence'
+  | 'conflicts'
+  | 'diagnostics'
+  | 'gradients'
+  | 'votes'
+  | 'shares'
+  | 'remarks';
+
 /** All rows of one clock. */
-export interface ClockResult {
+export interface ClockResult extends Pick<Findings, ByClock> {
   readonly clock: ClockRow;
-  readonly zones: readonly ZoneRow[];
-  readonly zone_counts: readonly ZoneCountRow[];
-  readonly adjacent_zones: readonly AdjacentZonesRow[];
-  readonly beds: readonly BedRow[];
-  readonly shells: readonly ShellRow[];
-  readonly order: readonly OrderRow[];
-  readonly pairs: readonly PairRow[];
-  readonly relations: readonly RelationRow[];
-  readonly sections: readonly SectionRow[];
-  readonly correlation: readonly CorrelationRow[];
-  readonly evidence: readonly Evidence[];
-  readonly conflicts: readonly ConflictRow[];
-  readonly diagnostics: readonly OrderDiagnostics[];
-  readonly gradients: readonly GradientFinding[];
-  readonly votes: readonly AminoAcidVotes[];
-  readonly shares: readonly AminoAcidShare[];
-  readonly remarks: readonly Remark[];
 }
 
 /** What the rows of one taxon and fraction are made from. */

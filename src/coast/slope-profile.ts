@@ -1,4 +1,4 @@
-import { fitContinuum, fitMixture, type Mixture } from '../zones/index.js';
+import { fitContinuum, fitMixture, goldenSection, type Mixture } from '../zones/index.js';
 
 /** Number of zones of a model, or the continuum. */
 export type Model = number | 'continuum';
@@ -50,21 +50,7 @@ export function climb(f: (x: number) => number, start: number, step: number, pre
     high += step;
     fHigh = f(high);
   }
-  const ratio = (Math.sqrt(5) - 1) / 2;
-  let [left, right] = [high - ratio * (high - low), low + ratio * (high - low)];
-  let [fLeft, fRight] = [f(left), f(right)];
-  while (high - low > precision) {
-    if (fLeft >= fRight) {
-      [high, right, fRight] = [right, left, fLeft];
-      left = high - ratio * (high - low);
-      fLeft = f(left);
-    } else {
-      [low, left, fLeft] = [left, right, fRight];
-      right = low + ratio * (high - low);
-      fRight = f(right);
-    }
-  }
-  return (low + high) / 2;
+  return goldenSection(f, low, high, precision);
 }
 
 /** Where a profile has fallen to a level, going outwards from its top; the sign of `step` is the way. */

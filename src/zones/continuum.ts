@@ -1,4 +1,5 @@
 import { normalCdf } from '../statistics/index.js';
+import { goldenSection } from './golden-section.js';
 
 /** True bed values spread evenly between two ends, seen with known errors. */
 export interface Continuum {
@@ -25,11 +26,12 @@ export function fitContinuum(values: readonly number[], errors: readonly number[
   let low = least;
   let high = Math.max(most, least + narrowest);
   let best = evaluate(low, high);
+  const precision = tolerance * (1 + Math.abs(least) + Math.abs(most));
   // The two ends hardly speak to each other, so turns at one and the other settle in a few rounds.
   for (let round = 0; round < 40; round++) {
     const before = best;
-    low = goldenSection((end) => evaluate(end, high), least - 3 * widest, high - narrowest, tolerance);
-    high = goldenSection((end) => evaluate(low, end), low + narrowest, most + 3 * widest + narrowest, tolerance);
+    low = goldenSection((end) => evaluate(end, high), least - 3 * widest, high - narrowest, precision);
+    high = goldenSection((end) => evaluate(low, end), low + narrowest, most + 3 * widest + narrowest, precision);
     best = evaluate(low, high);
     if (Math.abs(best - before) < Math.max(1e-9, tolerance)) break;
   }
@@ -46,25 +48,4 @@ function logLikelihood(values: readonly number[], errors: readonly number[], low
     total += Math.log(Math.max(mass, 1e-300));
   }
   return total;
-}
-
-/** Place of the largest value of a function with one peak between two ends. */
-export function goldenSection(f: (x: number) => number, from: number, to: number, tolerance = 1e-10): number {
-  const ratio = (Math.sqrt(5) - 1) / 2;
-  let [low, high] = [from, to];
-  let left = high - ratio * (high - low);
-  let right = low + ratio * (high - low);
-  let [fLeft, fRight] = [f(left), f(right)];
-  while (high - low > tolerance * (1 + Math.abs(low) + Math.abs(high))) {
-    if (fLeft >= fRight) {
-      [high, right, fRight] = [right, left, fLeft];
-      left = high - ratio * (high - low);
-      fLeft = f(left);
-    } else {
-      [low, left, fLeft] = [left, right, fRight];
-      right = low + ratio * (high - low);
-      fRight = f(right);
-    }
-  }
-  return (low + high) / 2;
 }

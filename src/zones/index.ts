@@ -14,6 +14,7 @@ export type { Continuum } from './continuum.js';
 export { fitContinuum } from './continuum.js';
 export type { Gap, GapOptions } from './gap-statistic.js';
 export { gapOf, gapStatistic, groupsByGap } from './gap-statistic.js';
+export { goldenSection } from './golden-section.js';
 export type { KMeansCheck, KMeansCheckInput } from './kmeans-check.js';
 export { kmeansCheck } from './kmeans-check.js';
 export type { LeadArgument } from './lead-of-zones.js';
