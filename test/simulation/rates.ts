@@ -6,9 +6,9 @@ import { existsSync, readFileSync, writeFileSync } from 'node:fs';
 import type { CoastOptions } from './coast-options.js';
 import { calibration, coverage, falseZones, fourAminoAcids, indexGain, recovery } from './zone-rates.js';
 
-const SEEDS = 200;
+const SEEDS = 60;
 /** Beds near a border are few, so that more coasts are wanted where probabilities are judged. */
-const SEEDS_FOR_PROBABILITIES = 250;
+const SEEDS_FOR_PROBABILITIES = 80;
 const step = (percent: number): number => Math.log(1 + percent / 100);
 const percent = (share: number): string => `${(100 * share).toFixed(1)} %`;
 
