@@ -3,7 +3,7 @@
  * doi:10.2307/2032161).
  * @param precision width of the last interval; its middle is given
  * @example
- * goldenSection((x) => -(x - 2) ** 2, 0, 5, 1e-9) // => 2
+ * goldenSection((x) => -((x - 2) ** 2), 0, 5, 1e-6).toFixed(3) // => '2.000'
  */
 export function goldenSection(f: (x: number) => number, from: number, to: number, precision: number): number {
   const ratio = (Math.sqrt(5) - 1) / 2;
