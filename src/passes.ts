@@ -17,6 +17,8 @@ import { zoneName } from './zones/index.js';
 /** Most passes before the tool says that it does not settle (design 7.9). */
 export const MOST_PASSES = 5;
 
+const NO_MARKS: readonly ScreeningMark[] = [];
+
 /** What the passes over one clock need. */
 export interface PassInput {
   readonly context: RunContext;
@@ -55,15 +57,17 @@ export function settlePasses({ context, set, screening, random }: PassInput): Se
     else own.push(mark);
   }
   const first = runPass(context, set.main, set, NOTHING, random);
-  const marks = first.data.shells.map(({ shell }) => byShell.get(shell) ?? []);
+  const marks = first.data.shells.map(({ shell }) => byShell.get(shell) ?? NO_MARKS);
   const fixed = fixedParts(context, first);
   let last = first;
   let left = NOTHING;
+  let before: ShellReadings | undefined;
   for (let passes = 1; ; passes++) {
     const zones = zonesToMatch(last);
     const { data } = last;
     const spread = last.zoning?.spread ?? 0;
-    const readings = readShells({ data, ...fixed, marks, zones, spread, alpha: context.options.alpha });
+    const readings = readShells({ data, ...fixed, marks, zones, spread, alpha: context.options.alpha }, before);
+    before = readings;
     const setAside = new Set(
       data.shells.flatMap(({ shell }, at) => (readings.shells[at].status === 'set aside' ? [shell] : [])),
     );

@@ -33,19 +33,37 @@ export function benjaminiHochberg(p: Numbers): number[] {
  * ```
  */
 export function holm(p: Numbers): number[] {
-  const order = increasing('holm', p);
-  const adjusted = new Array<number>(p.length);
+  requireProbabilities('holm', p);
+  const sorted = Float64Array.from(p).sort();
+  const n = sorted.length;
+  const adjusted = new Float64Array(n);
   let most = 0;
-  for (let rank = 1; rank <= p.length; rank++) {
-    const i = order[rank - 1];
-    most = Math.min(1, Math.max(most, (p.length - rank + 1) * p[i]));
-    adjusted[i] = most;
+  for (let at = 0; at < n; at++) {
+    most = Math.min(1, Math.max(most, (n - at) * sorted[at]));
+    adjusted[at] = most;
   }
-  return adjusted;
+  // equal values end equal, so each finds its own by its size: many times as fast as sorting positions
+  return Array.from(p, (value) => adjusted[lastOf(value, sorted)]);
+}
+
+/** Where the last of a value stands in a sorted list that holds it. */
+function lastOf(value: number, sorted: Float64Array): number {
+  let low = 0;
+  let high = sorted.length - 1;
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if (sorted[middle] <= value) low = middle;
+    else high = middle - 1;
+  }
+  return low;
 }
 
 /** Indices from the smallest p to the largest. */
 function increasing(who: string, p: Numbers): number[] {
-  for (let i = 0; i < p.length; i++) requireThat(p[i] >= 0 && p[i] <= 1, who, 'p-values from 0 to 1', p[i]);
+  requireProbabilities(who, p);
   return Array.from(p, (_, i) => i).sort((i, j) => p[i] - p[j]);
+}
+
+function requireProbabilities(who: string, p: Numbers): void {
+  for (let i = 0; i < p.length; i++) requireThat(p[i] >= 0 && p[i] <= 1, who, 'p-values from 0 to 1', p[i]);
 }

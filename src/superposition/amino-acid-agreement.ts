@@ -42,6 +42,7 @@ export function aminoAcidAgreement(
   bed: readonly number[],
   weights: readonly number[],
 ): (Agreement | null)[] {
+  if (weights.length < 2) return logs.map(() => null);
   const known = logs.filter((_, i) => Number.isFinite(x[i]));
   const columns = weights.flatMap((_, a) =>
     known.filter((row) => Number.isFinite(row[a])).length >= SHARE_MEASURED * known.length ? [a] : [],

@@ -21,6 +21,8 @@ export interface OwnBedResiduals {
   readonly shells: readonly OwnBedResidual[];
   readonly s: number;
   readonly df: number;
+  /** Whether s comes from the shells themselves, not from the scatter to fall back on. */
+  readonly robust: boolean;
   /** Mean of the sound shells of each bed; NaN where there is none. */
   readonly means: readonly number[];
   /** Number of shells tested. */
@@ -50,62 +52,95 @@ export function ownBedResiduals(
   const alpha = options.alpha ?? 0.05;
   const beds = 1 + shells.reduce((most, shell) => Math.max(most, shell.bed), -1);
   const members = Array.from({ length: beds }, (): number[] => []);
+  const sound = new Uint8Array(shells.length);
   shells.forEach((shell, index) => {
-    if (Number.isFinite(shell.x)) members[shell.bed].push(index);
+    if (!Number.isFinite(shell.x)) return;
+    members[shell.bed].push(index);
+    sound[index] = excluded.has(index) ? 0 : 1;
   });
-  const sound = shells.map((shell, index) => Number.isFinite(shell.x) && !excluded.has(index));
-  const robust = robustScatter(members.map((list) => list.filter((i) => sound[i]).map((i) => shells[i].x)));
-  const { s, df } = robust.df >= FEWEST_ROBUST ? robust : (options.fallback ?? { s: Number.NaN, df: 0 });
-
+  const soundOf = (list: readonly number[]) => list.filter((i) => sound[i] === 1).map((i) => shells[i].x);
+  const robust = robustScatter(members.map(soundOf));
+  const enough = robust.df >= FEWEST_ROBUST;
+  const { s, df } = enough ? robust : (options.fallback ?? { s: Number.NaN, df: 0 });
+  const table = blankResiduals(shells.length);
+  let changed = members;
   for (;;) {
-    const raw = shells.map((shell, index) => ownResidual(shell.x, index, members[shell.bed], sound, shells, s, df));
-    const tested = raw.filter(({ p }) => p !== null).length;
-    const adjusted = holmOverTested(raw.map(({ p }) => p));
-    const results = raw.map((result, i): OwnBedResidual => {
-      const level = adjusted[i];
-      return { ...result, adjusted: level, odd: level !== null && level <= alpha && result.others >= 2 };
-    });
-    const furthest = members.map((list) =>
-      list
-        .filter((i) => sound[i] && results[i].odd)
-        .reduce<number | null>(
-          (best, i) => (best === null || Math.abs(results[i].t ?? 0) > Math.abs(results[best].t ?? 0) ? i : best),
-          null,
-        ),
-    );
-    if (furthest.every((index) => index === null)) {
-      const means = members.map((list) => meanOf(list.filter((i) => sound[i]).map((i) => shells[i].x)));
-      return { shells: results, s, df, means, tested };
+    for (const bed of changed) measureBed(bed, shells, sound, { s, df }, table);
+    const { adjusted, tested } = adjustTested(table.p);
+    const isOdd = (i: number) => adjusted[i] <= alpha && table.others[i] >= 2;
+    const furthest = members.map((bed) => furthestOf(bed, (i) => sound[i] === 1 && isOdd(i), table.t));
+    changed = members.filter((_, bed) => furthest[bed] >= 0);
+    if (changed.length === 0) {
+      const results = shells.map((_, i): OwnBedResidual => {
+        const [residual, t, p] = [table.residual[i], table.t[i], table.p[i]].map(known);
+        return { residual, t, others: table.others[i], p, adjusted: known(adjusted[i]), odd: isOdd(i) };
+      });
+      return { shells: results, s, df, robust: enough, means: members.map((bed) => meanOf(soundOf(bed))), tested };
     }
-    for (const index of furthest) if (index !== null) sound[index] = false;
+    for (const index of furthest) if (index >= 0) sound[index] = 0;
   }
 }
 
-type RawResidual = Omit<OwnBedResidual, 'adjusted' | 'odd'>;
+/** Residuals by shell, NaN where unknown. Plain numbers: a survey may hold a million shells. */
+interface ResidualTable {
+  readonly residual: Float64Array;
+  readonly t: Float64Array;
+  readonly p: Float64Array;
+  readonly others: Int32Array;
+}
 
-function ownResidual(
-  x: number,
-  index: number,
+function blankResiduals(shells: number): ResidualTable {
+  const unknown = () => new Float64Array(shells).fill(Number.NaN);
+  return { residual: unknown(), t: unknown(), p: unknown(), others: new Int32Array(shells) };
+}
+
+/** Fills in the shells of one bed, each held against the sound others. */
+function measureBed(
   bed: readonly number[],
-  sound: readonly boolean[],
   shells: readonly { readonly x: number }[],
-  s: number,
-  df: number,
-): RawResidual {
-  const others = bed.filter((i) => i !== index && sound[i]);
-  if (!Number.isFinite(x) || others.length === 0) {
-    return { residual: null, t: null, others: others.length, p: null };
+  sound: Uint8Array,
+  { s, df }: { readonly s: number; readonly df: number },
+  { residual, t, p, others }: ResidualTable,
+): void {
+  // taken from one of the bed, so that equal ratios differ by 0 and not by rounding
+  const origin = bed.length === 0 ? 0 : shells[bed[0]].x;
+  let sum = 0;
+  let count = 0;
+  for (const i of bed) {
+    if (sound[i] === 0) continue;
+    sum += shells[i].x - origin;
+    count++;
   }
-  const residual = x - meanOf(others.map((i) => shells[i].x));
-  if (!(s > 0) || !(df > 0)) return { residual, t: null, others: others.length, p: null };
-  const t = residual / (s * Math.sqrt(1 + 1 / others.length));
-  return { residual, t, others: others.length, p: 2 * studentTCdf(-Math.abs(t), df) };
+  for (const i of bed) {
+    const own = shells[i].x - origin;
+    const rest = count - sound[i];
+    others[i] = rest;
+    if (rest === 0) {
+      residual[i] = t[i] = p[i] = Number.NaN;
+      continue;
+    }
+    residual[i] = own - (sound[i] === 1 ? sum - own : sum) / rest;
+    if (!(s > 0) || !(df > 0)) continue;
+    t[i] = residual[i] / (s * Math.sqrt(1 + 1 / rest));
+    p[i] = 2 * studentTCdf(-Math.abs(t[i]), df);
+  }
 }
+
+/** The shell of a bed that stands furthest off among those that fit; -1 where none does. */
+function furthestOf(bed: readonly number[], fits: (index: number) => boolean, t: Float64Array): number {
+  let best = -1;
+  for (const i of bed) if (fits(i) && (best < 0 || Math.abs(t[i]) > Math.abs(t[best]))) best = i;
+  return best;
+}
+
+const known = (value: number): number | null => (Number.isNaN(value) ? null : value);
 
 const meanOf = (values: readonly number[]): number => values.reduce((sum, value) => sum + value, 0) / values.length;
 
-function holmOverTested(p: readonly (number | null)[]): (number | null)[] {
-  const adjusted = holm(p.filter((value) => value !== null));
+/** Holm over the shells that were tested; NaN for the others. */
+function adjustTested(p: Float64Array): { adjusted: Float64Array; tested: number } {
+  const tested = p.filter((value) => !Number.isNaN(value));
+  const levels = holm(tested);
   let at = 0;
-  return p.map((value) => (value === null ? null : adjusted[at++]));
+  return { adjusted: p.map((value) => (Number.isNaN(value) ? value : levels[at++])), tested: tested.length };
 }

@@ -1,6 +1,14 @@
-import type { AminoAcid, ClockData, Confidence, ScreeningMark, ShellReading, ShellStatus } from '../model/index.js';
+import type {
+  AminoAcid,
+  ClockData,
+  Confidence,
+  ScreeningMark,
+  ShellMark,
+  ShellReading,
+  ShellStatus,
+} from '../model/index.js';
 import { screenedOut } from '../screening/index.js';
-import { aminoAcidAgreement } from './amino-acid-agreement.js';
+import { type Agreement, aminoAcidAgreement } from './amino-acid-agreement.js';
 import { conflictsOfItsOwn } from './conflicts-of-its-own.js';
 import { costOfShell } from './cost-of-shell.js';
 import { type OwnBedResiduals, ownBedResiduals } from './own-bed-residuals.js';
@@ -37,9 +45,6 @@ export interface ShellFinding {
   readonly confidence: Confidence | null;
   /** x minus the mean of the other sound shells of its bed. */
   readonly residual: number | null;
-  /** Name of the zone its ratio fits; null where none. */
-  readonly zone: string | null;
-  readonly zone_probability: number | null;
   /** Evidence in sentences; empty where nothing speaks against the shell. */
   readonly sentences: readonly string[];
 }
@@ -51,7 +56,26 @@ export interface ShellReadings {
   readonly residuals: OwnBedResiduals;
   readonly conflicts: ShellConflicts;
   readonly toSetAside: ShellsToSetAside;
+  /** What does not hang on zones and relations. */
+  readonly grounds: ShellGrounds;
 }
+
+/** What readings rest on that zones and relations do not change: from one pass to the next it mostly stays. */
+export interface ShellGrounds {
+  /** Slope taken out, and the scatter that was at hand where the shells gave none. */
+  readonly slope: number;
+  readonly fallback: { readonly s: number; readonly df: number };
+  /** Log ratios of the shells, gradient taken out. */
+  readonly xs: readonly number[];
+  readonly marks: readonly (readonly ShellMark[])[];
+  /** Shells that screening sets aside. */
+  readonly excluded: ReadonlySet<number>;
+  readonly residuals: OwnBedResiduals;
+  readonly agreements: readonly (Agreement | null)[];
+}
+
+const NO_MARKS: readonly ShellMark[] = [];
+const NOTHING_SAID: readonly string[] = [];
 
 /** Amino acids of a sound shell disagree so far once in a hundred. */
 const DISAGREE = 0.01;
@@ -62,40 +86,27 @@ const DISAGREE = 0.01;
  * worked out anew from all shells; those that came in are not looked at, so the same beds, zones and relations give
  * the same answer.
  *
+ * @param before Readings of the same shells from an earlier pass: what can't have changed is taken from them.
  * @throws RangeError when logs, marks or above do not match the clock's shells and beds.
  */
-export function readShells(input: ReadingInput): ShellReadings {
+export function readShells(input: ReadingInput, before?: ShellReadings): ShellReadings {
   const { data, logs, marks, above, zones, alpha = 0.05 } = input;
   if (logs.length !== data.shells.length || marks.length !== data.shells.length || above.length !== data.beds.length) {
     throw new RangeError(
       `readShells: wanted logs and marks for ${data.shells.length} shells and relations for ${data.beds.length} beds, got ${logs.length}, ${marks.length} and ${above.length}`,
     );
   }
-  const names = marks.map((list) => list.map(({ mark }) => mark));
-  // The gradient is one number a bed, so it changes no residual, but it does change what lies in other beds.
-  const xs = data.shells.map(({ x, bed }) => x - (data.slope ?? 0) * data.beds[bed].gradient);
+  const grounds = groundsOf(input, before?.grounds);
+  const { xs, marks: names, excluded, residuals, agreements } = grounds;
   const placed = data.shells.map(({ bed }, i) => ({ bed, x: xs[i] }));
-  const excluded = new Set(names.flatMap((list, i) => (screenedOut(list) ? [i] : [])));
-  const { s, df, assumed } = data.scatter;
-  const fallback = { s, df: assumed ? Number.POSITIVE_INFINITY : Math.max(1, df) };
-  const residuals = ownBedResiduals(placed, excluded, { alpha, fallback });
   // Shells that screening sets aside settle their conflicts by themselves.
   const conflicts = findShellConflicts(
-    placed.map((shell, i) => (excluded.has(i) ? { ...shell, x: Number.NaN } : shell)),
+    excluded.size === 0 ? placed : placed.map((shell, i) => (excluded.has(i) ? { ...shell, x: Number.NaN } : shell)),
     data.beds.map(({ section }, b) => ({ section, above: above[b] })),
     { scatter: residuals.s, df: residuals.df, spread: input.spread, alpha: alpha / 2 },
   );
   const costs = residuals.shells.map(({ p }, i) => costOfShell(p, names[i].length > 0));
   const toSetAside = shellsToSetAside(conflicts, costs);
-  const agreements = aminoAcidAgreement(
-    logs,
-    data.shells.map(({ x }) => x),
-    data.shells.map(({ bed }) => bed),
-    input.aminoAcids.map((code) => {
-      const at = data.clock.amino_acids.indexOf(code);
-      return at < 0 ? 0 : data.clock.weights[at];
-    }),
-  );
   const inAll = new Set(toSetAside.inAll);
   const inSome = new Set(toSetAside.inSome);
   const ofBed = bedCounts(data, residuals, excluded, new Set([...inAll, ...inSome]));
@@ -107,6 +118,8 @@ export function readShells(input: ReadingInput): ShellReadings {
 
   const shells = data.shells.map(({ bed }, i): ShellFinding => {
     const own = residuals.shells[i];
+    const conflicting = conflicts.asLower[i] + conflicts.asUpper[i] > 0;
+    if (names[i].length === 0 && !conflicting && (own.p === null || own.p > alpha)) return plain(own.residual);
     const cut = inAll.has(i) ? 'all' : inSome.has(i) ? 'some' : 'none';
     const wholeBed = ofBed[bed].inCut * 2 >= ofBed[bed].sound || !alone[i];
     const crowded = ofBed[bed].odd > Math.max(1, Math.floor(ofBed[bed].sound / 3));
@@ -154,12 +167,45 @@ export function readShells(input: ReadingInput): ShellReadings {
       reading,
       confidence,
       residual: own.residual,
-      zone: match?.zone.name ?? null,
-      zone_probability: match?.probability ?? null,
       sentences: shellEvidence(decided),
     };
   });
-  return { shells, residuals, conflicts, toSetAside };
+  return { shells, residuals, conflicts, toSetAside, grounds };
+}
+
+/** The finding of a shell against which nothing speaks. */
+const plain = (residual: number | null): ShellFinding => ({
+  status: 'kept',
+  reading: 'none',
+  confidence: null,
+  residual,
+  sentences: NOTHING_SAID,
+});
+
+/** Worked out anew, or those of an earlier pass where nothing that they rest on has changed. */
+function groundsOf({ data, logs, marks, aminoAcids, alpha }: ReadingInput, before?: ShellGrounds): ShellGrounds {
+  const { s, df, assumed } = data.scatter;
+  const fallback = { s, df: assumed ? Number.POSITIVE_INFINITY : Math.max(1, df) };
+  if (before !== undefined && data.slope === 0 && before.slope === 0) {
+    const same = before.fallback.s === fallback.s && before.fallback.df === fallback.df;
+    if (same || before.residuals.robust) return before;
+  }
+  const names = marks.map((list) => (list.length === 0 ? NO_MARKS : list.map(({ mark }) => mark)));
+  const excluded = new Set(names.flatMap((list, i) => (screenedOut(list) ? [i] : [])));
+  // The gradient is one number a bed, so it changes no residual, but it does change what lies in other beds.
+  const xs = data.shells.map(({ x, bed }) => x - data.slope * data.beds[bed].gradient);
+  const placed = data.shells.map(({ bed }, i) => ({ bed, x: xs[i] }));
+  const agreements = aminoAcidAgreement(
+    logs,
+    data.shells.map(({ x }) => x),
+    data.shells.map(({ bed }) => bed),
+    aminoAcids.map((code) => {
+      const at = data.clock.amino_acids.indexOf(code);
+      return at < 0 ? 0 : data.clock.weights[at];
+    }),
+  );
+  const residuals = ownBedResiduals(placed, excluded, { alpha, fallback });
+  return { slope: data.slope, fallback, xs, marks: names, excluded, residuals, agreements };
 }
 
 /**

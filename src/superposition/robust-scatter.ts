@@ -43,18 +43,25 @@ export function robustScatter(beds: readonly (readonly number[])[]): RobustScatt
   for (let turn = 0; turn < 200; turn++) {
     let squares = 0;
     df = 0;
-    const next = beds.map((values, bed) => {
-      if (values.length === 0) return Number.NaN;
-      const weights = values.map((x) => soundness(x - means[bed], s));
-      const total = weights.reduce((sum, w) => sum + w, 0);
-      const mean = values.reduce((sum, x, i) => sum + weights[i] * x, 0) / total;
+    const weightAt = soundnessAt(s);
+    means = beds.map((values, bed) => {
+      let total = 0;
+      let sum = 0;
+      let sumOfSquares = 0;
+      // about the last mean, so that no digits are lost
+      for (const x of values) {
+        const off = x - means[bed];
+        const weight = weightAt(off);
+        total += weight;
+        sum += weight * off;
+        sumOfSquares += weight * off * off;
+      }
       if (values.length > 1) {
-        squares += values.reduce((sum, x, i) => sum + weights[i] * (x - mean) ** 2, 0);
+        squares += Math.max(0, sumOfSquares - (sum * sum) / total);
         df += Math.max(0, total - 1);
       }
-      return mean;
+      return values.length === 0 ? Number.NaN : means[bed] + sum / total;
     });
-    means = next;
     if (!(df > 0)) break;
     const now = Math.max(SMALLEST, Math.sqrt(squares / df / varianceLeft(s)));
     const settled = Math.abs(now - s) < 1e-9 * s;
@@ -64,20 +71,21 @@ export function robustScatter(beds: readonly (readonly number[])[]): RobustScatt
   return { s, df: Math.max(Math.min(df, 1), 0.93 * df - 2), means };
 }
 
-/** Probability that a shell this far off its bed is sound. */
-function soundness(deviation: number, s: number): number {
+/** Probability that a shell this far off its bed is sound: 1/(1 + ratio of the densities, odd to sound). */
+function soundnessAt(s: number): (deviation: number) => number {
   const wide = Math.hypot(s, ODD_SPREAD);
-  const sound = ((1 - ODD_SHARE) / s) * Math.exp(-0.5 * (deviation / s) ** 2);
-  const odd = (ODD_SHARE / wide) * Math.exp(-0.5 * (deviation / wide) ** 2);
-  return sound / (sound + odd);
+  const atZero = (ODD_SHARE / wide) / ((1 - ODD_SHARE) / s);
+  const growth = 0.5 / (s * s) - 0.5 / (wide * wide);
+  return (deviation) => 1 / (1 + atZero * Math.exp(growth * deviation * deviation));
 }
 
 /** Share of the variance of sound shells that the weights leave: E[w z²] / E[w] for a standard normal z. */
 function varianceLeft(s: number): number {
+  const weightAt = soundnessAt(s);
   let weights = 0;
   let squares = 0;
   for (let z = 0.05; z < 7; z += 0.1) {
-    const mass = soundness(z * s, s) * Math.exp(-0.5 * z * z);
+    const mass = weightAt(z * s) * Math.exp(-0.5 * z * z);
     weights += mass;
     squares += mass * z * z;
   }
