@@ -15,6 +15,7 @@ import type {
   Remark,
   SectionRow,
   Shell,
+  ShellMark,
 } from './model/index.js';
 import { heightOf, MOST_BEDS_IN_PAIRS, orderRows, pairRows } from './order/index.js';
 import { MOST_PASSES, type Settled } from './passes.js';
@@ -27,6 +28,7 @@ import {
   adjacentZonesRows,
   bedRows,
   isNearEquilibrium,
+  type ShellNotes,
   sameZone,
   shellRows,
   type Zoning,
@@ -145,13 +147,7 @@ function mainResult(input: ClockFindingsInput): ClockResult {
     zone_counts: zoning === null ? [] : zoneCountRows(data, zoning, support?.criteria),
     adjacent_zones: zoning === null ? [] : adjacentZonesRows(data, zoning),
     beds,
-    shells: shellRows(
-      data,
-      zoning,
-      shells,
-      (at) => ({ ...settled.readings.shells[at], marks: settled.marks[at].map((mark) => mark.mark) }),
-      support?.assign,
-    ),
+    shells: shellRows(data, zoning, shells, (at) => notesOnShell(settled, at), support?.assign),
     evidence: [
       ...shellEvidence(settled, shells),
       ...bedEvidence(settled, marks, siteOf, options),
@@ -196,6 +192,14 @@ function mainResult(input: ClockFindingsInput): ClockResult {
     ],
     gradients: slope === null ? [] : [slope],
   };
+}
+
+const NO_MARKS: readonly ShellMark[] = [];
+
+function notesOnShell({ readings, marks }: Settled, at: number): ShellNotes {
+  const { status, reading, confidence } = readings.shells[at];
+  const own = marks[at];
+  return { status, reading, confidence, marks: own.length === 0 ? NO_MARKS : own.map(({ mark }) => mark) };
 }
 
 function clockRow({ data, zoning, gradient }: Pass, rand: number | null): ClockRow {

@@ -8,7 +8,8 @@ export interface Averages {
 }
 
 /** One name for a shell; the separator can't stand in a table cell, so no two shells share it. */
-const keyOf = (row: Analysis): string => [row.section, row.bed, row.taxon, row.fraction, row.shell].join('\u0001');
+const keyOf = ({ section, bed, taxon, fraction, shell }: Analysis): string =>
+  `${section}\u0001${bed}\u0001${taxon}\u0001${fraction}\u0001${shell}`;
 
 /**
  * Averages injections to preparations and preparations to shells: arithmetic means of D/L (design 7.1).
@@ -52,7 +53,31 @@ function summariesOf(row: Analysis): PublishedSummary[] {
   }));
 }
 
+const NONE: readonly string[] = [];
+
+/** Shells analysed once are most of a large survey, and there is nothing to average in them. */
+function shellOfOneRow(row: Analysis): Shell {
+  return {
+    section: row.section,
+    bed: row.bed,
+    taxon: row.taxon,
+    fraction: row.fraction,
+    shell: row.shell,
+    lab_ids: row.lab_id ? [row.lab_id] : NONE,
+    labs: row.lab ? [row.lab] : NONE,
+    methods: row.method ? [row.method] : NONE,
+    preparations: 1,
+    ratios: row.ratios,
+    replicates: [row.ratios],
+    concentrations: row.concentrations,
+    serine_ratio: row.serine_ratio ?? serineOfConcentrations(row.ratios, row.concentrations),
+    file: row.file,
+    line: row.line,
+  };
+}
+
 function averageShell(rows: readonly Analysis[]): Shell {
+  if (rows.length === 1) return shellOfOneRow(rows[0]);
   const first = rows[0];
   const preparations = groupPreparations(rows);
   const replicates = preparations.map((injections) => meanOf(injections.map((row) => row.ratios)));
@@ -130,6 +155,10 @@ function distinct(values: readonly (string | null)[]): string[] {
 function serineRatio(rows: readonly Analysis[], ratios: ByAminoAcid, concentrations: ByAminoAcid): number | null {
   const given = rows.map((row) => row.serine_ratio).filter((value): value is number => value !== null);
   if (given.length > 0) return given.reduce((sum, value) => sum + value, 0) / given.length;
+  return serineOfConcentrations(ratios, concentrations);
+}
+
+function serineOfConcentrations(ratios: ByAminoAcid, concentrations: ByAminoAcid): number | null {
   const { Ser: serine, Asx: aspartic } = concentrations;
   if (serine === undefined || aspartic === undefined || !(aspartic > 0)) return null;
   const both = ratios.Ser !== undefined && ratios.Asx !== undefined;

@@ -29,17 +29,24 @@ export function clockData(input: ClockDataInput): ClockData {
   const { clock, shells, summaries, setAside = new Set<number>(), imputation, gradient } = input;
   const beds = new Map<string, DraftBed>();
   const clockShells: ClockShell[] = [];
+  let last: DraftBed | null = null;
   shells.forEach((shell, index) => {
     if (shell.taxon !== clock.taxon || shell.fraction !== clock.fraction) return;
     const x = clockLogRatio(shell.ratios, clock, imputation);
     if (x === null) return;
-    const bed = draftBed(beds, shell.section, shell.bed);
+    // shells of one bed mostly stand together in the table
+    const bed = isOf(last, shell) ? last : draftBed(beds, shell.section, shell.bed);
+    last = bed;
     bed.shells.push(clockShells.length);
     clockShells.push({ shell: index, bed: bed.index, x, setAside: setAside.has(index) });
   });
   const published = addSummaries(beds, clock, summaries, imputation);
   const drafts = [...beds.values()];
-  const kept = drafts.map((bed) => bed.shells.filter((at) => !clockShells[at].setAside).map((at) => clockShells[at].x));
+  const kept = drafts.map((bed) => {
+    const values: number[] = [];
+    for (const at of bed.shells) if (!clockShells[at].setAside) values.push(clockShells[at].x);
+    return values;
+  });
   const wide = drafts.map((bed) => input.wide?.has(bedKey(bed.section, bed.bed)) ?? false);
   const scatter = pooledScatter(
     kept.filter((_, at) => !wide[at]),
@@ -70,6 +77,10 @@ interface DraftBed {
   readonly bed: string;
   readonly shells: number[];
   readonly published: { readonly mean: number; readonly n: number }[];
+}
+
+function isOf(draft: DraftBed | null, { section, bed }: Shell): draft is DraftBed {
+  return draft !== null && draft.bed === bed && draft.section === section;
 }
 
 function draftBed(beds: Map<string, DraftBed>, section: string, bed: string): DraftBed {

@@ -19,6 +19,10 @@ export interface Imputation {
  */
 export function clockLogRatio(ratios: ByAminoAcid, clock: Clock, imputation?: Imputation): number | null {
   const { amino_acids: codes, weights } = clock;
+  if (codes.length === 1) {
+    const ratio = ratios[codes[0]];
+    return ratio === undefined ? null : weights[0] * Math.log(ratio);
+  }
   const logs = codes.map((code: AminoAcid) => {
     const ratio = ratios[code];
     return ratio === undefined ? Number.NaN : Math.log(ratio);

@@ -18,15 +18,16 @@ export interface CsvColumn<Row> {
  * @throws Error naming table, column and row when a number is not finite where the column allows no unknown value.
  */
 export function* csvPieces<Row>(name: string, columns: readonly CsvColumn<Row>[], rows: Iterable<Row>) {
+  const cells = columns.map(({ shape }) => cellWriter(shape));
   let piece = `${columns.map((column) => textCell(column.header)).join(',')}\n`;
   let line = 1;
   for (const row of rows) {
     line++;
     for (let i = 0; i < columns.length; i++) {
-      const { header, shape, value } = columns[i];
+      const { header, value } = columns[i];
       if (i > 0) piece += ',';
       try {
-        piece += csvCell(shape, value(row));
+        piece += cells[i](value(row));
       } catch (error) {
         throw new Error(`${name}, line ${line}, column ${header}: ${(error as Error).message}`);
       }
@@ -38,6 +39,20 @@ export function* csvPieces<Row>(name: string, columns: readonly CsvColumn<Row>[]
     }
   }
   yield piece;
+}
+
+/** Cells of one column; the same text often stands in row after row. */
+function cellWriter(shape: AnyShape): (value: unknown) => string {
+  let last: unknown;
+  let cell = '';
+  return (value) => {
+    if (typeof value !== 'string') return csvCell(shape, value);
+    if (value !== last) {
+      last = value;
+      cell = textCell(value);
+    }
+    return cell;
+  };
 }
 
 /** Columns that take each field of a row as it is. */

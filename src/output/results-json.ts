@@ -19,7 +19,7 @@ export function* resultsPieces(findings: Findings): Generator<string> {
     const value = (findings as unknown as Record<string, unknown>)[name];
     yield `${i === 0 ? '{' : ','}\n${JSON.stringify(name)}: `;
     if (shape.type === 'list') yield* listPieces(name, shape.items, value as readonly unknown[]);
-    else yield jsonText(shape, value, name);
+    else yield named(name, () => writerOf(shape)(value));
   }
   yield '\n}\n';
 }
@@ -30,9 +30,13 @@ function* listPieces(name: string, shape: AnyShape, items: readonly unknown[]): 
     yield '[]';
     return;
   }
+  const write = writerOf(shape);
+  let at = 0;
+  const row = () => write(items[at]);
   let piece = '[\n';
-  for (let i = 0; i < items.length; i++) {
-    piece += `${jsonText(shape, items[i], `${name}[${i}]`)}${i + 1 < items.length ? ',\n' : '\n]'}`;
+  for (; at < items.length; at++) {
+    piece += named(name, row, () => `[${at}]`);
+    piece += at + 1 < items.length ? ',\n' : '\n]';
     if (piece.length > 50_000) {
       yield piece;
       piece = '';
@@ -41,39 +45,107 @@ function* listPieces(name: string, shape: AnyShape, items: readonly unknown[]): 
   yield piece;
 }
 
-function jsonText(shape: AnyShape, value: unknown, where: string): string {
-  if (value === null || value === undefined) return unknownText(shape, value, where);
+/** Runs a writer; a value that can't be written is told with the part it stands in. */
+function named(name: string, write: () => string, place: () => string = () => ''): string {
+  try {
+    return write();
+  } catch (error) {
+    if (!(error instanceof Unwritable)) throw error;
+    throw new Error(`results.json, ${name}${place()}${error.within.join('')}: ${error.message}`);
+  }
+}
+
+/** A value that its shape does not allow, and the fields it stands in. */
+class Unwritable extends Error {
+  readonly within: string[] = [];
+}
+
+/** Text of a value of one shape. Made once a list, since a survey has a million rows. */
+type Writer = (value: unknown) => string;
+
+function writerOf(shape: AnyShape): Writer {
+  const unknown: Writer = (value) => {
+    if (shape.nullable) return 'null';
+    throw new Unwritable(`a ${shape.type} was wanted, ${value} came`);
+  };
+  const known = knownWriter(shape, unknown);
+  return (value) => (value === null || value === undefined ? unknown(value) : known(value));
+}
+
+function knownWriter(shape: AnyShape, unknown: Writer): Writer {
   switch (shape.type) {
     case 'number':
-    case 'integer':
-      if (!Number.isFinite(value)) return unknownText(shape, value, where);
-      return numberText(value as number, shape.type === 'integer' ? 15 : RESULTS_DIGITS);
-    case 'list':
-      return `[${(value as readonly unknown[]).map((item) => jsonText(shape.items, item, where)).join(',')}]`;
+    case 'integer': {
+      const digits = shape.type === 'integer' ? 15 : RESULTS_DIGITS;
+      return (value) => (Number.isFinite(value) ? numberText(value as number, digits) : unknown(value));
+    }
+    case 'list': {
+      const item = writerOf(shape.items);
+      return (value) => {
+        const items = value as readonly unknown[];
+        return items.length === 0 ? '[]' : `[${items.map(item).join(',')}]`;
+      };
+    }
     case 'map':
-      return mapText(shape.items, value as Record<string, unknown>, where);
+      return mapWriter(writerOf(shape.items));
     case 'object':
-      return objectText(shape.fields, value as Record<string, unknown>, where);
+      return objectWriter(shape.fields);
+    case 'text':
+    case 'choice':
+      return textWriter();
     default:
-      return JSON.stringify(value);
+      return (value) => JSON.stringify(value);
   }
 }
 
-function unknownText(shape: AnyShape, value: unknown, where: string): string {
-  if (shape.nullable) return 'null';
-  throw new Error(`results.json, ${where}: a ${shape.type} was wanted, ${value} came`);
-}
-
-function objectText(fields: AnyFields, value: Record<string, unknown>, where: string): string {
+/** The same text often stands in row after row. */
+function textWriter(): Writer {
+  let last: unknown;
   let text = '';
-  for (const name in fields) {
-    if (fields[name].optional && value[name] === undefined) continue;
-    text += `${text === '' ? '' : ','}"${name}":${jsonText(fields[name], value[name], `${where}.${name}`)}`;
-  }
-  return `{${text}}`;
+  return (value) => {
+    if (value !== last) {
+      last = value;
+      text = JSON.stringify(value);
+    }
+    return text;
+  };
 }
 
-function mapText(items: AnyShape, value: Record<string, unknown>, where: string): string {
-  const entries = Object.entries(value);
-  return `{${entries.map(([key, item]) => `${JSON.stringify(key)}:${jsonText(items, item, `${where}.${key}`)}`).join(',')}}`;
+function objectWriter(fields: AnyFields): Writer {
+  const parts = Object.entries(fields).map(([name, shape]) => ({
+    name,
+    key: `${JSON.stringify(name)}:`,
+    optional: shape.optional === true,
+    write: writerOf(shape),
+  }));
+  return (value) => {
+    const object = value as Record<string, unknown>;
+    let text = '{';
+    for (const { name, key, optional, write } of parts) {
+      const own = object[name];
+      if (optional && own === undefined) continue;
+      if (text.length > 1) text += ',';
+      try {
+        text += key + write(own);
+      } catch (error) {
+        if (error instanceof Unwritable) error.within.unshift(`.${name}`);
+        throw error;
+      }
+    }
+    return `${text}}`;
+  };
+}
+
+function mapWriter(write: Writer): Writer {
+  return (value) => {
+    const entries = Object.entries(value as Record<string, unknown>).map(([key, item]) => {
+      try {
+        return `${JSON.stringify(key)}:${write(item)}`;
+      } catch (error) {
+        if (error instanceof Unwritable) error.within.unshift(`.${key}`);
+        throw error;
+      }
+    });
+    return `{${entries.join(',')}}`;
+  };
 }

@@ -12,6 +12,9 @@ const TOLERANCE = 0.06;
  * Reviews 17, 987–1000, 10.1016/S0277-3791(97)00086-3). Shells are paired by section, bed, taxon and shell.
  */
 export function freeBelowTotal(shells: readonly Shell[], _limits: ScreeningLimits): ScreeningMark[] {
+  // in most surveys one fraction alone was measured
+  if (!(shells.some(({ fraction }) => fraction === 'FAA') && shells.some(({ fraction }) => fraction === 'THAA')))
+    return [];
   const pairs = new Map<string, { THAA?: number; FAA?: number }>();
   shells.forEach((shell, index) => {
     const key = JSON.stringify([shell.section, shell.bed, shell.taxon, shell.shell]);

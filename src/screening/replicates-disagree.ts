@@ -45,12 +45,14 @@ interface ReplicateSet {
 }
 
 function replicateSets(shells: readonly Shell[], members: readonly number[], code: AminoAcid): ReplicateSet[] {
-  return members.flatMap((shell) => {
-    const logs = shells[shell].replicates.flatMap((ratios) =>
-      ratios[code] === undefined ? [] : [Math.log(ratios[code])],
-    );
-    return logs.length < 2 ? [] : [{ shell, logs }];
-  });
+  const sets: ReplicateSet[] = [];
+  for (const shell of members) {
+    const { replicates } = shells[shell];
+    if (replicates.length < 2) continue;
+    const logs = replicates.flatMap((ratios) => (ratios[code] === undefined ? [] : [Math.log(ratios[code])]));
+    if (logs.length >= 2) sets.push({ shell, logs });
+  }
+  return sets;
 }
 
 /** Median over shells of their sums of squares, each over the median of its chi-square. */

@@ -19,14 +19,21 @@ export const FEWEST_SHELLS = 10;
  * learn from the survey learn within one group.
  */
 export function groupsOfShells(shells: readonly Shell[]): number[][] {
-  const groups = new Map<string, number[]>();
-  shells.forEach((shell, index) => {
-    const key = JSON.stringify([shell.taxon, shell.fraction]);
-    const group = groups.get(key);
-    if (group === undefined) groups.set(key, [index]);
-    else group.push(index);
+  const groups: number[][] = [];
+  const byTaxon = new Map<string, Map<string, number[]>>();
+  shells.forEach(({ taxon, fraction }, index) => {
+    const fractions = byTaxon.get(taxon) ?? new Map<string, number[]>();
+    if (fractions.size === 0) byTaxon.set(taxon, fractions);
+    const group = fractions.get(fraction);
+    if (group !== undefined) {
+      group.push(index);
+      return;
+    }
+    const started = [index];
+    fractions.set(fraction, started);
+    groups.push(started);
   });
-  return [...groups.values()];
+  return groups;
 }
 
 /** A number as evidence shows it: at most 3 significant digits. */

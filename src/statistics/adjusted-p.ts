@@ -1,5 +1,6 @@
 import type { Numbers } from './check.js';
 import { requireThat } from './check.js';
+import { placeOf } from './ranks.js';
 
 /**
  * p-values adjusted to control the false discovery rate (Benjamini and Hochberg 1995,
@@ -43,19 +44,7 @@ export function holm(p: Numbers): number[] {
     adjusted[at] = most;
   }
   // equal values end equal, so each finds its own by its size: many times as fast as sorting positions
-  return Array.from(p, (value) => adjusted[lastOf(value, sorted)]);
-}
-
-/** Where the last of a value stands in a sorted list that holds it. */
-function lastOf(value: number, sorted: Float64Array): number {
-  let low = 0;
-  let high = sorted.length - 1;
-  while (low < high) {
-    const middle = (low + high + 1) >> 1;
-    if (sorted[middle] <= value) low = middle;
-    else high = middle - 1;
-  }
-  return low;
+  return Array.from(p, (value) => adjusted[placeOf(value, sorted)]);
 }
 
 /** Indices from the smallest p to the largest. */

@@ -12,15 +12,35 @@ import { requireNumbers } from './check.js';
  */
 export function midranks(values: Numbers): number[] {
   requireNumbers('midranks', 'values', values, 0);
-  const order = Uint32Array.from({ length: values.length }, (_, i) => i).sort((i, j) => values[i] - values[j]);
-  const ranks = new Array<number>(values.length);
-  for (let from = 0; from < order.length; ) {
+  // numbers sort many times as fast as positions by their numbers; each value then looks up its own place
+  const sorted = Float64Array.from(values).sort();
+  const shared = new Float64Array(sorted.length);
+  for (let from = 0; from < sorted.length; ) {
     let to = from + 1;
-    while (to < order.length && values[order[to]] === values[order[from]]) to++;
-    for (let i = from; i < to; i++) ranks[order[i]] = (from + to + 1) / 2;
+    while (to < sorted.length && sorted[to] === sorted[from]) to++;
+    shared.fill((from + to + 1) / 2, from, to);
     from = to;
   }
-  return ranks;
+  return Array.from(values, (value) => shared[placeOf(value, sorted)]);
+}
+
+/**
+ * A place at which a value stands in a rising list that holds it: the last of equal ones.
+ *
+ * @example
+ * ```ts
+ * placeOf(3, [1, 3, 3, 4]); // => 2
+ * ```
+ */
+export function placeOf(value: number, sorted: Numbers): number {
+  let low = 0;
+  let high = sorted.length - 1;
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if (sorted[middle] <= value) low = middle;
+    else high = middle - 1;
+  }
+  return low;
 }
 
 /**

@@ -119,7 +119,7 @@ export function readShells(input: ReadingInput, before?: ShellReadings): ShellRe
   const shells = data.shells.map(({ bed }, i): ShellFinding => {
     const own = residuals.shells[i];
     const conflicting = conflicts.asLower[i] + conflicts.asUpper[i] > 0;
-    if (names[i].length === 0 && !conflicting && (own.p === null || own.p > alpha)) return plain(own.residual);
+    if (names[i].length === 0 && !conflicting && (own.p === null || own.p > alpha / 5)) return plain(own.residual);
     const cut = inAll.has(i) ? 'all' : inSome.has(i) ? 'some' : 'none';
     const wholeBed = ofBed[bed].inCut * 2 >= ofBed[bed].sound || !alone[i];
     const crowded = ofBed[bed].odd > Math.max(1, Math.floor(ofBed[bed].sound / 3));

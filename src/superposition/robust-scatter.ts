@@ -74,7 +74,7 @@ export function robustScatter(beds: readonly (readonly number[])[]): RobustScatt
 /** Probability that a shell this far off its bed is sound: 1/(1 + ratio of the densities, odd to sound). */
 function soundnessAt(s: number): (deviation: number) => number {
   const wide = Math.hypot(s, ODD_SPREAD);
-  const atZero = (ODD_SHARE / wide) / ((1 - ODD_SHARE) / s);
+  const atZero = ODD_SHARE / wide / ((1 - ODD_SHARE) / s);
   const growth = 0.5 / (s * s) - 0.5 / (wide * wide);
   return (deviation) => 1 / (1 + atZero * Math.exp(growth * deviation * deviation));
 }

@@ -46,14 +46,18 @@ export function assignZone(x: number, error: number, { means, se, weights, tau }
 export function assignmentOf(chances: readonly number[]): Assignment {
   // sums of many rounded shares may end a hair above 1
   const probabilities = chances.map((chance) => Math.min(1, chance));
-  const ranked = probabilities.map((_, j) => j).sort((a, b) => probabilities[b] - probabilities[a] || a - b);
-  const [zone, second] = ranked;
+  let zone = 0;
+  for (let j = 1; j < probabilities.length; j++) if (probabilities[j] > probabilities[zone]) zone = j;
+  let second: number | null = null;
+  for (let j = 0; j < probabilities.length; j++) {
+    if (j !== zone && (second === null || probabilities[j] > probabilities[second])) second = j;
+  }
   return {
     probabilities,
     zone,
     probability: probabilities[zone],
-    second: second ?? null,
-    secondProbability: second === undefined ? null : probabilities[second],
+    second,
+    secondProbability: second === null ? null : probabilities[second],
     straddles: probabilities[zone] < STRADDLE,
   };
 }

@@ -50,20 +50,30 @@ function repeat({ values, errors, shells, residuals, fit, labels }: BootstrapZon
   const again = fitMixture(means, drawnErrors, fit.means.length, quick);
   const found = bestLabels(again, drawn.length);
   // a bed drawn twice may fall into two zones: its first draw speaks for it
-  const first = drawn.flatMap((bed, at) => (drawn.indexOf(bed) === at ? [at] : []));
+  const seen = new Uint8Array(values.length);
+  const first: number[] = [];
+  drawn.forEach((bed, at) => {
+    if (seen[bed] === 0) first.push(at);
+    seen[bed] = 1;
+  });
+  const k = fit.means.length;
+  const both = new Uint32Array(k * k);
+  const inZone = new Uint32Array(k);
+  const inOther = new Uint32Array(k);
+  for (const at of first) {
+    const zone = labels[drawn[at]];
+    const other = found[at];
+    both[zone * k + other]++;
+    inZone[zone]++;
+    inOther[other]++;
+  }
   const jaccard = fit.means.map((_, zone) => {
+    if (inZone[zone] === 0) return null;
     const similarities = fit.means.map((_, other) => {
-      let both = 0;
-      let either = 0;
-      for (const at of first) {
-        const inZone = labels[drawn[at]] === zone;
-        const inOther = found[at] === other;
-        if (inZone && inOther) both++;
-        if (inZone || inOther) either++;
-      }
-      return either === 0 ? 0 : both / either;
+      const shared = both[zone * k + other];
+      return shared / (inZone[zone] + inOther[other] - shared);
     });
-    return first.some((at) => labels[drawn[at]] === zone) ? Math.max(...similarities) : null;
+    return Math.max(...similarities);
   });
   // the beds' means hold their shells' errors already: drawing shells anew as well would count those errors twice
   const asMeasured = drawn.map((bed) => values[bed]);
