@@ -1,5 +1,6 @@
 import { createRandom } from '../statistics/index.js';
 import { gibbsChain, type OrderModel } from './gibbs-chain.js';
+import { fallingSorter } from './sort-falling.js';
 
 /** Argument of {@link chainDraws}: plain data, so that it can go to a worker. */
 export interface ChainDrawsArgument {
@@ -31,24 +32,24 @@ export function chainDraws({ model, seed, chain, draws, thinning, watched }: Cha
   const ranks = new Uint32Array(beds * draws);
   const traces = watched.map(() => new Float64Array(draws));
   const sizes = new Float64Array(graph.nodes);
-  for (const node of graph.node) sizes[node]++;
-  const order = Array.from({ length: graph.nodes }, (_, node) => node);
+  for (const deposit of graph.node) sizes[deposit]++;
+  const sort = fallingSorter(graph.nodes);
+  const node = Uint32Array.from(graph.node);
   const rankOf = new Uint32Array(graph.nodes);
   for (let draw = 0; draw < draws; draw++) {
     let theta = running.next();
     for (let extra = 1; extra < thinning; extra++) theta = running.next();
     const now = theta;
-    watched.forEach((node, at) => {
-      traces[at][draw] = now[node];
+    watched.forEach((deposit, at) => {
+      traces[at][draw] = now[deposit];
     });
-    // nearly in order from the draw before, which the sort makes use of
-    order.sort((a, b) => now[b] - now[a] || a - b);
+    const order = sort(now);
     let rank = 1;
-    for (const node of order) {
-      rankOf[node] = rank;
-      rank += sizes[node];
+    for (let at = 0; at < order.length; at++) {
+      rankOf[order[at]] = rank;
+      rank += sizes[order[at]];
     }
-    for (let bed = 0; bed < beds; bed++) ranks[bed * draws + draw] = rankOf[graph.node[bed]];
+    for (let bed = 0; bed < beds; bed++) ranks[bed * draws + draw] = rankOf[node[bed]];
   }
   return { ranks, traces };
 }

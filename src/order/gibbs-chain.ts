@@ -1,5 +1,7 @@
 import { type Random, sampleTruncatedNormal } from '../statistics/index.js';
+import { flatLists, groupLists } from './flat-lists.js';
 import type { RelationGraph } from './relation-graph.js';
+import { sectionMovers } from './section-movers.js';
 
 /** Bed means and what bounds them; arrays have one entry a bed. */
 export interface OrderModel {
@@ -29,48 +31,47 @@ export interface GibbsChain {
  * of the section cannot tell apart and which single draws would explore slowly.
  */
 export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
-  const { means, se, section, sections, graph, tau, scatterDf } = model;
-  const { nodes, older, younger, sequence } = graph;
-  const members: number[][] = Array.from({ length: nodes }, () => []);
-  graph.node.forEach((node, bed) => {
-    members[node].push(bed);
-  });
-  const bedsOf: number[][] = Array.from({ length: sections }, () => []);
-  section.forEach((at, bed) => {
-    bedsOf[at].push(bed);
-  });
-  // deposits of one section only move with it; those tied to another by `same` stay
-  const movers = bedsOf.map((beds, at) => {
-    const own = [...new Set(beds.map((bed) => graph.node[bed]))];
-    return own.filter((node) => members[node].every((bed) => section[bed] === at));
-  });
+  const { sections, graph, tau, scatterDf } = model;
+  const { nodes } = graph;
+  const means = Float64Array.from(model.means);
+  const section = Int32Array.from(model.section);
+  const node = Int32Array.from(graph.node);
+  const precision = Float64Array.from(model.se, (value) => 1 / Math.max(value * value, 1e-18));
+  const members = groupLists(node, nodes);
+  const bedsOf = groupLists(section, sections);
+  const younger = flatLists(graph.younger);
+  const older = flatLists(graph.older);
+  const sequence = Int32Array.from(graph.sequence);
+  const movers = sectionMovers(model, members);
   const theta = new Float64Array(nodes);
   const shift = new Float64Array(sections);
-  const precision = se.map((value) => 1 / Math.max(value * value, 1e-18));
   const df = Math.max(1, scatterDf);
   start();
   return { next: sweep };
 
   /** Scattered about the bed means, then brought into the cone from the oldest on. */
   function start(): void {
-    for (const node of sequence) {
+    for (const deposit of sequence) {
       let sum = 0;
       let weight = 0;
       let widest = 0;
-      for (const bed of members[node]) {
+      for (let at = members.start[deposit]; at < members.start[deposit + 1]; at++) {
+        const bed = members.items[at];
         sum += precision[bed] * means[bed];
         weight += precision[bed];
-        widest = Math.max(widest, se[bed]);
+        widest = Math.max(widest, model.se[bed]);
       }
       let value = sum / weight + 2 * widest * random.normal();
-      for (const other of older[node]) value = Math.min(value, theta[other] - 1e-6);
-      theta[node] = value;
+      for (let at = older.start[deposit]; at < older.start[deposit + 1]; at++) {
+        value = Math.min(value, theta[older.items[at]] - 1e-6);
+      }
+      theta[deposit] = value;
     }
   }
 
   function sweep(): Float64Array {
     const scale = random.gamma(df / 2) / (df / 2);
-    drawDeposits(scale, sequence);
+    drawDeposits(scale);
     if (tau > 0) {
       drawShifts(scale);
       moveSections(scale);
@@ -78,22 +79,27 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
     return theta;
   }
 
-  function drawDeposits(scale: number, path: readonly number[]): void {
+  function drawDeposits(scale: number): void {
     const back = random.uniform() < 0.5;
-    for (let at = 0; at < path.length; at++) {
-      const node = path[back ? path.length - 1 - at : at];
+    for (let step = 0; step < nodes; step++) {
+      const deposit = sequence[back ? nodes - 1 - step : step];
       let weight = 0;
       let sum = 0;
-      for (const bed of members[node]) {
+      for (let at = members.start[deposit]; at < members.start[deposit + 1]; at++) {
+        const bed = members.items[at];
         weight += precision[bed];
         sum += precision[bed] * (means[bed] - shift[section[bed]]);
       }
       let low = Number.NEGATIVE_INFINITY;
       let high = Number.POSITIVE_INFINITY;
-      for (const other of younger[node]) if (theta[other] > low) low = theta[other];
-      for (const other of older[node]) if (theta[other] < high) high = theta[other];
+      for (let at = younger.start[deposit]; at < younger.start[deposit + 1]; at++) {
+        if (theta[younger.items[at]] > low) low = theta[younger.items[at]];
+      }
+      for (let at = older.start[deposit]; at < older.start[deposit + 1]; at++) {
+        if (theta[older.items[at]] < high) high = theta[older.items[at]];
+      }
       const sd = 1 / Math.sqrt(weight * scale);
-      theta[node] =
+      theta[deposit] =
         low === Number.NEGATIVE_INFINITY && high === Number.POSITIVE_INFINITY
           ? sum / weight + sd * random.normal()
           : sampleTruncatedNormal(random, sum / weight, sd, low, high);
@@ -101,41 +107,40 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
   }
 
   function drawShifts(scale: number): void {
-    for (let at = 0; at < sections; at++) {
+    for (let own = 0; own < sections; own++) {
       let weight = 1 / (tau * tau);
       let sum = 0;
-      for (const bed of bedsOf[at]) {
+      for (let at = bedsOf.start[own]; at < bedsOf.start[own + 1]; at++) {
+        const bed = bedsOf.items[at];
         const p = precision[bed] * scale;
         weight += p;
-        sum += p * (means[bed] - theta[graph.node[bed]]);
+        sum += p * (means[bed] - theta[node[bed]]);
       }
-      shift[at] = sum / weight + random.normal() / Math.sqrt(weight);
+      shift[own] = sum / weight + random.normal() / Math.sqrt(weight);
     }
   }
 
   /** Adds delta to the section's own deposits and takes it from its shift; delta from its exact conditional. */
   function moveSections(scale: number): void {
-    for (let at = 0; at < sections; at++) {
-      const own = movers[at];
-      if (own.length === 0) continue;
-      const inside = new Set(own);
+    for (let own = 0; own < sections; own++) {
+      const { inside, tied, bounds } = movers[own];
+      if (inside.length === 0) continue;
       let low = Number.NEGATIVE_INFINITY;
       let high = Number.POSITIVE_INFINITY;
-      for (const node of own) {
-        for (const other of younger[node]) if (!inside.has(other)) low = Math.max(low, theta[other] - theta[node]);
-        for (const other of older[node]) if (!inside.has(other)) high = Math.min(high, theta[other] - theta[node]);
+      for (const { deposit, above, below } of bounds) {
+        for (const other of above) low = Math.max(low, theta[other] - theta[deposit]);
+        for (const other of below) high = Math.min(high, theta[other] - theta[deposit]);
       }
       let weight = 1 / (tau * tau);
-      let sum = shift[at] / (tau * tau);
-      for (const bed of bedsOf[at]) {
-        if (inside.has(graph.node[bed])) continue;
+      let sum = shift[own] / (tau * tau);
+      for (const bed of tied) {
         const p = precision[bed] * scale;
         weight += p;
-        sum += p * (theta[graph.node[bed]] + shift[at] - means[bed]);
+        sum += p * (theta[node[bed]] + shift[own] - means[bed]);
       }
       const delta = sampleTruncatedNormal(random, sum / weight, 1 / Math.sqrt(weight), low, high);
-      for (const node of own) theta[node] += delta;
-      shift[at] -= delta;
+      for (const deposit of inside) theta[deposit] += delta;
+      shift[own] -= delta;
     }
   }
 }

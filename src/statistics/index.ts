@@ -44,7 +44,7 @@ export { equalDensityCut, overlapOfNormals } from './overlap-of-normals.js';
 
 // Orders and lines
 
-export { isotonicRegression } from './isotonic-regression.js';
+export { emptyPools, isotonicRegression, type Pools, poolAdjacent } from './isotonic-regression.js';
 export { kendallInterval } from './kendall-interval.js';
 export { type KendallOptions, type KendallTauB, kendallTauB } from './kendall-tau.js';
 export { type YorkLine, type YorkOptions, yorkLine } from './york-line.js';

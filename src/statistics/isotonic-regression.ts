@@ -20,24 +20,51 @@ export function isotonicRegression(values: Numbers, weights?: Numbers): number[]
     requireNumbers('isotonicRegression', 'weights', weights, 0);
     for (let i = 0; i < n; i++) requireThat(weights[i] > 0, 'isotonicRegression', 'weights above 0', weights[i]);
   }
-  const means = new Float64Array(n);
-  const masses = new Float64Array(n);
-  const ends = new Int32Array(n);
-  let blocks = 0;
-  for (let i = 0; i < n; i++) {
-    means[blocks] = values[i];
-    masses[blocks] = weights ? weights[i] : 1;
-    ends[blocks] = i + 1;
-    blocks++;
-    while (blocks > 1 && means[blocks - 2] >= means[blocks - 1]) {
-      const mass = masses[blocks - 2] + masses[blocks - 1];
-      means[blocks - 2] += (masses[blocks - 1] / mass) * (means[blocks - 1] - means[blocks - 2]);
-      masses[blocks - 2] = mass;
-      ends[blocks - 2] = ends[blocks - 1];
-      blocks--;
-    }
-  }
+  const pools = emptyPools(n);
+  const { means, ends } = pools;
+  const blocks = poolAdjacent(values, weights ?? new Float64Array(n).fill(1), pools);
   const fitted = new Array<number>(n);
   for (let block = 0, i = 0; block < blocks; block++) for (; i < ends[block]; i++) fitted[i] = means[block];
   return fitted;
+}
+
+/** Room for the pools of a list: mean and weight of each, and the place behind its last value. */
+export interface Pools {
+  readonly means: Float64Array;
+  readonly masses: Float64Array;
+  readonly ends: Int32Array;
+}
+
+/** Room for the pools of n values, to be used again and again. */
+export function emptyPools(n: number): Pools {
+  return { means: new Float64Array(n), masses: new Float64Array(n), ends: new Int32Array(n) };
+}
+
+/**
+ * The pools of {@link isotonicRegression}, their means strictly rising, for those who fit very many short lists.
+ * Nothing is checked.
+ *
+ * @param pools filled up to the number of pools, which is given back
+ * @example
+ * ```ts
+ * poolAdjacent([1, 0, 4, 3], [1, 1, 1, 1], emptyPools(4)); // => 2
+ * ```
+ */
+export function poolAdjacent(values: Numbers, weights: Numbers, { means, masses, ends }: Pools): number {
+  let blocks = 0;
+  for (let i = 0; i < values.length; i++) {
+    let mean = values[i];
+    let mass = weights[i];
+    while (blocks > 0 && means[blocks - 1] >= mean) {
+      blocks--;
+      const both = masses[blocks] + mass;
+      mean = means[blocks] + (mass / both) * (mean - means[blocks]);
+      mass = both;
+    }
+    means[blocks] = mean;
+    masses[blocks] = mass;
+    ends[blocks] = i + 1;
+    blocks++;
+  }
+  return blocks;
 }

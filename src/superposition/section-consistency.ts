@@ -1,5 +1,13 @@
 import type { SectionRow } from '../model/index.js';
-import { chiSquaredUpperTail, fUpperTail, holm, isotonicRegression, type Random } from '../statistics/index.js';
+import {
+  chiSquaredUpperTail,
+  emptyPools,
+  fUpperTail,
+  holm,
+  isotonicRegression,
+  poolAdjacent,
+  type Random,
+} from '../statistics/index.js';
 
 /** One bed of a section with its place in the order. */
 export interface PlacedBed {
@@ -142,15 +150,11 @@ function levelMean(beds: readonly PlacedBed[]): { mean: number; weight: number }
 function simulateDistinct(weights: readonly number[], random: Random, simulations: number): number[] {
   const shares = new Array<number>(weights.length + 1).fill(0);
   const sd = weights.map((weight) => 1 / Math.sqrt(weight));
+  const drawn = new Float64Array(sd.length);
+  const pools = emptyPools(sd.length);
   for (let draw = 0; draw < simulations; draw++) {
-    const fit = isotonicRegression(
-      sd.map((value) => value * random.normal()),
-      weights,
-    );
-    // isotonic values only rise, so equal ones stand side by side
-    let distinct = 1;
-    for (let at = 1; at < fit.length; at++) if (fit[at] !== fit[at - 1]) distinct++;
-    shares[distinct] += 1 / simulations;
+    for (let at = 0; at < drawn.length; at++) drawn[at] = sd[at] * random.normal();
+    shares[poolAdjacent(drawn, weights, pools)] += 1 / simulations;
   }
   return shares;
 }
