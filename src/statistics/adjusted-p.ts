@@ -37,14 +37,19 @@ export function holm(p: Numbers): number[] {
   requireProbabilities('holm', p);
   const sorted = Float64Array.from(p).sort();
   const n = sorted.length;
-  const adjusted = new Float64Array(n);
+  const adjusted = new Float64Array(n).fill(1);
   let most = 0;
-  for (let at = 0; at < n; at++) {
-    most = Math.min(1, Math.max(most, (n - at) * sorted[at]));
-    adjusted[at] = most;
+  let ones = 0;
+  for (; ones < n; ones++) {
+    most = Math.max(most, (n - ones) * sorted[ones]);
+    if (most >= 1) break;
+    adjusted[ones] = most;
   }
   // equal values end equal, so each finds its own by its size: many times as fast as sorting positions
-  return Array.from(p, (value) => adjusted[placeOf(value, sorted)]);
+  const from = ones < n ? sorted[ones] : Number.POSITIVE_INFINITY;
+  const result = new Array<number>(n);
+  for (let i = 0; i < n; i++) result[i] = p[i] >= from ? 1 : adjusted[placeOf(p[i], sorted)];
+  return result;
 }
 
 /** Indices from the smallest p to the largest. */

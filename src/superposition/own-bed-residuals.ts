@@ -68,12 +68,20 @@ export function ownBedResiduals(
     for (const bed of changed) measureBed(bed, shells, sound, { s, df }, table);
     const { adjusted, tested } = adjustTested(table.p);
     const isOdd = (i: number) => adjusted[i] <= alpha && table.others[i] >= 2;
-    const furthest = members.map((bed) => furthestOf(bed, (i) => sound[i] === 1 && isOdd(i), table.t));
+    const fits = (i: number) => sound[i] === 1 && isOdd(i);
+    const furthest = members.map((bed) => furthestOf(bed, fits, table.t));
     changed = members.filter((_, bed) => furthest[bed] >= 0);
     if (changed.length === 0) {
       const results = shells.map((_, i): OwnBedResidual => {
-        const [residual, t, p] = [table.residual[i], table.t[i], table.p[i]].map(known);
-        return { residual, t, others: table.others[i], p, adjusted: known(adjusted[i]), odd: isOdd(i) };
+        const { residual, t, p, others } = table;
+        return {
+          residual: known(residual[i]),
+          t: known(t[i]),
+          others: others[i],
+          p: known(p[i]),
+          adjusted: known(adjusted[i]),
+          odd: isOdd(i),
+        };
       });
       return { shells: results, s, df, robust: enough, means: members.map((bed) => meanOf(soundOf(bed))), tested };
     }
@@ -139,8 +147,11 @@ const meanOf = (values: readonly number[]): number => values.reduce((sum, value)
 
 /** Holm over the shells that were tested; NaN for the others. */
 function adjustTested(p: Float64Array): { adjusted: Float64Array; tested: number } {
-  const tested = p.filter((value) => !Number.isNaN(value));
-  const levels = holm(tested);
-  let at = 0;
-  return { adjusted: p.map((value) => (Number.isNaN(value) ? value : levels[at++])), tested: tested.length };
+  const values = new Float64Array(p.length);
+  let tested = 0;
+  for (let i = 0; i < p.length; i++) if (!Number.isNaN(p[i])) values[tested++] = p[i];
+  const levels = holm(values.subarray(0, tested));
+  const adjusted = new Float64Array(p.length);
+  for (let i = 0, at = 0; i < p.length; i++) adjusted[i] = Number.isNaN(p[i]) ? Number.NaN : levels[at++];
+  return { adjusted, tested };
 }

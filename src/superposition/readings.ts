@@ -13,7 +13,7 @@ import { conflictsOfItsOwn } from './conflicts-of-its-own.js';
 import { costOfShell } from './cost-of-shell.js';
 import { type OwnBedResiduals, ownBedResiduals } from './own-bed-residuals.js';
 import { readingOfShell } from './reading-of-shell.js';
-import { findShellConflicts, type ShellConflicts } from './shell-conflicts.js';
+import { findShellConflicts, type ShellConflicts, type ShellInOrder } from './shell-conflicts.js';
 import { type ShellCase, shellEvidence } from './shell-evidence.js';
 import { confidenceOfReading, statusOfShell } from './shell-status.js';
 import { type ShellsToSetAside, shellsToSetAside } from './shells-to-set-aside.js';
@@ -65,8 +65,9 @@ export interface ShellGrounds {
   /** Slope taken out, and the scatter that was at hand where the shells gave none. */
   readonly slope: number;
   readonly fallback: { readonly s: number; readonly df: number };
-  /** Log ratios of the shells, gradient taken out. */
+  /** Log ratios of the shells, gradient taken out, by themselves and with their beds. */
   readonly xs: readonly number[];
+  readonly placed: readonly ShellInOrder[];
   readonly marks: readonly (readonly ShellMark[])[];
   /** Shells that screening sets aside. */
   readonly excluded: ReadonlySet<number>;
@@ -97,16 +98,8 @@ export function readShells(input: ReadingInput, before?: ShellReadings): ShellRe
     );
   }
   const grounds = groundsOf(input, before?.grounds);
-  const { xs, marks: names, excluded, residuals, agreements } = grounds;
-  const placed = data.shells.map(({ bed }, i) => ({ bed, x: xs[i] }));
-  // Shells that screening sets aside settle their conflicts by themselves.
-  const conflicts = findShellConflicts(
-    excluded.size === 0 ? placed : placed.map((shell, i) => (excluded.has(i) ? { ...shell, x: Number.NaN } : shell)),
-    data.beds.map(({ section }, b) => ({ section, above: above[b] })),
-    { scatter: residuals.s, df: residuals.df, spread: input.spread, alpha: alpha / 2 },
-  );
-  const costs = residuals.shells.map(({ p }, i) => costOfShell(p, names[i].length > 0));
-  const toSetAside = shellsToSetAside(conflicts, costs);
+  const { xs, placed, marks: names, excluded, residuals, agreements } = grounds;
+  const { conflicts, toSetAside } = conflictsOf(input, grounds, before);
   const inAll = new Set(toSetAside.inAll);
   const inSome = new Set(toSetAside.inSome);
   const ofBed = bedCounts(data, residuals, excluded, new Set([...inAll, ...inSome]));
@@ -128,8 +121,11 @@ export function readShells(input: ReadingInput, before?: ShellReadings): ShellRe
     const direction = directionOf(own.t, own.p, pulled, alpha);
     const agree = agreements[i] === null ? null : agreements[i].p >= DISAGREE;
     const reading = readingOfShell(direction, agree, names[i]);
-    const match = matchZone(xs[i], residuals.s, zones);
-    const ownZone = matchZone(residuals.means[bed], residuals.s / Math.sqrt(Math.max(1, own.others)), zones);
+    const spokenOf = direction !== 'within' || reading !== 'none';
+    const match = spokenOf ? matchZone(xs[i], residuals.s, zones) : null;
+    const ownZone = spokenOf
+      ? matchZone(residuals.means[bed], residuals.s / Math.sqrt(Math.max(1, own.others)), zones)
+      : null;
     const sourceBed =
       direction === 'within' ? null : sourceOf(direction === 'high' ? below[bed] : above[bed], xs[i], residuals, data);
     const decided: ShellCase = {
@@ -167,10 +163,34 @@ export function readShells(input: ReadingInput, before?: ShellReadings): ShellRe
       reading,
       confidence,
       residual: own.residual,
-      sentences: shellEvidence(decided),
+      // most are never read: of all passes those of the last, and then only what is printed
+      get sentences() {
+        return shellEvidence(decided);
+      },
     };
   });
   return { shells, residuals, conflicts, toSetAside, grounds };
+}
+
+/** Conflicts with superposition and what would end them; those of an earlier pass where nothing else can come out. */
+function conflictsOf(
+  { data, above, spread, alpha = 0.05 }: ReadingInput,
+  grounds: ShellGrounds,
+  before?: ShellReadings,
+): Pick<ShellReadings, 'conflicts' | 'toSetAside'> {
+  const { placed, excluded, residuals, marks } = grounds;
+  // the spread counts between sections only
+  const withinSections = () =>
+    data.beds.every(({ section }, bed) => above[bed].every((upper) => data.beds[upper].section === section));
+  if (before !== undefined && before.grounds === grounds && withinSections()) return before;
+  const conflicts = findShellConflicts(
+    // Shells that screening sets aside settle their conflicts by themselves.
+    excluded.size === 0 ? placed : placed.map((shell, i) => (excluded.has(i) ? { ...shell, x: Number.NaN } : shell)),
+    data.beds.map(({ section }, b) => ({ section, above: above[b] })),
+    { scatter: residuals.s, df: residuals.df, spread, alpha: alpha / 2 },
+  );
+  const costs = residuals.shells.map(({ p }, i) => costOfShell(p, marks[i].length > 0));
+  return { conflicts, toSetAside: shellsToSetAside(conflicts, costs) };
 }
 
 /** The finding of a shell against which nothing speaks. */
@@ -205,7 +225,7 @@ function groundsOf({ data, logs, marks, aminoAcids, alpha }: ReadingInput, befor
     }),
   );
   const residuals = ownBedResiduals(placed, excluded, { alpha, fallback });
-  return { slope: data.slope, fallback, xs, marks: names, excluded, residuals, agreements };
+  return { slope: data.slope, fallback, xs, placed, marks: names, excluded, residuals, agreements };
 }
 
 /**

@@ -89,7 +89,10 @@ interface Network {
 
 /** Nodes: lower half of the k-th shell 2k, its upper half 2k + 1, then the chains of the beds, source and sink. */
 function buildNetwork(conflicts: ShellConflicts, involved: readonly number[], cost: Map<number, number>): Network {
-  const place = new Map(involved.map((shell, at) => [shell, at]));
+  const place = new Int32Array(conflicts.asLower.length);
+  involved.forEach((shell, at) => {
+    place[shell] = at;
+  });
   const from: number[] = [];
   const to: number[] = [];
   const capacity: number[] = [];
@@ -101,19 +104,22 @@ function buildNetwork(conflicts: ShellConflicts, involved: readonly number[], co
   let nodes = 2 * involved.length;
   // Positions of a chain below the least `from` are never entered.
   const first = new Map<number, number>();
-  for (const { bed, from: start } of conflicts.conflicts) first.set(bed, Math.min(first.get(bed) ?? start, start));
-  const chain = new Map<number, number>();
+  for (const { bed, from: start } of conflicts.conflicts) {
+    const known = first.get(bed);
+    if (known === undefined || start < known) first.set(bed, start);
+  }
+  const chain = new Int32Array(conflicts.sorted.length);
   for (const [bed, start] of first) {
     const members = conflicts.sorted[bed];
-    chain.set(bed, nodes - start);
+    chain[bed] = nodes - start;
     for (let at = start; at < members.length; at++) {
-      arc(nodes, 2 * (place.get(members[at]) ?? 0) + 1, Number.POSITIVE_INFINITY);
+      arc(nodes, 2 * place[members[at]] + 1, Number.POSITIVE_INFINITY);
       if (at + 1 < members.length) arc(nodes, nodes + 1, Number.POSITIVE_INFINITY);
       nodes++;
     }
   }
   for (const { lower, bed, from: start } of conflicts.conflicts) {
-    arc(2 * (place.get(lower) ?? 0), (chain.get(bed) ?? 0) + start, Number.POSITIVE_INFINITY);
+    arc(2 * place[lower], chain[bed] + start, Number.POSITIVE_INFINITY);
   }
   const [source, sink] = [nodes, nodes + 1];
   // Equal costs: the fewest shells. One unit a shell can never outweigh a thousandth of cost.

@@ -1,6 +1,9 @@
 import { normalCdf } from '../statistics/index.js';
 import { goldenSection } from './golden-section.js';
 
+/** Standard errors from an end beyond which the normal holds all its mass to the last digit. */
+const INSIDE = 9;
+
 /** True bed values spread evenly between two ends, seen with known errors. */
 export interface Continuum {
   readonly low: number;
@@ -43,6 +46,8 @@ function logLikelihood(values: readonly number[], errors: readonly number[], low
   for (let bed = 0; bed < values.length; bed++) {
     const a = (low - values[bed]) / errors[bed];
     const b = (high - values[bed]) / errors[bed];
+    // well inside, the whole mass: most beds
+    if (a < -INSIDE && b > INSIDE) continue;
     // both ends on one side: take the difference in the lower tail, where it is not lost to rounding
     const mass = a > 0 ? normalCdf(-a) - normalCdf(-b) : normalCdf(b) - normalCdf(a);
     total += Math.log(Math.max(mass, 1e-300));

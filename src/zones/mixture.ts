@@ -78,6 +78,8 @@ function fitThinned(values: readonly number[], errors: readonly number[], k: num
     few.map((bed) => values[bed]),
     few.map((bed) => errors[bed]),
     k,
+    // only where to start from
+    { tolerance: 1e-3 },
   );
 }
 
