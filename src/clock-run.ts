@@ -80,25 +80,36 @@ export interface LeftOut {
 /** Nothing left out: the first pass. */
 export const NOTHING: LeftOut = { setAside: new Set(), wide: new Set(), mixed: new Set() };
 
-/** One pass of design 7.1 to 7.7 over one clock. */
-export function runPass(context: RunContext, clock: Clock, set: ClockSet, left: LeftOut, random: Random): Pass {
+/**
+ * One pass of design 7.1 to 7.7 over one clock.
+ * @param before the pass before, whose zones are near
+ */
+export function runPass(
+  context: RunContext,
+  clock: Clock,
+  set: ClockSet,
+  left: LeftOut,
+  random: Random,
+  before?: Pass,
+): Pass {
   const { shells, summaries } = context;
   const imputation = clock.amino_acids.length > 1 ? set.index?.imputation : undefined;
   const input = { clock, shells, summaries, setAside: left.setAside, wide: left.wide, imputation };
   const plain = withLaboratoryErrors(clockData(input), shells, summaries, context.offsets);
-  return passOver(context, plain, left, random);
+  return passOver(context, plain, left, random, before);
 }
 
 /** Design 7.3 to 7.7 over bed means that still hold any slope along the gradient. */
-export function passOver(context: RunContext, plain: ClockData, left: LeftOut, random: Random): Pass {
+export function passOver(context: RunContext, plain: ClockData, left: LeftOut, random: Random, before?: Pass): Pass {
   const gradient = context.gradient === null ? null : slopeOf(plain, context.gradient, left.mixed);
   const data = gradient === null ? plain : withSlope(plain, gradient);
-  return zoneAndCheck(context, { data, gradient, relations: relationsOf(context, data) }, left, random);
+  const relations = relationsOf(context, data);
+  return zoneAndCheck(context, { data, gradient, relations }, left, random, { before: before?.zoning?.choice });
 }
 
 /** The same pass with another choice of the number of zones, made on the same beds. */
 export function rezonePass(context: RunContext, pass: Pass, left: LeftOut, random: Random, choice: ModelChoice): Pass {
-  return zoneAndCheck(context, pass, left, random, choice);
+  return zoneAndCheck(context, pass, left, random, { choice });
 }
 
 function zoneAndCheck(
@@ -106,7 +117,7 @@ function zoneAndCheck(
   { data, gradient, relations }: Pick<Pass, 'data' | 'gradient' | 'relations'>,
   left: LeftOut,
   random: Random,
-  choice?: ModelChoice,
+  known: { readonly choice?: ModelChoice; readonly before?: ModelChoice },
 ): Pass {
   const zoning = findZones(data, {
     alpha: options.alpha,
@@ -115,7 +126,7 @@ function zoneAndCheck(
     extraParameters: gradient?.used ? 1 : 0,
     simulations: options.simulations,
     leaveOut: left.mixed,
-    choice,
+    ...known,
   });
   const checks = checkRelations(relations, data.beds, {
     alpha: options.alpha,

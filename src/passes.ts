@@ -79,7 +79,7 @@ export function settlePasses({ context, set, screening, random }: PassInput): Se
       sameSet(next.setAside, left.setAside) && sameSet(next.wide, left.wide) && sameSet(next.mixed, left.mixed);
     if (settled || passes === MOST_PASSES) return { first, last, readings, ages, left, passes, settled, marks };
     left = next;
-    last = runPass(context, set.main, set, left, random);
+    last = runPass(context, set.main, set, left, random, last);
   }
 }
 

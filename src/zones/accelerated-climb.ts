@@ -1,9 +1,10 @@
-import { expectation, type MixtureData, type MixtureState, maximisation } from './em-step.js';
+import { emptyMoments, expectation, type MixtureData, type MixtureState, maximisation } from './em-step.js';
 
 /** Where a climb ended. */
 export interface Summit {
   readonly state: MixtureState;
   readonly logLikelihood: number;
+  /** Share of zone j in bed b at `b * k + j`. */
   readonly responsibilities: Float64Array;
 }
 
@@ -15,59 +16,55 @@ export interface Summit {
  * @param tolerance stop when a plain step gains less than this
  * @param steps most EM steps
  */
-export function acceleratedClimb(
-  data: MixtureData,
-  start: MixtureState,
-  responsibilities: Float64Array,
-  tolerance: number,
-  steps: number,
-): Summit {
+export function acceleratedClimb(data: MixtureData, start: MixtureState, tolerance: number, steps: number): Summit {
+  const k = start.means.length;
+  const moments = emptyMoments(data, k);
+  const responsibilities = new Float64Array(data.values.length * k);
   let state = start;
-  let before = Number.NEGATIVE_INFINITY;
   for (let step = 0; step < steps; step += 3) {
-    const low = expectation(data, state, responsibilities);
-    const first = maximisation(data, state, responsibilities);
-    const middle = expectation(data, first, responsibilities);
+    const low = expectation(data, state, moments);
+    const first = maximisation(data, state, moments);
+    const middle = expectation(data, first, moments);
     if (!(middle - low >= tolerance) && step > 0) {
-      return { state: first, logLikelihood: middle, responsibilities };
+      state = first;
+      break;
     }
-    const second = maximisation(data, first, responsibilities);
+    const second = maximisation(data, first, moments);
     const leap = extrapolate(state, first, second);
-    if (leap === null) {
-      state = second;
-      continue;
-    }
-    const far = expectation(data, leap, responsibilities);
-    state = far >= middle ? maximisation(data, leap, responsibilities) : second;
-    before = middle;
+    state = second;
+    if (leap !== null && expectation(data, leap, moments) >= middle) state = maximisation(data, leap, moments);
   }
-  const logLikelihood = expectation(data, state, responsibilities);
-  return { state, logLikelihood: Math.max(logLikelihood, before), responsibilities };
+  const logLikelihood = expectation(data, state, moments, responsibilities);
+  return { state, logLikelihood, responsibilities };
 }
 
 /** The parameters that the last two steps point to, or null where they leave their range. The spread counts as tau. */
 function extrapolate(from: MixtureState, first: MixtureState, second: MixtureState): MixtureState | null {
   const k = from.means.length;
-  const [a, b, c] = [from, first, second].map(({ means, weights, tau2 }) => [...means, ...weights, Math.sqrt(tau2)]);
-  let steps = 0;
-  let bends = 0;
-  for (let at = 0; at < a.length; at++) {
-    steps += (b[at] - a[at]) ** 2;
-    bends += (c[at] - 2 * b[at] + a[at]) ** 2;
+  const taus = [from, first, second].map(({ tau2 }) => Math.sqrt(tau2));
+  let steps = (taus[1] - taus[0]) ** 2;
+  let bends = (taus[2] - 2 * taus[1] + taus[0]) ** 2;
+  for (const part of ['means', 'weights'] as const) {
+    const [a, b, c] = [from[part], first[part], second[part]];
+    for (let j = 0; j < k; j++) {
+      steps += (b[j] - a[j]) ** 2;
+      bends += (c[j] - 2 * b[j] + a[j]) ** 2;
+    }
   }
   if (!(bends > 0) || !(steps > bends)) return null;
   const length = Math.sqrt(steps / bends);
-  const leap = a.map((value, at) => {
-    const step = b[at] - value;
-    return value + 2 * length * step + length ** 2 * (c[at] - 2 * b[at] + value);
-  });
-  const weights = leap.slice(k, 2 * k);
-  const tau = leap[2 * k];
-  if (!weights.every((weight) => weight > 0 && weight < 1) || !(tau >= 0)) return null;
-  const sum = weights.reduce((total, weight) => total + weight, 0);
-  return {
-    means: Float64Array.from(leap.slice(0, k)),
-    weights: Float64Array.from(weights, (weight) => weight / sum),
-    tau2: tau * tau,
-  };
+  const leap = (a: number, b: number, c: number) => a + 2 * length * (b - a) + length ** 2 * (c - 2 * b + a);
+  const tau = leap(taus[0], taus[1], taus[2]);
+  if (!(tau >= 0)) return null;
+  const means = new Float64Array(k);
+  const weights = new Float64Array(k);
+  let sum = 0;
+  for (let j = 0; j < k; j++) {
+    means[j] = leap(from.means[j], first.means[j], second.means[j]);
+    weights[j] = leap(from.weights[j], first.weights[j], second.weights[j]);
+    if (!(weights[j] > 0 && weights[j] < 1)) return null;
+    sum += weights[j];
+  }
+  for (let j = 0; j < k; j++) weights[j] /= sum;
+  return { means, weights, tau2: tau * tau };
 }

@@ -1,5 +1,5 @@
 import { acceleratedClimb } from './accelerated-climb.js';
-import { type MixtureData, type MixtureState, maximisation } from './em-step.js';
+import { emptyMoments, type MixtureData, type MixtureState, maximisation, mixtureData } from './em-step.js';
 import { partition } from './partition.js';
 
 /** A normal mixture with known errors, fitted to bed means. Components go from the smallest mean (youngest) upwards. */
@@ -40,9 +40,7 @@ export function fitMixture(
   k: number,
   options: MixtureOptions = {},
 ): Mixture {
-  const variances = Float64Array.from(errors, (se) => se * se);
-  const floor = varianceFloor(values);
-  const data = { values, variances, floor };
+  const data = mixtureData(values, errors);
   if (options.near !== undefined) return climbFrom(data, options.near, options);
   if (options.start === undefined && values.length > MANY_BEDS) {
     return climbFrom(data, fitThinned(values, errors, k), options);
@@ -51,7 +49,7 @@ export function fitMixture(
   starts.push(
     partition(
       values,
-      Array.from(variances, (v) => 1 / Math.max(v, floor)),
+      errors.map((se) => 1 / Math.max(se * se, data.floor)),
       k,
     ),
   );
@@ -66,7 +64,7 @@ export function fitMixture(
 }
 
 /** Beds above which the search is made on some of them, and all of them only climb from where it ended. */
-const MANY_BEDS = 600;
+export const MANY_BEDS = 600;
 
 /** The fit of every second, third … bed in order of value, which spread as all of them do. */
 function fitThinned(values: readonly number[], errors: readonly number[], k: number): Mixture {
@@ -83,21 +81,28 @@ function fitThinned(values: readonly number[], errors: readonly number[], k: num
   );
 }
 
-/** Smallest total variance: without errors (published means alone) a zone of one bed would have none. */
-function varianceFloor(values: readonly number[]): number {
-  const range = Math.max(...values) - Math.min(...values);
-  return Math.max(1e-12, (1e-6 * range) ** 2);
-}
-
 /** From a partition. */
-function climbFromPartition(data: MixtureData, k: number, start: readonly number[], options: MixtureOptions): Mixture {
-  const responsibilities = new Float64Array(data.values.length * k);
-  start.forEach((label, bed) => {
-    responsibilities[bed * k + label] = 1;
+function climbFromPartition(data: MixtureData, k: number, labels: readonly number[], options: MixtureOptions): Mixture {
+  const { values, group, variances } = data;
+  const sums = new Float64Array(k);
+  const beds = new Float64Array(k);
+  labels.forEach((label, bed) => {
+    sums[label] += values[bed];
+    beds[label]++;
   });
-  const tau2 = startingSpread(data.values, data.variances, start, k);
-  const blank = { means: new Float64Array(k), weights: new Float64Array(k), tau2 };
-  return climb(data, maximisation(data, blank, responsibilities), responsibilities, options);
+  const means = sums.map((sum, j) => (beds[j] > 0 ? sum / beds[j] : 0));
+  const moments = emptyMoments(data, k);
+  let excess = 0;
+  labels.forEach((label, bed) => {
+    const off = values[bed] - means[label];
+    const at = group[bed] * k + label;
+    moments.share[at]++;
+    moments.first[at] += off;
+    moments.second[at] += off * off;
+    excess += off * off - variances[group[bed]];
+  });
+  const blank = { means, weights: new Float64Array(k), tau2: Math.max(0, excess / values.length) };
+  return climb(data, maximisation(data, blank, moments), options);
 }
 
 /** From parameters. Weights are kept off 0, from which they could not rise. */
@@ -107,16 +112,15 @@ function climbFrom(data: MixtureData, near: NonNullable<MixtureOptions['near']>,
     weights: Float64Array.from(near.weights, (weight) => Math.max(weight, 0.5 / data.values.length)),
     tau2: near.tau ** 2,
   };
-  return climb(data, state, new Float64Array(data.values.length * near.means.length), options);
+  return climb(data, state, options);
 }
 
 function climb(
   data: MixtureData,
   start: MixtureState,
-  buffer: Float64Array,
   { tolerance = toleranceFor(data.values.length), iterations = 2000 }: MixtureOptions,
 ): Mixture {
-  const { state, logLikelihood, responsibilities } = acceleratedClimb(data, start, buffer, tolerance, iterations);
+  const { state, logLikelihood, responsibilities } = acceleratedClimb(data, start, tolerance, iterations);
   return sorted({
     k: state.means.length,
     means: [...state.means],
@@ -127,27 +131,8 @@ function climb(
   });
 }
 
-/** With very many beds a gain of 0.001 is lost beside the log of their number that BIC asks for each parameter. */
-const toleranceFor = (beds: number): number => (beds > MANY_BEDS ? 1e-3 : 1e-9 * Math.max(1, beds / 20));
-
-function startingSpread(
-  values: readonly number[],
-  variances: Float64Array,
-  labels: readonly number[],
-  k: number,
-): number {
-  const sums = new Float64Array(k);
-  const counts = new Float64Array(k);
-  labels.forEach((label, bed) => {
-    sums[label] += values[bed];
-    counts[label]++;
-  });
-  let excess = 0;
-  labels.forEach((label, bed) => {
-    excess += (values[bed] - sums[label] / counts[label]) ** 2 - variances[bed];
-  });
-  return Math.max(0, excess / values.length);
-}
+/** With very many beds a gain of 0.01 is lost beside the log of their number that BIC asks for each parameter. */
+const toleranceFor = (beds: number): number => (beds > MANY_BEDS ? 1e-2 : 1e-9 * Math.max(1, beds / 20));
 
 function sorted(fit: Mixture): Mixture {
   const { k } = fit;

@@ -1,6 +1,6 @@
 import type { ClockVerdict } from '../model/index.js';
 import { type Continuum, fitContinuum } from './continuum.js';
-import { bic, fitMixture, type Mixture } from './mixture.js';
+import { bic, fitMixture, MANY_BEDS, type Mixture } from './mixture.js';
 
 /** Every model that was held against the bed means, and what they say. */
 export interface ModelChoice {
@@ -29,17 +29,23 @@ export const MOST_ZONES = 10;
  * @param values bed means of log ratios
  * @param errors their standard errors
  * @param extraParameters counted beside those of every model, such as a slope. Default 0
+ * @param most largest number of zones tried
+ * @param before a choice on nearly the same beds: with very many, the search is not made again but goes on from there
  */
 export function chooseModel(
   values: readonly number[],
   errors: readonly number[],
   extraParameters = 0,
   most = MOST_ZONES,
+  before?: ModelChoice,
 ): ModelChoice {
   const n = values.length;
   const largest = Math.max(1, Math.min(most, n, new Set(values).size));
   const mixtures: Mixture[] = [];
-  for (let k = 1; k <= largest; k++) mixtures.push(fitMixture(values, errors, k));
+  for (let k = 1; k <= largest; k++) {
+    const near = n > MANY_BEDS ? before?.mixtures[k - 1] : undefined;
+    mixtures.push(fitMixture(values, errors, k, { near }));
+  }
   const continuum = fitContinuum(values, errors);
   const bics = mixtures.map((fit) => bic(fit.logLikelihood, 2 * fit.k + extraParameters, n));
   const continuumBic = bic(continuum.logLikelihood, 2 + extraParameters, n);

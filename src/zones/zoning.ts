@@ -3,7 +3,7 @@ import type { Random } from '../statistics/index.js';
 import { type NeighbourTest, testNeighbours, type ZoneForTest } from './adjacent-zones.js';
 import type { ZonePriors } from './assignment.js';
 import { fitMixture, type Mixture } from './mixture.js';
-import { chooseModel, type ModelChoice } from './model-choice.js';
+import { chooseModel, MOST_ZONES, type ModelChoice } from './model-choice.js';
 import { unbiasedSpread, zoneErrors } from './zone-errors.js';
 
 /** What a zoning is asked for. */
@@ -20,6 +20,8 @@ export interface ZoningOptions {
   readonly leaveOut?: ReadonlySet<string>;
   /** A choice made already on these beds, such as one that a bootstrap settled. Default: made here by BIC. */
   readonly choice?: ModelChoice;
+  /** A choice on nearly the same beds, from which the search among very many beds goes on. Default none. */
+  readonly before?: ModelChoice;
 }
 
 /** The zones of one clock. Beds are those of ClockData that have a mean and are not of mixed age, in its order. */
@@ -57,7 +59,8 @@ export function findZones(data: ClockData, options: ZoningOptions): Zoning | nul
   if (beds.length === 0) return null;
   const values = beds.map((index) => data.beds[index].mean);
   const errors = beds.map((index) => data.beds[index].se);
-  const choice = options.choice ?? chooseModel(values, errors, options.extraParameters ?? 0);
+  const choice =
+    options.choice ?? chooseModel(values, errors, options.extraParameters ?? 0, MOST_ZONES, options.before);
   const supported = choice.verdict === 'zones' ? choice.bestZones : 1;
   const joined = joinNeighbours(data, beds, choice.mixtures[supported - 1], options);
   const verdict = choice.verdict === 'zones' && joined.fit.k === 1 ? 'one zone' : choice.verdict;
