@@ -28,9 +28,9 @@ if (!existsSync(installed) || statSync(installed).mtimeMs < statSync('package-lo
   run('npm', ['ci', '--no-audit', '--no-fund', '--loglevel=error']);
 }
 
-const stamp = 'dist/cli.js';
+const stamp = 'program/cli.js';
 if (!existsSync(stamp) || statSync(stamp).mtimeMs < Math.max(newest('src'), statSync('package.json').mtimeMs)) {
   console.error('Building …');
-  rmSync('dist', { recursive: true, force: true });
+  for (const folder of ['dist', 'program']) rmSync(folder, { recursive: true, force: true });
   run('npm', ['run', '--silent', 'build']);
 }

@@ -88,8 +88,8 @@ describe('examples on pages', () => {
   });
 
   it.each(commands.map((example) => [example.where, example] as const))('%s', (_where, example) => {
-    const program = join(ROOT, 'dist/cli.js');
-    expect(existsSync(program), 'dist/cli.js: run `npm run build` first').toBe(true);
+    const program = join(ROOT, 'program/cli.js');
+    expect(existsSync(program), 'program/cli.js: run `npm run build` first').toBe(true);
     const folder = mkdtempSync(join(tmpdir(), 'bedorder-page-'));
     try {
       cpSync(join(ROOT, 'examples'), join(folder, 'examples'), { recursive: true });

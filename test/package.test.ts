@@ -42,10 +42,12 @@ describe('the package', () => {
 
   it('holds the program, its types, the schema, the examples and the licence, and nothing of the house', () => {
     for (const path of [
-      'dist/cli.js',
+      'program/cli.js',
+      'program/commands/run-job.js',
+      'program/commands/worker.js',
+      'program/THIRD-PARTY.txt',
       'dist/index.js',
       'dist/index.d.ts',
-      'dist/commands/worker.js',
       'LICENSE',
       'README.md',
     ]) {

@@ -70,7 +70,7 @@ try {
     };
     tell('yardstick', baseline);
     for (const step of STEPS) tell(step, stepOf(step, shells));
-    const cli = here('../../dist/cli.js');
+    const cli = here('../../program/cli.js');
     tell(
       'whole run',
       measured(process.execPath, [cli, 'run', shells, '--out', join(home, `results-${rows}`), '--quiet']),

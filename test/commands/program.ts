@@ -1,4 +1,4 @@
-import { type SpawnOptionsWithoutStdio, spawn } from 'node:child_process';
+import { execFileSync, type SpawnOptionsWithoutStdio, spawn } from 'node:child_process';
 import { cpSync, existsSync, mkdirSync, readdirSync, rmSync, statSync, symlinkSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
@@ -15,35 +15,39 @@ export interface Outcome {
   readonly stderr: string;
 }
 
-/**
- * The folder of the built program: dist where it is not older than the sources, else a fresh build of its own, file by
- * file as dist is, so that worker threads and lazy imports are tried as they are shipped.
- */
-export async function builtProgram(): Promise<string> {
-  const dist = join(ROOT, 'dist');
-  const isFresh = (stamp: string) => existsSync(stamp) && newest(join(ROOT, 'src')) <= statSync(stamp).mtimeMs;
-  if (isFresh(join(dist, 'cli.js'))) return dist;
+/** The folder of the built program: program where it is not older than the sources, else a fresh build of its own. */
+async function builtProgram(): Promise<string> {
+  const built = join(ROOT, 'program');
+  const stamp = join(built, 'cli.js');
+  if (existsSync(stamp) && newest(join(ROOT, 'src')) <= statSync(stamp).mtimeMs) return built;
   return freshBuild('program');
 }
 
-/** Builds the program anew into a folder of its own; gives its dist. */
-export async function freshBuild(name: string): Promise<string> {
-  const home = join(ROOT, 'node_modules/.cache/bedorder-test', `${name}-${process.pid}`);
+/** Bundles the program into a folder of its own, as it is shipped; gives that folder. */
+async function freshBuild(name: string): Promise<string> {
+  const folder = join(homeFor(name), 'program');
+  execFileSync(process.execPath, [join(ROOT, '.ci/bundle.mjs'), folder], { cwd: ROOT });
+  return folder;
+}
+
+/** Builds the sources file by file into a folder of its own, for tests that put one of them to the test; gives that folder. */
+export async function builtByFile(name: string): Promise<string> {
+  const folder = join(homeFor(name), 'dist');
   const entries = readdirSync(join(ROOT, 'src'), { recursive: true, encoding: 'utf8' })
-    .filter((name) => name.endsWith('.ts'))
-    .map((name) => join(ROOT, 'src', name));
+    .filter((entry) => entry.endsWith('.ts'))
+    .map((entry) => join(ROOT, 'src', entry));
+  await build({ entryPoints: entries, outdir: folder, outbase: join(ROOT, 'src'), format: 'esm', logLevel: 'error' });
+  return folder;
+}
+
+/** A folder that looks like the top of the repository to a program in it, and goes when the tests end. */
+function homeFor(name: string): string {
+  const home = join(ROOT, 'node_modules/.cache/bedorder-test', `${name}-${process.pid}`);
   mkdirSync(home, { recursive: true });
   process.once('exit', () => rmSync(home, { recursive: true, force: true }));
-  await build({
-    entryPoints: entries,
-    outdir: join(home, 'dist'),
-    outbase: join(ROOT, 'src'),
-    format: 'esm',
-    logLevel: 'error',
-  });
   cpSync(join(ROOT, 'package.json'), join(home, 'package.json'));
   if (!existsSync(join(home, 'examples'))) symlinkSync(join(ROOT, 'examples'), join(home, 'examples'));
-  return join(home, 'dist');
+  return home;
 }
 
 function newest(folder: string): number {
@@ -54,8 +58,7 @@ function newest(folder: string): number {
 
 /** Runs the program to its end. */
 export async function bedorder(args: readonly string[], options: SpawnOptionsWithoutStdio = {}): Promise<Outcome> {
-  const dist = await builtOnce();
-  return runNode([join(dist, 'cli.js'), ...args], options);
+  return runNode([join(await builtOnce(), 'cli.js'), ...args], options);
 }
 
 let once: Promise<string> | undefined;

@@ -1,7 +1,7 @@
 import { writeFileSync } from 'node:fs';
 import { join } from 'node:path';
 import { beforeAll, expect, it } from 'vitest';
-import { freshBuild, runNode } from './program.js';
+import { builtByFile, runNode } from './program.js';
 
 /* Threads load built files, so the host is tried in a build of its own, with tasks made for the trial. */
 
@@ -34,7 +34,7 @@ await host.close();
 `;
 
 beforeAll(async () => {
-  const dist = await freshBuild('workers');
+  const dist = await builtByFile('workers');
   writeFileSync(join(dist, 'tasks.js'), TASKS);
   script = join(dist, 'try-workers.js');
   writeFileSync(script, SCRIPT);
