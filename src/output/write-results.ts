@@ -62,17 +62,23 @@ function titleOf({ description, scatterless }: Table, { clocks, beds }: Findings
   return `${description}. Every error in it rests on a scatter that was assumed: ${names}`;
 }
 
+/** Bytes of a piece of usual length; one buffer serves all pieces of a file. */
+const ROOM = 200_000;
+
 function writePieces(path: string, pieces: Iterable<string>): { readonly bytes: number; readonly sha256: string } {
   mkdirSync(dirname(path), { recursive: true });
   const hash = createHash('sha256');
   const file = openSync(path, 'wx');
+  let room = Buffer.allocUnsafe(ROOM);
   let bytes = 0;
   try {
     for (const piece of pieces) {
-      const buffer = Buffer.from(piece, 'utf8');
-      hash.update(buffer);
-      for (let done = 0; done < buffer.length; ) done += writeSync(file, buffer, done);
-      bytes += buffer.length;
+      // three bytes are the most that a UTF-16 unit takes
+      if (3 * piece.length > room.length) room = Buffer.allocUnsafe(3 * piece.length);
+      const part = room.subarray(0, room.write(piece, 'utf8'));
+      hash.update(part);
+      for (let done = 0; done < part.length; ) done += writeSync(file, part, done);
+      bytes += part.length;
     }
   } finally {
     closeSync(file);
