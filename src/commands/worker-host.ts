@@ -17,22 +17,37 @@ interface Answer {
 }
 
 /**
- * Runs the engine's tasks on worker threads, and gives the results in the order of the tasks. The first tasks are done
- * in place, to see how long one takes; threads are started only where the rest is worth it. Tasks are pure functions,
- * so the results do not depend on who does them.
+ * Runs the engine's tasks here and on worker threads, and gives the results in the order of the tasks. The first tasks are
+ * done here, to see how long one takes; threads are started only where the rest is worth it, and this thread goes on with
+ * its share while they start. Tasks are pure functions, so the results do not depend on who does them.
  *
  * @param progress Told how far the run is.
- * @param workers Number of threads; default one a core, or BEDORDER_WORKERS. 1 does everything in place.
+ * @param workers Number of threads, this one among them; default one a core, or BEDORDER_WORKERS. 1 does everything here.
  */
 export function createWorkerHost(progress: Progress, workers = wantedWorkers()): WorkerHost {
   const pool: Worker[] = [];
   const map: TaskMapper = async (tasks, onDone = () => {}) => {
-    const results: unknown[] = new Array(tasks.length);
-    const next = await runInPlace(tasks, results, onDone, workers);
-    if (next === tasks.length) return results;
-    while (pool.length < Math.min(workers, tasks.length - next)) pool.push(createWorker());
-    await runOnThreads(pool, tasks, next, results, onDone);
-    return results;
+    const { runTask } = await import('../tasks.js');
+    const queue = createQueue(tasks, onDone);
+    const enlist = () => {
+      while (pool.length < Math.min(workers - 1, queue.left())) pool.push(createWorker());
+      for (const worker of pool) queue.share(worker);
+      return pool.length > 0;
+    };
+    const started = performance.now();
+    let shared = tasks.length > 1 && tasks[0].heavy === true && enlist();
+    try {
+      for (let own = queue.take(); own !== null; own = queue.take()) {
+        queue.answer(own, runTask(tasks[own]));
+        const perTask = (performance.now() - started) / queue.done();
+        if (!shared && queue.left() > 1 && queue.left() * perTask > WORTH_THREADS) shared = enlist();
+        // a signal, or the answer of a thread, is heard between tasks
+        if (shared || perTask > 5) await new Promise(setImmediate);
+      }
+      return await queue.results();
+    } finally {
+      queue.release();
+    }
   };
   return { map, progress, close: async () => void (await Promise.all(pool.splice(0).map((one) => one.terminate()))) };
 }
@@ -42,28 +57,6 @@ function wantedWorkers(): number {
   return Number.isInteger(asked) && asked >= 1 ? Math.min(asked, 256) : availableParallelism();
 }
 
-// Gives the number of tasks done; all of them where there is one worker, or too little work for threads.
-async function runInPlace(
-  tasks: readonly Task[],
-  results: unknown[],
-  onDone: (done: number) => void,
-  workers: number,
-): Promise<number> {
-  if (tasks.length === 0 || (workers > 1 && tasks.length > 1 && tasks[0].heavy === true)) return 0;
-  const { runTask } = await import('../tasks.js');
-  const start = performance.now();
-  for (let i = 0; i < tasks.length; i++) {
-    results[i] = runTask(tasks[i]);
-    onDone(i + 1);
-    const left = tasks.length - i - 1;
-    const perTask = (performance.now() - start) / (i + 1);
-    if (workers > 1 && left > 1 && left * perTask > WORTH_THREADS) return i + 1;
-    // a signal is heard between tasks
-    if (perTask > 5) await new Promise(setImmediate);
-  }
-  return tasks.length;
-}
-
 function createWorker(): Worker {
   const worker = new Worker(new URL('./worker.js', import.meta.url));
   worker.unref();
@@ -71,40 +64,74 @@ function createWorker(): Worker {
   return worker;
 }
 
-function runOnThreads(
-  pool: readonly Worker[],
-  tasks: readonly Task[],
-  first: number,
-  results: unknown[],
-  onDone: (done: number) => void,
-): Promise<void> {
-  let given = first;
-  let done = first;
-  return new Promise((resolve, reject) => {
-    const listeners: (() => void)[] = [];
-    const settle = (end: () => void) => {
-      for (const remove of listeners) remove();
-      end();
-    };
-    const give = (worker: Worker) => {
-      if (given < tasks.length) worker.postMessage({ index: given, task: tasks[given++] });
-    };
-    for (const worker of pool) {
-      const onMessage = ({ index, result, error }: Answer) => {
-        if (error) return settle(() => reject(error));
-        results[index] = result;
-        onDone(++done);
-        if (done === tasks.length) settle(resolve);
-        else give(worker);
-      };
-      const onError = (error: Error) => settle(() => reject(error));
-      worker.ref();
-      worker.on('message', onMessage).on('error', onError);
-      listeners.push(() => {
-        worker.off('message', onMessage).off('error', onError);
-        worker.unref();
-      });
+/** Tasks that several threads take from. */
+interface TaskQueue {
+  /** The next task for this thread; null when none is left, or one has failed. */
+  readonly take: () => number | null;
+  readonly answer: (index: number, result: unknown) => void;
+  /** Lets a thread take part: it gets a task, and after each answer the next. */
+  readonly share: (worker: Worker) => void;
+  readonly left: () => number;
+  readonly done: () => number;
+  /** All results in order, once they are there. Throws what a task on a thread threw. */
+  readonly results: () => Promise<unknown[]>;
+  readonly release: () => void;
+}
+
+function createQueue(tasks: readonly Task[], onDone: (done: number) => void): TaskQueue {
+  const results: unknown[] = new Array(tasks.length);
+  const listeners: (() => void)[] = [];
+  let given = 0;
+  let done = 0;
+  let failure: Error | null = null;
+  let settled: () => void = () => {};
+  const answer = (index: number, result: unknown) => {
+    results[index] = result;
+    onDone(++done);
+    if (done === tasks.length) settled();
+  };
+  const fail = (error: Error) => {
+    failure ??= error;
+    settled();
+  };
+  const give = (worker: Worker) => {
+    if (given < tasks.length && failure === null) worker.postMessage({ index: given, task: tasks[given++] });
+  };
+  const share = (worker: Worker) => {
+    let first = true;
+    const onMessage = ({ index, result, error }: Answer) => {
+      if (error) return fail(error);
+      // one more than it works on, so that it need not wait while this thread is busy
+      if (first) give(worker);
+      first = false;
       give(worker);
-    }
-  });
+      answer(index, result);
+    };
+    worker.ref();
+    worker.on('message', onMessage).on('error', fail);
+    listeners.push(() => {
+      worker.off('message', onMessage).off('error', fail);
+      worker.unref();
+    });
+    give(worker);
+  };
+  return {
+    take: () => (given < tasks.length && failure === null ? given++ : null),
+    answer,
+    share,
+    left: () => tasks.length - given,
+    done: () => done,
+    results: async () => {
+      if (done < tasks.length && failure === null) {
+        await new Promise<void>((resolve) => {
+          settled = resolve;
+        });
+      }
+      if (failure !== null) throw failure;
+      return results;
+    },
+    release: () => {
+      for (const remove of listeners) remove();
+    },
+  };
 }

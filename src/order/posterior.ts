@@ -41,7 +41,7 @@ const PLAIN = { rankNormalise: false };
 const WATCHED = 200;
 
 /** Draws times beds of one chain that are worth a thread without trying. */
-const HEAVY = 3e5;
+const HEAVY = 3e6;
 
 /**
  * Samples the order of all beds under superposition (design 7.6) and reports how well the chains have settled: smallest
