@@ -4,7 +4,7 @@ import type { Settled } from './passes.js';
 import type { Random } from './statistics/index.js';
 import {
   type Assignment,
-  assignOverDraws,
+  assignerOverDraws,
   assignZone,
   type BootstrapZones,
   bedScatters,
@@ -112,7 +112,7 @@ export async function supportZones(
       assign:
         bootstraps.length === 0 || values.length > MANY_BEDS || smallestZone(zoning) < FEWEST_BEDS_TO_DRAW
           ? (x, error) => assignZone(x, error, zoning.priors)
-          : (x, error) => assignOverDraws(x, error, bootstraps),
+          : assignerOverDraws(bootstraps),
     },
   };
 }

@@ -5,7 +5,10 @@ import { type Bounded, boundedBy, type OlderAndYounger } from './bracketing.js';
 export interface BedsToDateOptions {
   /** How sound each bed is to date, 0 to 1; of choices that bound as many beds, sounder ones are named. Default all 1. */
   readonly soundness?: readonly number[];
-  /** Choices that may be looked at before the search stops with the best so far. Default 5 million. */
+  /**
+   * Work that may be done before the search stops with the best so far: choices looked at, times the 32s of beds there are.
+   * Default 25 million.
+   */
   readonly patience?: number;
 }
 
@@ -78,7 +81,7 @@ export function bedsToDate(known: OlderAndYounger, budget: number, options: Beds
   let best = improve(start);
   let bestWorth = worth(boundedBy(known, best));
 
-  const search = searcher(known, options.patience ?? 5e6);
+  const search = searcher(known, options.patience ?? 2.5e7);
   const found = search(picks, bestWorth);
   if (found.beds !== null) {
     best = improve(found.beds);
@@ -154,7 +157,7 @@ function searcher(known: OlderAndYounger, patience: number) {
         ups.push(up);
         bounds.push(bound);
       }
-      left -= size - from;
+      left -= (size - from) * words;
       if (rest === 1) return true;
       const bracketedAtMost = Math.min(
         bracketable,

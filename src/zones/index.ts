@@ -33,7 +33,14 @@ export type { ShellNotes } from './shell-rows.js';
 export { leaveOneOutResidual, shellRows } from './shell-rows.js';
 export { meanSilhouette } from './silhouette.js';
 export type { BootstrapZones, BootstrapZonesArgument } from './stability.js';
-export { assignOverDraws, bootstrapZones, sameZone, stabilityOf, stabilityTasks, zoneMeanErrors } from './stability.js';
+export {
+  assignerOverDraws,
+  bootstrapZones,
+  sameZone,
+  stabilityOf,
+  stabilityTasks,
+  zoneMeanErrors,
+} from './stability.js';
 export type { ZoneErrors } from './zone-errors.js';
 export { unbiasedSpread, zoneErrors } from './zone-errors.js';
 export type { CountCriteria, ZoneRowSupport } from './zone-rows.js';

@@ -138,11 +138,15 @@ export function sameZone(
   const n = values.length;
   const same = new Float64Array(n * n);
   for (const { priors } of bootstraps) {
-    const chances = values.map((value, bed) => assignZone(value, errors[bed], priors).probabilities);
+    const k = priors.means.length;
+    const chances = new Float64Array(n * k);
+    values.forEach((value, bed) => {
+      chances.set(assignZone(value, errors[bed], priors).probabilities, bed * k);
+    });
     for (let a = 0; a < n; a++) {
       for (let b = 0; b < a; b++) {
         let sum = 0;
-        for (let j = 0; j < chances[a].length; j++) sum += chances[a][j] * chances[b][j];
+        for (let j = 0; j < k; j++) sum += chances[a * k + j] * chances[b * k + j];
         same[a * n + b] += sum / bootstraps.length;
       }
     }
@@ -156,19 +160,50 @@ export function sameZone(
 }
 
 /**
- * Zone of a bed or shell, its probabilities averaged over the zones that the bootstraps found again. The zones of the fit
- * alone make probabilities too sure where zones come close; here the doubt about the zones counts.
- * @param x log ratio
- * @param error its standard error
+ * Gives the zone of a bed or shell, its probabilities averaged over the zones that the bootstraps found again. The zones of
+ * the fit alone make probabilities too sure where zones come close; here the doubt about the zones counts.
+ * @returns takes a log ratio and its standard error. Few errors come again and again, so what hangs on them is kept
  */
-export function assignOverDraws(x: number, error: number, bootstraps: readonly BootstrapZones[]): Assignment {
-  const probabilities = new Array<number>(bootstraps[0].priors.means.length).fill(0);
-  for (const { priors } of bootstraps) {
-    assignZone(x, error, priors).probabilities.forEach((p, j) => {
-      probabilities[j] += p / bootstraps.length;
+export function assignerOverDraws(bootstraps: readonly BootstrapZones[]): (x: number, error: number) => Assignment {
+  const k = bootstraps[0].priors.means.length;
+  const means = Float64Array.from(bootstraps.flatMap(({ priors }) => priors.means));
+  const byError = new Map<number, { readonly halves: Float64Array; readonly constants: Float64Array }>();
+  const partsFor = (error: number) => {
+    const known = byError.get(error);
+    if (known !== undefined) return known;
+    const halves = new Float64Array(means.length);
+    const constants = new Float64Array(means.length);
+    bootstraps.forEach(({ priors: { weights, se, tau } }, draw) => {
+      for (let j = 0; j < k; j++) {
+        const variance = Math.max(tau ** 2 + error ** 2 + se[j] ** 2, 1e-18);
+        halves[draw * k + j] = 0.5 / variance;
+        constants[draw * k + j] = Math.log(Math.max(weights[j], 1e-300)) - 0.5 * Math.log(variance);
+      }
     });
-  }
-  return assignmentOf(probabilities.map((p) => Math.min(1, p)));
+    const parts = { halves, constants };
+    byError.set(error, parts);
+    return parts;
+  };
+  const own = new Float64Array(k);
+  return (x, error) => {
+    const { halves, constants } = partsFor(error);
+    const probabilities = new Array<number>(k).fill(0);
+    for (let at = 0; at < means.length; at += k) {
+      let largest = Number.NEGATIVE_INFINITY;
+      for (let j = 0; j < k; j++) {
+        const off = x - means[at + j];
+        own[j] = constants[at + j] - halves[at + j] * off * off;
+        if (own[j] > largest) largest = own[j];
+      }
+      let sum = 0;
+      for (let j = 0; j < k; j++) {
+        own[j] = Math.exp(own[j] - largest);
+        sum += own[j];
+      }
+      for (let j = 0; j < k; j++) probabilities[j] += own[j] / (sum * bootstraps.length);
+    }
+    return assignmentOf(probabilities);
+  };
 }
 
 /**

@@ -1,7 +1,7 @@
 import type { ClockSet } from '../../src/beds/index.js';
 import type { Clock } from '../../src/model/index.js';
 import { studentTQuantile } from '../../src/statistics/index.js';
-import { assignOverDraws, bootstrapZones, zoneMeanErrors } from '../../src/zones/index.js';
+import { assignerOverDraws, bootstrapZones, zoneMeanErrors } from '../../src/zones/index.js';
 import type { CoastOptions, SimulatedAminoAcid } from './coast-options.js';
 import { meanOf, shareOf, type ZoneRun, zoneCoast, zoneCoasts } from './zone-runs.js';
 
@@ -65,9 +65,9 @@ export async function calibration(
     for (const run of await zoneCoasts(seeds, coast, given ? { zones: coast.zones } : {})) {
       const { data, zoning, truth } = run;
       if (zoning.fit.k !== coast.zones) continue;
-      const bootstraps = bootstrapsOf(run);
+      const assign = assignerOverDraws(bootstrapsOf(run));
       zoning.beds.forEach((bed, at) => {
-        const { zone, probability } = assignOverDraws(data.beds[bed].mean, data.beds[bed].se, bootstraps);
+        const { zone, probability } = assign(data.beds[bed].mean, data.beds[bed].se);
         const decile = deciles[Math.min(9, Math.floor(10 * probability))];
         decile.beds++;
         decile.said += probability;

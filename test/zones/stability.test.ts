@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { createRandom } from '../../src/statistics/index.js';
 import {
-  assignOverDraws,
+  assignerOverDraws,
   assignZone,
   type BootstrapZonesArgument,
   bestLabels,
@@ -61,7 +61,7 @@ describe('stabilityOf', () => {
   });
 });
 
-describe('sameZone, assignOverDraws and zoneMeanErrors', () => {
+describe('sameZone, assignerOverDraws and zoneMeanErrors', () => {
   const common = argumentFor([-2, -1.9], 8, 0.02);
   const { values, errors } = common;
   const bootstraps = bootstrapZones({ ...common, first: 0, repeats: 100 });
@@ -85,7 +85,7 @@ describe('sameZone, assignOverDraws and zoneMeanErrors', () => {
   it('is less sure between zones than the fit alone', () => {
     const middle = (common.fit.means[0] + common.fit.means[1]) / 2 + 0.012;
     const alone = assignZone(middle, 0.01, { ...common.fit, se: [0, 0] });
-    const averaged = assignOverDraws(middle, 0.01, bootstraps);
+    const averaged = assignerOverDraws(bootstraps)(middle, 0.01);
     expect(averaged.zone).toBe(alone.zone);
     expect(averaged.probability).toBeLessThan(alone.probability);
     expect(averaged.probabilities.reduce((sum, p) => sum + p, 0)).toBeCloseTo(1, 8);
