@@ -94,7 +94,15 @@ export function runPass(
 ): Pass {
   const { shells, summaries } = context;
   const imputation = clock.amino_acids.length > 1 ? set.index?.imputation : undefined;
-  const input = { clock, shells, summaries, setAside: left.setAside, wide: left.wide, imputation };
+  const input = {
+    clock,
+    shells,
+    summaries,
+    setAside: left.setAside,
+    wide: left.wide,
+    imputation,
+    before: before?.data,
+  };
   const plain = withLaboratoryErrors(clockData(input), shells, summaries, context.offsets);
   return passOver(context, plain, left, random, before);
 }

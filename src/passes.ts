@@ -18,6 +18,7 @@ import { zoneName } from './zones/index.js';
 export const MOST_PASSES = 5;
 
 const NO_MARKS: readonly ScreeningMark[] = [];
+const NO_LOGS: readonly number[] = [];
 
 /** What the passes over one clock need. */
 export interface PassInput {
@@ -115,9 +116,11 @@ function fixedParts({ shells }: RunContext, { data, relations }: Pass): FixedPar
   const aminoAcids = AMINO_ACIDS.filter((code) =>
     data.shells.some(({ shell }) => shells[shell].ratios[code] !== undefined),
   );
-  const logs = data.shells.map(({ shell }) =>
-    aminoAcids.map((code) => Math.log(shells[shell].ratios[code] ?? Number.NaN)),
-  );
+  // one amino acid has nothing to agree with
+  const logs =
+    aminoAcids.length < 2
+      ? data.shells.map(() => NO_LOGS)
+      : data.shells.map(({ shell }) => aminoAcids.map((code) => Math.log(shells[shell].ratios[code] ?? Number.NaN)));
   const certain = relations.filter((relation) => relation.certainty === 'certain');
   const graph = relationGraph(
     data.beds.map((bed) => bed.key),

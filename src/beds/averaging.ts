@@ -20,7 +20,8 @@ const keyOf = ({ section, bed, taxon, fraction, shell }: Analysis): string =>
  * averageAnalyses([]).shells.length // => 0
  */
 export function averageAnalyses(analyses: readonly Analysis[]): Averages {
-  const groups = new Map<string, Analysis[]>();
+  // a list is made only for a shell that comes more than once, which in a large survey few do
+  const groups = new Map<string, Analysis | Analysis[]>();
   const summaries: PublishedSummary[] = [];
   for (const row of analyses) {
     if (row.summary !== null) {
@@ -28,11 +29,15 @@ export function averageAnalyses(analyses: readonly Analysis[]): Averages {
       continue;
     }
     const key = keyOf(row);
-    const rows = groups.get(key);
-    if (rows === undefined) groups.set(key, [row]);
-    else rows.push(row);
+    const known = groups.get(key);
+    if (known === undefined) groups.set(key, row);
+    else if (Array.isArray(known)) known.push(row);
+    else groups.set(key, [known, row]);
   }
-  return { shells: [...groups.values()].map(averageShell), summaries };
+  const shells = Array.from(groups.values(), (rows) =>
+    Array.isArray(rows) ? averageShell(rows) : shellOfOneRow(rows),
+  );
+  return { shells, summaries };
 }
 
 function summariesOf(row: Analysis): PublishedSummary[] {
@@ -77,7 +82,6 @@ function shellOfOneRow(row: Analysis): Shell {
 }
 
 function averageShell(rows: readonly Analysis[]): Shell {
-  if (rows.length === 1) return shellOfOneRow(rows[0]);
   const first = rows[0];
   const preparations = groupPreparations(rows);
   const replicates = preparations.map((injections) => meanOf(injections.map((row) => row.ratios)));

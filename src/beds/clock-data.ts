@@ -15,6 +15,8 @@ export interface ClockDataInput {
   readonly gradient?: { readonly slope: number; readonly values: ReadonlyMap<string, number> };
   /** Keys of beds whose shells scatter beyond one age: their errors rest on their own scatter, and they leave the pool. */
   readonly wide?: ReadonlySet<string>;
+  /** The same clock with other shells set aside: log ratios are taken from there. */
+  readonly before?: ClockData;
 }
 
 /** Name of a bed in tables. */
@@ -30,16 +32,24 @@ export function clockData(input: ClockDataInput): ClockData {
   const beds = new Map<string, DraftBed>();
   const clockShells: ClockShell[] = [];
   let last: DraftBed | null = null;
-  shells.forEach((shell, index) => {
-    if (shell.taxon !== clock.taxon || shell.fraction !== clock.fraction) return;
-    const x = clockLogRatio(shell.ratios, clock, imputation);
-    if (x === null) return;
+  const take = (index: number, x: number, known?: ClockShell) => {
+    const shell = shells[index];
     // shells of one bed mostly stand together in the table
     const bed = isOf(last, shell) ? last : draftBed(beds, shell.section, shell.bed);
     last = bed;
     bed.shells.push(clockShells.length);
-    clockShells.push({ shell: index, bed: bed.index, x, setAside: setAside.has(index) });
-  });
+    const aside = setAside.has(index);
+    clockShells.push(known?.setAside === aside ? known : { shell: index, bed: bed.index, x, setAside: aside });
+  };
+  if (input.before !== undefined) {
+    for (const known of input.before.shells) take(known.shell, known.x, known);
+  } else {
+    shells.forEach((shell, index) => {
+      if (shell.taxon !== clock.taxon || shell.fraction !== clock.fraction) return;
+      const x = clockLogRatio(shell.ratios, clock, imputation);
+      if (x !== null) take(index, x);
+    });
+  }
   const published = addSummaries(beds, clock, summaries, imputation);
   const drafts = [...beds.values()];
   const kept = drafts.map((bed) => {

@@ -9,11 +9,11 @@ import type { ShellConflicts } from './shell-conflicts.js';
 export function conflictsOfItsOwn(
   { conflicts, sorted }: ShellConflicts,
   shells: readonly { readonly bed: number; readonly x: number }[],
-  { s, means, shells: residuals }: OwnBedResiduals,
+  { s, means, of }: OwnBedResiduals,
 ): boolean[] {
   const alone = new Array<boolean>(shells.length).fill(false);
   const others = (shell: number) => {
-    const { residual, others: count } = residuals[shell];
+    const { residual, others: count } = of(shell);
     return residual === null ? null : { mean: shells[shell].x - residual, variance: (s * s) / count };
   };
   const reversed = (lower: { mean: number; variance: number } | null, upper: typeof lower) =>

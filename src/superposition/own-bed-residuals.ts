@@ -18,7 +18,12 @@ export interface OwnBedResidual {
 
 /** Residuals of all shells of a clock, with the scatter they were measured by. */
 export interface OwnBedResiduals {
+  /** What is known of one shell, by its index; and of all, as a list that is made when it is asked for. */
+  readonly of: (shell: number) => OwnBedResidual;
   readonly shells: readonly OwnBedResidual[];
+  /** Residual and p of every shell in plain lists, NaN where unknown: a survey may hold a million shells. */
+  readonly residual: Float64Array;
+  readonly p: Float64Array;
   readonly s: number;
   readonly df: number;
   /** Whether s comes from the shells themselves, not from the scatter to fall back on. */
@@ -72,24 +77,35 @@ export function ownBedResiduals(
     const furthest = members.map((bed) => furthestOf(bed, fits, table.t));
     changed = members.filter((_, bed) => furthest[bed] >= 0);
     if (changed.length === 0) {
-      const results = shells.map((_, i): OwnBedResidual => {
-        const { residual, t, p, others } = table;
-        return {
-          residual: known(residual[i]),
-          t: known(t[i]),
-          others: others[i],
-          p: known(p[i]),
-          adjusted: known(adjusted[i]),
-          odd: isOdd(i),
-        };
+      const { residual, t, p, others } = table;
+      const of = (i: number): OwnBedResidual => ({
+        residual: known(residual[i]),
+        t: known(t[i]),
+        others: others[i],
+        p: known(p[i]),
+        adjusted: known(adjusted[i]),
+        odd: isOdd(i),
       });
-      return { shells: results, s, df, robust: enough, means: members.map((bed) => meanOf(soundOf(bed))), tested };
+      const means = members.map((bed) => meanOf(soundOf(bed)));
+      return {
+        of,
+        get shells() {
+          return shells.map((_, i) => of(i));
+        },
+        residual,
+        p,
+        s,
+        df,
+        robust: enough,
+        means,
+        tested,
+      };
     }
     for (const index of furthest) if (index >= 0) sound[index] = 0;
   }
 }
 
-/** Residuals by shell, NaN where unknown. Plain numbers: a survey may hold a million shells. */
+/** Residuals by shell, NaN where unknown. */
 interface ResidualTable {
   readonly residual: Float64Array;
   readonly t: Float64Array;

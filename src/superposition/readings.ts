@@ -43,8 +43,6 @@ export interface ShellFinding {
   readonly status: ShellStatus;
   readonly reading: ShellReading;
   readonly confidence: Confidence | null;
-  /** x minus the mean of the other sound shells of its bed. */
-  readonly residual: number | null;
   /** Evidence in sentences; empty where nothing speaks against the shell. */
   readonly sentences: readonly string[];
 }
@@ -76,7 +74,6 @@ export interface ShellGrounds {
 }
 
 const NO_MARKS: readonly ShellMark[] = [];
-const NOTHING_SAID: readonly string[] = [];
 
 /** Amino acids of a sound shell disagree so far once in a hundred. */
 const DISAGREE = 0.01;
@@ -110,9 +107,9 @@ export function readShells(input: ReadingInput, before?: ShellReadings): ShellRe
   });
 
   const shells = data.shells.map(({ bed }, i): ShellFinding => {
-    const own = residuals.shells[i];
     const conflicting = conflicts.asLower[i] + conflicts.asUpper[i] > 0;
-    if (names[i].length === 0 && !conflicting && (own.p === null || own.p > alpha / 5)) return plain(own.residual);
+    if (names[i].length === 0 && !conflicting && !(residuals.p[i] <= alpha / 5)) return PLAIN;
+    const own = residuals.of(i);
     const cut = inAll.has(i) ? 'all' : inSome.has(i) ? 'some' : 'none';
     const wholeBed = ofBed[bed].inCut * 2 >= ofBed[bed].sound || !alone[i];
     const crowded = ofBed[bed].odd > Math.max(1, Math.floor(ofBed[bed].sound / 3));
@@ -162,7 +159,6 @@ export function readShells(input: ReadingInput, before?: ShellReadings): ShellRe
       status,
       reading,
       confidence,
-      residual: own.residual,
       // most are never read: of all passes those of the last, and then only what is printed
       get sentences() {
         return shellEvidence(decided);
@@ -189,18 +185,12 @@ function conflictsOf(
     data.beds.map(({ section }, b) => ({ section, above: above[b] })),
     { scatter: residuals.s, df: residuals.df, spread, alpha: alpha / 2 },
   );
-  const costs = residuals.shells.map(({ p }, i) => costOfShell(p, marks[i].length > 0));
+  const costs = Array.from(residuals.p, (p, i) => costOfShell(Number.isNaN(p) ? null : p, marks[i].length > 0));
   return { conflicts, toSetAside: shellsToSetAside(conflicts, costs) };
 }
 
-/** The finding of a shell against which nothing speaks. */
-const plain = (residual: number | null): ShellFinding => ({
-  status: 'kept',
-  reading: 'none',
-  confidence: null,
-  residual,
-  sentences: NOTHING_SAID,
-});
+/** The finding of a shell against which nothing speaks, as of most. */
+const PLAIN: ShellFinding = Object.freeze({ status: 'kept', reading: 'none', confidence: null, sentences: [] });
 
 /** Worked out anew, or those of an earlier pass where nothing that they rest on has changed. */
 function groundsOf({ data, logs, marks, aminoAcids, alpha }: ReadingInput, before?: ShellGrounds): ShellGrounds {
@@ -214,7 +204,7 @@ function groundsOf({ data, logs, marks, aminoAcids, alpha }: ReadingInput, befor
   const excluded = new Set(names.flatMap((list, i) => (screenedOut(list) ? [i] : [])));
   // The gradient is one number a bed, so it changes no residual, but it does change what lies in other beds.
   const xs = data.shells.map(({ x, bed }) => x - data.slope * data.beds[bed].gradient);
-  const placed = data.shells.map(({ bed }, i) => ({ bed, x: xs[i] }));
+  const placed = data.slope === 0 ? data.shells : data.shells.map(({ bed }, i) => ({ bed, x: xs[i] }));
   const agreements = aminoAcidAgreement(
     logs,
     data.shells.map(({ x }) => x),
@@ -249,7 +239,7 @@ function bedCounts(
   data.shells.forEach(({ bed }, i) => {
     if (excluded.has(i)) return;
     counts[bed].sound++;
-    if (residuals.shells[i].odd) counts[bed].odd++;
+    if (residuals.of(i).odd) counts[bed].odd++;
     if (proposed.has(i)) counts[bed].inCut++;
   });
   return counts;
