@@ -285,6 +285,12 @@ function sectionRows(
     sections.set(bed.section, list);
     if (bed.n > 0 && place != null) list.push({ rank: heightOf(place), mean: bed.mean, se: bed.se });
   }
+  const sectionOf = new Map([...sites].map(([key, site]) => [key, site.section]));
+  const lowerIn = new Map<string, number>();
+  for (const { lower } of relations) {
+    const section = sectionOf.get(lower);
+    if (section !== undefined) lowerIn.set(section, (lowerIn.get(section) ?? 0) + 1);
+  }
   const checks = checkSections(
     [...sections].map(([section, beds]) => ({ section, beds })),
     random,
@@ -294,7 +300,7 @@ function sectionRows(
     clock: data.clock.name,
     section,
     beds,
-    relations: relations.filter((relation) => relation.lower.startsWith(`${section}/`)).length,
+    relations: lowerIn.get(section) ?? 0,
     statistic,
     p_order,
     verdict,

@@ -4,11 +4,17 @@ import type { Host, Progress, Task, TaskMapper } from '../model/index.js';
 
 /** A host on Node: tasks on worker threads. `close` ends the threads. */
 export interface WorkerHost extends Host {
+  /** Starts the threads ahead of their tasks, while this one is busy: for work that is known to be much. */
+  readonly warm: () => void;
   readonly close: () => Promise<void>;
 }
 
-/** Milliseconds of work left from which threads are worth their start. */
+/** Milliseconds of work left from which threads are worth their start, and from which those that run are worth the way. */
 const WORTH_THREADS = 400;
+const WORTH_THE_WAY = 60;
+
+/** Threads that are started ahead: the tasks of a large survey are few. */
+const MOST_WARMED = 3;
 
 interface Answer {
   readonly index: number;
@@ -26,11 +32,14 @@ interface Answer {
  */
 export function createWorkerHost(progress: Progress, workers = wantedWorkers()): WorkerHost {
   const pool: Worker[] = [];
+  const start = (threads: number) => {
+    while (pool.length < threads) pool.push(createWorker());
+  };
   const map: TaskMapper = async (tasks, onDone = () => {}) => {
     const { runTask } = await import('../tasks.js');
     const queue = createQueue(tasks, onDone);
     const enlist = () => {
-      while (pool.length < Math.min(workers - 1, queue.left())) pool.push(createWorker());
+      start(Math.min(workers - 1, queue.left()));
       for (const worker of pool) queue.share(worker);
       return pool.length > 0;
     };
@@ -40,7 +49,8 @@ export function createWorkerHost(progress: Progress, workers = wantedWorkers()):
       for (let own = queue.take(); own !== null; own = queue.take()) {
         queue.answer(own, runTask(tasks[own]));
         const perTask = (performance.now() - started) / queue.done();
-        if (!shared && queue.left() > 1 && queue.left() * perTask > WORTH_THREADS) shared = enlist();
+        const worth = pool.length > 0 ? WORTH_THE_WAY : WORTH_THREADS;
+        if (!shared && queue.left() > 1 && queue.left() * perTask > worth) shared = enlist();
         // a signal, or the answer of a thread, is heard between tasks
         if (shared || perTask > 5) await new Promise(setImmediate);
       }
@@ -49,7 +59,13 @@ export function createWorkerHost(progress: Progress, workers = wantedWorkers()):
       queue.release();
     }
   };
-  return { map, progress, close: async () => void (await Promise.all(pool.splice(0).map((one) => one.terminate()))) };
+  const warm = () => start(Math.min(workers - 1, MOST_WARMED));
+  return {
+    map,
+    progress,
+    warm,
+    close: async () => void (await Promise.all(pool.splice(0).map((one) => one.terminate()))),
+  };
 }
 
 function wantedWorkers(): number {

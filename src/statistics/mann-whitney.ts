@@ -1,7 +1,7 @@
 import type { Numbers } from './check.js';
 import { requireNumbers, requireThat } from './check.js';
 import { normalCdf } from './normal.js';
-import { midranks, tieSizes } from './ranks.js';
+import { midranks } from './ranks.js';
 import { waysToDeal } from './ways-to-deal.js';
 
 /** Up to this product of the two group sizes the exact distribution is worked out. */
@@ -37,6 +37,14 @@ export interface MannWhitney {
 export function mannWhitney(a: Numbers, b: Numbers): MannWhitney {
   requireNumbers('mannWhitney', 'values in the first group', a);
   requireNumbers('mannWhitney', 'values in the second group', b);
+  const exact = a.length * b.length <= EXACT_UP_TO;
+  const { u, pLess, pGreater } = exact ? exactTest(a, b) : normalTest(a, b);
+  return { u, p: Math.min(1, 2 * Math.min(pLess, pGreater)), pLess, pGreater, exact };
+}
+
+type Tails = Pick<MannWhitney, 'u' | 'pLess' | 'pGreater'>;
+
+function exactTest(a: Numbers, b: Numbers): Tails {
   const pooled = new Float64Array(a.length + b.length);
   pooled.set(a);
   pooled.set(b, a.length);
@@ -44,9 +52,7 @@ export function mannWhitney(a: Numbers, b: Numbers): MannWhitney {
   let rankSum = 0;
   for (let i = 0; i < a.length; i++) rankSum += ranks[i];
   const u = rankSum - (a.length * (a.length + 1)) / 2;
-  const exact = a.length * b.length <= EXACT_UP_TO;
-  const { pLess, pGreater } = exact ? exactTails(ranks, a.length, b.length, u) : normalTails(pooled, a.length, u);
-  return { u, p: Math.min(1, 2 * Math.min(pLess, pGreater)), pLess, pGreater, exact };
+  return { u, ...exactTails(ranks, a.length, b.length, u) };
 }
 
 /**
@@ -90,12 +96,26 @@ function exactTails(ranks: readonly number[], n1: number, n2: number, u: number)
   return own ? { pLess: below / all, pGreater: above / all } : { pLess: above / all, pGreater: below / all };
 }
 
-function normalTails(pooled: Float64Array, n1: number, u: number): { pLess: number; pGreater: number } {
-  const n = pooled.length;
-  const product = n1 * (n - n1);
-  const ties = tieSizes(pooled).reduce((sum, t) => sum + (t ** 3 - t), 0);
+/** U and its normal tails by a merge of the two sorted groups, since large groups would take long to rank together. */
+function normalTest(a: Numbers, b: Numbers): Tails {
+  const first = Float64Array.from(a).sort();
+  const second = Float64Array.from(b).sort();
+  const n = first.length + second.length;
+  let u = 0;
+  let ties = 0;
+  for (let i = 0, j = 0; i < first.length || j < second.length; ) {
+    const value = j === second.length || first[i] <= second[j] ? first[i] : second[j];
+    const [fromI, fromJ] = [i, j];
+    while (i < first.length && first[i] === value) i++;
+    while (j < second.length && second[j] === value) j++;
+    const [ofFirst, ofSecond] = [i - fromI, j - fromJ];
+    // each of these in the first group is above all of the second before them, and level with those beside them
+    u += ofFirst * (fromJ + ofSecond / 2);
+    ties += (ofFirst + ofSecond) ** 3 - (ofFirst + ofSecond);
+  }
+  const product = first.length * second.length;
   const sd = Math.sqrt((product / 12) * (n + 1 - ties / (n * (n - 1))));
-  if (sd === 0) return { pLess: 1, pGreater: 1 };
+  if (sd === 0) return { u, pLess: 1, pGreater: 1 };
   const fromMiddle = u - product / 2;
-  return { pLess: normalCdf((fromMiddle + 0.5) / sd), pGreater: normalCdf(-(fromMiddle - 0.5) / sd) };
+  return { u, pLess: normalCdf((fromMiddle + 0.5) / sd), pGreater: normalCdf(-(fromMiddle - 0.5) / sd) };
 }
