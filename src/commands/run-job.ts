@@ -61,13 +61,9 @@ async function work(): Promise<void> {
   tell({ news: 'written', told: await words(findings, read.request.out) });
 }
 
-/** Rows of the shells table from which threads are sure to be wanted. */
-const LARGE = 20_000;
-
 async function analysed(survey: Survey, request: RunRequest): Promise<Findings> {
-  const host = createWorkerHost(progress);
-  if (survey.analyses.length > LARGE) host.warm();
   const { analyse } = await import('../pipeline.js');
+  const host = createWorkerHost(progress);
   try {
     return await analyse(survey, request.options, host);
   } finally {

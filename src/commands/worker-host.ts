@@ -4,17 +4,11 @@ import type { Host, Progress, Task, TaskMapper } from '../model/index.js';
 
 /** A host on Node: tasks on worker threads. `close` ends the threads. */
 export interface WorkerHost extends Host {
-  /** Starts the threads ahead of their tasks, while this one is busy: for work that is known to be much. */
-  readonly warm: () => void;
   readonly close: () => Promise<void>;
 }
 
-/** Milliseconds of work left from which threads are worth their start, and from which those that run are worth the way. */
+/** Milliseconds of work left from which threads are worth their start. */
 const WORTH_THREADS = 400;
-const WORTH_THE_WAY = 60;
-
-/** Threads that are started ahead: the tasks of a large survey are few. */
-const MOST_WARMED = 3;
 
 interface Answer {
   readonly index: number;
@@ -32,14 +26,11 @@ interface Answer {
  */
 export function createWorkerHost(progress: Progress, workers = wantedWorkers()): WorkerHost {
   const pool: Worker[] = [];
-  const start = (threads: number) => {
-    while (pool.length < threads) pool.push(createWorker());
-  };
   const map: TaskMapper = async (tasks, onDone = () => {}) => {
     const { runTask } = await import('../tasks.js');
     const queue = createQueue(tasks, onDone);
     const enlist = () => {
-      start(Math.min(workers - 1, queue.left()));
+      while (pool.length < Math.min(workers - 1, queue.left())) pool.push(createWorker());
       for (const worker of pool) queue.share(worker);
       return pool.length > 0;
     };
@@ -49,8 +40,7 @@ export function createWorkerHost(progress: Progress, workers = wantedWorkers()):
       for (let own = queue.take(); own !== null; own = queue.take()) {
         queue.answer(own, runTask(tasks[own]));
         const perTask = (performance.now() - started) / queue.done();
-        const worth = pool.length > 0 ? WORTH_THE_WAY : WORTH_THREADS;
-        if (!shared && queue.left() > 1 && queue.left() * perTask > worth) shared = enlist();
+        if (!shared && queue.left() > 1 && queue.left() * perTask > WORTH_THREADS) shared = enlist();
         // a signal, or the answer of a thread, is heard between tasks
         if (shared || perTask > 5) await new Promise(setImmediate);
       }
@@ -59,13 +49,7 @@ export function createWorkerHost(progress: Progress, workers = wantedWorkers()):
       queue.release();
     }
   };
-  const warm = () => start(Math.min(workers - 1, MOST_WARMED));
-  return {
-    map,
-    progress,
-    warm,
-    close: async () => void (await Promise.all(pool.splice(0).map((one) => one.terminate()))),
-  };
+  return { map, progress, close: async () => void (await Promise.all(pool.splice(0).map((one) => one.terminate()))) };
 }
 
 function wantedWorkers(): number {
