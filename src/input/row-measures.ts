@@ -39,8 +39,9 @@ export function wideMeasures(
   problems: ProblemList,
 ): RowMeasures {
   const ratios: Numbers = {};
-  const sd: Numbers = {};
-  const concentrations: Numbers = {};
+  // most tables give neither: all their rows share the empty one, which nothing is put into
+  const sd: Numbers = layout.measures.some((m) => m.sd >= 0) ? {} : NONE;
+  const concentrations: Numbers = layout.measures.some((m) => m.concentration >= 0) ? {} : NONE;
   let filled = false;
   let hasSd = false;
   for (const m of layout.measures) {
@@ -72,6 +73,8 @@ export function wideMeasures(
   }
   return { ratios, sd, concentrations, filled, hasSd };
 }
+
+const NONE: Numbers = Object.freeze({});
 
 const SD_ALONE = 'The row gives a standard deviation without its ratio. Add the mean ratio, or empty the cell.';
 
