@@ -23,12 +23,12 @@ export function rankBeds(posterior: OrderPosterior, tied: readonly number[]): Ra
   const rankHigh: number[] = [];
   const tail = Math.floor(0.025 * draws);
   for (let bed = 0; bed < beds; bed++) {
-    const own = ranks.slice(bed * draws, (bed + 1) * draws).sort();
+    const own = ranks.subarray(bed * draws, (bed + 1) * draws);
     let sum = 0;
-    for (const rank of own) sum += rank;
+    for (let draw = 0; draw < draws; draw++) sum += own[draw];
     rankMean.push(sum / draws);
-    rankLow.push(own[tail]);
-    rankHigh.push(own[draws - 1 - tail]);
+    rankLow.push(fromTheEnd(own, tail, 1));
+    rankHigh.push(fromTheEnd(own, tail, -1));
   }
   const sequence = rankMean
     .map((_, bed) => bed)
@@ -39,6 +39,25 @@ export function rankBeds(posterior: OrderPosterior, tied: readonly number[]): Ra
     rank[bed] = before >= 0 && tied[before] === tied[bed] ? rank[before] : at + 1;
   });
   return { sequence, rank, rankMean, rankLow, rankHigh };
+}
+
+/**
+ * The number that `tail` others lie below (sign 1) or above (sign −1): the outermost are kept in order while the list is gone
+ * through, which is far less work than sorting it.
+ */
+function fromTheEnd(values: Uint32Array, tail: number, sign: 1 | -1): number {
+  const outermost = new Float64Array(tail + 1).fill(Number.POSITIVE_INFINITY);
+  for (let i = 0; i < values.length; i++) {
+    const value = sign * values[i];
+    if (!(value < outermost[tail])) continue;
+    let to = tail;
+    while (to > 0 && outermost[to - 1] > value) {
+      outermost[to] = outermost[to - 1];
+      to--;
+    }
+    outermost[to] = value;
+  }
+  return sign * outermost[tail];
 }
 
 /** Probability that bed a is older than bed b: the share of draws in which its rank is smaller. */
