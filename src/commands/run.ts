@@ -1,3 +1,4 @@
+import { statSync } from 'node:fs';
 import { setFlagsFromString } from 'node:v8';
 import { Worker } from 'node:worker_threads';
 import { placesOf } from '../output/folder/places.js';
@@ -61,8 +62,13 @@ interface RunningJob {
  */
 const ROOM_FOR_YOUNG = 32;
 
+/** Bytes of a shells table from which that room pays. */
+const LARGE_TABLE = 1_000_000;
+
 function startJob(job: Job): RunningJob {
-  for (const end of ['min', 'max']) setFlagsFromString(`--${end}-semi-space-size=${ROOM_FOR_YOUNG}`);
+  if ((statSync(job.shells, { throwIfNoEntry: false })?.size ?? 0) > LARGE_TABLE) {
+    for (const end of ['min', 'max']) setFlagsFromString(`--${end}-semi-space-size=${ROOM_FOR_YOUNG}`);
+  }
   const worker = new Worker(new URL('./run-job.js', import.meta.url), { workerData: job });
   const waiting: JobNews[] = [];
   let heard: () => void = () => {};
