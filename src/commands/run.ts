@@ -66,7 +66,7 @@ const ROOM_FOR_YOUNG = 32;
 const LARGE_TABLE = 1_000_000;
 
 function startJob(job: Job): RunningJob {
-  if ((statSync(job.shells, { throwIfNoEntry: false })?.size ?? 0) > LARGE_TABLE) {
+  if (bytesOf(job.shells) > LARGE_TABLE) {
     for (const end of ['min', 'max']) setFlagsFromString(`--${end}-semi-space-size=${ROOM_FOR_YOUNG}`);
   }
   const worker = new Worker(new URL('./run-job.js', import.meta.url), { workerData: job });
@@ -96,6 +96,15 @@ function startJob(job: Job): RunningJob {
     give: (folder) => worker.postMessage(folder),
     end: async () => void (await worker.terminate()),
   };
+}
+
+/** 0 where there is no such file: the job will say so. */
+function bytesOf(file: string): number {
+  try {
+    return statSync(file).size;
+  } catch {
+    return 0;
+  }
 }
 
 // errors lose what is not standard about them on their way between threads

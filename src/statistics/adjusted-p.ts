@@ -35,21 +35,30 @@ export function benjaminiHochberg(p: Numbers): number[] {
  */
 export function holm(p: Numbers): number[] {
   requireProbabilities('holm', p);
-  const sorted = Float64Array.from(p).sort();
-  const n = sorted.length;
-  const adjusted = new Float64Array(n).fill(1);
+  const n = p.length;
+  const sorted = smallest(p);
+  const adjusted = new Float64Array(sorted.length);
   let most = 0;
-  let ones = 0;
-  for (; ones < n; ones++) {
-    most = Math.max(most, (n - ones) * sorted[ones]);
-    if (most >= 1) break;
-    adjusted[ones] = most;
+  for (let at = 0; at < sorted.length; at++) {
+    most = Math.min(1, Math.max(most, (n - at) * sorted[at]));
+    adjusted[at] = most;
   }
-  // equal values end equal, so each finds its own by its size: many times as fast as sorting positions
-  const from = ones < n ? sorted[ones] : Number.POSITIVE_INFINITY;
+  const largest = sorted.length === 0 ? -1 : sorted[sorted.length - 1];
   const result = new Array<number>(n);
-  for (let i = 0; i < n; i++) result[i] = p[i] >= from ? 1 : adjusted[placeOf(p[i], sorted)];
+  // equal values end equal, so each finds its own by its size: many times as fast as sorting positions
+  for (let i = 0; i < n; i++) result[i] = p[i] > largest ? 1 : adjusted[placeOf(p[i], sorted)];
   return result;
+}
+
+/** The p-values that may stay below 1, rising: those above 2/n cannot where at least half of all n are above it. */
+function smallest(p: Numbers): Float64Array {
+  const limit = 2 / p.length;
+  let few = 0;
+  for (let i = 0; i < p.length; i++) if (p[i] <= limit) few++;
+  if (2 * few > p.length) return Float64Array.from(p).sort();
+  const chosen = new Float64Array(few);
+  for (let i = 0, at = 0; i < p.length; i++) if (p[i] <= limit) chosen[at++] = p[i];
+  return chosen.sort();
 }
 
 /** Indices from the smallest p to the largest. */

@@ -116,12 +116,21 @@ export function listConflicts(
   shells: readonly ShellInOrder[],
   most = 1000,
 ): { lower: number; upper: number; shortfall: number }[] {
-  return conflicts.conflicts
-    .flatMap(({ lower, bed, from }) =>
-      conflicts.sorted[bed]
-        .slice(from)
-        .map((upper) => ({ lower, upper, shortfall: shells[upper].x - shells[lower].x })),
-    )
-    .sort((a, b) => b.shortfall - a.shortfall || a.lower - b.lower || a.upper - b.upper)
-    .slice(0, most);
+  type Pair = { lower: number; upper: number; shortfall: number };
+  const wider = (a: Pair, b: Pair) => b.shortfall - a.shortfall || a.lower - b.lower || a.upper - b.upper;
+  let kept: Pair[] = [];
+  let narrowest = Number.NEGATIVE_INFINITY;
+  for (const { lower, bed, from } of conflicts.conflicts) {
+    for (let at = from; at < conflicts.sorted[bed].length; at++) {
+      const upper = conflicts.sorted[bed][at];
+      const shortfall = shells[upper].x - shells[lower].x;
+      if (shortfall < narrowest) continue;
+      kept.push({ lower, upper, shortfall });
+      // a large survey has millions of pairs, so what can't be among the widest any more is let go in between
+      if (kept.length < 4 * most + 1000) continue;
+      kept = kept.sort(wider).slice(0, most);
+      narrowest = kept.length < most ? narrowest : kept[most - 1].shortfall;
+    }
+  }
+  return kept.sort(wider).slice(0, most);
 }
