@@ -68,30 +68,68 @@ const bedKey = (row: { readonly section: string; readonly bed: string }) => `${r
 /** Every bed of the survey by `section/bed`, with its number: sites first, then beds no site is known of. */
 function bedNumbers(findings: Findings): Map<string, number> {
   const numbers = new Map<string, number>();
-  for (const row of [...findings.sites, ...findings.beds])
-    if (!numbers.has(bedKey(row))) numbers.set(bedKey(row), numbers.size);
+  for (const rows of [findings.sites, findings.beds])
+    for (const row of rows) {
+      const key = bedKey(row);
+      if (!numbers.has(key)) numbers.set(key, numbers.size);
+    }
   return numbers;
 }
 
-/** The main clocks of the findings, each with what its figures draw. */
-export function clockViews(findings: Findings): ClockView[] {
+/** The rows by `section/bed`; of several of one bed the last. */
+function byBed<Row extends { readonly section: string; readonly bed: string }>(rows: readonly Row[]): Map<string, Row> {
+  const found = new Map<string, Row>();
+  for (const row of rows) found.set(bedKey(row), row);
+  return found;
+}
+
+/** The shells of each of these clocks by `section/bed`, in one pass over the shells of the survey. */
+function shellsByClock(findings: Findings, clocks: readonly ClockRow[]): Map<string, Map<string, ShellView[]>> {
+  const all = new Map(clocks.map(({ clock }) => [clock, new Map<string, ShellView[]>()]));
+  let last: ShellRow | null = null;
+  let list: ShellView[] | null = null;
+  findings.shells.forEach((row, id) => {
+    // shells of one bed mostly follow each other, and then need no look-up
+    if (last === null || row.bed !== last.bed || row.section !== last.section || row.clock !== last.clock)
+      list = listOf(all.get(row.clock), bedKey(row));
+    list?.push({ id, row });
+    last = row;
+  });
+  return all;
+}
+
+function listOf<Item>(lists: Map<string, Item[]> | undefined, key: string): Item[] | null {
+  if (lists === undefined) return null;
+  const known = lists.get(key);
+  if (known !== undefined) return known;
+  const list: Item[] = [];
+  lists.set(key, list);
+  return list;
+}
+
+/** The main clocks of the findings, each with what its figures draw; worked out once for the figures and the page. */
+export function clockViews(findings: Findings): readonly ClockView[] {
+  const known = drawn.get(findings);
+  if (known !== undefined) return known;
+  const views = newViews(findings);
+  drawn.set(findings, views);
+  return views;
+}
+
+const drawn = new WeakMap<Findings, readonly ClockView[]>();
+
+function newViews(findings: Findings): ClockView[] {
   const mains = findings.clocks.filter((clock) => clock.main);
   const numbers = bedNumbers(findings);
-  const sites = new Map(findings.sites.map((site) => [bedKey(site), site]));
+  const sites = byBed(findings.sites);
+  const shellsOf = shellsByClock(findings, mains);
   return mains.map((clock, index) => {
     const own = <Row extends { readonly clock: string }>(rows: readonly Row[]) =>
       rows.filter((row) => row.clock === clock.clock);
     const zones = [...own(findings.zones)].sort((a, b) => zoneNumber(a.zone) - zoneNumber(b.zone));
     const zoneIndex = new Map(zones.map((zone, i) => [zone.zone, i]));
-    const orders = new Map(own(findings.order).map((row) => [bedKey(row), row]));
-    const shells = new Map<string, ShellView[]>();
-    findings.shells.forEach((row, id) => {
-      if (row.clock !== clock.clock) return;
-      const key = bedKey(row);
-      const list = shells.get(key);
-      if (list === undefined) shells.set(key, [{ id, row }]);
-      else list.push({ id, row });
-    });
+    const orders = byBed(own(findings.order));
+    const shells = shellsOf.get(clock.clock)!;
     const beds = own(findings.beds)
       .map((row): BedView => {
         const key = bedKey(row);
@@ -107,7 +145,9 @@ export function clockViews(findings: Findings): ClockView[] {
       })
       .sort((a, b) => a.id - b.id);
     const present = new Set(beds.map((bed) => bed.row.section));
-    const listed = findings.section_order.filter((section) => present.has(section));
+    // a section of the order that is there, then what the order does not name
+    const sections = new Set(findings.section_order.filter((section) => present.has(section)));
+    for (const section of present) sections.add(section);
     return {
       clock,
       index,
@@ -119,7 +159,7 @@ export function clockViews(findings: Findings): ClockView[] {
       counts: own(findings.zone_counts),
       beds,
       byKey: new Map(beds.map((bed) => [bed.key, bed])),
-      sections: [...listed, ...[...present].filter((section) => !listed.includes(section))],
+      sections: [...sections],
       relations: own(findings.relations),
       gradient: findings.gradients.find((gradient) => gradient.clock === clock.clock) ?? null,
       zoned: zones.length > 1,

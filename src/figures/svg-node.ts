@@ -14,12 +14,17 @@ const SVG = 'http://www.w3.org/2000/svg';
  * ```
  */
 export function escapeMarkup(text: string): string {
+  if (!SPECIAL.test(text)) return text;
   return text
     .replace(FORBIDDEN, '\uFFFD')
     .replace(/[&<>"']/g, (c) =>
       c === '&' ? '&amp;' : c === '<' ? '&lt;' : c === '>' ? '&gt;' : c === '"' ? '&quot;' : '&#39;',
     );
 }
+
+// Most texts hold nothing to escape, which one look tells; halves of pairs count too, whether alone or not.
+// biome-ignore lint/suspicious/noControlCharactersInRegex: they are what is looked for
+const SPECIAL = /[&<>"'\u0000-\u0008\u000B\u000C\u000E-\u001F\uD800-\uDFFF\uFFFE\uFFFF]/;
 
 // Control characters, lone surrogates and the two non-characters have no place in XML.
 // biome-ignore lint/suspicious/noControlCharactersInRegex: they are what is looked for

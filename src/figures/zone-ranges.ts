@@ -11,14 +11,7 @@ const STEP = 40;
 export function zoneRanges(view: ClockView): Figure | null {
   if (!view.zoned) return null;
   const zones = view.zones.map((zone, i) => ({ zone, i, y: 10 + (i + 0.5) * STEP }));
-  const shells = zones.flatMap(({ i, y }) => {
-    const own = view.beds
-      .filter((bed) => bed.zone === i)
-      .flatMap((bed) => bed.shells.map((shell) => ({ shell, dl: Math.exp(shellRatio(view, bed, shell)) })))
-      .filter(({ shell, dl }) => shell.row.status !== 'set aside' && Number.isFinite(dl));
-    const every = Math.ceil(own.length / 400);
-    return own.filter((_, k) => k % every === 0).map(({ shell, dl }) => ({ x: dl, y, id: shell.id }));
-  });
+  const shells = zones.flatMap(({ i, y }) => ticksOf(view, i).map((tick) => ({ ...tick, y })));
   const [low, high] = padded(
     Math.min(...view.zones.map((zone) => zone.shell_low), ...shells.map((shell) => shell.x)),
     Math.max(...view.zones.map((zone) => zone.shell_high), ...shells.map((shell) => shell.x)),
@@ -105,6 +98,32 @@ export function zoneRanges(view: ClockView): Figure | null {
     height: bottom + 42,
     body: [body],
   });
+}
+
+/** Most shells of one zone that are drawn. */
+const MOST_TICKS = 400;
+
+/** D/L of the shells of a zone that were not set aside; of very many every so manieth. */
+function ticksOf(view: ClockView, zone: number): { readonly x: number; readonly id: number }[] {
+  let count = 0;
+  forEachShell(view, zone, () => count++);
+  const every = Math.ceil(count / MOST_TICKS);
+  const ticks: { x: number; id: number }[] = [];
+  let k = 0;
+  forEachShell(view, zone, (x, id) => {
+    if (k++ % every === 0) ticks.push({ x, id });
+  });
+  return ticks;
+}
+
+function forEachShell(view: ClockView, zone: number, visit: (dl: number, id: number) => void): void {
+  for (const bed of view.beds) {
+    if (bed.zone !== zone) continue;
+    for (const shell of bed.shells) {
+      const dl = Math.exp(shellRatio(view, bed, shell));
+      if (shell.row.status !== 'set aside' && Number.isFinite(dl)) visit(dl, shell.id);
+    }
+  }
 }
 
 const overlapText = (overlap: number) => (overlap < 0.005 ? '< 0.01' : overlap.toFixed(2));
