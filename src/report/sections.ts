@@ -30,12 +30,12 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
     figures
       .filter((figure) => views.some((view) => figure.name.replace(/-part-\d+$/, '') === kind + view.suffix))
       .map((figure) => figureBlock(figure, figures, views));
-  const evidenceOf = (view: ClockView, about: 'shell' | 'relation') =>
-    new Map(
-      findings.evidence
-        .filter((row) => row.about === about && row.clock === view.clock.clock)
-        .map((row) => [row.name, row.sentences]),
-    );
+  const evidenceOf = (view: ClockView, about: 'shell' | 'relation') => {
+    const sentences = new Map<string, readonly string[]>();
+    for (const row of findings.evidence)
+      if (row.about === about && row.clock === view.clock.clock) sentences.set(row.name, row.sentences);
+    return sentences;
+  };
   const assumed = assumedNote(views);
   /** A part whose numbers rest on the scatter. */
   const part = (id: string, heading: string, short: string, body: HtmlValue) =>
