@@ -9,6 +9,7 @@ import type {
   OrderRow,
   RelationRow,
   ShellRow,
+  ShellStatus,
   ZoneCountRow,
   ZoneRow,
 } from '../../model/index.js';
@@ -102,12 +103,13 @@ function clockFacts(findings: Findings, clock: ClockRow): ClockFacts {
     rows.filter((row) => row.clock === clock.clock);
   const relations = mine(findings.relations);
   const after = (verdict: RelationRow['verdict_after']) => relations.filter((row) => row.verdict_after === verdict);
-  const odd = mine(findings.shells).filter(({ status }) => status !== 'kept');
+  const shells = (status: ShellStatus) =>
+    findings.shells.filter((row) => row.status === status && row.clock === clock.clock);
   return {
     clock,
     forced: findings.options.zones,
     models: mine(findings.zone_counts),
-    choice: mine(findings.evidence).find(({ about }) => about === 'clock')?.sentences[0] ?? null,
+    choice: findings.evidence.find((row) => row.about === 'clock' && row.clock === clock.clock)?.sentences[0] ?? null,
     zones: [...mine(findings.zones)].sort((a, b) => b.dl_mean - a.dl_mean),
     adjacent: mine(findings.adjacent_zones),
     shares: mine(findings.shares),
@@ -124,10 +126,7 @@ function clockFacts(findings: Findings, clock: ClockRow): ClockFacts {
     inconsistent_sections: mine(findings.sections)
       .filter(({ verdict }) => verdict === 'inconsistent')
       .map(({ section }) => section),
-    odd_shells: [
-      ...odd.filter(({ status }) => status === 'set aside'),
-      ...odd.filter(({ status }) => status === 'doubtful'),
-    ],
+    odd_shells: [...shells('set aside'), ...shells('doubtful')],
     conflicts: mine(findings.conflicts),
     ...remarksOf(findings, clock.clock),
   };
