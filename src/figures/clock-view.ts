@@ -25,6 +25,8 @@ export interface BedView {
   /** Index of its zone, 0 the youngest; -1 without one. */
   readonly zone: number;
   readonly shells: readonly ShellView[];
+  /** Those of its shells that are set aside or doubtful. */
+  readonly odd: readonly ShellView[];
 }
 
 /** One shell with its number in findings.shells. */
@@ -83,28 +85,36 @@ function byBed<Row extends { readonly section: string; readonly bed: string }>(r
   return found;
 }
 
+interface ShellsOfBed {
+  readonly shells: ShellView[];
+  readonly odd: ShellView[];
+}
+
 /** The shells of each of these clocks by `section/bed`, in one pass over the shells of the survey. */
-function shellsByClock(findings: Findings, clocks: readonly ClockRow[]): Map<string, Map<string, ShellView[]>> {
-  const all = new Map(clocks.map(({ clock }) => [clock, new Map<string, ShellView[]>()]));
+function shellsByClock(findings: Findings, clocks: readonly ClockRow[]): Map<string, Map<string, ShellsOfBed>> {
+  const all = new Map(clocks.map(({ clock }) => [clock, new Map<string, ShellsOfBed>()]));
   let last: ShellRow | null = null;
-  let list: ShellView[] | null = null;
+  let own: ShellsOfBed | null = null;
   findings.shells.forEach((row, id) => {
     // shells of one bed mostly follow each other, and then need no look-up
     if (last === null || row.bed !== last.bed || row.section !== last.section || row.clock !== last.clock)
-      list = listOf(all.get(row.clock), bedKey(row));
-    list?.push({ id, row });
+      own = ofBed(all.get(row.clock), bedKey(row));
     last = row;
+    if (own === null) return;
+    const shell = { id, row };
+    own.shells.push(shell);
+    if (row.status !== 'kept') own.odd.push(shell);
   });
   return all;
 }
 
-function listOf<Item>(lists: Map<string, Item[]> | undefined, key: string): Item[] | null {
-  if (lists === undefined) return null;
-  const known = lists.get(key);
+function ofBed(beds: Map<string, ShellsOfBed> | undefined, key: string): ShellsOfBed | null {
+  if (beds === undefined) return null;
+  const known = beds.get(key);
   if (known !== undefined) return known;
-  const list: Item[] = [];
-  lists.set(key, list);
-  return list;
+  const own = { shells: [], odd: [] };
+  beds.set(key, own);
+  return own;
 }
 
 /** The main clocks of the findings, each with what its figures draw; worked out once for the figures and the page. */
@@ -140,7 +150,8 @@ function newViews(findings: Findings): ClockView[] {
           site: sites.get(key) ?? null,
           order: orders.get(key) ?? null,
           zone: row.zone === null ? -1 : (zoneIndex.get(row.zone) ?? -1),
-          shells: shells.get(key) ?? [],
+          shells: shells.get(key)?.shells ?? [],
+          odd: shells.get(key)?.odd ?? [],
         };
       })
       .sort((a, b) => a.id - b.id);

@@ -105,25 +105,21 @@ const MOST_TICKS = 400;
 
 /** D/L of the shells of a zone that were not set aside; of very many every so manieth. */
 function ticksOf(view: ClockView, zone: number): { readonly x: number; readonly id: number }[] {
-  let count = 0;
-  forEachShell(view, zone, () => count++);
-  const every = Math.ceil(count / MOST_TICKS);
-  const ticks: { x: number; id: number }[] = [];
-  let k = 0;
-  forEachShell(view, zone, (x, id) => {
-    if (k++ % every === 0) ticks.push({ x, id });
-  });
-  return ticks;
-}
-
-function forEachShell(view: ClockView, zone: number, visit: (dl: number, id: number) => void): void {
+  const ratios: number[] = [];
+  const ids: number[] = [];
   for (const bed of view.beds) {
     if (bed.zone !== zone) continue;
     for (const shell of bed.shells) {
       const dl = Math.exp(shellRatio(view, bed, shell));
-      if (shell.row.status !== 'set aside' && Number.isFinite(dl)) visit(dl, shell.id);
+      if (shell.row.status === 'set aside' || !Number.isFinite(dl)) continue;
+      ratios.push(dl);
+      ids.push(shell.id);
     }
   }
+  const every = Math.ceil(ids.length / MOST_TICKS);
+  const ticks: { x: number; id: number }[] = [];
+  for (let i = 0; i < ids.length; i += every) ticks.push({ x: ratios[i], id: ids[i] });
+  return ticks;
 }
 
 const overlapText = (overlap: number) => (overlap < 0.005 ? '< 0.01' : overlap.toFixed(2));

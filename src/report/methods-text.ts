@@ -46,8 +46,8 @@ function averages(findings: Findings, views: readonly ClockView[], cite: Cite): 
   ];
 }
 
-const shellsCounted = ({ shells }: BedView): number =>
-  shells.reduce((count, shell) => (shell.row.status === 'set aside' ? count : count + 1), 0);
+const shellsCounted = ({ shells, odd }: BedView): number =>
+  shells.length - odd.filter((shell) => shell.row.status === 'set aside').length;
 
 function scatterOf(view: ClockView): Markup {
   const { clock, spread } = view.clock;
@@ -57,9 +57,13 @@ function scatterOf(view: ClockView): Markup {
 
 function screening(findings: Findings, cite: Cite): HtmlValue {
   if (findings.shell_ratios.length === 0) return null;
-  const [first] = findings.shell_ratios;
-  const several = findings.shell_ratios.some((shell) => hasSeveral(shell.ratios));
-  const twoFractions = findings.shell_ratios.some((shell) => shell.fraction !== first.fraction);
+  const [{ fraction }] = findings.shell_ratios;
+  let several = false;
+  let twoFractions = false;
+  for (const shell of findings.shell_ratios) {
+    several ||= hasSeveral(shell.ratios);
+    twoFractions ||= shell.fraction !== fraction;
+  }
   return [
     html`Shells were screened${cite('kosnik')}, each rule where the table holds what it needs: high serine, replicates that disagree, low yield`,
     several

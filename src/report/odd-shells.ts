@@ -28,7 +28,7 @@ interface OddShell {
 function shellsThatAre(status: ShellStatus, view: ClockView): OddShell[] {
   const found: OddShell[] = [];
   for (const bed of view.beds)
-    for (const shell of bed.shells) if (shell.row.status === status) found.push({ bed: bed.id, shell });
+    for (const shell of bed.odd) if (shell.row.status === status) found.push({ bed: bed.id, shell });
   return found;
 }
 

@@ -81,7 +81,7 @@ function odd(view: ClockView): Markup | null {
 function setAsideByReading(view: ClockView): Map<ShellReading, ShellView[]> {
   const kinds = new Map<ShellReading, ShellView[]>();
   for (const bed of view.beds)
-    for (const shell of bed.shells) {
+    for (const shell of bed.odd) {
       if (shell.row.status !== 'set aside') continue;
       const kind = kinds.get(shell.row.reading);
       if (kind === undefined) kinds.set(shell.row.reading, [shell]);

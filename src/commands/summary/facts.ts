@@ -9,7 +9,6 @@ import type {
   OrderRow,
   RelationRow,
   ShellRow,
-  ShellStatus,
   ZoneCountRow,
   ZoneRow,
 } from '../../model/index.js';
@@ -103,8 +102,7 @@ function clockFacts(findings: Findings, clock: ClockRow): ClockFacts {
     rows.filter((row) => row.clock === clock.clock);
   const relations = mine(findings.relations);
   const after = (verdict: RelationRow['verdict_after']) => relations.filter((row) => row.verdict_after === verdict);
-  const shells = (status: ShellStatus) =>
-    findings.shells.filter((row) => row.status === status && row.clock === clock.clock);
+  const odd = findings.shells.filter((row) => row.status !== 'kept' && row.clock === clock.clock);
   return {
     clock,
     forced: findings.options.zones,
@@ -126,7 +124,10 @@ function clockFacts(findings: Findings, clock: ClockRow): ClockFacts {
     inconsistent_sections: mine(findings.sections)
       .filter(({ verdict }) => verdict === 'inconsistent')
       .map(({ section }) => section),
-    odd_shells: [...shells('set aside'), ...shells('doubtful')],
+    odd_shells: [
+      ...odd.filter(({ status }) => status === 'set aside'),
+      ...odd.filter(({ status }) => status === 'doubtful'),
+    ],
     conflicts: mine(findings.conflicts),
     ...remarksOf(findings, clock.clock),
   };
