@@ -109,7 +109,9 @@ export class SvgNode {
   get outerHTML(): string {
     if (this.name === '#text') return escapeMarkup(this.text);
     let out = `<${this.name}`;
-    for (const [name, value] of this.attributes) out += ` ${name}="${escapeMarkup(value)}"`;
+    this.attributes.forEach((value, name) => {
+      out += ` ${name}="${escapeMarkup(value)}"`;
+    });
     if (this.childNodes.length === 0) return `${out}/>`;
     out += '>';
     for (const child of this.childNodes) out += child.outerHTML;
@@ -145,7 +147,8 @@ export type Attributes = Readonly<Record<string, string | number | null | undefi
  */
 export function element(name: string, attributes: Attributes = {}, ...children: (SvgNode | string)[]): SvgNode {
   const node = new SvgNode(name);
-  for (const [key, value] of Object.entries(attributes)) {
+  for (const key in attributes) {
+    const value = attributes[key];
     if (value === undefined || value === null) continue;
     node.setAttribute(key, typeof value === 'number' ? round(value) : value);
   }
