@@ -1,6 +1,6 @@
 import * as Plot from '@observablehq/plot';
 import { AMINO_ACIDS, type AminoAcid, type ByAminoAcid, type Findings, type ShellRatios } from '../model/index.js';
-import type { BedView, ClockView, ShellView } from './clock-view.js';
+import { type BedView, type ClockView, type ShellView, shellsOf } from './clock-view.js';
 import { type Figure, finishFigure, label } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks } from './house-plot.js';
 import { extent, padded } from './numbers.js';
@@ -68,7 +68,7 @@ function entriesOf(view: ClockView, findings: Findings): Entry[] {
     if (isOn(view, row)) ratios.set(`${row.section}/${row.bed}/${row.shell}`, row.ratios);
   const entries: Entry[] = [];
   for (const bed of view.beds)
-    for (const shell of bed.shells) {
+    for (const shell of shellsOf(view, bed)) {
       const own = ratios.get(`${bed.key}/${shell.row.shell}`);
       if (own !== undefined) entries.push({ bed, shell, own });
     }

@@ -11,7 +11,11 @@ import type {
   ZoneCountRow,
   ZoneRow,
 } from '../model/index.js';
+import { bedKey } from './bed-key.js';
 import { NO_ZONE, type ZoneInk, zoneInks } from './palette.js';
+import { type ShellView, shellsByClock } from './shells-by-clock.js';
+
+export type { ShellView } from './shells-by-clock.js';
 
 /** One bed on one clock with all that figures say of it. */
 export interface BedView {
@@ -24,15 +28,10 @@ export interface BedView {
   readonly order: OrderRow | null;
   /** Index of its zone, 0 the youngest; -1 without one. */
   readonly zone: number;
-  readonly shells: readonly ShellView[];
+  /** Numbers of its shells in findings.shells: of a very large survey an object a shell would cost too much. */
+  readonly shells: Int32Array;
   /** Those of its shells that are set aside or doubtful. */
   readonly odd: readonly ShellView[];
-}
-
-/** One shell with its number in findings.shells. */
-export interface ShellView {
-  readonly id: number;
-  readonly row: ShellRow;
 }
 
 /** One main clock with its zones, beds and relations, ready to draw. */
@@ -51,6 +50,8 @@ export interface ClockView {
   readonly counts: readonly ZoneCountRow[];
   /** In section and place order, lowest first, sections in coast order. */
   readonly beds: readonly BedView[];
+  /** All shells of the survey, for the numbers of {@link BedView.shells}. */
+  readonly shellRows: readonly ShellRow[];
   readonly byKey: ReadonlyMap<string, BedView>;
   /** Sections with beds of this clock, in coast order. */
   readonly sections: readonly string[];
@@ -64,8 +65,9 @@ export interface ClockView {
   readonly assumedScatter: number | null;
 }
 
-/** `section/bed` of a row. */
-const bedKey = (row: { readonly section: string; readonly bed: string }) => `${row.section}/${row.bed}`;
+/** Every shell of a bed with its number, where they are drawn or listed one by one. */
+export const shellsOf = (view: ClockView, bed: BedView): ShellView[] =>
+  Array.from(bed.shells, (id) => ({ id, row: view.shellRows[id] }));
 
 /** Every bed of the survey by `section/bed`, with its number: sites first, then beds no site is known of. */
 function bedNumbers(findings: Findings): Map<string, number> {
@@ -85,38 +87,6 @@ function byBed<Row extends { readonly section: string; readonly bed: string }>(r
   return found;
 }
 
-interface ShellsOfBed {
-  readonly shells: ShellView[];
-  readonly odd: ShellView[];
-}
-
-/** The shells of each of these clocks by `section/bed`, in one pass over the shells of the survey. */
-function shellsByClock(findings: Findings, clocks: readonly ClockRow[]): Map<string, Map<string, ShellsOfBed>> {
-  const all = new Map(clocks.map(({ clock }) => [clock, new Map<string, ShellsOfBed>()]));
-  let last: ShellRow | null = null;
-  let own: ShellsOfBed | null = null;
-  findings.shells.forEach((row, id) => {
-    // shells of one bed mostly follow each other, and then need no look-up
-    if (last === null || row.bed !== last.bed || row.section !== last.section || row.clock !== last.clock)
-      own = ofBed(all.get(row.clock), bedKey(row));
-    last = row;
-    if (own === null) return;
-    const shell = { id, row };
-    own.shells.push(shell);
-    if (row.status !== 'kept') own.odd.push(shell);
-  });
-  return all;
-}
-
-function ofBed(beds: Map<string, ShellsOfBed> | undefined, key: string): ShellsOfBed | null {
-  if (beds === undefined) return null;
-  const known = beds.get(key);
-  if (known !== undefined) return known;
-  const own = { shells: [], odd: [] };
-  beds.set(key, own);
-  return own;
-}
-
 /** The main clocks of the findings, each with what its figures draw; worked out once for the figures and the page. */
 export function clockViews(findings: Findings): readonly ClockView[] {
   const known = drawn.get(findings);
@@ -132,7 +102,7 @@ function newViews(findings: Findings): ClockView[] {
   const mains = findings.clocks.filter((clock) => clock.main);
   const numbers = bedNumbers(findings);
   const sites = byBed(findings.sites);
-  const shellsOf = shellsByClock(findings, mains);
+  const shellsOf = shellsByClock(findings.shells, mains);
   return mains.map((clock, index) => {
     const own = <Row extends { readonly clock: string }>(rows: readonly Row[]) =>
       rows.filter((row) => row.clock === clock.clock);
@@ -150,7 +120,7 @@ function newViews(findings: Findings): ClockView[] {
           site: sites.get(key) ?? null,
           order: orders.get(key) ?? null,
           zone: row.zone === null ? -1 : (zoneIndex.get(row.zone) ?? -1),
-          shells: shells.get(key)?.shells ?? [],
+          shells: shells.get(key)?.shells ?? new Int32Array(0),
           odd: shells.get(key)?.odd ?? [],
         };
       })
@@ -169,6 +139,7 @@ function newViews(findings: Findings): ClockView[] {
       adjacent: own(findings.adjacent_zones),
       counts: own(findings.zone_counts),
       beds,
+      shellRows: findings.shells,
       byKey: new Map(beds.map((bed) => [bed.key, bed])),
       sections: [...sections],
       relations: own(findings.relations),
@@ -205,12 +176,10 @@ const slug = (name: string) =>
 /**
  * Log ratio of a shell as its bed's mean has it: with the slope taken out where one is used, at the gradient's centre.
  */
-export function shellRatio(view: ClockView, bed: BedView, shell: ShellView): number {
+export function shellRatio(view: ClockView, bed: BedView, shell: ShellRow): number {
   const { gradient } = view;
   const at = bed.site?.gradient ?? null;
-  return gradient?.used && at !== null
-    ? shell.row.log_ratio - gradient.slope * (at - gradient.centre)
-    : shell.row.log_ratio;
+  return gradient?.used && at !== null ? shell.log_ratio - gradient.slope * (at - gradient.centre) : shell.log_ratio;
 }
 
 /** Said of an axis or a caption where the slope was taken out: at which value of the gradient the ratios hold. */

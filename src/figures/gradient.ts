@@ -16,7 +16,7 @@ export function ratioAgainstGradient(view: ClockView): Figure | null {
   if (gradient === null) return null;
   const beds = view.beds.flatMap((bed) => {
     const x = bed.site?.gradient ?? null;
-    const y = measuredMean(bed);
+    const y = measuredMean(view, bed);
     return x === null || y === null || !Number.isFinite(y) ? [] : [{ bed, x, y, se: bed.row.log_se ?? 0 }];
   });
   if (beds.length < 2) return null;
@@ -112,12 +112,12 @@ export function ratioAgainstGradient(view: ClockView): Figure | null {
   });
 }
 
-function measuredMean({ row, shells }: BedView): number | null {
+function measuredMean({ shellRows }: ClockView, { row, shells }: BedView): number | null {
   let sum = 0;
   let kept = 0;
-  for (const shell of shells) {
-    if (shell.row.status === 'set aside') continue;
-    sum += Math.log(shell.row.dl);
+  for (const id of shells) {
+    if (shellRows[id].status === 'set aside') continue;
+    sum += Math.log(shellRows[id].dl);
     kept++;
   }
   if (kept > 0) return sum / kept;

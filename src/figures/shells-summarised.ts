@@ -22,8 +22,10 @@ function groupOf(view: ClockView, zone: number): Group {
   for (const bed of view.beds) {
     if (bed.zone !== zone) continue;
     beds++;
-    for (const shell of bed.shells)
-      (shell.row.status === 'set aside' ? aside : kept).push(shellRatio(view, bed, shell));
+    for (const id of bed.shells) {
+      const shell = view.shellRows[id];
+      (shell.status === 'set aside' ? aside : kept).push(shellRatio(view, bed, shell));
+    }
   }
   return { zone, kept, aside, beds };
 }

@@ -109,11 +109,12 @@ function ticksOf(view: ClockView, zone: number): { readonly x: number; readonly 
   const ids: number[] = [];
   for (const bed of view.beds) {
     if (bed.zone !== zone) continue;
-    for (const shell of bed.shells) {
+    for (const id of bed.shells) {
+      const shell = view.shellRows[id];
       const dl = Math.exp(shellRatio(view, bed, shell));
-      if (shell.row.status === 'set aside' || !Number.isFinite(dl)) continue;
+      if (shell.status === 'set aside' || !Number.isFinite(dl)) continue;
       ratios.push(dl);
-      ids.push(shell.id);
+      ids.push(id);
     }
   }
   const every = Math.ceil(ids.length / MOST_TICKS);

@@ -192,9 +192,9 @@ export function shellsTable(view: ClockView): Markup {
 function firstShells(view: ClockView, most: number): { readonly bed: BedView; readonly shell: ShellView }[] {
   const first: { bed: BedView; shell: ShellView }[] = [];
   for (const bed of view.beds)
-    for (const shell of bed.shells) {
+    for (const id of bed.shells) {
       if (first.length === most) return first;
-      first.push({ bed, shell });
+      first.push({ bed, shell: { id, row: view.shellRows[id] } });
     }
   return first;
 }
