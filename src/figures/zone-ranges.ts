@@ -1,5 +1,5 @@
 import * as Plot from '@observablehq/plot';
-import { atCentre, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
+import { atCentre, type BedView, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, tagged } from './house-plot.js';
 import { padded, ratio } from './numbers.js';
@@ -105,22 +105,21 @@ const MOST_TICKS = 400;
 
 /** D/L of the shells of a zone that were not set aside; of very many every so manieth. */
 function ticksOf(view: ClockView, zone: number): { readonly x: number; readonly id: number }[] {
-  const ratios: number[] = [];
-  const ids: number[] = [];
-  for (const bed of view.beds) {
-    if (bed.zone !== zone) continue;
-    for (const id of bed.shells) {
-      const shell = view.shellRows[id];
-      const dl = Math.exp(shellRatio(view, bed, shell));
-      if (shell.status === 'set aside' || !Number.isFinite(dl)) continue;
-      ratios.push(dl);
-      ids.push(id);
-    }
-  }
-  const every = Math.ceil(ids.length / MOST_TICKS);
+  const beds = view.beds.filter((bed) => bed.zone === zone);
+  const count = beds.reduce((sum, bed) => sum + bed.shells.length - setAside(bed).size, 0);
+  const every = Math.ceil(count / MOST_TICKS);
   const ticks: { x: number; id: number }[] = [];
-  for (let i = 0; i < ids.length; i += every) ticks.push({ x: ratios[i], id: ids[i] });
+  let k = 0;
+  for (const bed of beds) {
+    const aside = setAside(bed);
+    for (const id of bed.shells)
+      if (!aside.has(id) && k++ % every === 0)
+        ticks.push({ x: Math.exp(shellRatio(view, bed, view.shellRows[id])), id });
+  }
   return ticks;
 }
+
+const setAside = ({ odd }: BedView): ReadonlySet<number> =>
+  new Set(odd.flatMap(({ id, row }) => (row.status === 'set aside' ? [id] : [])));
 
 const overlapText = (overlap: number) => (overlap < 0.005 ? '< 0.01' : overlap.toFixed(2));
