@@ -1,9 +1,9 @@
 import * as Plot from '@observablehq/plot';
-import { AMINO_ACIDS, type AminoAcid, type ByAminoAcid, type Findings } from '../model/index.js';
-import type { BedView, ClockView, ShellView } from './clock-view.js';
+import { AMINO_ACIDS, type AminoAcid, type ByAminoAcid, type Findings, type ShellRatios } from '../model/index.js';
+import { type BedView, type ClockView, type ShellView, shellsOf } from './clock-view.js';
 import { type Figure, finishFigure, label } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks } from './house-plot.js';
-import { padded } from './numbers.js';
+import { extent, padded } from './numbers.js';
 import { type ShellPoint, shellDots } from './shell-dots.js';
 import { shellSign } from './signs.js';
 import type { SvgNode } from './svg-node.js';
@@ -14,18 +14,9 @@ const MOST_PANELS = 6;
 
 /** Amino acids against each other, one small plot a pair, screened shells by shape; null with fewer than two. */
 export function aminoAcidPairs(view: ClockView, findings: Findings): Figure | null {
-  const ratios = new Map(
-    findings.shell_ratios
-      .filter((row) => row.taxon === view.clock.taxon && row.fraction === view.clock.fraction)
-      .map((row) => [`${row.section}/${row.bed}/${row.shell}`, row.ratios]),
-  );
-  const shells = view.beds.flatMap((bed) =>
-    bed.shells.flatMap((shell) => {
-      const own = ratios.get(`${bed.key}/${shell.row.shell}`);
-      return own === undefined ? [] : [{ bed, shell, own }];
-    }),
-  );
-  const pairs = commonPairs(shells.map((entry) => entry.own)).slice(0, MOST_PANELS);
+  if (!findings.shell_ratios.some((row) => isOn(view, row) && hasTwo(row.ratios))) return null;
+  const shells = entriesOf(view, findings);
+  const pairs = commonPairs(shells).slice(0, MOST_PANELS);
   if (pairs.length === 0) return null;
   const across = Math.min(3, pairs.length === 4 ? 2 : pairs.length);
   const gap = 14;
@@ -62,6 +53,28 @@ interface Entry {
   readonly own: ByAminoAcid;
 }
 
+const isOn = ({ clock }: ClockView, row: ShellRatios) => row.taxon === clock.taxon && row.fraction === clock.fraction;
+
+function hasTwo(ratios: ByAminoAcid): boolean {
+  let count = 0;
+  for (const name in ratios) if (ratios[name as AminoAcid] !== undefined && ++count === 2) return true;
+  return false;
+}
+
+/** The shells of a clock with all their ratios. */
+function entriesOf(view: ClockView, findings: Findings): Entry[] {
+  const ratios = new Map<string, ByAminoAcid>();
+  for (const row of findings.shell_ratios)
+    if (isOn(view, row)) ratios.set(`${row.section}/${row.bed}/${row.shell}`, row.ratios);
+  const entries: Entry[] = [];
+  for (const bed of view.beds)
+    for (const shell of shellsOf(view, bed)) {
+      const own = ratios.get(`${bed.key}/${shell.row.shell}`);
+      if (own !== undefined) entries.push({ bed, shell, own });
+    }
+  return entries;
+}
+
 function panel(
   view: ClockView,
   shells: readonly Entry[],
@@ -72,12 +85,13 @@ function panel(
   left: number,
   top: number,
 ): SvgNode {
-  const points = shells.flatMap(({ bed, shell, own }): ShellPoint[] => {
+  const points: ShellPoint[] = [];
+  for (const { bed, shell, own } of shells) {
     const [a, b] = [own[first], own[second]];
-    return a === undefined || b === undefined ? [] : [{ bed, shell, x: Math.log(a), y: Math.log(b) }];
-  });
-  const x = padded(Math.min(...points.map((p) => p.x)), Math.max(...points.map((p) => p.x)));
-  const y = padded(Math.min(...points.map((p) => p.y)), Math.max(...points.map((p) => p.y)));
+    if (a !== undefined && b !== undefined) points.push({ bed, shell, x: Math.log(a), y: Math.log(b) });
+  }
+  const x = padded(...extent(points, (p) => p.x));
+  const y = padded(...extent(points, (p) => p.y));
   const odd = points.filter((p) => p.shell.row.status !== 'kept');
   const kept = points.filter((p) => p.shell.row.status === 'kept');
   const drawn = [...thinned(kept, MOST_SHELLS / 4), ...thinned(odd, MOST_SHELLS / 10)];
@@ -127,13 +141,16 @@ const thinned = <Item>(items: readonly Item[], most: number): Item[] => {
 };
 
 /** Pairs of amino acids measured together, on most shells first; each with the faster known one on the first axis. */
-function commonPairs(all: readonly ByAminoAcid[]): [AminoAcid, AminoAcid][] {
+function commonPairs(all: readonly Entry[]): [AminoAcid, AminoAcid][] {
+  const counts = AMINO_ACIDS.map(() => new Array<number>(AMINO_ACIDS.length).fill(0));
+  for (const { own } of all) {
+    const measured = [...AMINO_ACIDS.keys()].filter((i) => own[AMINO_ACIDS[i]] !== undefined);
+    for (const first of measured) for (const second of measured) counts[first][second]++;
+  }
   const pairs: { pair: [AminoAcid, AminoAcid]; shells: number }[] = [];
   AMINO_ACIDS.forEach((first, i) => {
-    for (const second of AMINO_ACIDS.slice(i + 1)) {
-      const shells = all.filter((own) => own[first] !== undefined && own[second] !== undefined).length;
-      if (shells >= 2) pairs.push({ pair: [first, second], shells });
-    }
+    for (let k = i + 1; k < AMINO_ACIDS.length; k++)
+      if (counts[i][k] >= 2) pairs.push({ pair: [first, AMINO_ACIDS[k]], shells: counts[i][k] });
   });
   return pairs.sort((a, b) => b.shells - a.shells).map((entry) => entry.pair);
 }

@@ -11,7 +11,11 @@ import type {
   ZoneCountRow,
   ZoneRow,
 } from '../model/index.js';
+import { bedKey } from './bed-key.js';
 import { NO_ZONE, type ZoneInk, zoneInks } from './palette.js';
+import { type ShellView, shellsByClock } from './shells-by-clock.js';
+
+export type { ShellView } from './shells-by-clock.js';
 
 /** One bed on one clock with all that figures say of it. */
 export interface BedView {
@@ -24,13 +28,10 @@ export interface BedView {
   readonly order: OrderRow | null;
   /** Index of its zone, 0 the youngest; -1 without one. */
   readonly zone: number;
-  readonly shells: readonly ShellView[];
-}
-
-/** One shell with its number in findings.shells. */
-export interface ShellView {
-  readonly id: number;
-  readonly row: ShellRow;
+  /** Numbers of its shells in findings.shells: of a very large survey an object a shell would cost too much. */
+  readonly shells: Int32Array;
+  /** Those of its shells that are set aside or doubtful. */
+  readonly odd: readonly ShellView[];
 }
 
 /** One main clock with its zones, beds and relations, ready to draw. */
@@ -49,6 +50,8 @@ export interface ClockView {
   readonly counts: readonly ZoneCountRow[];
   /** In section and place order, lowest first, sections in coast order. */
   readonly beds: readonly BedView[];
+  /** All shells of the survey, for the numbers of {@link BedView.shells}. */
+  readonly shellRows: readonly ShellRow[];
   readonly byKey: ReadonlyMap<string, BedView>;
   /** Sections with beds of this clock, in coast order. */
   readonly sections: readonly string[];
@@ -62,36 +65,51 @@ export interface ClockView {
   readonly assumedScatter: number | null;
 }
 
-/** `section/bed` of a row. */
-const bedKey = (row: { readonly section: string; readonly bed: string }) => `${row.section}/${row.bed}`;
+/** Every shell of a bed with its number, where they are drawn or listed one by one. */
+export const shellsOf = (view: ClockView, bed: BedView): ShellView[] =>
+  Array.from(bed.shells, (id) => ({ id, row: view.shellRows[id] }));
 
 /** Every bed of the survey by `section/bed`, with its number: sites first, then beds no site is known of. */
 function bedNumbers(findings: Findings): Map<string, number> {
   const numbers = new Map<string, number>();
-  for (const row of [...findings.sites, ...findings.beds])
-    if (!numbers.has(bedKey(row))) numbers.set(bedKey(row), numbers.size);
+  for (const rows of [findings.sites, findings.beds])
+    for (const row of rows) {
+      const key = bedKey(row);
+      if (!numbers.has(key)) numbers.set(key, numbers.size);
+    }
   return numbers;
 }
 
-/** The main clocks of the findings, each with what its figures draw. */
-export function clockViews(findings: Findings): ClockView[] {
+/** The rows by `section/bed`; of several of one bed the last. */
+function byBed<Row extends { readonly section: string; readonly bed: string }>(rows: readonly Row[]): Map<string, Row> {
+  const found = new Map<string, Row>();
+  for (const row of rows) found.set(bedKey(row), row);
+  return found;
+}
+
+/** The main clocks of the findings, each with what its figures draw; worked out once for the figures and the page. */
+export function clockViews(findings: Findings): readonly ClockView[] {
+  const known = drawn.get(findings);
+  if (known !== undefined) return known;
+  const views = newViews(findings);
+  drawn.set(findings, views);
+  return views;
+}
+
+const drawn = new WeakMap<Findings, readonly ClockView[]>();
+
+function newViews(findings: Findings): ClockView[] {
   const mains = findings.clocks.filter((clock) => clock.main);
   const numbers = bedNumbers(findings);
-  const sites = new Map(findings.sites.map((site) => [bedKey(site), site]));
+  const sites = byBed(findings.sites);
+  const shellsOf = shellsByClock(findings.shells, mains);
   return mains.map((clock, index) => {
     const own = <Row extends { readonly clock: string }>(rows: readonly Row[]) =>
       rows.filter((row) => row.clock === clock.clock);
     const zones = [...own(findings.zones)].sort((a, b) => zoneNumber(a.zone) - zoneNumber(b.zone));
     const zoneIndex = new Map(zones.map((zone, i) => [zone.zone, i]));
-    const orders = new Map(own(findings.order).map((row) => [bedKey(row), row]));
-    const shells = new Map<string, ShellView[]>();
-    findings.shells.forEach((row, id) => {
-      if (row.clock !== clock.clock) return;
-      const key = bedKey(row);
-      const list = shells.get(key);
-      if (list === undefined) shells.set(key, [{ id, row }]);
-      else list.push({ id, row });
-    });
+    const orders = byBed(own(findings.order));
+    const shells = shellsOf.get(clock.clock)!;
     const beds = own(findings.beds)
       .map((row): BedView => {
         const key = bedKey(row);
@@ -102,12 +120,15 @@ export function clockViews(findings: Findings): ClockView[] {
           site: sites.get(key) ?? null,
           order: orders.get(key) ?? null,
           zone: row.zone === null ? -1 : (zoneIndex.get(row.zone) ?? -1),
-          shells: shells.get(key) ?? [],
+          shells: shells.get(key)?.shells ?? new Int32Array(0),
+          odd: shells.get(key)?.odd ?? [],
         };
       })
       .sort((a, b) => a.id - b.id);
     const present = new Set(beds.map((bed) => bed.row.section));
-    const listed = findings.section_order.filter((section) => present.has(section));
+    // a section of the order that is there, then what the order does not name
+    const sections = new Set(findings.section_order.filter((section) => present.has(section)));
+    for (const section of present) sections.add(section);
     return {
       clock,
       index,
@@ -118,8 +139,9 @@ export function clockViews(findings: Findings): ClockView[] {
       adjacent: own(findings.adjacent_zones),
       counts: own(findings.zone_counts),
       beds,
+      shellRows: findings.shells,
       byKey: new Map(beds.map((bed) => [bed.key, bed])),
-      sections: [...listed, ...[...present].filter((section) => !listed.includes(section))],
+      sections: [...sections],
       relations: own(findings.relations),
       gradient: findings.gradients.find((gradient) => gradient.clock === clock.clock) ?? null,
       zoned: zones.length > 1,
@@ -154,12 +176,10 @@ const slug = (name: string) =>
 /**
  * Log ratio of a shell as its bed's mean has it: with the slope taken out where one is used, at the gradient's centre.
  */
-export function shellRatio(view: ClockView, bed: BedView, shell: ShellView): number {
+export function shellRatio(view: ClockView, bed: BedView, shell: ShellRow): number {
   const { gradient } = view;
   const at = bed.site?.gradient ?? null;
-  return gradient?.used && at !== null
-    ? shell.row.log_ratio - gradient.slope * (at - gradient.centre)
-    : shell.row.log_ratio;
+  return gradient?.used && at !== null ? shell.log_ratio - gradient.slope * (at - gradient.centre) : shell.log_ratio;
 }
 
 /** Said of an axis or a caption where the slope was taken out: at which value of the gradient the ratios hold. */

@@ -49,7 +49,8 @@ export function finishFigure(sheet: Sheet): Figure {
   );
   if (sheet.defs !== undefined && sheet.defs.length > 0) root.append(element('defs', {}, ...sheet.defs));
   root.append(element('rect', { class: 'paper', width: Math.round(width), height: Math.round(height), fill: PAPER }));
-  root.append(...sheet.body);
+  // one by one: a large sheet has more nodes than a call takes arguments
+  for (const node of sheet.body) root.append(node);
   dress(root);
   return { name, title, caption, alt, svg: root.outerHTML };
 }

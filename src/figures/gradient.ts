@@ -1,8 +1,8 @@
 import * as Plot from '@observablehq/plot';
-import { type ClockView, inkOf, zoneTag } from './clock-view.js';
+import { type BedView, type ClockView, inkOf, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
-import { padded, short } from './numbers.js';
+import { extent, padded, short } from './numbers.js';
 import { shorten } from './text-width.js';
 import { FAINT, INK, MOST_BEDS, PAPER, TYPE, WIDE } from './theme.js';
 import { zoneLegend } from './zone-legend.js';
@@ -16,17 +16,11 @@ export function ratioAgainstGradient(view: ClockView): Figure | null {
   if (gradient === null) return null;
   const beds = view.beds.flatMap((bed) => {
     const x = bed.site?.gradient ?? null;
-    const kept = bed.shells.filter((shell) => shell.row.status !== 'set aside');
-    const y =
-      kept.length > 0
-        ? kept.reduce((sum, shell) => sum + Math.log(shell.row.dl), 0) / kept.length
-        : bed.row.dl_mean === null
-          ? null
-          : Math.log(bed.row.dl_mean);
+    const y = measuredMean(view, bed);
     return x === null || y === null || !Number.isFinite(y) ? [] : [{ bed, x, y, se: bed.row.log_se ?? 0 }];
   });
   if (beds.length < 2) return null;
-  const x = padded(Math.min(...beds.map((p) => p.x)), Math.max(...beds.map((p) => p.x)));
+  const x = padded(...extent(beds, (p) => p.x));
   const slope = gradient.used ? gradient.slope : 0;
   const lines = view.zones.map((zone, i) => ({
     i,
@@ -34,11 +28,16 @@ export function ratioAgainstGradient(view: ClockView): Figure | null {
     from: Math.log(zone.dl_mean) + slope * (x[0] - gradient.centre),
     to: Math.log(zone.dl_mean) + slope * (x[1] - gradient.centre),
   }));
-  const all = [
-    ...beds.flatMap((p) => [p.y - 1.96 * p.se, p.y + 1.96 * p.se]),
-    ...lines.flatMap((line) => [line.from, line.to]),
-  ];
-  const y = padded(Math.min(...all), Math.max(...all));
+  const [bedLow, bedHigh] = extent(
+    beds,
+    (p) => p.y - 1.96 * p.se,
+    (p) => p.y + 1.96 * p.se,
+  );
+  const [lineLow, lineHigh] = extent(
+    lines.flatMap((line) => [line.from, line.to]),
+    (end) => end,
+  );
+  const y = padded(Math.min(bedLow, lineLow), Math.max(bedHigh, lineHigh));
   const few = beds.length <= MOST_BEDS;
   const height = 380;
   const ticks = ratioTicks(...y).map(Math.log);
@@ -111,6 +110,18 @@ export function ratioAgainstGradient(view: ClockView): Figure | null {
     height: height + 8 + key.height,
     body: [body, key.node],
   });
+}
+
+function measuredMean({ shellRows }: ClockView, { row, shells }: BedView): number | null {
+  let sum = 0;
+  let kept = 0;
+  for (const id of shells) {
+    if (shellRows[id].status === 'set aside') continue;
+    sum += Math.log(shellRows[id].dl);
+    kept++;
+  }
+  if (kept > 0) return sum / kept;
+  return row.dl_mean === null ? null : Math.log(row.dl_mean);
 }
 
 const KNOWN: Readonly<Record<string, string>> = {

@@ -2,7 +2,7 @@ import * as Plot from '@observablehq/plot';
 import { atCentre, type ClockView, inkOf } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
-import { padded } from './numbers.js';
+import { extent, padded } from './numbers.js';
 import { INK, MOST_BEDS, TYPE, WIDE } from './theme.js';
 import { zoneLegend } from './zone-legend.js';
 
@@ -14,8 +14,15 @@ export function heightsAgainstRatio(view: ClockView): Figure | null {
     return y === null || x === null ? [] : [{ bed, x, y, se: bed.row.log_se ?? 0 }];
   });
   if (beds.length < 2) return null;
-  const x = padded(Math.min(...beds.map((p) => p.x - 1.96 * p.se)), Math.max(...beds.map((p) => p.x + 1.96 * p.se)));
-  const [yLow, yTop] = padded(Math.min(0, ...beds.map((p) => p.y)), Math.max(...beds.map((p) => p.y)));
+  const x = padded(
+    ...extent(
+      beds,
+      (p) => p.x - 1.96 * p.se,
+      (p) => p.x + 1.96 * p.se,
+    ),
+  );
+  const [lowest, highest] = extent(beds, (p) => p.y);
+  const [yLow, yTop] = padded(Math.min(0, lowest), highest);
   // Room for the zones' names above the highest bed.
   const y = [yLow, yTop + 0.07 * (yTop - yLow)] as const;
   const means = view.zoned ? [...view.zones.keys()].filter((zone) => beds.some((p) => p.bed.zone === zone)) : [];

@@ -26,12 +26,13 @@ export function housePlot(options: Plot.PlotOptions, x = 0, y = 0): SvgNode {
 
 // Plot writes coordinates to sixteen digits: two decimals are a hundredth of a pixel, and half the size of the page.
 function tidy(node: SvgNode): SvgNode {
-  for (const [name, value] of node.attributes)
+  node.attributes.forEach((value, name) => {
     if (/\d\.\d{3}/.test(value) && !name.startsWith('data-'))
       node.setAttribute(
         name,
         value.replace(/-?\d+\.\d{3,}(e-?\d+)?/g, (number) => String(Math.round(Number(number) * 100) / 100)),
       );
+  });
   for (const child of node.childNodes) if (child.name !== '#text') tidy(child);
   return node;
 }

@@ -2,6 +2,7 @@ import * as Plot from '@observablehq/plot';
 import type { RelationRow } from '../model/index.js';
 import type { ClockView } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
+import { foremost } from './foremost.js';
 import { AXIS, housePlot, tagged } from './house-plot.js';
 import { padded } from './numbers.js';
 import { everReversed, relationNumbers } from './reversed-marks.js';
@@ -16,10 +17,8 @@ export function relationDifferences(view: ClockView): Figure | null {
   const tested = view.relations.filter((row) => row.difference !== null && row.z !== null && row.z !== 0);
   if (tested.length === 0) return null;
   const rank = (row: RelationRow) => (row.verdict_after === 'reversed' ? 0 : everReversed(row) ? 1 : 2);
-  const sorted = [...tested].sort((a, b) => rank(a) - rank(b) || a.difference! - b.difference!);
-  const rows = sorted
-    .slice(0, MOST)
-    .map((row, i) => ({ row, y: 12 + (i + 0.5) * LINE, se: Math.abs(row.difference! / row.z!) }));
+  const least = foremost(tested, MOST, (a, b) => rank(a) - rank(b) || a.difference! - b.difference!);
+  const rows = least.map((row, i) => ({ row, y: 12 + (i + 0.5) * LINE, se: Math.abs(row.difference! / row.z!) }));
   const numbers = relationNumbers(view);
   const labels = 250;
   const bottom = 12 + rows.length * LINE;
@@ -94,9 +93,9 @@ export function relationDifferences(view: ClockView): Figure | null {
   return finishFigure({
     name: `relations${view.suffix}`,
     title: `Field relations against the ratios${view.heading}`,
-    caption: `Each line is one relation with the 95 % interval of the difference: right of zero the lower bed has the higher ratio, as it should. Filled signs agree, open ones are tied (triangles: relations of one age), red squares (numbered) are reversed, open squares were reversed until odd shells were set aside.${sorted.length > rows.length ? ` The ${rows.length} least agreeable of ${sorted.length} are drawn.` : ''}`,
+    caption: `Each line is one relation with the 95 % interval of the difference: right of zero the lower bed has the higher ratio, as it should. Filled signs agree, open ones are tied (triangles: relations of one age), red squares (numbered) are reversed, open squares were reversed until odd shells were set aside.${tested.length > rows.length ? ` The ${rows.length} least agreeable of ${tested.length} are drawn.` : ''}`,
     alt: `${tested.length} relations: ${['agrees', 'tied', 'reversed'].map((verdict) => `${tested.filter((row) => row.verdict_after === verdict).length} ${verdict}`).join(', ')}. Reversed: ${
-      sorted
+      least
         .filter((row) => row.verdict_after === 'reversed')
         .slice(0, 20)
         .map((row) => `${row.lower} below ${row.upper}`)

@@ -1,6 +1,6 @@
 import * as Plot from '@observablehq/plot';
 import { type BedColumn, bedNote } from './bed-rows.js';
-import { atCentre, type BedView, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
+import { atCentre, type BedView, type ClockView, inkOf, shellRatio, shellsOf, zoneTag } from './clock-view.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
 import { ratio } from './numbers.js';
 import { shellDots } from './shell-dots.js';
@@ -32,7 +32,12 @@ export function shellColumn(view: ClockView, column: BedColumn, shape: ShellColu
   const beds = column.lines.filter((line) => line.kind === 'bed');
   const heads = column.lines.filter((line) => line.kind === 'zone');
   const points = beds.flatMap((line) =>
-    line.bed.shells.map((shell) => ({ shell, bed: line.bed, x: shellRatio(view, line.bed, shell), y: line.y })),
+    shellsOf(view, line.bed).map((shell) => ({
+      shell,
+      bed: line.bed,
+      x: shellRatio(view, line.bed, shell.row),
+      y: line.y,
+    })),
   );
   const bandTags = tagged((i) => ({ 'data-z': zoneTag(view, column.bands[i].zone) }));
   const byBed = tagged((i) => ({ 'data-b': beds[i].bed.id }));

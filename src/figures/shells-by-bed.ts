@@ -1,5 +1,5 @@
 import { bedColumns, bedNote } from './bed-rows.js';
-import { type BedView, type ClockView, shellRatio } from './clock-view.js';
+import { type BedView, type ClockView, shellRatio, shellsOf } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { legend } from './legend.js';
 import { padded, ratio } from './numbers.js';
@@ -12,9 +12,9 @@ import { INK, MOST_BEDS, MOST_SHELLS, PAPER, WIDE } from './theme.js';
 /** Log ratios of all shells, one line a bed, beds listed by zone with the youngest on top; null without shells. */
 export function shellsByBed(view: ClockView): Figure | null {
   if (view.beds.length > MOST_BEDS || view.clock.shells > MOST_SHELLS) return shellsSummarised(view);
-  const shells = view.beds.flatMap((bed) => bed.shells);
+  const shells = view.beds.flatMap((bed) => shellsOf(view, bed));
   const values = [
-    ...view.beds.flatMap((bed) => bed.shells.map((shell) => shellRatio(view, bed, shell))),
+    ...view.beds.flatMap((bed) => shellsOf(view, bed).map(({ row }) => shellRatio(view, bed, row))),
     ...view.beds.flatMap(reachOfBed),
     ...(view.zoned ? view.zones.flatMap((zone) => [Math.log(zone.shell_low), Math.log(zone.shell_high)]) : []),
   ].filter(Number.isFinite);

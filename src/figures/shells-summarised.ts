@@ -1,5 +1,5 @@
 import * as Plot from '@observablehq/plot';
-import { quantile } from '../statistics/index.js';
+import { quantileOfSorted } from '../statistics/index.js';
 import { atCentre, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, ratioLabel, ratioTicks, tagged } from './house-plot.js';
@@ -8,22 +8,46 @@ import { INK, SOFT, TYPE, WIDE } from './theme.js';
 
 const BINS = 90;
 
+/** What is drawn of one zone: log ratios of its shells. */
+interface Group {
+  readonly zone: number;
+  readonly kept: readonly number[];
+  readonly aside: readonly number[];
+  readonly beds: number;
+}
+
+function groupOf(view: ClockView, zone: number): Group {
+  const [kept, aside]: [number[], number[]] = [[], []];
+  let beds = 0;
+  for (const bed of view.beds) {
+    if (bed.zone !== zone) continue;
+    beds++;
+    for (const id of bed.shells) {
+      const shell = view.shellRows[id];
+      (shell.status === 'set aside' ? aside : kept).push(shellRatio(view, bed, shell));
+    }
+  }
+  return { zone, kept, aside, beds };
+}
+
+function sortedTogether(lists: readonly (readonly number[])[]): Float64Array {
+  const all = new Float64Array(lists.reduce((sum, list) => sum + list.length, 0));
+  let at = 0;
+  for (const list of lists) {
+    all.set(list, at);
+    at += list.length;
+  }
+  return all.sort();
+}
+
 /** Shells of a survey too large to name its beds: a histogram of log ratios a zone, set-aside shells below the line. */
 export function shellsSummarised(view: ClockView): Figure | null {
   const groups = [...view.zones.keys(), -1]
-    .map((zone) => {
-      const shells = view.beds
-        .filter((bed) => bed.zone === zone)
-        .flatMap((bed) =>
-          bed.shells.map((shell) => ({ aside: shell.row.status === 'set aside', x: shellRatio(view, bed, shell) })),
-        );
-      const pick = (aside: boolean) => shells.filter((shell) => shell.aside === aside).map((shell) => shell.x);
-      return { zone, kept: pick(false), aside: pick(true), beds: view.beds.filter((bed) => bed.zone === zone).length };
-    })
+    .map((zone) => groupOf(view, zone))
     .filter((group) => group.kept.length + group.aside.length > 0);
   if (groups.length === 0) return null;
-  const ends = groups.flatMap((group) => [...group.kept, ...group.aside]).sort((a, b) => a - b);
-  const [low, high] = padded(quantile(ends, 0.0005), quantile(ends, 0.9995));
+  const all = sortedTogether(groups.flatMap((group) => [group.kept, group.aside]));
+  const [low, high] = padded(quantileOfSorted(all, 0.0005), quantileOfSorted(all, 0.9995));
   const step = (high - low) / BINS;
   const bin = (values: readonly number[]) => {
     const counts = new Array<number>(BINS).fill(0);

@@ -1,5 +1,5 @@
 import * as Plot from '@observablehq/plot';
-import { atCentre, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
+import { atCentre, type BedView, type ClockView, inkOf, shellRatio, zoneTag } from './clock-view.js';
 import { type Figure, finishFigure } from './figure.js';
 import { AXIS, housePlot, tagged } from './house-plot.js';
 import { padded, ratio } from './numbers.js';
@@ -11,14 +11,7 @@ const STEP = 40;
 export function zoneRanges(view: ClockView): Figure | null {
   if (!view.zoned) return null;
   const zones = view.zones.map((zone, i) => ({ zone, i, y: 10 + (i + 0.5) * STEP }));
-  const shells = zones.flatMap(({ i, y }) => {
-    const own = view.beds
-      .filter((bed) => bed.zone === i)
-      .flatMap((bed) => bed.shells.map((shell) => ({ shell, dl: Math.exp(shellRatio(view, bed, shell)) })))
-      .filter(({ shell, dl }) => shell.row.status !== 'set aside' && Number.isFinite(dl));
-    const every = Math.ceil(own.length / 400);
-    return own.filter((_, k) => k % every === 0).map(({ shell, dl }) => ({ x: dl, y, id: shell.id }));
-  });
+  const shells = zones.flatMap(({ i, y }) => ticksOf(view, i).map((tick) => ({ ...tick, y })));
   const [low, high] = padded(
     Math.min(...view.zones.map((zone) => zone.shell_low), ...shells.map((shell) => shell.x)),
     Math.max(...view.zones.map((zone) => zone.shell_high), ...shells.map((shell) => shell.x)),
@@ -106,5 +99,27 @@ export function zoneRanges(view: ClockView): Figure | null {
     body: [body],
   });
 }
+
+/** Most shells of one zone that are drawn. */
+const MOST_TICKS = 400;
+
+/** D/L of the shells of a zone that were not set aside; of very many every so manieth. */
+function ticksOf(view: ClockView, zone: number): { readonly x: number; readonly id: number }[] {
+  const beds = view.beds.filter((bed) => bed.zone === zone);
+  const count = beds.reduce((sum, bed) => sum + bed.shells.length - setAside(bed).size, 0);
+  const every = Math.ceil(count / MOST_TICKS);
+  const ticks: { x: number; id: number }[] = [];
+  let k = 0;
+  for (const bed of beds) {
+    const aside = setAside(bed);
+    for (const id of bed.shells)
+      if (!aside.has(id) && k++ % every === 0)
+        ticks.push({ x: Math.exp(shellRatio(view, bed, view.shellRows[id])), id });
+  }
+  return ticks;
+}
+
+const setAside = ({ odd }: BedView): ReadonlySet<number> =>
+  new Set(odd.flatMap(({ id, row }) => (row.status === 'set aside' ? [id] : [])));
 
 const overlapText = (overlap: number) => (overlap < 0.005 ? '< 0.01' : overlap.toFixed(2));

@@ -1,19 +1,21 @@
-import { type ClockView, zoneTag } from '../figures/clock-view.js';
+import { type BedView, type ClockView, type ShellView, zoneTag } from '../figures/clock-view.js';
+import { foremost } from '../figures/foremost.js';
 import { relationNumbers } from '../figures/reversed-marks.js';
 import type { RelationRow, ZoneRow } from '../model/index.js';
 import { html, listed, type Markup } from './html.js';
 import { bedLink, shellLink } from './links.js';
-import { chance, figures, pValue, ratio } from './numbers.js';
+import { chance, figures, pValue, ratio, thousands } from './numbers.js';
 import { type Column, type RowTies, table } from './table.js';
 
 /** All rows of a table, or the first 500 of more than 1,500, which would only make the page slow: the CSV holds all. */
-export const atMost = <Row>(rows: readonly Row[]): readonly Row[] => (rows.length > 1500 ? rows.slice(0, 500) : rows);
+export const atMost = <Row>(rows: readonly Row[]): readonly Row[] => rows.slice(0, shownOf(rows.length));
+
+/** How many of so many rows a table shows. */
+const shownOf = (rows: number) => (rows > 1500 ? 500 : rows);
 
 /** Said under a table that does not show every row. */
 export const cut = (shown: number, all: number, file: string): Markup | null =>
-  shown < all
-    ? html`<p class="note">${shown} of ${all.toLocaleString('en-US')} rows are shown; ${file} holds all.</p>`
-    : null;
+  shown < all ? html`<p class="note">${shown} of ${thousands(all)} rows are shown; ${file} holds all.</p>` : null;
 
 /** A zone's name with its colour, which says nothing that the name doesn't. */
 const zoneChip = (view: ClockView, zone: string | null): Markup => {
@@ -83,15 +85,14 @@ export function zonesKey(views: readonly ClockView[]): Markup | null {
 const VERDICT_ORDER = { reversed: 0, 'not tested': 3, tied: 1, agrees: 2 } as const;
 const SIGN = { reversed: '⇅', tied: '≈', agrees: '✓', 'not tested': '–' } as const;
 
+const reversedFirst = (a: RelationRow, b: RelationRow) =>
+  VERDICT_ORDER[a.verdict_after] - VERDICT_ORDER[b.verdict_after] ||
+  VERDICT_ORDER[a.verdict] - VERDICT_ORDER[b.verdict] ||
+  (a.z ?? 0) - (b.z ?? 0);
+
 /** Field relations of one clock, reversed first. */
 export function relationsTable(view: ClockView): Markup {
   const numbers = relationNumbers(view);
-  const rows = [...view.relations].sort(
-    (a, b) =>
-      VERDICT_ORDER[a.verdict_after] - VERDICT_ORDER[b.verdict_after] ||
-      VERDICT_ORDER[a.verdict] - VERDICT_ORDER[b.verdict] ||
-      (a.z ?? 0) - (b.z ?? 0),
-  );
   const verdict = (value: RelationRow['verdict']) =>
     html`<span class="verdict ${value === 'reversed' ? 'bad' : ''}"><span aria-hidden="true">${SIGN[value]}</span> ${value}</span>`;
   const columns: Column<RelationRow>[] = [
@@ -107,20 +108,20 @@ export function relationsTable(view: ClockView): Markup {
     { head: 'z', number: true, cell: (row) => figures(row.z, 2), sort: (row) => row.z },
     { head: 'all shells', cell: (row) => verdict(row.verdict) },
     { head: 'after setting aside', cell: (row) => verdict(row.verdict_after) },
-    ...(rows.some((row) => row.reading !== '')
+    ...(view.relations.some((row) => row.reading !== '')
       ? [{ head: 'reading', long: true, cell: (row: RelationRow) => row.reading }]
       : []),
   ];
-  const shown = atMost(rows);
+  const shown = foremost(view.relations, shownOf(view.relations.length), reversedFirst);
   return html`${table(`Field relations on ${view.clock.clock}`, columns, shown, (row): RowTies => {
     const beds = [row.lower, row.upper].flatMap((key) => view.byKey.get(key)?.id ?? []);
     return { beds, clock: view.index };
-  })}${cut(shown.length, rows.length, 'relations.csv')}`;
+  })}${cut(shown.length, view.relations.length, 'relations.csv')}`;
 }
 
 /** All beds of one clock. */
 export function bedsTable(view: ClockView): Markup {
-  const columns: Column<ClockView['beds'][number]>[] = [
+  const columns: Column<BedView>[] = [
     { head: 'bed', cell: (bed) => bedLink(view, bed.key) },
     { head: 'zone', cell: (bed) => zoneChip(view, bed.row.zone), sort: (bed) => bed.zone },
     {
@@ -156,8 +157,9 @@ export function bedsTable(view: ClockView): Markup {
 
 /** All shells of one clock. */
 export function shellsTable(view: ClockView): Markup {
-  const all = view.beds.flatMap((bed) => bed.shells.map((shell) => ({ bed, shell })));
-  const columns: Column<(typeof all)[number]>[] = [
+  const all = view.beds.reduce((sum, bed) => sum + bed.shells.length, 0);
+  const shown = firstShells(view, shownOf(all));
+  const columns: Column<(typeof shown)[number]>[] = [
     { head: 'shell', cell: ({ shell }) => shellLink(view, shell) },
     { head: 'lab', cell: ({ shell }) => shell.row.lab_id.join(', ') || '–' },
     { head: 'D/L', number: true, cell: ({ shell }) => ratio(shell.row.dl) },
@@ -184,22 +186,31 @@ export function shellsTable(view: ClockView): Markup {
     { head: 'marks', cell: ({ shell }) => shell.row.marks.join(', ') || '–' },
     { head: 'reading', cell: ({ shell }) => (shell.row.reading === 'none' ? '–' : shell.row.reading) },
   ];
-  const shown = atMost(all);
-  return html`${table(`Shells on ${view.clock.clock}`, columns, shown, ({ bed, shell }) => ({ beds: [bed.id], shell: shell.id, clock: view.index }))}${cut(shown.length, all.length, 'shells.csv')}`;
+  return html`${table(`Shells on ${view.clock.clock}`, columns, shown, ({ bed, shell }) => ({ beds: [bed.id], shell: shell.id, clock: view.index }))}${cut(shown.length, all, 'shells.csv')}`;
+}
+
+function firstShells(view: ClockView, most: number): { readonly bed: BedView; readonly shell: ShellView }[] {
+  const first: { bed: BedView; shell: ShellView }[] = [];
+  for (const bed of view.beds)
+    for (const id of bed.shells) {
+      if (first.length === most) return first;
+      first.push({ bed, shell: { id, row: view.shellRows[id] } });
+    }
+  return first;
 }
 
 /** Which beds of each section belong to each zone, in coast order. */
 export function correlationTable(view: ClockView): Markup | null {
   if (!view.zoned) return null;
-  const of = (section: string, zone: number) =>
-    view.beds.filter((bed) => bed.row.section === section && bed.zone === zone);
+  const bySection = new Map<string, BedView[]>(view.sections.map((section) => [section, []]));
+  for (const bed of view.beds) bySection.get(bed.row.section)!.push(bed);
   const columns: Column<string>[] = [
     { head: 'section', cell: (section) => section },
     ...view.zones.map(
       (zone, i): Column<string> => ({
         head: zone.zone,
         cell: (section) => {
-          const beds = of(section, i);
+          const beds = bySection.get(section)!.filter((bed) => bed.zone === i);
           return beds.length === 0
             ? 'missing'
             : listed(

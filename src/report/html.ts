@@ -9,9 +9,7 @@ import { escapeMarkup } from '../figures/svg-node.js';
  */
 export function html(parts: TemplateStringsArray, ...values: readonly HtmlValue[]): Markup {
   let out = parts[0];
-  values.forEach((value, i) => {
-    out += write(value) + parts[i + 1];
-  });
+  for (let i = 0; i < values.length; i++) out += write(values[i]) + parts[i + 1];
   return { markup: out };
 }
 
@@ -28,8 +26,10 @@ export const raw = (markup: string): Markup => ({ markup });
 
 function write(value: HtmlValue): string {
   if (value === null || value === undefined || value === false) return '';
-  if (typeof value === 'string' || typeof value === 'number') return escapeMarkup(String(value));
+  if (typeof value === 'string') return escapeMarkup(value);
+  if (typeof value === 'number') return String(value);
   if ('markup' in value) return value.markup;
+  // joined, the list is one plain string, and the pieces it was made of can go
   return value.map(write).join('');
 }
 

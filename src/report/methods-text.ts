@@ -1,5 +1,5 @@
-import type { ClockView } from '../figures/clock-view.js';
-import type { Findings } from '../model/index.js';
+import type { BedView, ClockView } from '../figures/clock-view.js';
+import type { ByAminoAcid, Findings } from '../model/index.js';
 import { type HtmlValue, html, listed, type Markup } from './html.js';
 import { figures } from './numbers.js';
 import type { Citations } from './sources.js';
@@ -26,11 +26,7 @@ export function methodsText(findings: Findings, views: readonly ClockView[], cit
 function averages(findings: Findings, views: readonly ClockView[], cite: Cite): HtmlValue {
   const single = findings.shell_ratios.length > 0;
   const published = views.some(
-    (view) =>
-      view.combined === null &&
-      view.beds.some(
-        ({ row, shells }) => row.shells > shells.filter((shell) => shell.row.status !== 'set aside').length,
-      ),
+    (view) => view.combined === null && view.beds.some((bed) => bed.row.shells > shellsCounted(bed)),
   );
   const assumed = views.some((view) => view.assumedScatter !== null);
   return [
@@ -50,6 +46,9 @@ function averages(findings: Findings, views: readonly ClockView[], cite: Cite): 
   ];
 }
 
+const shellsCounted = ({ shells, odd }: BedView): number =>
+  shells.length - odd.filter((shell) => shell.row.status === 'set aside').length;
+
 function scatterOf(view: ClockView): Markup {
   const { clock, spread } = view.clock;
   const how = view.assumedScatter === null ? 'is' : 'is assumed to be';
@@ -58,16 +57,27 @@ function scatterOf(view: ClockView): Markup {
 
 function screening(findings: Findings, cite: Cite): HtmlValue {
   if (findings.shell_ratios.length === 0) return null;
-  const several = findings.shell_ratios.some((shell) => Object.keys(shell.ratios).length > 1);
-  const fractions = new Set(findings.shell_ratios.map((shell) => shell.fraction)).size;
+  const [{ fraction }] = findings.shell_ratios;
+  let several = false;
+  let twoFractions = false;
+  for (const shell of findings.shell_ratios) {
+    several ||= hasSeveral(shell.ratios);
+    twoFractions ||= shell.fraction !== fraction;
+  }
   return [
     html`Shells were screened${cite('kosnik')}, each rule where the table holds what it needs: high serine, replicates that disagree, low yield`,
     several
       ? html`, ratios off the taxon’s robust line between two amino acids${cite('beaton')}, the order of rates`
       : '',
-    fractions > 1 ? html`, free below total${cite('kaufman')}` : '',
+    twoFractions ? html`, free below total${cite('kaufman')}` : '',
     '; beds for shallow burial. A rule gives a mark; high serine alone, or marks of two rules, set a shell aside.',
   ];
+}
+
+function hasSeveral(ratios: ByAminoAcid): boolean {
+  let count = 0;
+  for (const _ in ratios) if (++count > 1) return true;
+  return false;
 }
 
 function index(findings: Findings, views: readonly ClockView[], cite: Cite): HtmlValue {

@@ -39,7 +39,16 @@ export function pValue(value: number | null): string {
  * ```
  */
 export const counted = (count: number, noun: string, plural = `${noun}s`): string =>
-  `${count.toLocaleString('en-US')} ${count === 1 ? noun : plural}`;
+  `${thousands(count)} ${count === 1 ? noun : plural}`;
+
+/**
+ * A whole number with commas between the thousands. (The first number that goes through a locale costs 20 ms.)
+ * @example
+ * ```ts
+ * thousands(12345) // => '12,345'
+ * ```
+ */
+export const thousands = (count: number): string => String(count).replace(/\B(?=(?:\d{3})+$)/g, ',');
 
 /**
  * A D/L ratio with three decimals, as laboratories print it.

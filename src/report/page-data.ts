@@ -1,5 +1,6 @@
-import { type ClockView, zoneTag } from '../figures/clock-view.js';
+import { type ClockView, shellsOf, zoneTag } from '../figures/clock-view.js';
 import { MOST_BEDS, MOST_SHELLS } from '../figures/theme.js';
+import type { ShellRow } from '../model/index.js';
 import { sectionsOf } from './contents.js';
 import { chance, ratio } from './numbers.js';
 
@@ -29,7 +30,7 @@ export function pageData(views: readonly ClockView[]): PageData {
       beds[bed.id] = entry;
       entry[1][view.index] = zoneTag(view, bed.zone) ?? '-';
       if (view.beds.length <= 10 * MOST_BEDS) entry[2] += bedText(view, bed);
-      if (!many) for (const { id, row } of bed.shells) shells[id] = [bed.id, shellText(row)];
+      if (!many) for (const { id, row } of shellsOf(view, bed)) shells[id] = [bed.id, shellText(row)];
     }
   }
   return { beds, shells, zones };
@@ -44,7 +45,7 @@ function bedText(view: ClockView, bed: ClockView['beds'][number]): string {
   return `${view.heading}${zone} · D/L ${ratio(row.dl_mean)} · ${row.shells} shells${aside}${rank}${marks}`;
 }
 
-function shellText(row: ClockView['beds'][number]['shells'][number]['row']): string {
+function shellText(row: ShellRow): string {
   const reading = row.reading === 'none' ? '' : ` · ${row.reading}`;
   const marks = row.marks.length > 0 ? ` · ${row.marks.join(', ')}` : '';
   return `shell ${row.shell} · D/L ${ratio(row.dl)} · ${row.status}${reading}${marks}`;

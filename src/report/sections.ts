@@ -30,12 +30,6 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
     figures
       .filter((figure) => views.some((view) => figure.name.replace(/-part-\d+$/, '') === kind + view.suffix))
       .map((figure) => figureBlock(figure, figures, views));
-  const evidenceOf = (view: ClockView, about: 'shell' | 'relation') =>
-    new Map(
-      findings.evidence
-        .filter((row) => row.about === about && row.clock === view.clock.clock)
-        .map((row) => [row.name, row.sentences]),
-    );
   const assumed = assumedNote(views);
   /** A part whose numbers rest on the scatter. */
   const part = (id: string, heading: string, short: string, body: HtmlValue) =>
@@ -53,7 +47,7 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
     part('order', 'Order of the beds', 'Order', drawn('ranks')),
     part('heights', 'Do older beds stand higher?', 'Heights', drawn('heights')),
     part('relations', 'Does the field agree?', 'Relations', [
-      views.map((view) => reversedRelations(view, evidenceOf(view, 'relation'))),
+      views.map((view) => reversedRelations(view, findings)),
       drawn('relations'),
       views.some((view) => view.relations.length > 0)
         ? views
@@ -66,7 +60,7 @@ export function sections(findings: Findings, views: readonly ClockView[], figure
       'odd',
       'Shells set aside, and why',
       'Odd shells',
-      single.map((view) => oddShells(view, evidenceOf(view, 'shell'))),
+      single.map((view) => oddShells(view, findings)),
     ),
     part('number-of-zones', 'How many zones?', 'Number of zones', [
       views.map((view) => chosen(findings, view.clock.clock, views.length > 1)),

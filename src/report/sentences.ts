@@ -1,5 +1,6 @@
-import type { ClockView } from '../figures/clock-view.js';
+import type { ClockView, ShellView } from '../figures/clock-view.js';
 import { relationNumbers } from '../figures/reversed-marks.js';
+import type { ShellReading } from '../model/index.js';
 import { html, listed, type Markup } from './html.js';
 import { bedLink, shellLink } from './links.js';
 import { counted, ratio } from './numbers.js';
@@ -39,10 +40,12 @@ function groups(view: ClockView): Markup {
 }
 
 function order(view: ClockView): Markup | null {
-  const ranked = view.beds.filter((bed) => bed.order !== null).sort((a, b) => a.order!.rank - b.order!.rank);
+  const ranked = view.beds.filter((bed) => bed.order !== null);
   if (ranked.length < 2) return null;
+  const oldest = ranked.reduce((best, bed) => (bed.order!.rank < best.order!.rank ? bed : best));
+  const youngest = ranked.reduce((best, bed) => (bed.order!.rank >= best.order!.rank ? bed : best));
   const resolved = ranked.filter((bed) => bed.order!.resolved === true).length;
-  return html`The oldest bed is ${bedLink(view, ranked[0].key)} and the youngest ${bedLink(view, ranked[ranked.length - 1].key)}; of ${counted(ranked.length - 1, 'step')} between neighbours in the order, ${someAre(resolved)} resolved.`;
+  return html`The oldest bed is ${bedLink(view, oldest.key)} and the youngest ${bedLink(view, youngest.key)}; of ${counted(ranked.length - 1, 'step')} between neighbours in the order, ${someAre(resolved)} resolved.`;
 }
 
 function field(view: ClockView): Markup | null {
@@ -65,15 +68,26 @@ function field(view: ClockView): Markup | null {
 
 function odd(view: ClockView): Markup | null {
   if (view.combined !== null) return html`Its shells are screened and read on the clock of each taxon.`;
-  const aside = view.beds.flatMap((bed) => bed.shells).filter((shell) => shell.row.status === 'set aside');
-  if (aside.length === 0) return html`No shell was set aside.`;
-  const kinds = new Map<string, typeof aside>();
-  for (const shell of aside) kinds.set(shell.row.reading, [...(kinds.get(shell.row.reading) ?? []), shell]);
+  const kinds = setAsideByReading(view);
+  if (kinds.size === 0) return html`No shell was set aside.`;
+  const aside = [...kinds.values()].reduce((sum, shells) => sum + shells.length, 0);
   const parts = [...kinds].map(([reading, shells]) => {
     const names = shells.length <= 4 ? html` (${listed(shells.map((shell) => shellLink(view, shell)))})` : null;
     return html`${shells.length} ${reading === 'none' ? 'for their marks in screening' : `read as ${reading}`}${names}`;
   });
-  return html`<strong>${counted(aside.length, 'shell')} ${aside.length === 1 ? 'was' : 'were'} set aside</strong>: ${listed(parts)}.`;
+  return html`<strong>${counted(aside, 'shell')} ${aside === 1 ? 'was' : 'were'} set aside</strong>: ${listed(parts)}.`;
+}
+
+function setAsideByReading(view: ClockView): Map<ShellReading, ShellView[]> {
+  const kinds = new Map<ShellReading, ShellView[]>();
+  for (const bed of view.beds)
+    for (const shell of bed.odd) {
+      if (shell.row.status !== 'set aside') continue;
+      const kind = kinds.get(shell.row.reading);
+      if (kind === undefined) kinds.set(shell.row.reading, [shell]);
+      else kind.push(shell);
+    }
+  return kinds;
 }
 
 const someAre = (count: number) => (count === 0 ? 'none is' : count === 1 ? '1 is' : `${count} are`);

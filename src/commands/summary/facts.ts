@@ -102,12 +102,12 @@ function clockFacts(findings: Findings, clock: ClockRow): ClockFacts {
     rows.filter((row) => row.clock === clock.clock);
   const relations = mine(findings.relations);
   const after = (verdict: RelationRow['verdict_after']) => relations.filter((row) => row.verdict_after === verdict);
-  const odd = mine(findings.shells).filter(({ status }) => status !== 'kept');
+  const odd = findings.shells.filter((row) => row.status !== 'kept' && row.clock === clock.clock);
   return {
     clock,
     forced: findings.options.zones,
     models: mine(findings.zone_counts),
-    choice: mine(findings.evidence).find(({ about }) => about === 'clock')?.sentences[0] ?? null,
+    choice: findings.evidence.find((row) => row.about === 'clock' && row.clock === clock.clock)?.sentences[0] ?? null,
     zones: [...mine(findings.zones)].sort((a, b) => b.dl_mean - a.dl_mean),
     adjacent: mine(findings.adjacent_zones),
     shares: mine(findings.shares),
