@@ -5,19 +5,18 @@ import { correlationTable, gradientRemarks } from './coast/index.js';
 import type {
   BedMark,
   BedSite,
-  ClockBed,
   ClockRow,
   ConflictRow,
   Evidence,
   Findings,
   GradientFinding,
-  OrderDiagnostics,
   Remark,
   SectionRow,
   Shell,
   ShellMark,
 } from './model/index.js';
-import { heightOf, MOST_BEDS_IN_PAIRS, orderRows, pairRows } from './order/index.js';
+import { heightOf } from './order/index.js';
+import { orderFindings } from './order-findings.js';
 import { MOST_PASSES, type Settled } from './passes.js';
 import { relationFindings } from './relation-findings.js';
 import { screenBeds } from './screening/index.js';
@@ -29,7 +28,6 @@ import {
   bedRows,
   isNearEquilibrium,
   type ShellNotes,
-  sameZone,
   shellRows,
   type Zoning,
   zoneCountRows,
@@ -66,7 +64,8 @@ export interface ClockFindingsInput {
   readonly context: RunContext;
   readonly set: ClockSet;
   readonly settled: Settled;
-  readonly order: ClockOrder | null;
+  /** Null where no bed has a mean. */
+  readonly order: Promise<ClockOrder | null>;
   readonly singles: readonly Pass[];
   readonly sites: readonly BedSite[];
   readonly sections: readonly string[];
@@ -96,9 +95,9 @@ const EMPTY = {
 };
 
 /** Rows of the main clock of one taxon and fraction, then one clock row an amino acid. */
-export function clockFindings(input: ClockFindingsInput): ClockResult[] {
+export async function clockFindings(input: ClockFindingsInput): Promise<ClockResult[]> {
   const { settled, singles } = input;
-  const main = mainResult(input);
+  const main = await mainResult(input);
   return [
     main,
     ...singles.map((pass) => ({
@@ -110,8 +109,8 @@ export function clockFindings(input: ClockFindingsInput): ClockResult[] {
   ];
 }
 
-function mainResult(input: ClockFindingsInput): ClockResult {
-  const { context, set, settled, support, order, singles, sites, sections, random } = input;
+async function mainResult(input: ClockFindingsInput): Promise<ClockResult> {
+  const { context, set, settled, support, singles, sites, sections, random } = input;
   const { last } = settled;
   const { data, zoning } = last;
   const { options, shells, summaries } = context;
@@ -140,7 +139,7 @@ function mainResult(input: ClockFindingsInput): ClockResult {
   const relations = relationFindings({ settled, shells, beds, sites: siteOf });
   const zoneOf = new Map(beds.map((bed) => [`${bed.section}/${bed.bed}`, bed.zone]));
   const slope = last.gradient === null ? null : gradientFinding(last, last.gradient, options.gradient!);
-  return {
+  const rows = {
     ...EMPTY,
     clock: clockRow(last, 1),
     zones,
@@ -157,32 +156,9 @@ function mainResult(input: ClockFindingsInput): ClockResult {
         : [{ clock: data.clock.name, about: 'clock' as const, name: data.clock.name, sentences: [support.sentence] }]),
     ],
     conflicts: conflictRows(settled, shells),
-    order:
-      order === null
-        ? []
-        : orderRows(
-            data.clock.name,
-            order.beds,
-            order.beds.map((bed) => zoneOf.get(bed.key) ?? null),
-            order.graph.node,
-            order.posterior,
-            order.ranking,
-            options.alpha,
-          ),
-    pairs:
-      order === null
-        ? []
-        : pairRows(
-            data.clock.name,
-            order.beds,
-            order.posterior,
-            order.ranking,
-            sameZoneOf(order.beds, zoning, support),
-          ),
     relations: relations.rows,
     sections: sectionRows(settled, siteOf, options.alpha, options.simulations, random),
     correlation: correlationTable(zones, beds, sections),
-    diagnostics: order === null ? [] : [diagnosticsOf(data.clock.name, order)],
     votes: aminoAcids.votes,
     shares: aminoAcids.shares,
     remarks: [
@@ -192,6 +168,11 @@ function mainResult(input: ClockFindingsInput): ClockResult {
     ],
     gradients: slope === null ? [] : [slope],
   };
+  // last, since the order may still be on its way on other threads
+  const order = await input.order;
+  return order === null
+    ? rows
+    : { ...rows, ...orderFindings(order, { data, zoneOf, zoning, support, alpha: options.alpha }) };
 }
 
 const NO_MARKS: readonly ShellMark[] = [];
@@ -256,18 +237,6 @@ function bedMarks(
     if (zoning !== null && bed.n > 0 && isNearEquilibrium(data.clock, bed.mean)) own.push('near equilibrium');
   }
   return marks;
-}
-
-/** Probability that two beds share a zone, the doubt about the zones counted in where they were bootstrapped. */
-function sameZoneOf(beds: readonly ClockBed[], zoning: Zoning | null, support: ZoneSupport | null) {
-  if (zoning === null || support === null || beds.length > MOST_BEDS_IN_PAIRS) return () => null;
-  if (support.bootstraps.length === 0) return () => 1;
-  const same = sameZone(
-    beds.map((bed) => bed.mean),
-    beds.map((bed) => bed.se),
-    support.bootstraps,
-  );
-  return (a: number, b: number): number => same[a * beds.length + b];
 }
 
 function sectionRows(
@@ -379,18 +348,4 @@ function conflictRows({ last: { data }, readings }: Settled, shells: readonly Sh
     upper: shellName(shells[data.shells[upper].shell]),
     shortfall,
   }));
-}
-
-function diagnosticsOf(clock: string, order: ClockOrder): OrderDiagnostics {
-  const { posterior } = order;
-  return {
-    clock,
-    chains: posterior.chains,
-    draws: posterior.draws,
-    ess_min: posterior.essMin,
-    rhat_max: posterior.rhatMax,
-    converged: posterior.converged,
-    relations_kept: order.kept,
-    relations_left_out: order.leftOut,
-  };
 }

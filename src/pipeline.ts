@@ -118,7 +118,9 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
     const name = set.main.name;
     const { settled: last, support } = await supportZones(context, settled, own.fork(5), host);
     host.progress(`order of ${name}`, 0);
-    const order = await orderClock(last.last, options.alpha, own.fork(2), host);
+    const order = orderClock(last.last, options.alpha, own.fork(2), host);
+    // told of where it is waited for
+    order.catch(() => {});
     const singles = set.singles.map((clock, k) => {
       host.progress(`each amino acid of ${name}`, k / set.singles.length);
       return runPass(context, clock, set, settled.left, own.fork(100 + k));

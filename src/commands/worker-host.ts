@@ -27,20 +27,21 @@ interface Answer {
 export function createWorkerHost(progress: Progress, workers = wantedWorkers()): WorkerHost {
   const pool: Worker[] = [];
   const map: TaskMapper = async (tasks, onDone = () => {}) => {
-    const { runTask } = await import('../tasks.js');
     const queue = createQueue(tasks, onDone);
-    const enlist = () => {
+    const enlist = (ahead: number) => {
       while (pool.length < Math.min(workers - 1, queue.left())) pool.push(createWorker());
-      for (const worker of pool) queue.share(worker);
+      for (const worker of pool) queue.share(worker, ahead);
       return pool.length > 0;
     };
+    // heavy ones are on their way at once, two a thread, so that the caller may do other things before it waits for them
+    let shared = tasks.length > 1 && tasks[0].heavy === true && enlist(2);
+    const { runTask } = await import('../tasks.js');
     const started = performance.now();
-    let shared = tasks.length > 1 && tasks[0].heavy === true && enlist();
     try {
       for (let own = queue.take(); own !== null; own = queue.take()) {
         queue.answer(own, runTask(tasks[own]));
         const perTask = (performance.now() - started) / queue.done();
-        if (!shared && queue.left() > 1 && queue.left() * perTask > WORTH_THREADS) shared = enlist();
+        if (!shared && queue.left() > 1 && queue.left() * perTask > WORTH_THREADS) shared = enlist(1);
         // a signal, or the answer of a thread, is heard between tasks
         if (shared || perTask > 5) await new Promise(setImmediate);
       }
@@ -69,8 +70,8 @@ interface TaskQueue {
   /** The next task for this thread; null when none is left, or one has failed. */
   readonly take: () => number | null;
   readonly answer: (index: number, result: unknown) => void;
-  /** Lets a thread take part: it gets a task, and after each answer the next. */
-  readonly share: (worker: Worker) => void;
+  /** Lets a thread take part: it gets so many tasks ahead, and after each answer the next. */
+  readonly share: (worker: Worker, ahead: number) => void;
   readonly left: () => number;
   readonly done: () => number;
   /** All results in order, once they are there. Throws what a task on a thread threw. */
@@ -97,8 +98,8 @@ function createQueue(tasks: readonly Task[], onDone: (done: number) => void): Ta
   const give = (worker: Worker) => {
     if (given < tasks.length && failure === null) worker.postMessage({ index: given, task: tasks[given++] });
   };
-  const share = (worker: Worker) => {
-    let first = true;
+  const share = (worker: Worker, ahead: number) => {
+    let first = ahead < 2;
     const onMessage = ({ index, result, error }: Answer) => {
       if (error) return fail(error);
       // one more than it works on, so that it need not wait while this thread is busy
@@ -113,7 +114,7 @@ function createQueue(tasks: readonly Task[], onDone: (done: number) => void): Ta
       worker.off('message', onMessage).off('error', fail);
       worker.unref();
     });
-    give(worker);
+    for (let task = 0; task < ahead; task++) give(worker);
   };
   return {
     take: () => (given < tasks.length && failure === null ? given++ : null),
