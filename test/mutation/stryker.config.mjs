@@ -3,9 +3,8 @@
 const room = process.env.ROOM ?? 'statistics';
 
 export default {
-  testRunner: 'vitest',
-  plugins: ['@stryker-mutator/vitest-runner'],
-  vitest: { configFile: 'test/mutation/vitest.config.ts', related: false },
+  testRunner: 'in-process',
+  plugins: ['./test/mutation/in-process-runner.mjs'],
   mutate: process.env.MUTATE?.split(',') ?? [`src/${room}/**/*.ts`, `!src/${room}/index.ts`],
   coverageAnalysis: 'perTest',
   concurrency: 2,
