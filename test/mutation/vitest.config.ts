@@ -12,7 +12,7 @@ const room = process.env.ROOM ?? 'statistics';
 export default defineConfig({
   test: {
     include: [`test/${room}/**/*.test.ts`, ...(PUBLISHED[room] ?? [])],
-    exclude: ['test/**/*.simulation.test.ts', 'test/**/*.speed.test.ts'],
+    exclude: ['test/**/*.simulation.test.ts', 'test/**/*.speed.test.ts', 'test/**/*.solver.test.ts'],
     testTimeout: 60_000,
     isolate: false,
   },
