@@ -3,7 +3,7 @@ import type { Task } from '../../src/model/index.js';
 import { createRandom, normalCdf, studentTCdf } from '../../src/statistics/index.js';
 import { runTask } from '../../src/tasks.js';
 import {
-  assignOverDraws,
+  assignerOverDraws,
   assignZone,
   bestLabels,
   bootstrapLead,
@@ -583,7 +583,7 @@ describe('stability', () => {
     const [x, error] = [-1.94, 0.03];
     const chances = two.map((draw) => assignZone(x, error, draw.priors).probabilities);
     const mean = [0, 1].map((j) => (chances[0][j] + chances[1][j]) / 2);
-    expect(assignOverDraws(x, error, two).probabilities).toEqual(nears(mean, 12));
+    expect(assignerOverDraws(two)(x, error).probabilities).toEqual(nears(mean, 12));
     const other = two.map((draw) => assignZone(-2, 0.02, draw.priors).probabilities);
     const both = [0, 1].map((at) => chances[at][0] * other[at][0] + chances[at][1] * other[at][1]);
     const same = sameZone([x, -2], [error, 0.02], two);
