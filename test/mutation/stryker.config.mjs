@@ -8,8 +8,8 @@ export default {
   mutate: process.env.MUTATE?.split(',') ?? [`src/${room}/**/*.ts`, `!src/${room}/index.ts`],
   coverageAnalysis: 'perTest',
   concurrency: 2,
-  timeoutMS: 4000,
-  timeoutFactor: 0.5,
+  timeoutMS: 5000,
+  timeoutFactor: 1.5,
   // its rewriting of tsconfig.json needs TypeScript before 7, and is of no use here: nothing outside the folder is extended
   tsconfigFile: 'none',
   incremental: true,

@@ -1,13 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import type { ClockBed } from '../../src/model/index.js';
-import {
-  MOST_BEDS_IN_PAIRS,
-  type OrderPosterior,
-  orderRows,
-  pairRows,
-  probabilityOlder,
-  rankBeds,
-} from '../../src/order/index.js';
+import { type OrderPosterior, orderRows, pairRows, probabilityOlder, rankBeds } from '../../src/order/index.js';
 
 const bed = (section: string, name: string): ClockBed => ({
   key: `${section}/${name}`,
@@ -153,21 +146,5 @@ describe('pairRows', () => {
       row('Cove/a', 'Cove/b', 0.75, 0.01),
       row('Bay/a', 'Cove/b', 0.75, 0.21),
     ]);
-  });
-
-  it('takes every k-th draw where all would take too long, and gives no pairs above 400 beds', () => {
-    const many = Array.from({ length: MOST_BEDS_IN_PAIRS }, (_, at) => bed('S', String(at)));
-    // 79,800 pairs of 1,000 draws: every second draw is used, and only those have bed 0 the older
-    const draws = 1000;
-    const ranks = new Uint32Array(many.length * draws);
-    for (let at = 0; at < many.length; at++) {
-      for (let draw = 0; draw < draws; draw++) ranks[at * draws + draw] = draw % 2 === 0 ? at + 1 : many.length - at;
-    }
-    const large = { ...posterior, beds: many.length, draws, ranks };
-    const ranking = { ...rankBeds(posterior, tied), sequence: many.map((_, at) => at) };
-    const rows = pairRows('clock', many, large, ranking, () => 0.5);
-    expect(rows).toHaveLength(79_800);
-    expect(rows[0]).toMatchObject({ bed_a: 'S/0', bed_b: 'S/1', p_a_older: 1, p_same_zone: 0.5 });
-    expect(pairRows('clock', [...many, bed('S', 'x')], large, ranking, () => 0.5)).toEqual([]);
   });
 });

@@ -22,7 +22,7 @@ describe('findShellConflicts', () => {
           for (const [c, d] of expected) if (b === c) expect(listed).toContain(`${a} ${d}`);
         }
       }),
-      { numRuns: 300 },
+      { numRuns: 100 },
     );
   });
 

@@ -2,7 +2,14 @@ import { describe, expect, it } from 'vitest';
 import type { Task } from '../../src/model/index.js';
 import { createRandom } from '../../src/statistics/index.js';
 import { runTask } from '../../src/tasks.js';
-import { bootstrapLikelihoodRatio, bootstrapP, chooseModel, STRICTER, settleChoice } from '../../src/zones/index.js';
+import {
+  bootstrapLikelihoodRatio,
+  bootstrapP,
+  chooseModel,
+  leadOfZones,
+  STRICTER,
+  settleChoice,
+} from '../../src/zones/index.js';
 
 function beds(means: readonly number[], each: number, seed: number, error = 0.02, tau = 0) {
   const random = createRandom(seed);
@@ -107,5 +114,35 @@ describe('settleChoice', () => {
     }
     expect(low).toBeGreaterThanOrEqual(3);
     expect(low).toBeLessThanOrEqual(23);
+  });
+});
+
+describe('the number of zones', () => {
+  it('does not hang on where the scale of log ratios begins, nor on its unit', () => {
+    for (const { values, errors } of [
+      beds([-2, -1.75, -1.5], 8, 3, 0.04),
+      beds([-2], 20, 5, 0.03, 0.03),
+      beds([-2, -1.9, -1.8, -1.5], 6, 9, 0.03),
+    ]) {
+      const plain = chooseModel(values, errors);
+      const lead = leadOfZones(values, errors);
+      for (const shift of [-0.04, -0.013, 0.0007, 0.02, 0.31]) {
+        const moved = values.map((value) => value + shift);
+        const choice = chooseModel(moved, errors);
+        expect([choice.verdict, choice.bestZones]).toEqual([plain.verdict, plain.bestZones]);
+        for (const [at, bic] of choice.bics.slice(0, 4).entries()) expect(bic).toBeCloseTo(plain.bics[at], 3);
+        expect(Math.abs(leadOfZones(moved, errors) - lead)).toBeLessThan(0.05);
+      }
+      for (const scale of [0.5, 0.98, 1.04, 3]) {
+        const scaled = values.map((value) => value * scale);
+        const choice = chooseModel(
+          scaled,
+          errors.map((error) => error * scale),
+        );
+        expect([choice.verdict, choice.bestZones]).toEqual([plain.verdict, plain.bestZones]);
+        // every density falls by the scale, the same for all models
+        expect(choice.continuumBic - choice.bics[2]).toBeCloseTo(plain.continuumBic - plain.bics[2], 3);
+      }
+    }
   });
 });

@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { createRandom } from '../../src/statistics/index.js';
 import { runTask } from '../../src/tasks.js';
-import { chooseModel, settleChoice } from '../../src/zones/index.js';
+import { bedScatters, chooseModel, settleChoice } from '../../src/zones/index.js';
+import { zoneCoast } from '../simulation/zone-runs.js';
 
 describe('settleChoice with zones that scatter unequally', () => {
   it('splits a wide zone less often than without a word of its scatter', async () => {
@@ -25,5 +26,16 @@ describe('settleChoice with zones that scatter unequally', () => {
     }
     expect(plain).toBeGreaterThan(2);
     expect(told).toBeLessThan(plain / 2);
+  });
+});
+
+describe('zoneScales', () => {
+  it('adds up to the scatter of the clock over all beds', async () => {
+    const { data, zoning } = await zoneCoast({ zones: 3, seed: 4 });
+    const scatters = bedScatters(data, zoning.beds);
+    const squares = scatters.reduce((sum, bed) => sum + bed.squares, 0);
+    const df = scatters.reduce((sum, bed) => sum + bed.df, 0);
+    expect(df).toBe(data.scatter.df);
+    expect(Math.sqrt(squares / df)).toBeCloseTo(data.scatter.s, 10);
   });
 });
