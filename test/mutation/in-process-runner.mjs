@@ -1,6 +1,8 @@
 // A test runner for Stryker that starts nothing per mutant: it bundles the tests of a room once, and evaluates the bundle
 // afresh for each mutant, so that no module keeps anything from the mutant before. Vitest itself takes half a second a
-// mutant for starting a worker and importing; this takes what the tests take. It knows describe, it, it.each and expect.
+// mutant for starting a worker and importing; this takes what the tests take. It knows describe, it, it.each and
+// Vitest's expect, which is all that the tests of these rooms use. @stryker-mutator/api comes with Stryker, which is not
+// among the dependencies (DEVELOPERS.md); chai and @vitest/expect come with Vitest.
 import { existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs';
 import { createRequire } from 'node:module';
 import { join } from 'node:path';

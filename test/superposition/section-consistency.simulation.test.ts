@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { createRandom } from '../../src/statistics/index.js';
-import { checkSections } from '../../src/superposition/section-consistency.js';
+import { checkSections, type PlacedBed } from '../../src/superposition/section-consistency.js';
 
 function section(name: string, means: readonly number[], se = 0.1) {
   return { section: name, beds: means.map((mean, index): PlacedBed => ({ rank: index + 1, mean, se })) };
