@@ -86,4 +86,71 @@ describe('relationGraph', () => {
     );
     expect(graph.sequence.map((node) => graph.node.indexOf(node)).slice(0, 3)).toEqual([0, 1, 2]);
   });
+
+  it('names what contradicts', () => {
+    expect(() => relationGraph(['A/1', 'A/2'], [relation('A/1', 'A/2', 'same'), relation('A/1', 'A/2')])).toThrow(
+      new Error('relations contradict: A/1 is both as old as A/2 and older than it'),
+    );
+    expect(() => relationGraph(['A/1', 'A/2'], [relation('A/1', 'A/2'), relation('A/2', 'A/1')])).toThrow(
+      new Error('relations run in a circle; bedorder check prints it'),
+    );
+  });
+
+  it('goes through beds without a ratio, one after the other, and leaves out those that lead nowhere', () => {
+    const graph = relationGraph(
+      ['a', 'b', 'c', 'd'],
+      [
+        relation('a', 'x'),
+        relation('x', 'y'),
+        relation('y', 'd'),
+        relation('y', 'c'),
+        relation('b', 'y'),
+        relation('x', 'end'),
+        relation('start', 'b'),
+        relation('b', 'end'),
+      ],
+    );
+    expect(graph).toEqual({
+      node: [0, 1, 2, 3],
+      nodes: 4,
+      younger: [[2, 3], [2, 3], [], []],
+      older: [[], [], [0, 1], [0, 1]],
+      sequence: [0, 1, 2, 3],
+    });
+  });
+
+  it('merges beds of one age in any order they are told, also through beds without a ratio', () => {
+    const graph = relationGraph(
+      ['a', 'b', 'c', 'd', 'e'],
+      [
+        relation('d', 'x', 'same'),
+        relation('b', 'x', 'same'),
+        relation('e', 'c', 'same'),
+        relation('c', 'b', 'same'),
+        relation('a', 'x'),
+      ],
+    );
+    expect(graph).toEqual({ node: [0, 1, 1, 1, 1], nodes: 2, younger: [[1], []], older: [[], [0]], sequence: [0, 1] });
+  });
+
+  it('puts deposits in one order whatever the order of the relations, and keeps the shortest steps', () => {
+    const list = [
+      relation('c', 'a'),
+      relation('a', 'e'),
+      relation('c', 'e'),
+      relation('c', 'b'),
+      relation('b', 'e'),
+      relation('d', 'e'),
+    ];
+    const beds = ['a', 'b', 'c', 'd', 'e'];
+    const graph = relationGraph(beds, list);
+    expect(graph).toEqual({
+      node: [0, 1, 2, 3, 4],
+      nodes: 5,
+      younger: [[4], [4], [0, 1], [4], []],
+      older: [[2], [2], [], [], [0, 1, 3]],
+      sequence: [2, 3, 0, 1, 4],
+    });
+    expect(relationGraph(beds, [...list].reverse())).toEqual(graph);
+  });
 });

@@ -26,4 +26,10 @@ describe('sectionRelations', () => {
     ]);
     expect(pairs([bed('a', 'level', 1), bed('b', 'level', 2, 'Bay'), bed('c', 'level', null)])).toEqual([]);
   });
+
+  it('gives certain superposition, the oldest first, of no row of a table', () => {
+    expect(sectionRelations([bed('a', 'level', 10), bed('b', 'level', 9)])).toEqual([
+      { lower: 'Cove/b', upper: 'Cove/a', basis: 'superposition', kind: 'older', certainty: 'certain', row: null },
+    ]);
+  });
 });

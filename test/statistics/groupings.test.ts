@@ -58,7 +58,9 @@ describe('overlapOfNormals', () => {
       fc.property(mean, sd, mean, sd, (m1, s1, m2, s2) => {
         let area = 0;
         const step = 0.002;
-        for (let x = -45; x < 45; x += step) area += step * Math.min(density(x, m1, s1), density(x, m2, s2));
+        const from = Math.min(m1 - 9 * s1, m2 - 9 * s2);
+        const to = Math.max(m1 + 9 * s1, m2 + 9 * s2);
+        for (let x = from; x < to; x += step) area += step * Math.min(density(x, m1, s1), density(x, m2, s2));
         expect(overlapOfNormals(m1, s1, m2, s2)).toBeCloseTo(area, 4);
       }),
       { numRuns: 40 },
@@ -99,7 +101,10 @@ describe('overlapOfNormals', () => {
     fc.assert(
       fc.property(mean, sd, mean, sd, (m1, s1, m2, s2) => {
         const cut = equalDensityCut(m1, s1, m2, s2);
-        const lower1 = density(m2, m1, s1) > density(m2, m2, s2) || density(m1, m2, s2) > density(m1, m1, s1);
+        // one curve is the higher at both means, as far as rounding tells curves that are nearly the same apart
+        const higher = (h: number, other: number) => h > other * (1 - 1e-12);
+        const lower1 =
+          higher(density(m2, m1, s1), density(m2, m2, s2)) || higher(density(m1, m2, s2), density(m1, m1, s1));
         if (cut === null) {
           expect(m1 === m2 || lower1).toBe(true);
           return;

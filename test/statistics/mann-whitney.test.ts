@@ -41,6 +41,7 @@ describe('mannWhitney', () => {
         expect(found.pGreater).toBeCloseTo(greater / all.length, 12);
         expect(found.p).toBeCloseTo(Math.min(1, (2 * Math.min(less, greater)) / all.length), 12);
       }),
+      { numRuns: 40 },
     );
   });
 

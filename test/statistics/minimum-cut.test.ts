@@ -185,19 +185,4 @@ describe('minimumCut', () => {
     expect(() => minimumCut(1, network([]), 0, 0)).toThrow(RangeError);
     expect(() => maximumFlow(2, { from: [0], to: [1], capacity: [] }, 0, 1)).toThrow(RangeError);
   });
-
-  it('cuts 5,000 nodes and a million arcs in a fraction of a second', () => {
-    const random = createRandom(7);
-    const n = 5000;
-    const count = 1_000_000;
-    const from = new Int32Array(count).map(() => random.integer(n));
-    const to = new Int32Array(count).map(() => random.integer(n));
-    const capacity = new Float64Array(count).map(() => random.uniform());
-    const start = process.cpuUsage().user;
-    const cut = minimumCut(n, { from, to, capacity }, 0, n - 1);
-    const seconds = (process.cpuUsage().user - start) / 1e6;
-    // time of the processor, which other programs on the machine hardly change; measured 0.1 to 0.35 s
-    expect(seconds).toBeLessThan(2);
-    expect(cost({ from, to, capacity }, cut.sourceSide)).toBeCloseTo(cut.value, 6);
-  });
 });

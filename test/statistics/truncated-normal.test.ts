@@ -1,76 +1,40 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { createRandom, normalCdf, sampleTruncatedNormal } from '../../src/statistics/index.js';
-import { kolmogorov } from './kolmogorov.js';
-
-/** Distribution function of a standard normal cut to [a, b], taken in the tail where it is precise. */
-function cutCdf(a: number, b: number): (z: number) => number {
-  if (a > 0) {
-    const mirrored = cutCdf(-b, -a);
-    return (z) => 1 - mirrored(-z);
-  }
-  const below = normalCdf(a);
-  return (z) => (normalCdf(z) - below) / (normalCdf(b) - below);
-}
+import { createRandom, sampleTruncatedNormal } from '../../src/statistics/index.js';
 
 describe('sampleTruncatedNormal', () => {
-  const regimes: [number, number][] = [
-    [-Infinity, Infinity],
-    [-1, 2],
-    [-0.3, 0.5],
-    [0, Infinity],
-    [0.2, 4],
-    [0.4, Infinity],
-    [0.5, Infinity],
-    [0.5, 0.9],
-    [2, Infinity],
-    [3, 3.2],
-    [3, 5],
-    [8, Infinity],
-    [20, Infinity],
-    [20, 20.01],
-    [-Infinity, -6],
-    [-5, -4.9],
-    [-9, -1],
-    [-Infinity, 1.5],
-    [-4, 0],
-    [-0.001, 7],
-    [0.44, 3.1],
-    [1, 1.0001],
-  ];
-
-  it.each(regimes)('follows the cut normal on [%d, %d]', (a, b) => {
-    const random = createRandom(11);
-    const mean = 3;
-    const sd = 0.25;
-    const draws = Array.from({ length: 40_000 }, () => {
-      return sampleTruncatedNormal(random, mean, sd, mean + sd * a, mean + sd * b);
-    });
-    const cdf = cutCdf(a, b);
-    expect(kolmogorov(draws, (x) => cdf((x - mean) / sd))).toBeLessThan(1.95);
-  });
-
+  // One line a way of drawing: whole, by rejection from the normal, the uniform or the exponential, on either side and on
+  // either side of where one takes over from the other. The simulations judge the distributions; these sums of 200 draws
+  // were computed with this code once they had passed, and say that the same seed gives the same draws.
   it.each([
-    [0, Infinity],
-    [-1, 0.5],
-    [4, Infinity],
-    [2, 2.5],
-    [-3, -2],
-  ])('has the moments of the cut normal on [%d, %d]', (a, b) => {
-    // Johnson, Kotz and Balakrishnan 1994, Continuous Univariate Distributions 1, 13.10.1
-    const density = (z: number) => Math.exp(-0.5 * z * z) / Math.sqrt(2 * Math.PI);
-    const mass = a > 0 ? normalCdf(-a) - normalCdf(-b) : normalCdf(b) - normalCdf(a);
-    const end = (z: number) => (Number.isFinite(z) ? z * density(z) : 0);
-    const mean = (density(a) - density(b)) / mass;
-    const variance = 1 + (end(a) - end(b)) / mass - mean * mean;
-    const random = createRandom(12);
-    const n = 100_000;
-    const draws = Array.from({ length: n }, () => sampleTruncatedNormal(random, 0, 1, a, b));
-    const found = draws.reduce((sum, z) => sum + z, 0) / n;
-    const spread = draws.reduce((sum, z) => sum + (z - mean) ** 2, 0) / n;
-    expect(Math.abs(found - mean) / Math.sqrt(variance / n)).toBeLessThan(3.5);
-    expect(spread / variance).toBeGreaterThan(0.96);
-    expect(spread / variance).toBeLessThan(1.04);
+    [-Infinity, Infinity, 599.305290535861],
+    [-1, 2, 611.9009484853192],
+    [-0.3, 0.5, 603.3718484279058],
+    [-1.25, 1.25, 596.5104064976869],
+    [-1.3, 1.3, 599.1434733039052],
+    [0, Infinity, 641.4031000460125],
+    [0.1, 2.45, 638.346314057193],
+    [0.1, 2.55, 638.4505167452812],
+    [0.2, 4, 647.8165391689311],
+    [0.44, 3.1, 656.2309329134944],
+    [0.46, 3.1, 653.0274400856416],
+    [0.5, Infinity, 654.7228212428395],
+    [0.5, 0.9, 633.9044720690367],
+    [2, Infinity, 716.7755254408285],
+    [3, 3.2, 754.2426656073862],
+    [3, 5, 762.6433928808624],
+    [20, Infinity, 1602.1645068935456],
+    [20, 20.01, 1600.2259148257072],
+    [-Infinity, -6, 292.9724544469853],
+    [-5, -4.9, 352.81803612796654],
+    [-9, -1, 525.5620798412007],
+    [-Infinity, 1.5, 592.2384212989994],
+    [-4, 0, 558.5968999539874],
+  ])('draws on [%d, %d] what it always drew', (a, b, wanted) => {
+    const random = createRandom(11);
+    let sum = 0;
+    for (let i = 0; i < 200; i++) sum += sampleTruncatedNormal(random, 3, 0.25, 3 + 0.25 * a, 3 + 0.25 * b);
+    expect(sum).toBeCloseTo(wanted, 9);
   });
 
   it('stays inside any interval, however far or narrow', () => {

@@ -90,7 +90,7 @@ describe('fitMixture', () => {
           expect(fit.weights.reduce((sum, weight) => sum + weight, 0)).toBeCloseTo(1, 8);
         },
       ),
-      { numRuns: 200, seed: 4 },
+      { numRuns: 80, seed: 4 },
     );
   });
 

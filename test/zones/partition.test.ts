@@ -46,7 +46,7 @@ describe('partition', () => {
         const least = bruteForce(values, weights, k);
         expect(cost(values, weights, partition(values, weights, k))).toBeLessThan(least + 1e-9 * (1 + least));
       }),
-      { numRuns: 200, seed: 1 },
+      { numRuns: 60, seed: 1 },
     );
   });
 
@@ -63,7 +63,7 @@ describe('partition', () => {
           }
         }
       }),
-      { numRuns: 100, seed: 2 },
+      { numRuns: 50, seed: 2 },
     );
   });
 
@@ -76,7 +76,7 @@ describe('partition', () => {
           if (at > 0) expect(value).toBeLessThanOrEqual(costs[at - 1] + 1e-12);
         });
       }),
-      { numRuns: 100, seed: 3 },
+      { numRuns: 40, seed: 3 },
     );
   });
 

@@ -77,18 +77,6 @@ describe('aminoAcidVotes', () => {
     for (const { p } of found[0].votes) expect(p).toBeLessThan(0.01);
   });
 
-  it('stays rare where beds are of one age: under 5 % of coasts show a pair', () => {
-    const same = Object.fromEntries(
-      Array.from({ length: 10 }, (_, at) => [`B${at}`, { Ile: -2, Val: -2.2, Glx: -1.9 }]),
-    );
-    let coasts = 0;
-    for (let seed = 1; seed <= 100; seed++) {
-      const found = aminoAcidVotes(voting(shellsOf(same, seed), CODES), { clock: 'index', alpha: 0.05 });
-      if (found.length > 0) coasts++;
-    }
-    expect(coasts).toBeLessThanOrEqual(5);
-  });
-
   it('needs two amino acids, and gives no more pairs than asked for', () => {
     const turned = Object.fromEntries(
       [-2, -1.8, -1.6, -1.4, -1.2].map((x, at) => [`B${at + 1}`, { Ile: x, Val: -x - 4 }]),
