@@ -29,8 +29,9 @@ function write(value: HtmlValue): string {
   if (typeof value === 'string') return escapeMarkup(value);
   if (typeof value === 'number') return String(value);
   if ('markup' in value) return value.markup;
-  // joined, the list is one plain string, and the pieces it was made of can go
-  return value.map(write).join('');
+  let out = '';
+  for (const one of value) out += write(one);
+  return out;
 }
 
 /** A list in a sentence: "a, b and c". */

@@ -1,4 +1,4 @@
-import { type HtmlValue, html, type Markup } from './html.js';
+import { type HtmlValue, html, type Markup, raw } from './html.js';
 
 /** One column of a table on the page. */
 export interface Column<Row> {
@@ -32,11 +32,15 @@ export function table<Row>(
 ): Markup {
   return html`<div class="tablebox" role="region" tabindex="0" aria-label="${caption}"><table><caption>${caption}</caption><thead><tr>${columns.map(
     (column) => html`<th scope="col"${column.number ? html` class="num"` : ''}>${column.head}</th>`,
-  )}</tr></thead><tbody>${rows.map((row) => {
+  )}</tr></thead><tbody>${joined(rows, (row) => {
     const tie = ties(row);
     return html`<tr${attribute('id', tie.id)}${attribute('data-b', tie.beds?.join(' '))}${attribute('data-s', tie.shell)}${attribute('data-z', tie.zone)}${attribute('data-c', tie.clock)}>${columns.map((column, i) => cell(column, row, i))}</tr>`;
   })}</tbody></table></div>`;
 }
+
+/** The rows as one plain string, so that the many pieces it was made of can go. */
+const joined = <Row>(rows: readonly Row[], markup: (row: Row) => Markup): Markup =>
+  raw(rows.map((row) => markup(row).markup).join(''));
 
 function cell<Row>(column: Column<Row>, row: Row, index: number): Markup {
   const exact = column.sort?.(row);
