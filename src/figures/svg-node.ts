@@ -107,27 +107,14 @@ export class SvgNode {
 
   /** The element and all within it as markup. */
   get outerHTML(): string {
-    const pieces: string[] = [];
-    this.writeTo(pieces);
-    return pieces.join('');
-  }
-  // pieces joined once take a third of the memory of strings added to strings
-  private writeTo(pieces: string[]): void {
-    if (this.name === '#text') {
-      pieces.push(escapeMarkup(this.text));
-      return;
-    }
-    pieces.push('<', this.name);
+    if (this.name === '#text') return escapeMarkup(this.text);
+    let out = `<${this.name}`;
     this.attributes.forEach((value, name) => {
-      pieces.push(' ', name, '="', escapeMarkup(value), '"');
+      out += ` ${name}="${escapeMarkup(value)}"`;
     });
-    if (this.childNodes.length === 0) {
-      pieces.push('/>');
-      return;
-    }
-    pieces.push('>');
-    for (const child of this.childNodes) child.writeTo(pieces);
-    pieces.push('</', this.name, '>');
+    if (this.childNodes.length === 0) return `${out}/>`;
+    // joined, children are one plain string, and the many pieces they were made of can go
+    return `${out}>${this.childNodes.map((child) => child.outerHTML).join('')}</${this.name}>`;
   }
 }
 
