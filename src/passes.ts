@@ -63,6 +63,8 @@ export function settlePasses({ context, set, screening, random }: PassInput): Se
   let last = first;
   let left = NOTHING;
   let before: ShellReadings | undefined;
+  let ages: MixedAge[] | null = null;
+  let agesAssume: number | undefined;
   for (let passes = 1; ; passes++) {
     const zones = zonesToMatch(last);
     const { data } = last;
@@ -72,9 +74,16 @@ export function settlePasses({ context, set, screening, random }: PassInput): Se
     const setAside = new Set(
       data.shells.flatMap(({ shell }, at) => (readings.shells[at].status === 'set aside' ? [shell] : [])),
     );
-    const ages = agesOfBeds(context, last, setAside, zones, random.fork(7));
-    const keysOf = (verdicts: readonly MixedAge['verdict'][]): Set<string> =>
-      new Set(data.beds.flatMap((bed, at) => (verdicts.includes(ages[at].verdict) ? [bed.key] : [])));
+    // what a bed's age hangs on stays where the same shells are set aside; only mixed beds name zones
+    const assumed = data.scatter.assumed ? data.scatter.s : undefined;
+    const known = ages !== null && data.slope === 0 && assumed === agesAssume && left.mixed.size === 0;
+    if (ages === null || !known || !sameSet(setAside, left.setAside)) {
+      ages = agesOfBeds(context, last, setAside, zones, random.fork(7));
+      agesAssume = assumed;
+    }
+    const verdicts = ages.map(({ verdict }) => verdict);
+    const keysOf = (wanted: readonly MixedAge['verdict'][]): Set<string> =>
+      new Set(data.beds.flatMap((bed, at) => (wanted.includes(verdicts[at]) ? [bed.key] : [])));
     const next = { setAside, wide: keysOf(['mixed age', 'wide scatter']), mixed: keysOf(['mixed age']) };
     const settled =
       sameSet(next.setAside, left.setAside) && sameSet(next.wide, left.wide) && sameSet(next.mixed, left.mixed);

@@ -58,7 +58,7 @@ async function work(): Promise<void> {
   progress('writing', 1);
   const { writeResults } = await import('../output/write-results.js');
   await writeResults(findings, drawings, await folder);
-  tell({ news: 'written', told: await words(findings, read.request.out) });
+  tell({ news: 'written', told: await words(findings, read.request) });
 }
 
 async function analysed(survey: Survey, request: RunRequest): Promise<Findings> {
@@ -79,11 +79,11 @@ async function drawn(findings: Findings) {
   return { report: renderReport(findings, figures), figures };
 }
 
-async function words(findings: Findings, out: string): Promise<Told> {
+async function words(findings: Findings, { out, json }: RunRequest): Promise<Told> {
   const { summaryJson, summaryText } = await import('./summary/index.js');
   return {
-    summary: summaryText(findings, out, styleOf(colours)),
-    json: summaryJson(findings, out),
+    summary: json ? '' : summaryText(findings, out, styleOf(colours)),
+    json: json ? summaryJson(findings, out) : '',
     warnings: findings.problems,
     reversed: findings.relations.some(({ verdict_after }) => verdict_after === 'reversed'),
   };
