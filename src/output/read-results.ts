@@ -7,6 +7,7 @@ import { isLocked } from './folder/lock.js';
 import { codeOf, refused } from './folder/output-error.js';
 import { type Places, placesOf } from './folder/places.js';
 import { recoverFolder } from './folder/recover.js';
+import { misfitOf } from './misfit.js';
 
 /**
  * Reads the findings of an earlier run. What a killed run left is put right first.
@@ -26,8 +27,13 @@ export function readResults(folder: string): Findings {
   }
   for (const [name, shape] of Object.entries(FINDINGS_FIELDS)) {
     const value = (findings as unknown as Record<string, unknown>)[name];
-    const fits = shape.type === 'list' ? Array.isArray(value) : value !== undefined;
-    if (!fits) throw refused(`${path} is broken: ${name} is missing. Run the survey again.`);
+    if (value === undefined) throw refused(`${path} is broken: ${name} is missing. Run the survey again.`);
+    const misfit = misfitOf(shape, value, name);
+    if (misfit !== null) {
+      throw refused(
+        `${path} is broken: ${misfit.wanted} was wanted in ${misfit.where}, ${misfit.came} came. Run the survey again.`,
+      );
+    }
   }
   return findings;
 }

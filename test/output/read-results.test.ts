@@ -35,6 +35,26 @@ it.each([
   ['nothing', () => put(''), /is broken/],
   ['other JSON', () => put('[1]'), /was not written by bedorder/],
   ['null', () => put('null'), /was not written by bedorder/],
+  [
+    'a number that became a text',
+    () => put(written.replace(/"set_aside":\d+/, '"set_aside":"many"')),
+    /a whole number was wanted in beds\[0\]\.set_aside, "many" came/,
+  ],
+  [
+    'a row that became a list',
+    () => put(written.replace(/\n"shells": \[\n\{[^\n]*\}/, '\n"shells": [\n[]')),
+    /an object was wanted in shells\[0\], \[\] came/,
+  ],
+  [
+    'a field too few',
+    () => put(written.replace('"verdict_after":', '"after":')),
+    /a text was wanted in relations\[0\]\.verdict_after, nothing came/,
+  ],
+  [
+    'an unknown where none may be',
+    () => put(written.replace(/"dl":[\d.]+/, '"dl":null')),
+    /a number was wanted in shells\[\d+\]\.dl, null came/,
+  ],
   ['a part too few', () => put(written.replace('\n"zones":', '\n"zonen":')), /zones is missing/],
   ['no file', () => {}, /holds no results.*bedorder run/s],
 ])('tells what to do about %s', (_, make, message) => {
