@@ -116,7 +116,7 @@ async function mainResult(input: ClockFindingsInput): Promise<ClockResult> {
   const { options, shells, summaries } = context;
   const siteOf = new Map(sites.map((site) => [`${site.section}/${site.bed}`, site]));
   const ages = new Map(data.beds.map((bed, at) => [bed.key, settled.ages[at]]));
-  const marks = bedMarks(settled, siteOf, options, zoning);
+  const marks = bedMarks(settled, siteOf, context, zoning);
   const unsorted = bedRows({
     data,
     zoning,
@@ -220,10 +220,15 @@ function randWithMain(pass: Pass, main: Pass): number | null {
 function bedMarks(
   { last: { data }, left }: Settled,
   sites: ReadonlyMap<string, BedSite>,
-  options: RunContext['options'],
+  { options, relations }: RunContext,
   zoning: Zoning | null,
 ): Map<string, BedMark[]> {
   const { beds } = data;
+  const related = new Set(
+    relations
+      .filter(({ lower, upper }) => sites.get(lower)?.section === sites.get(upper)?.section)
+      .flatMap(({ lower, upper }) => [lower, upper]),
+  );
   const marks = new Map<string, BedMark[]>(beds.map((bed) => [bed.key, []]));
   const toScreen = beds.map((bed) => ({ burial_m: sites.get(bed.key)?.burial_m ?? null, shells: bed.n }));
   for (const { bed, mark } of screenBeds(toScreen, options.screening)) marks.get(beds[bed].key)!.push(mark);
@@ -231,7 +236,8 @@ function bedMarks(
   for (const bed of beds) inSection.set(bed.section, (inSection.get(bed.section) ?? 0) + 1);
   for (const bed of beds) {
     const own = marks.get(bed.key)!;
-    if (sites.get(bed.key)?.place == null && inSection.get(bed.section)! > 1) own.push('no place in section');
+    const placed = sites.get(bed.key)?.place != null || related.has(bed.key);
+    if (!placed && inSection.get(bed.section)! > 1) own.push('no place in section');
     if (data.scatter.assumed) own.push('assumed scatter');
     if (left.mixed.has(bed.key)) own.push('mixed age');
     if (zoning !== null && bed.n > 0 && isNearEquilibrium(data.clock, bed.mean)) own.push('near equilibrium');

@@ -1,14 +1,22 @@
+import type { RelationRecord } from '../model/index.js';
 import type { BedEntry, BedRegister } from './bed-register.js';
 import type { ProblemList } from './problem-list.js';
 
 /**
  * Checks the places of the beds within their sections: one kind a section (else an error); warnings for a bed without a
- * place among others, for beds at one place, and for a survey without any place.
+ * place among others, for beds at one place, and for a survey without any place. A relation with another bed of the section
+ * is as good as a place.
  */
-export function checkPlaces(beds: BedRegister, shellsFile: string, problems: ProblemList): void {
+export function checkPlaces(
+  beds: BedRegister,
+  relations: readonly RelationRecord[],
+  shellsFile: string,
+  problems: ProblemList,
+): void {
   const sections = beds.sections();
+  const related = relatedWithin(beds, relations);
   const several = [...sections.values()].some((ofSection) => ofSection.size > 1);
-  if (several && beds.all().every((entry) => entry.place === null)) {
+  if (several && related.size === 0 && beds.all().every((entry) => entry.place === null)) {
     problems.warning(
       'no places',
       { file: shellsFile },
@@ -23,6 +31,7 @@ export function checkPlaces(beds: BedRegister, shellsFile: string, problems: Pro
     for (const entry of ofSection.values()) {
       const { place, placedAt } = entry;
       if (place === null || placedAt === null) {
+        if (related.has(entry)) continue;
         problems.warning(
           'no place',
           entry.first,
@@ -50,6 +59,19 @@ export function checkPlaces(beds: BedRegister, shellsFile: string, problems: Pro
       }
     }
   }
+}
+
+/** Beds that a relation ties to another bed of their own section. */
+function relatedWithin(beds: BedRegister, relations: readonly RelationRecord[]): Set<BedEntry> {
+  const related = new Set<BedEntry>();
+  if (relations.length === 0) return related;
+  const byKey = new Map(beds.all().map((entry) => [`${entry.section}/${entry.bed}`, entry]));
+  for (const { lower, upper } of relations) {
+    const [below, above] = [byKey.get(lower), byKey.get(upper)];
+    if (below === undefined || above === undefined || below.section !== above.section) continue;
+    related.add(below).add(above);
+  }
+  return related;
 }
 
 function lineOf(entry: BedEntry): string {

@@ -94,7 +94,7 @@ export async function surveyFromBytes(
   const standards = standardsTable === null ? [] : readStandards(standardsTable, problems);
 
   const shellsFile = files.shells?.file ?? '';
-  checkPlaces(beds, shellsFile, problems);
+  checkPlaces(beds, relations, shellsFile, problems);
   checkCircles(relations, beds, problems);
   checkPlaceNames(beds, problems);
   if (shellsTable !== null) {

@@ -60,7 +60,7 @@ export const BED_MARKS: Words<BedMark> = {
   'mixed age': 'shells scatter more than one age allows',
   'one shell': 'a single shell stands for the bed',
   'near equilibrium': 'the ratio is so near equilibrium that order is hardly resolved',
-  'no place in section': 'neither level, height nor depth is known',
+  'no place in section': 'neither level, height nor depth is known, and no relation to another bed of its section',
   'assumed scatter': 'the scatter between shells is assumed, not measured',
   'converted taxon': 'the mean rests on shells of another taxon, converted to the reference taxon',
 };

@@ -35,6 +35,13 @@ describe('places', () => {
     expect(await warningsOf({ shells }, /no place in its section/)).toMatchObject([{ line: 3 }]);
   });
 
+  it('a relation to another bed of the section is as good as one, a relation to another section is not', async () => {
+    const shells = 'section,bed,taxon,shell,A/I\nA,1,P,a,0.5\nA,2,P,a,0.4\nA,3,P,a,0.4\nB,1,P,a,0.4\n';
+    const relations = 'lower,upper,basis\nA/1,A/2,staircase\nA/3,B/1,marker\n';
+    expect(await warningsOf({ shells, relations }, /no place in its section/)).toMatchObject([{ line: 4 }]);
+    expect(await warningsOf({ shells, relations }, /superposition is not known/)).toHaveLength(0);
+  });
+
   it('none at all is told once', async () => {
     const shells = 'section,bed,taxon,shell,A/I\nA,1,P,a,0.5\nA,2,P,a,0.4\nB,1,P,a,0.4\nB,2,P,a,0.4\n';
     expect(await warningsOf({ shells }, /superposition is not known/)).toHaveLength(1);
