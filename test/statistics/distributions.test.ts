@@ -217,3 +217,82 @@ describe('functions behind them', () => {
     expect(() => solveIncreasing(() => ({ value: -1, slope: 0 }), 0)).toThrow(RangeError);
   });
 });
+
+describe('solveIncreasing', () => {
+  /** The root from a start, and how often the function was asked. */
+  const solve = (f: (u: number) => number, slope: (u: number) => number, start: number) => {
+    let asked = 0;
+    const root = solveIncreasing((u) => {
+      asked++;
+      return { value: f(u), slope: slope(u) };
+    }, start);
+    return { root, asked };
+  };
+
+  it('comes by Newton’s steps, from both sides', () => {
+    for (const start of [0, 3, -2]) {
+      const { root, asked } = solve((u) => Math.exp(u) - 2, Math.exp, start);
+      near(root, Math.LN2, 1e-14);
+      expect(asked).toBeLessThan(20);
+    }
+    expect(
+      solve(
+        (u) => u - 5,
+        () => 1,
+        5,
+      ),
+    ).toEqual({ root: 5, asked: 3 });
+  });
+
+  it('halves the bracket where a step would leave it, and where the slope is no help', () => {
+    const bend = solve(
+      (u) => Math.atan(u - 3),
+      (u) => 1 / (1 + (u - 3) ** 2),
+      40,
+    );
+    near(bend.root, 3, 1e-14);
+    expect(bend.asked).toBeLessThan(60);
+    for (const slope of [Number.NaN, 0, Infinity, -1]) {
+      const found = solve(
+        (u) => u ** 3 - 7,
+        () => slope,
+        0,
+      );
+      near(found.root, Math.cbrt(7), 1e-14);
+      expect(found.asked).toBeLessThan(90);
+    }
+  });
+
+  it('settles on a root near 0, and on a step', () => {
+    expect(
+      Math.abs(
+        solve(
+          (u) => u ** 3 + u - 1e-9,
+          (u) => 3 * u * u + 1,
+          2,
+        ).root - 1e-9,
+      ),
+    ).toBeLessThan(1e-18);
+    const step = solve(
+      (u) => (u < 1.25 ? -1 : 1),
+      () => 0,
+      -10,
+    );
+    expect(Math.abs(step.root - 1.25)).toBeLessThan(1e-15);
+    expect(step.asked).toBeLessThan(90);
+  });
+});
+
+describe('quantiles on a grid', () => {
+  it('undo chi-squared and are symmetric for Student’s t, wherever p and df lie', () => {
+    for (const df of [0.3, 1, 4, 30, 900]) {
+      for (const p of [1e-9, 0.01, 0.3, 0.5, 0.9, 1 - 1e-9]) {
+        near(chiSquaredCdf(chiSquaredQuantile(p, df), df), p, 1e-11);
+        if (p < 0.5) near(studentTQuantile(1 - p, df), -studentTQuantile(p, df), 1e-6);
+      }
+    }
+    expect(studentTQuantile(0.3, Infinity)).toBe(normalQuantile(0.3));
+    expect(studentTQuantile(0, Infinity)).toBe(-Infinity);
+    expect(studentTQuantile(1, Infinity)).toBe(Infinity);
+  });
+});

@@ -6,6 +6,7 @@ import {
   kendallInterval,
   kendallTauB,
   mannWhitney,
+  normalCdf,
 } from '../../src/statistics/index.js';
 
 /** All orders of a list. */
@@ -147,5 +148,72 @@ describe('kendallTauB', () => {
     expect(() => kendallTauB([1, 2], [1, NaN])).toThrow(RangeError);
     expect(() => kendallInterval(5, NaN)).toThrow(RangeError);
     expect(() => kendallInterval(5, 0.2, 1)).toThrow(RangeError);
+  });
+
+  it('has the variance of its score over all orders, with ties in both lists', () => {
+    for (const [x, y] of [
+      [
+        [1, 1, 1, 2, 3, 3],
+        [2, 1, 2, 2, 4, 5],
+      ],
+      [
+        [1, 2, 2, 2, 3, 4],
+        [5, 5, 5, 1, 1, 2],
+      ],
+      [
+        [1, 1, 2, 3, 4, 5],
+        [1, 2, 3, 4, 6, 5],
+      ],
+    ]) {
+      const { concordant, discordant, p, exact } = kendallTauB(x, y);
+      const scores = orders(y).map((order) => {
+        const other = kendallTauB(x, order);
+        return other.concordant - other.discordant;
+      });
+      const variance = scores.reduce((sum, score) => sum + score * score, 0) / scores.length;
+      expect(exact).toBe(false);
+      expect(p).toBeCloseTo(2 * normalCdf(-Math.abs(concordant - discordant) / Math.sqrt(variance)), 10);
+    }
+    // two pairs tied in one list
+    expect(kendallTauB([1, 1], [1, 2])).toMatchObject({ tau: NaN, p: 1, concordant: 0, discordant: 0 });
+  });
+
+  it('counts each pair once', () => {
+    expect(kendallTauB([1, 2, 3, 4], [1, 3, 2, 4])).toMatchObject({ concordant: 5, discordant: 1, tau: 4 / 6 });
+    expect(kendallTauB([1, 2, 2, 4], [1, 3, 2, 1])).toMatchObject({ concordant: 2, discordant: 2, tau: 0 });
+  });
+
+  it('goes over to Fisher’s z above 100 values', () => {
+    const by = (n: number, tau: number, level: number, z: number) => {
+      const { low, high } = kendallInterval(n, tau, level);
+      const reach = z * Math.sqrt(0.437 / (n - 4));
+      expect(low).toBeCloseTo(Math.tanh(Math.atanh(tau) - reach), 8);
+      expect(high).toBeCloseTo(Math.tanh(Math.atanh(tau) + reach), 8);
+    };
+    by(101, 0.4, 0.95, 1.959963984540054);
+    by(200, -0.7, 0.9, 1.6448536269514722);
+    // at 100 it is still the one of discordant pairs, which does not lie about the tau of z
+    const { low, high } = kendallInterval(100, 0.4);
+    expect(Math.abs((Math.atanh(low) + Math.atanh(high)) / 2 - Math.atanh(0.4))).toBeGreaterThan(1e-3);
+    // −1 and 1 are ends, and their other ends mirror each other
+    expect(kendallInterval(150, -1).low).toBe(-1);
+    expect(kendallInterval(150, -1).high).toBeCloseTo(-kendallInterval(150, 1).low, 10);
+    expect(kendallInterval(150, -1).high).toBeLessThan(-0.9);
+  });
+
+  it('has tails of half of what the level leaves', () => {
+    // 4 values in perfect order: the Mallows model with chance 0.025 of no discordant pair; its chances of 0 … 6 discordant
+    // pairs are as 1, 3, 5, 6, 5, 3, 1 times q^d, so tau = 1 − 2 mean / 6 where 1 / Σ = 0.025
+    const weights = [1, 3, 5, 6, 5, 3, 1];
+    const { low } = kendallInterval(4, 1);
+    let [from, to] = [0.01, 100];
+    for (let i = 0; i < 200; i++) {
+      const q = Math.sqrt(from * to);
+      if (1 / weights.reduce((sum, w, d) => sum + w * q ** d, 0) > 0.025) from = q;
+      else to = q;
+    }
+    const all = weights.reduce((sum, w, d) => sum + w * from ** d, 0);
+    const mean = weights.reduce((sum, w, d) => sum + d * w * from ** d, 0) / all;
+    expect(low).toBeCloseTo(1 - mean / 3, 8);
   });
 });
