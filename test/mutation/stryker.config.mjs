@@ -10,6 +10,7 @@ export default {
   concurrency: 2,
   timeoutMS: 5000,
   timeoutFactor: 1.5,
+  dryRunTimeoutMinutes: 20,
   // its rewriting of tsconfig.json needs TypeScript before 7, and is of no use here: nothing outside the folder is extended
   tsconfigFile: 'none',
   incremental: true,
