@@ -309,6 +309,42 @@ describe('settleChoice', () => {
     expect((await ten(LOW)).told[0]).toBe('any 1 2 0.00332 0.05 300');
   });
 
+  it('hands out what samples are drawn from, and the statistic of the data', async () => {
+    const wide = values.slice(0, 9).map(() => 0.04);
+    const own = values.slice(0, 9);
+    const [one, two] = [1, 2].map((k) => ({ ...fitMixture(own, wide, k), logLikelihood: 10 * k }));
+    const continuum = { ...fitContinuum(own, wide), logLikelihood: 5 };
+    const choice = {
+      mixtures: [one, two],
+      continuum,
+      bics: [5, 0],
+      continuumBic: 4,
+      bestZones: 2,
+      verdict: 'zones' as const,
+    };
+    const asked: Task[] = [];
+    const host = async (tasks: readonly Task[]) => {
+      asked.push(...tasks);
+      return tasks.map(({ argument }) => new Array<number>((argument as { repeats: number }).repeats).fill(LOW));
+    };
+    const { comparisons } = await settleChoice(choice, own, wide, { alpha: 0.05, seed: 8, simulations: 70, map: host });
+    expect(comparisons.map(({ simpler, statistic }) => [simpler, statistic])).toEqual([
+      ['continuum', 30],
+      ['1', 20],
+    ]);
+    const common = { errors: wide, zones: 2, seed: 8 };
+    const even = { kind: 'continuum', low: continuum.low, high: continuum.high };
+    const zone = { kind: 'zones', means: one.means, weights: one.weights, tau: one.tau };
+    expect(asked).toEqual(
+      [
+        { ...common, simpler: even, first: 0, repeats: 50 },
+        { ...common, simpler: even, first: 50, repeats: 20 },
+        { ...common, simpler: zone, first: 0, repeats: 50 },
+        { ...common, simpler: zone, first: 50, repeats: 20 },
+      ].map((argument) => ({ name: 'bootstrapLikelihoodRatio', argument })),
+    );
+  });
+
   it('repeats until p is plain, 999 times at most, 199 above 400 beds', async () => {
     const run = scripted([40, 9, 0], 30, 'zones');
     const long = scripted([40, 9, 0], 30, 'zones', 401);
@@ -677,6 +713,27 @@ describe('findZones', () => {
     expect(found.spread).toBeCloseTo(0.02719768898, 5);
     // forced apart they stay so
     expect(find(data, { zones: 2 })).toMatchObject({ forced: true, labels: [0, 0, 0, 0, 1, 1, 1, 1] });
+  });
+
+  it('joins the two that overlap most, and leaves a third where it is', () => {
+    const shells = [0.1, -0.1, 0.08, -0.09, 0.01];
+    const three = (levels: readonly number[]) => {
+      const plain = smallClock(
+        levels.flatMap((level) => [0, 0.005, -0.005, 0.01].map((off) => ({ level: level + off, offsets: shells }))),
+      );
+      return {
+        ...plain,
+        beds: plain.beds.map((bed) => ({ ...bed, se: 0.003 })),
+        scatter: { s: 0.1, df: 30, assumed: false },
+      };
+    };
+    const [young, old] = [find(three([-2, -1.95, -1])), find(three([-3, -2, -1.95]))];
+    expect(young).toMatchObject({ verdict: 'zones', zonesBeforeJoining: 3 });
+    expect(young.labels).toEqual([0, 0, 0, 0, 0, 0, 0, 0, 1, 1, 1, 1]);
+    expect(old).toMatchObject({ verdict: 'zones', zonesBeforeJoining: 3 });
+    expect(old.labels).toEqual([0, 0, 0, 0, 1, 1, 1, 1, 1, 1, 1, 1]);
+    // all three run together: the nearer two first
+    expect(find(three([-2, -1.95, -1.88])).labels).toEqual(new Array<number>(12).fill(0));
   });
 
   it('counts parameters beside, or takes a choice made before', () => {
