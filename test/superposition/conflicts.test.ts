@@ -120,8 +120,12 @@ describe('conflictsOfItsOwn', () => {
       adjusted: 0,
       odd: false,
     });
+    const own = placed.map(({ x }, at) => residual(x, at < 4 ? lowerOthers : upperOthers));
     const residuals = {
-      shells: placed.map(({ x }, at) => residual(x, at < 4 ? lowerOthers : upperOthers)),
+      of: (at: number) => own[at],
+      shells: own,
+      residual: Float64Array.from(own, (shell) => shell.residual ?? Number.NaN),
+      p: new Float64Array(8),
       s,
       df: 20,
       means: [lowerMean, upperMean],
@@ -140,7 +144,7 @@ describe('conflictsOfItsOwn', () => {
       asLower: [],
       asUpper: [],
     };
-    return conflictsOfItsOwn(conflicts, placed, residuals).flatMap((own, at) => (own ? [at] : []));
+    return conflictsOfItsOwn(conflicts, placed, residuals).flatMap((one, at) => (one ? [at] : []));
   };
   // 95 % one-sided: 1.645 s √(1/3 + 1/4) for the mean of three others against a mean of four
   const limit = 1.645 * s * Math.sqrt(1 / 3 + 1 / 4);
