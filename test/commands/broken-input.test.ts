@@ -1,7 +1,10 @@
 import { mkdirSync, mkdtempSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { Command } from 'commander';
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
+import { check } from '../../src/commands/check.js';
+import { addSurveyOptions, withUnderscores } from '../../src/commands/survey-options.js';
 import { bedorder } from './program.js';
 
 let home: string;
@@ -9,6 +12,27 @@ beforeEach(() => {
   home = mkdtempSync(join(tmpdir(), 'bedorder-'));
 });
 afterEach(() => rmSync(home, { recursive: true, force: true }));
+
+/** `bedorder check` in this process, which is read and answered for as `run` is, without the start of a program. */
+async function checkHere(args: readonly string[]) {
+  const said = { stdout: '', stderr: '' };
+  const listen = (stream: 'stdout' | 'stderr') =>
+    vi.spyOn(process[stream], 'write').mockImplementation((text) => {
+      said[stream] += text;
+      return true;
+    });
+  const spies = [listen('stdout'), listen('stderr')];
+  let status: number | undefined;
+  try {
+    const command = addSurveyOptions(new Command('check')).action(async (shells: string, options) => {
+      status = await check(shells, withUnderscores(options));
+    });
+    await command.parseAsync(args, { from: 'user' });
+  } finally {
+    for (const spy of spies) spy.mockRestore();
+  }
+  return { status, ...said };
+}
 
 const header = 'section,bed,taxon,shell,level,D/L Ile\n';
 const row = (ratio: string, bed = 'A', level = '1') => `Cove,${bed},Mya,1,${level},${ratio}\n`;
@@ -43,8 +67,11 @@ describe('broken input', () => {
   it.each(BROKEN)('%s: status 2, the place, no stack, no folder', async (_, content, message) => {
     if (content === null) mkdirSync(join(home, 'shells.csv'));
     else writeFileSync(join(home, 'shells.csv'), content);
-    for (const command of ['run', 'check']) {
-      const { status, stdout, stderr } = await bedorder([command, 'shells.csv'], { cwd: home });
+    for (const outcome of [
+      await bedorder(['run', 'shells.csv'], { cwd: home }),
+      await checkHere([join(home, 'shells.csv')]),
+    ]) {
+      const { status, stdout, stderr } = outcome;
       expect(status).toBe(2);
       expect(stderr).toMatch(message);
       expect(stderr).toMatch(/nothing was written/);
@@ -92,12 +119,24 @@ describe('broken options', () => {
     [['--staircase', 'up'], /--staircase up: one of/],
     [['--taxon', 'Mia'], /--taxon Mia.*Did you mean Mya/s],
     [['--gradient', 'cmat_c'], /--gradient cmat_c/],
+    [['--settings', 'gone.yaml'], /gone\.yaml/],
+  ])('%j', async (options, message) => {
+    const { status, stdout, stderr } = await checkHere([join(home, 'shells.csv'), ...options]);
+    expect(stderr).toMatch(message);
+    expect(status).toBe(2);
+    expect(stdout).toBe('');
+  });
+
+  // of a value, of a name that the survey lacks, of the folder, and of the words of the command line itself
+  it.each<[string[], RegExp]>([
+    [['--zones', '0'], /--zones 0: a whole number from 1/],
+    [['--taxon', 'Mia'], /--taxon Mia.*Did you mean Mya/s],
+    [['--settings', 'gone.yaml'], /gone\.yaml/],
     [['--out', '.'], /--out/],
     [['--out', 'shells.csv'], /--out shells\.csv/],
     [['--colour'], /unknown option '--colour'/],
     [['--zone', '3'], /Did you mean --zones/],
-    [['--settings', 'gone.yaml'], /gone\.yaml/],
-  ])('%j', async (options, message) => {
+  ])('run %j: nothing is written', async (options, message) => {
     const { status, stderr } = await bedorder(['run', 'shells.csv', ...options], { cwd: home });
     expect(stderr).toMatch(message);
     expect(status).toBe(2);

@@ -17,7 +17,7 @@ const file = (name: string) => ({
 describe('whoever does the tasks, and in whatever order', () => {
   let survey: Survey;
   const results = async (map: Host['map']) => {
-    const findings = await analyse(survey, { ...DEFAULT_OPTIONS, simulations: 99 }, { map, progress: () => {} });
+    const findings = await analyse(survey, { ...DEFAULT_OPTIONS, simulations: 39 }, { map, progress: () => {} });
     return [...resultsPieces(findings)].join('');
   };
   let tasksSeen = 0;
@@ -72,13 +72,13 @@ describe('whatever the machine', () => {
   it('time zone, language and number of workers', async () => {
     const environments = [
       { TZ: 'UTC', LANG: 'C', LC_ALL: 'C', BEDORDER_WORKERS: '1' },
-      { TZ: 'Pacific/Chatham', LANG: 'de_DE.UTF-8', LC_ALL: 'de_DE.UTF-8', BEDORDER_WORKERS: '2' },
-      { TZ: 'America/St_Johns', LANG: 'ar_EG.UTF-8', LC_ALL: 'ar_EG.UTF-8', BEDORDER_WORKERS: '5' },
+      { TZ: 'Pacific/Chatham', LANG: 'ar_EG.UTF-8', LC_ALL: 'ar_EG.UTF-8', BEDORDER_WORKERS: '5' },
       { TZ: '', LANG: '', LC_ALL: '', BEDORDER_WORKERS: 'many', NODE_OPTIONS: '--max-old-space-size=300' },
     ];
     const digests: string[] = [];
     for (const [at, env] of environments.entries()) {
       const args = ['run', 'shells.csv', '--beds', 'beds.csv', '--gradient', 'cmat_c', '--out', `out-${at}`, '--quiet'];
+      args.push('--simulations', '39');
       expect(await bedorder(args, { cwd: home, env })).toMatchObject({ status: 0, stderr: '' });
       digests.push(digest(join(home, `out-${at}`)));
     }

@@ -114,7 +114,7 @@ describe('gap statistic and silhouette against R’s cluster', () => {
       .eigenvectorMatrix;
     const turned = centred.mmul(axes);
     const random = createRandom(1);
-    const references = Array.from({ length: 60 }, (_, seed) => {
+    const references = Array.from({ length: cases(30, 60) }, (_, seed) => {
       const box = Array.from({ length: 4 }, (_, j) => {
         const column = turned.getColumn(j);
         return [Math.min(...column), Math.max(...column)];

@@ -12,7 +12,7 @@ const fits = new Ajv({ allErrors: false }).compile(resultsSchema());
 /** Everything that must not be in findings: numbers that are none, values out of their range, rows lost. */
 export function faultsOfFindings(findings: Findings): string[] {
   return [
-    ...notFinite(findings, 'findings'),
+    ...notFinite(findings),
     ...outOfRange(findings),
     ...misfits(findings),
     ...TABLES.flatMap((table) => {
@@ -31,12 +31,25 @@ export function faultsOfText(name: string, text: string): string[] {
   return found === null ? [] : [`${name}: …${text.slice(Math.max(0, found.index - 80), found.index + 40)}…`];
 }
 
-function notFinite(value: unknown, path: string): string[] {
-  if (typeof value === 'number') return Number.isFinite(value) ? [] : [`${path} is ${value}`];
-  if (typeof value === 'string') return faultsOfText(path, value);
-  if (value === undefined) return [`${path} is undefined`];
-  if (typeof value !== 'object' || value === null) return [];
-  return Object.entries(value).flatMap(([key, inner]) => notFinite(inner, `${path}.${key}`));
+function notFinite(findings: Findings): string[] {
+  const faults: string[] = [];
+  // findings hold millions of values: the way to one is spelt out where it is at fault only
+  const way = ['findings'];
+  const look = (value: unknown): void => {
+    if (typeof value === 'string') {
+      if (faultsOfText('', value).length > 0) faults.push(...faultsOfText(way.join('.'), value));
+    } else if (value === undefined || (typeof value === 'number' && !Number.isFinite(value))) {
+      faults.push(`${way.join('.')} is ${value}`);
+    } else if (typeof value === 'object' && value !== null) {
+      for (const key of Object.keys(value)) {
+        way.push(key);
+        look((value as Record<string, unknown>)[key]);
+        way.pop();
+      }
+    }
+  };
+  look(findings);
+  return faults;
 }
 
 function outOfRange(findings: Findings): string[] {

@@ -1,4 +1,5 @@
 import { expect, it } from 'vitest';
+import { cases } from '../house/effort.js';
 import { tryMany } from './try-many.js';
 
 /*
@@ -7,7 +8,7 @@ import { tryMany } from './try-many.js';
  */
 
 const first = Number(process.env.FUZZ_FIRST ?? 1);
-const count = Number(process.env.FUZZ_COUNT ?? 120);
+const count = Number(process.env.FUZZ_COUNT ?? cases(42, 300));
 
 it(`tries ${first} to ${first + count - 1}: a result or a message, in time, within memory`, {
   timeout: 10_000 * count,

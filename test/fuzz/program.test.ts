@@ -3,6 +3,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, expect, it } from 'vitest';
 import { bedorder } from '../commands/program.js';
+import { cases } from '../house/effort.js';
 import { PARTS } from './survey-files.js';
 import { mutantOf, PATIENCE } from './try-many.js';
 
@@ -12,7 +13,8 @@ const home = mkdtempSync(join(tmpdir(), 'bedorder-'));
 afterAll(() => rmSync(home, { recursive: true, force: true }));
 
 const first = Number(process.env.FUZZ_FIRST ?? 1);
-const count = Math.min(100, Number(process.env.FUZZ_COUNT ?? 12));
+// 6: one of each start
+const count = Math.min(100, Number(process.env.FUZZ_COUNT ?? cases(6, 12)));
 
 it.each(Array.from({ length: count }, (_, k) => first + 7 * k))(
   'mutant %i ends with 0 or with 2 and a message',

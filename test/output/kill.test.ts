@@ -39,7 +39,7 @@ function startWriter() {
 }
 
 it('a kill at any moment leaves results that are whole, old or new', async () => {
-  for (let kill = 0; kill < 60; kill++) {
+  for (let kill = 0; kill < 50; kill++) {
     const { child, ready, ended } = startWriter();
     await ready;
     await new Promise((resolve) => setTimeout(resolve, Math.random() * 40));

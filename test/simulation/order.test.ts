@@ -2,13 +2,16 @@ import { describe, expect, it } from 'vitest';
 import { analyse } from '../../src/index.js';
 import { DEFAULT_OPTIONS, type Findings } from '../../src/model/index.js';
 import { runTask } from '../../src/tasks.js';
+import { cases } from '../house/effort.js';
 import { type SimulatedCoast, simulateCoast } from './coast.js';
 
 /*
  * Rates of the order and of the relation checks on simulated coasts of 30 beds, 4 to 8 shells a bed and 5 % between shells.
- * Seeds 1 to 20; the stated rates are those of the issue that asked for them.
+ * The stated rates are those promised. Pairs, ranks and relations of 8 coasts are hundreds already, and of 8 relations upside
+ * down none may be missed; the long tests take 20 coasts.
  */
-const SEEDS = Array.from({ length: 20 }, (_, at) => at + 1);
+const COASTS = cases(8, 20);
+const SEEDS = Array.from({ length: COASTS }, (_, at) => at + 1);
 const host = { map: async (tasks: readonly Parameters<typeof runTask>[0][]) => tasks.map(runTask), progress: () => {} };
 
 async function run(options: Parameters<typeof simulateCoast>[0]): Promise<{ coast: SimulatedCoast; found: Findings }> {
@@ -53,13 +56,13 @@ describe.each([
         }
       }
     }
-    expect(pairs).toBeGreaterThan(1000);
+    expect(pairs).toBeGreaterThan(50 * COASTS);
     expect(right / pairs).toBeGreaterThanOrEqual(0.98);
     expect(held / beds).toBeGreaterThanOrEqual(0.93);
-    expect(sound).toBeGreaterThan(300);
+    expect(sound).toBeGreaterThan(15 * COASTS);
     expect(accused / sound).toBeLessThanOrEqual(0.02);
     if ('upsideDown' in options) {
-      expect(swapped).toBe(20);
+      expect(swapped).toBe(COASTS);
       expect(told / swapped).toBeGreaterThanOrEqual(0.95);
     }
   });

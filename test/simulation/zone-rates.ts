@@ -1,5 +1,4 @@
 import type { ClockSet } from '../../src/beds/index.js';
-import type { Clock } from '../../src/model/index.js';
 import { studentTQuantile } from '../../src/statistics/index.js';
 import { assignerOverDraws, bootstrapZones, zoneMeanErrors } from '../../src/zones/index.js';
 import type { CoastOptions, SimulatedAminoAcid } from './coast-options.js';
@@ -34,12 +33,8 @@ export interface Recovery {
 }
 
 /** How zones that are there come back. */
-export async function recovery(
-  seeds: number,
-  coast: CoastOptions & { zones: number },
-  clock?: (set: ClockSet) => Clock,
-): Promise<Recovery> {
-  const runs = await zoneCoasts(seeds, coast, clock ? { clock } : {});
+export async function recovery(seeds: number, coast: CoastOptions & { zones: number }): Promise<Recovery> {
+  const runs = await zoneCoasts(seeds, coast);
   return {
     rightNumber: shareOf(runs, ({ zoning }) => zoning.fit.k === coast.zones),
     rand: meanOf(runs.map(({ rand }) => rand)),

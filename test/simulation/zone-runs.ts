@@ -70,11 +70,19 @@ export async function settledZones(data: ClockData, random: Random): Promise<Zon
   return findZones(data, { alpha: ALPHA, zones: null, random, simulations: 199, choice })!;
 }
 
-/** The same coast over many seeds, from 1 upwards. */
-export async function zoneCoasts(seeds: number, coast: CoastOptions, options: ZoneRunOptions = {}): Promise<ZoneRun[]> {
-  const runs: ZoneRun[] = [];
-  for (let seed = 1; seed <= seeds; seed++) runs.push(await zoneCoast({ ...coast, seed }, options));
-  return runs;
+const drawn = new Map<string, ZoneRun[]>();
+
+/** The same coast over many seeds, from 1 upwards. What was run is kept, as several rates are read off the same coasts. */
+export async function zoneCoasts(
+  seeds: number,
+  coast: CoastOptions,
+  options: Omit<ZoneRunOptions, 'clock'> = {},
+): Promise<ZoneRun[]> {
+  const key = JSON.stringify([coast, options]);
+  const runs = drawn.get(key) ?? [];
+  drawn.set(key, runs);
+  while (runs.length < seeds) runs.push(await zoneCoast({ ...coast, seed: runs.length + 1 }, options));
+  return runs.slice(0, seeds);
 }
 
 export const meanOf = (values: readonly number[]): number =>
