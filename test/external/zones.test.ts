@@ -14,6 +14,7 @@ import {
   groupsByGap,
   meanSilhouette,
 } from '../../src/zones/index.js';
+import { cases } from '../house/effort.js';
 import { ACIDITY, IRIS, THREE_AMINO_ACIDS } from './zones-data.js';
 
 const ILE: Clock = {
