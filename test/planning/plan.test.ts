@@ -309,9 +309,11 @@ describe('plan of any findings', () => {
 
   it('plans 1,000 beds in seconds', () => {
     const { findings } = datedCoast(createRandom(42), { perZone: 250 });
-    const before = performance.now();
+    // of the processor, so that a busy machine fails no test
+    const before = process.cpuUsage();
     plan({ ...findings, pairs: [] });
-    expect(performance.now() - before).toBeLessThan(30000);
+    const { user, system } = process.cpuUsage(before);
+    expect((user + system) / 1e6).toBeLessThan(30);
   });
 
   it('states its criterion', () => {
