@@ -45,8 +45,8 @@ describe('zones that are there', () => {
   });
 
   it('come back the surer the further apart, with more beds and with more shells', async () => {
-    const near = (await recovery(cases(12, 25), { zones: 3, spacing: step(8) })).rand;
-    const far = (await recovery(cases(12, 25), { zones: 3, spacing: step(20) })).rand;
+    const near = (await recovery(cases(8, 25), { zones: 3, spacing: step(8) })).rand;
+    const far = (await recovery(cases(8, 25), { zones: 3, spacing: step(20) })).rand;
     expect(far).toBeGreaterThan(near + 0.2);
     const few = (await recovery(cases(6, 25), { zones: 3, spacing: step(10), beds: 15 })).rand;
     const many = (await recovery(cases(6, 25), { zones: 3, spacing: step(10), beds: 60 })).rand;
