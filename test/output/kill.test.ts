@@ -9,6 +9,7 @@ import { inspectFolder } from '../../src/output/folder/inspect.js';
 import { placesOf } from '../../src/output/folder/places.js';
 import { recoverFolder } from '../../src/output/folder/recover.js';
 import { readResults } from '../../src/output/read-results.js';
+import { cases } from '../house/effort.js';
 
 const home = mkdtempSync(join(tmpdir(), 'bedorder-'));
 const writer = join(home, 'writer.mjs');
@@ -39,7 +40,7 @@ function startWriter() {
 }
 
 it('a kill at any moment leaves results that are whole, old or new', async () => {
-  for (let kill = 0; kill < 50; kill++) {
+  for (let kill = 0; kill < cases(20, 50); kill++) {
     const { child, ready, ended } = startWriter();
     await ready;
     await new Promise((resolve) => setTimeout(resolve, Math.random() * 40));
