@@ -16,7 +16,11 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { placesOf } from '../../src/output/folder/places.js';
 import { recoverFolder } from '../../src/output/folder/recover.js';
 import { readResults } from '../../src/output/read-results.js';
+import { cases } from '../house/effort.js';
 import { bedorder, builtOnce } from './program.js';
+
+/** Kills of each of two runs side by side: 50 in the long tests. */
+const KILLS = cases(10, 25);
 
 /* Whole runs of the program that are killed, starved of disk, or sent to places where they must not write. */
 
@@ -48,9 +52,9 @@ function digest(folder: string): string {
 /** Files beside the results that a run may leave when it is killed; the next run takes them away. */
 const leftovers = () => readdirSync(home).filter((name) => name.startsWith('.'));
 
-// two lanes of 25 kills, each in a folder of its own
+// two lanes of kills, each in a folder of its own
 it.concurrent.each(['lane-1', 'lane-2'])(
-  'a run killed at any of 25 moments leaves results that are found whole, old or new: %s',
+  'a run killed at any moment leaves results that are found whole, old or new: %s',
   async (out) => {
     const told = await bedorder(['run', ...survey, '--out', out, '--seed', '2'], { cwd: home });
     expect(told.status, told.stderr).toBe(0);
@@ -61,7 +65,7 @@ it.concurrent.each(['lane-1', 'lane-2'])(
     const first = digest(join(home, out));
     expect(second).not.toBe(first);
     let killed = 0;
-    for (let kill = 0; kill < 25; kill++) {
+    for (let kill = 0; kill < KILLS; kill++) {
       const args = [cli, 'run', ...survey, '--out', out, '--seed', String(1 + (kill % 2))];
       const child = spawn(process.execPath, args, { cwd: home, stdio: 'ignore' });
       const ended = new Promise<NodeJS.Signals | null>((resolve) =>
@@ -76,7 +80,7 @@ it.concurrent.each(['lane-1', 'lane-2'])(
       expect(readResults(join(home, out)).options.seed).toBeGreaterThan(0);
       expect([first, second]).toContain(digest(join(home, out)));
     }
-    expect(killed).toBeGreaterThan(5);
+    expect(killed).toBeGreaterThan(KILLS / 5);
     await run(['--out', out, '--seed', '1']);
     expect(digest(join(home, out))).toBe(first);
     expect(leftovers().filter((name) => name.includes(out))).toEqual([]);

@@ -3,7 +3,7 @@ import { clockData } from '../../src/beds/index.js';
 import type { Clock, Shell } from '../../src/model/index.js';
 import { createRandom } from '../../src/statistics/index.js';
 import { assignZone } from '../../src/zones/index.js';
-import { cases } from '../house/effort.js';
+import { cases, LONG } from '../house/effort.js';
 import { settledZones } from '../simulation/zone-runs.js';
 
 const ILE: Clock = {
@@ -68,13 +68,15 @@ describe('stages of the raised beaches of south-west Britain', () => {
   });
 
   it('do so for most seeds with 10 beds a stage, and for some with 5', async () => {
-    // measured over 200 seeds: 85 % and 21 %, most others called a continuum (10 % and 78 %); of 20 seeds at least 14 and
-    // 3 are three with chances of 98 % and 82 % where that is so, and with 13 % and 8 % where 55 % and 5 % of all are (binomial)
+    // measured over 200 seeds: 85 % and 21 %, most others called a continuum (10 % and 78 %); of 20 seeds at least 14
+    // are three with a chance of 98 % where that is so, and of 13 % where 55 % of all are (binomial)
     const seeds = cases(20, 40);
-    for (const { each, least } of [
+    const rates = [
       { each: 10, least: cases(14, 33) },
-      { each: 5, least: cases(3, 6) },
-    ]) {
+      { each: 5, least: 6 },
+    ];
+    // with 5 beds a stage few come back, which takes many seeds to see: in the long tests
+    for (const { each, least } of LONG ? rates : rates.slice(0, 1)) {
       let three = 0;
       for (let seed = 1; seed <= seeds; seed++) if ((await drawStages(seed, each)).zoning.fit.k === 3) three++;
       expect(three).toBeGreaterThanOrEqual(least);

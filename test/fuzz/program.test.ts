@@ -14,7 +14,7 @@ afterAll(() => rmSync(home, { recursive: true, force: true }));
 
 const first = Number(process.env.FUZZ_FIRST ?? 1);
 // 6: one of each start
-const count = Math.min(100, Number(process.env.FUZZ_COUNT ?? cases(6, 12)));
+const count = Math.min(100, Number(process.env.FUZZ_COUNT ?? cases(4, 12)));
 
 it.each(Array.from({ length: count }, (_, k) => first + 7 * k))(
   'mutant %i ends with 0 or with 2 and a message',
