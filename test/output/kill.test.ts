@@ -40,7 +40,7 @@ function startWriter() {
 }
 
 it('a kill at any moment leaves results that are whole, old or new', async () => {
-  for (let kill = 0; kill < cases(20, 50); kill++) {
+  for (let kill = 0; kill < cases(12, 50); kill++) {
     const { child, ready, ended } = startWriter();
     await ready;
     await new Promise((resolve) => setTimeout(resolve, Math.random() * 40));
