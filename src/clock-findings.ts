@@ -260,10 +260,9 @@ function sectionRows(
     sections.set(bed.section, list);
     if (bed.n > 0 && place != null) list.push({ rank: heightOf(place), mean: bed.mean, se: bed.se });
   }
-  const sectionOf = new Map([...sites].map(([key, site]) => [key, site.section]));
   const lowerIn = new Map<string, number>();
   for (const { lower } of relations) {
-    const section = sectionOf.get(lower);
+    const section = sites.get(lower)?.section;
     if (section !== undefined) lowerIn.set(section, (lowerIn.get(section) ?? 0) + 1);
   }
   const checks = checkSections(

@@ -1,30 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import type { ClockBed } from '../../src/model/index.js';
-import { MOST_BEDS_IN_PAIRS, type OrderPosterior, pairRows, rankBeds } from '../../src/order/index.js';
-
-const bed = (section: string, name: string): ClockBed => ({
-  key: `${section}/${name}`,
-  section,
-  bed: name,
-  shells: [],
-  n: 5,
-  mean: -1,
-  se: 0.1,
-  gradient: 0,
-});
-
-/** A posterior from the ranks of each bed, draw by draw. */
-function posteriorOf(ranks: readonly (readonly number[])[]): OrderPosterior {
-  return {
-    beds: ranks.length,
-    draws: ranks[0].length,
-    ranks: Uint32Array.from(ranks.flat()),
-    chains: 1,
-    essMin: 400,
-    rhatMax: 1,
-    converged: true,
-  };
-}
+import { MOST_BEDS_IN_PAIRS, pairRows, rankBeds } from '../../src/order/index.js';
+import { bed, posteriorOf } from './posterior-of.js';
 
 // b of Bay is the oldest in all draws; the two `a` share a deposit; b of Cove is older than they in one draw of four
 const posterior = posteriorOf([
