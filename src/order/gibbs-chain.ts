@@ -42,7 +42,7 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
   const younger = flatLists(graph.younger);
   const older = flatLists(graph.older);
   const sequence = Int32Array.from(graph.sequence);
-  const movers = sectionMovers(model, members);
+  const movers = sectionMovers(model, members, bedsOf);
   const theta = new Float64Array(nodes);
   const shift = new Float64Array(sections);
   const df = Math.max(1, scatterDf);

@@ -17,13 +17,11 @@ export interface Mover {
  * own that stay.
  *
  * @param members beds of each deposit
+ * @param bedsOf beds of each section
  */
-export function sectionMovers({ section, sections, graph }: OrderModel, members: Lists): Mover[] {
-  const bedsOf = Array.from({ length: sections }, (): number[] => []);
-  section.forEach((own, bed) => {
-    bedsOf[own].push(bed);
-  });
-  return bedsOf.map((beds, own) => {
+export function sectionMovers({ section, sections, graph }: OrderModel, members: Lists, bedsOf: Lists): Mover[] {
+  return Array.from({ length: sections }, (_, own) => {
+    const beds = [...bedsOf.items.subarray(bedsOf.start[own], bedsOf.start[own + 1])];
     // deposits of one section only move with it; those tied to another by `same` stay
     const inside = [...new Set(beds.map((bed) => graph.node[bed]))].filter((deposit) =>
       members.items.subarray(members.start[deposit], members.start[deposit + 1]).every((bed) => section[bed] === own),
