@@ -1,5 +1,7 @@
-import { numberText } from './number-text.js';
+import { fieldOf } from './field-of.js';
+import { writeNumber } from './number-text.js';
 import type { AnyFields, AnyShape } from './shape.js';
+import { type TextOut, textOf } from './text-out.js';
 
 /** Significant digits of a number in a table. */
 export const TABLE_DIGITS = 6;
@@ -12,52 +14,54 @@ export interface CsvColumn<Row> {
 }
 
 /**
- * A CSV file (RFC 4180, UTF-8, lines ended by LF) in pieces of some ten thousand characters, so that a table of a
- * million rows never stands in memory as one string.
+ * Writes a CSV file (RFC 4180, UTF-8, lines ended by LF).
  *
  * @throws Error naming table, column and row when a number is not finite where the column allows no unknown value.
  */
-export function* csvPieces<Row>(name: string, columns: readonly CsvColumn<Row>[], rows: Iterable<Row>) {
-  const cells = columns.map(({ shape }) => cellWriter(shape));
-  let piece = `${columns.map((column) => textCell(column.header)).join(',')}\n`;
+export function writeCsv<Row>(
+  out: TextOut,
+  name: string,
+  columns: readonly CsvColumn<Row>[],
+  rows: Iterable<Row>,
+): void {
+  const cells = columns.map(({ shape }) => cellWriter(out, shape));
+  out.text(`${columns.map((column) => textCell(column.header)).join(',')}\n`);
   let line = 1;
   for (const row of rows) {
     line++;
-    for (let i = 0; i < columns.length; i++) {
-      const { header, value } = columns[i];
-      if (i > 0) piece += ',';
-      try {
-        piece += cells[i](value(row));
-      } catch (error) {
-        throw new Error(`${name}, line ${line}, column ${header}: ${(error as Error).message}`);
+    let i = 0;
+    try {
+      for (; i < columns.length; i++) {
+        if (i > 0) out.ascii(COMMA);
+        cells[i](columns[i].value(row));
       }
+    } catch (error) {
+      throw new Error(`${name}, line ${line}, column ${columns[i].header}: ${(error as Error).message}`);
     }
-    piece += '\n';
-    if (piece.length > 50_000) {
-      yield piece;
-      piece = '';
-    }
+    out.ascii(LINE_END);
   }
-  yield piece;
 }
 
+const COMMA = 44;
+const LINE_END = 10;
+
 /** Cells of one column; the same text often stands in row after row. */
-function cellWriter(shape: AnyShape): (value: unknown) => string {
-  let last: unknown;
+function cellWriter(out: TextOut, shape: AnyShape): (value: unknown) => void {
+  let last = '';
   let cell = '';
   return (value) => {
-    if (typeof value !== 'string') return csvCell(shape, value);
+    if (typeof value !== 'string') return writeCell(out, shape, value);
     if (value !== last) {
       last = value;
       cell = textCell(value);
     }
-    return cell;
+    out.text(cell);
   };
 }
 
 /** Columns that take each field of a row as it is. */
 export function plainColumns(fields: AnyFields): CsvColumn<Readonly<Record<string, unknown>>>[] {
-  return Object.entries(fields).map(([header, shape]) => ({ header, shape, value: (row) => row[header] }));
+  return Object.entries(fields).map(([header, shape]) => ({ header, shape, value: fieldOf(header) }));
 }
 
 /**
@@ -68,20 +72,26 @@ export function plainColumns(fields: AnyFields): CsvColumn<Readonly<Record<strin
  * csvCell({ type: 'text', description: '' }, '=1+1') // => "'=1+1"
  * csvCell({ type: 'boolean', description: '' }, true) // => 'true'
  */
-export function csvCell(shape: AnyShape, value: unknown): string {
-  if (value === null || value === undefined) return '';
+export const csvCell = (shape: AnyShape, value: unknown): string => textOf((out) => writeCell(out, shape, value));
+
+/** Writes {@link csvCell}. */
+function writeCell(out: TextOut, shape: AnyShape, value: unknown): void {
+  if (value === null || value === undefined) return;
   switch (typeof value) {
     case 'number':
       // what can't be known is written as unknown where the column allows it
-      if (shape.nullable && !Number.isFinite(value)) return '';
-      return numberText(value, shape.type === 'integer' ? 15 : TABLE_DIGITS);
+      if (shape.nullable && !Number.isFinite(value)) return;
+      writeNumber(out, value, shape.type === 'integer' ? 15 : TABLE_DIGITS);
+      break;
     case 'boolean':
-      return value ? 'true' : 'false';
+      out.text(value ? 'true' : 'false');
+      break;
     case 'string':
-      return textCell(value);
+      out.text(textCell(value));
+      break;
     default:
-      if (Array.isArray(value)) return quoted(value.map((item) => disarmed(String(item))).join(';'));
-      throw new Error(`a ${shape.type} was wanted, ${typeof value} came`);
+      if (!Array.isArray(value)) throw new Error(`a ${shape.type} was wanted, ${typeof value} came`);
+      if (value.length > 0) out.text(quoted(value.map((item) => disarmed(String(item))).join(';')));
   }
 }
 

@@ -1,6 +1,6 @@
 /* Findings to files: tables, results.json, GeoJSON, data package, and the folder that holds them. */
 
-export { csvCell, csvPieces, textCell } from './csv.js';
+export { csvCell, textCell, writeCsv } from './csv.js';
 export { dataPackage, PACKAGE_NAME, type WrittenFile } from './data-package.js';
 export { inspectFolder } from './folder/inspect.js';
 export { codeOf, inWords, isOutputError, type OutputError, refused } from './folder/output-error.js';
@@ -11,7 +11,7 @@ export { geoJson } from './geojson.js';
 export { type JsonSchema, resultsSchema } from './json-schema.js';
 export { numberText } from './number-text.js';
 export { readResults } from './read-results.js';
-export { resultsPieces } from './results-json.js';
+export { writeResultsJson } from './results-json.js';
 export { tableColumns } from './table-columns.js';
 export { TABLES, type Table, type TableName } from './tables/index.js';
 export { type Drawings, writeResults } from './write-results.js';

@@ -1,58 +1,49 @@
 import type { Findings } from '../model/index.js';
+import { fieldOf } from './field-of.js';
 import { FINDINGS_FIELDS } from './findings-fields.js';
-import { numberText } from './number-text.js';
+import { writeNumber } from './number-text.js';
 import type { AnyFields, AnyShape } from './shape.js';
+import { type TextOut, utf8 } from './text-out.js';
 
 /** Significant digits of a number in results.json: beyond any measurement, and short of the last bits of arithmetic. */
 export const RESULTS_DIGITS = 12;
 
 /**
- * results.json in pieces: keys in the order of their descriptions, one row of a table a line, numbers with at most
- * 12 significant digits. The same findings give the same bytes.
+ * Writes results.json: keys in the order of their descriptions, one row of a table a line, numbers with at most 12
+ * significant digits. The same findings give the same bytes.
  *
  * @throws Error naming the part when a number is not finite where unknown is not allowed, or a part is missing.
  */
-export function* resultsPieces(findings: Findings): Generator<string> {
+export function writeResultsJson(out: TextOut, findings: Findings): void {
   const parts = Object.entries(FINDINGS_FIELDS);
   for (let i = 0; i < parts.length; i++) {
     const [name, shape] = parts[i];
     const value = (findings as unknown as Record<string, unknown>)[name];
-    yield `${i === 0 ? '{' : ','}\n${JSON.stringify(name)}: `;
-    if (shape.type === 'list') yield* listPieces(name, shape.items, value as readonly unknown[]);
-    else yield named(name, () => writerOf(shape)(value));
-  }
-  yield '\n}\n';
-}
-
-function* listPieces(name: string, shape: AnyShape, items: readonly unknown[]): Generator<string> {
-  if (!Array.isArray(items)) throw new Error(`results.json: a list of ${name} was wanted, ${items} came`);
-  if (items.length === 0) {
-    yield '[]';
-    return;
-  }
-  const write = writerOf(shape);
-  let at = 0;
-  const row = () => write(items[at]);
-  let piece = '[\n';
-  for (; at < items.length; at++) {
-    piece += named(name, row, () => `[${at}]`);
-    piece += at + 1 < items.length ? ',\n' : '\n]';
-    if (piece.length > 50_000) {
-      yield piece;
-      piece = '';
+    out.text(`${i === 0 ? '{' : ','}\n${JSON.stringify(name)}: `);
+    try {
+      if (shape.type === 'list') writeRows(out, name, shape.items, value as readonly unknown[]);
+      else writerOf(out, shape)(value);
+    } catch (error) {
+      if (!(error instanceof Unwritable)) throw error;
+      throw new Error(`results.json, ${name}${error.within.join('')}: ${error.message}`);
     }
   }
-  yield piece;
+  out.text('\n}\n');
 }
 
-/** Runs a writer; a value that can't be written is told with the part it stands in. */
-function named(name: string, write: () => string, place: () => string = () => ''): string {
+function writeRows(out: TextOut, name: string, shape: AnyShape, rows: readonly unknown[]): void {
+  if (!Array.isArray(rows)) throw new Error(`results.json: a list of ${name} was wanted, ${rows} came`);
+  const write = writerOf(out, shape);
+  let at = 0;
   try {
-    return write();
+    for (; at < rows.length; at++) {
+      out.text(at === 0 ? '[\n' : ',\n');
+      write(rows[at]);
+    }
   } catch (error) {
-    if (!(error instanceof Unwritable)) throw error;
-    throw new Error(`results.json, ${name}${place()}${error.within.join('')}: ${error.message}`);
+    throw placed(error, `[${at}]`);
   }
+  out.text(rows.length === 0 ? '[]' : '\n]');
 }
 
 /** A value that its shape does not allow, and the fields it stands in. */
@@ -60,92 +51,96 @@ class Unwritable extends Error {
   readonly within: string[] = [];
 }
 
-/** Text of a value of one shape. Made once a list, since a survey has a million rows. */
-type Writer = (value: unknown) => string;
+function placed(error: unknown, place: string): unknown {
+  if (error instanceof Unwritable) error.within.unshift(place);
+  return error;
+}
 
-function writerOf(shape: AnyShape): Writer {
+/** Writes a value of one shape. Made once a list, since a survey has a million rows. */
+type Writer = (value: unknown) => void;
+
+function writerOf(out: TextOut, shape: AnyShape): Writer {
   const unknown: Writer = (value) => {
-    if (shape.nullable) return 'null';
-    throw new Unwritable(`a ${shape.type} was wanted, ${value} came`);
+    if (!shape.nullable) throw new Unwritable(`a ${shape.type} was wanted, ${value} came`);
+    out.text('null');
   };
-  const known = knownWriter(shape, unknown);
+  const known = knownWriter(out, shape, unknown);
   return (value) => (value === null || value === undefined ? unknown(value) : known(value));
 }
 
-function knownWriter(shape: AnyShape, unknown: Writer): Writer {
+function knownWriter(out: TextOut, shape: AnyShape, unknown: Writer): Writer {
   switch (shape.type) {
     case 'number':
     case 'integer': {
       const digits = shape.type === 'integer' ? 15 : RESULTS_DIGITS;
-      return (value) => (Number.isFinite(value) ? numberText(value as number, digits) : unknown(value));
+      return (value) => (Number.isFinite(value) ? writeNumber(out, value as number, digits) : unknown(value));
     }
-    case 'list': {
-      const item = writerOf(shape.items);
-      return (value) => {
-        const items = value as readonly unknown[];
-        return items.length === 0 ? '[]' : `[${items.map(item).join(',')}]`;
-      };
-    }
+    case 'list':
+      return listWriter(out, writerOf(out, shape.items));
     case 'map':
-      return mapWriter(writerOf(shape.items));
+      return mapWriter(out, writerOf(out, shape.items));
     case 'object':
-      return objectWriter(shape.fields);
+      return objectWriter(out, shape.fields);
     case 'text':
     case 'choice':
-      return textWriter();
+      return (value) => (typeof value === 'string' ? out.json(value) : out.text(JSON.stringify(value)));
     default:
-      return (value) => JSON.stringify(value);
+      return (value) => out.text(JSON.stringify(value));
   }
 }
 
-/** The same text often stands in row after row. */
-function textWriter(): Writer {
-  let last: unknown;
-  let text = '';
+function listWriter(out: TextOut, write: Writer): Writer {
   return (value) => {
-    if (value !== last) {
-      last = value;
-      text = JSON.stringify(value);
+    const items = value as readonly unknown[];
+    out.text('[');
+    for (let at = 0; at < items.length; at++) {
+      if (at > 0) out.text(',');
+      write(items[at]);
     }
-    return text;
+    out.text(']');
   };
 }
 
-function objectWriter(fields: AnyFields): Writer {
+function objectWriter(out: TextOut, fields: AnyFields): Writer {
   const parts = Object.entries(fields).map(([name, shape]) => ({
     name,
-    key: `${JSON.stringify(name)}:`,
+    field: fieldOf(name),
+    first: utf8(`{${JSON.stringify(name)}:`),
+    later: utf8(`,${JSON.stringify(name)}:`),
     optional: shape.optional === true,
-    write: writerOf(shape),
+    write: writerOf(out, shape),
   }));
   return (value) => {
-    const object = value as Record<string, unknown>;
-    let text = '{';
-    for (const { name, key, optional, write } of parts) {
-      const own = object[name];
-      if (optional && own === undefined) continue;
-      if (text.length > 1) text += ',';
-      try {
-        text += key + write(own);
-      } catch (error) {
-        if (error instanceof Unwritable) error.within.unshift(`.${name}`);
-        throw error;
+    let empty = true;
+    let at = 0;
+    try {
+      for (; at < parts.length; at++) {
+        const { field, first, later, optional, write } = parts[at];
+        const own = field(value as object);
+        if (optional && own === undefined) continue;
+        out.bytes(empty ? first : later);
+        empty = false;
+        write(own);
       }
+    } catch (error) {
+      throw placed(error, `.${parts[at].name}`);
     }
-    return `${text}}`;
+    out.text(empty ? '{}' : '}');
   };
 }
 
-function mapWriter(write: Writer): Writer {
+function mapWriter(out: TextOut, write: Writer): Writer {
   return (value) => {
-    const entries = Object.entries(value as Record<string, unknown>).map(([key, item]) => {
+    let before = '{';
+    for (const [key, item] of Object.entries(value as Record<string, unknown>)) {
+      out.text(`${before}${JSON.stringify(key)}:`);
+      before = ',';
       try {
-        return `${JSON.stringify(key)}:${write(item)}`;
+        write(item);
       } catch (error) {
-        if (error instanceof Unwritable) error.within.unshift(`.${key}`);
-        throw error;
+        throw placed(error, `.${key}`);
       }
-    });
-    return `{${entries.join(',')}}`;
+    }
+    out.text(before === '{' ? '{}' : '}');
   };
 }

@@ -2,13 +2,14 @@ import { createHash } from 'node:crypto';
 import { closeSync, mkdirSync, openSync, writeSync } from 'node:fs';
 import { dirname, join } from 'node:path';
 import type { Findings } from '../model/index.js';
-import { type CsvColumn, csvPieces } from './csv.js';
+import { type CsvColumn, writeCsv } from './csv.js';
 import { dataPackage, type WrittenFile } from './data-package.js';
 import { MARKER } from './folder/inspect.js';
 import { geoJson } from './geojson.js';
-import { resultsPieces } from './results-json.js';
+import { writeResultsJson } from './results-json.js';
 import { tableColumns } from './table-columns.js';
 import { TABLES, type Table } from './tables/index.js';
+import { TextOut } from './text-out.js';
 
 /** What is drawn of the findings elsewhere, and only stored here. */
 export interface Drawings {
@@ -29,25 +30,25 @@ export async function writeResults(findings: Findings, drawings: Drawings, folde
   const write = async (
     path: string,
     title: string,
-    pieces: Iterable<string>,
+    content: (out: TextOut) => void,
     columns?: readonly CsvColumn<never>[],
   ) => {
-    files.push({ path, title, ...writePieces(join(folder, path), pieces), columns });
+    files.push({ path, title, ...writeFile(join(folder, path), content), columns });
     await new Promise(setImmediate);
   };
   for (const table of TABLES) {
     const columns = tableColumns(table, findings);
     const rows = findings[table.name] as readonly never[];
     const path = `${table.name}.csv`;
-    await write(path, titleOf(table, findings), csvPieces<never>(path, columns, rows), columns);
+    await write(path, titleOf(table, findings), (out) => writeCsv<never>(out, path, columns, rows), columns);
   }
-  await write('results.json', 'Everything that was found, for programs', resultsPieces(findings));
-  await write('deposits.geojson', 'Beds with coordinates, for a map', [geoJson(findings)]);
-  await write('report.html', 'The report', [drawings.report]);
+  await write('results.json', 'Everything that was found, for programs', (out) => writeResultsJson(out, findings));
+  await write('deposits.geojson', 'Beds with coordinates, for a map', (out) => out.text(geoJson(findings)));
+  await write('report.html', 'The report', (out) => out.text(drawings.report));
   for (const { name, svg } of drawings.figures) {
-    await write(`figures/${name}.svg`, `Figure: ${name.replaceAll('-', ' ')}`, [svg]);
+    await write(`figures/${name}.svg`, `Figure: ${name.replaceAll('-', ' ')}`, (out) => out.text(svg));
   }
-  writePieces(join(folder, MARKER), [dataPackage(files)]);
+  writeFile(join(folder, MARKER), (out) => out.text(dataPackage(files)));
   return files;
 }
 
@@ -62,24 +63,19 @@ function titleOf({ description, scatterless }: Table, { clocks, beds }: Findings
   return `${description}. Every error in it rests on a scatter that was assumed: ${names}`;
 }
 
-/** Bytes of a piece of usual length; one buffer serves all pieces of a file. */
-const ROOM = 200_000;
-
-function writePieces(path: string, pieces: Iterable<string>): { readonly bytes: number; readonly sha256: string } {
+function writeFile(path: string, content: (out: TextOut) => void): { readonly bytes: number; readonly sha256: string } {
   mkdirSync(dirname(path), { recursive: true });
   const hash = createHash('sha256');
   const file = openSync(path, 'wx');
-  let room = Buffer.allocUnsafe(ROOM);
   let bytes = 0;
+  const out = new TextOut((part) => {
+    hash.update(part);
+    for (let done = 0; done < part.length; ) done += writeSync(file, part, done);
+    bytes += part.length;
+  });
   try {
-    for (const piece of pieces) {
-      // three bytes are the most that a UTF-16 unit takes
-      if (3 * piece.length > room.length) room = Buffer.allocUnsafe(3 * piece.length);
-      const part = room.subarray(0, room.write(piece, 'utf8'));
-      hash.update(part);
-      for (let done = 0; done < part.length; ) done += writeSync(file, part, done);
-      bytes += part.length;
-    }
+    content(out);
+    out.flush();
   } finally {
     closeSync(file);
   }

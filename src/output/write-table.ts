@@ -1,9 +1,10 @@
 import { readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs';
 import { basename, dirname, relative, resolve } from 'node:path';
-import { csvPieces, plainColumns } from './csv.js';
+import { plainColumns, writeCsv } from './csv.js';
 import { listedFiles } from './folder/inspect.js';
 import { codeOf, inWords, refused } from './folder/output-error.js';
 import type { AnyFields } from './shape.js';
+import { textOf } from './text-out.js';
 
 /**
  * Writes one table to a CSV file of its own, whole or not at all. A file that is there is replaced only if it is an
@@ -22,8 +23,8 @@ export function writeTable(
   keep: readonly string[] = [],
 ): void {
   const target = resolve(path);
-  const text = [...csvPieces(basename(path), plainColumns(fields), rows as readonly Record<string, unknown>[])].join(
-    '',
+  const text = textOf((out) =>
+    writeCsv(out, basename(path), plainColumns(fields), rows as readonly Record<string, unknown>[]),
   );
   if (keep.some((file) => resolve(file) === target)) {
     throw refused(`${path} is the input, and is not written over. Give another file with --out.`);

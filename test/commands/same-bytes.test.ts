@@ -4,7 +4,7 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { analyse, DEFAULT_OPTIONS, type Host, runTask, type Survey, surveyFromBytes } from '../../src/index.js';
-import { resultsPieces } from '../../src/output/results-json.js';
+import { resultsText } from '../house/written.js';
 import { bedorder, ROOT } from './program.js';
 
 /* The same input, options and seed give the same bytes, whatever the machine says of time, place, language and cores. */
@@ -18,7 +18,7 @@ describe('whoever does the tasks, and in whatever order', () => {
   let survey: Survey;
   const results = async (map: Host['map']) => {
     const findings = await analyse(survey, { ...DEFAULT_OPTIONS, simulations: 39 }, { map, progress: () => {} });
-    return [...resultsPieces(findings)].join('');
+    return resultsText(findings);
   };
   let tasksSeen = 0;
   let inPlace: string;

@@ -1,8 +1,7 @@
 import { expect, it } from 'vitest';
 import type { Findings } from '../../src/index.js';
-import { csvPieces } from '../../src/output/csv.js';
-import { tableColumns } from '../../src/output/table-columns.js';
 import { TABLES } from '../../src/output/tables/index.js';
+import { tableText } from '../house/written.js';
 import { found } from './found.js';
 
 /** Names that programs have tripped over. */
@@ -26,12 +25,7 @@ const NAMES = [
 ];
 
 function tables(findings: Findings): Map<string, string> {
-  return new Map(
-    TABLES.map((table) => [
-      table.name,
-      [...csvPieces<never>(table.name, tableColumns(table, findings), findings[table.name] as never[])].join(''),
-    ]),
-  );
+  return new Map(TABLES.map((table) => [table.name, tableText(table, findings)]));
 }
 
 const survey = (as: (name: string, at: number) => { section: string; bed: string; taxon: string }, count = 2) =>

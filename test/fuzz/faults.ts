@@ -1,11 +1,9 @@
 import { Ajv } from 'ajv';
 import type { Findings } from '../../src/model/index.js';
-import { csvPieces } from '../../src/output/csv.js';
 import { geoJson } from '../../src/output/geojson.js';
 import { resultsSchema } from '../../src/output/json-schema.js';
-import { resultsPieces } from '../../src/output/results-json.js';
-import { tableColumns } from '../../src/output/table-columns.js';
 import { TABLES } from '../../src/output/tables/index.js';
+import { resultsText, tableText } from '../house/written.js';
 
 const fits = new Ajv({ allErrors: false }).compile(resultsSchema());
 
@@ -16,10 +14,7 @@ export function faultsOfFindings(findings: Findings): string[] {
     ...outOfRange(findings),
     ...misfits(findings),
     ...TABLES.flatMap((table) => {
-      const text = [
-        ...csvPieces<never>(table.name, tableColumns(table, findings), findings[table.name] as never[]),
-      ].join('');
-      return faultsOfText(`${table.name}.csv`, text);
+      return faultsOfText(`${table.name}.csv`, tableText(table, findings));
     }),
     ...(JSON.parse(geoJson(findings)).type === 'FeatureCollection' ? [] : ['deposits.geojson is no collection']),
   ];
@@ -109,6 +104,6 @@ function outOfRange(findings: Findings): string[] {
 }
 
 function misfits(findings: Findings): string[] {
-  const written = JSON.parse([...resultsPieces(findings)].join(''));
+  const written = JSON.parse(resultsText(findings));
   return fits(written) ? [] : [`results.json: ${JSON.stringify(fits.errors?.[0])}`];
 }

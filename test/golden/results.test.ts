@@ -3,9 +3,8 @@ import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { describe, expect, it } from 'vitest';
 import { analyse, DEFAULT_OPTIONS, type Findings, type RunOptions, runTask, surveyFromBytes } from '../../src/index.js';
-import { csvPieces } from '../../src/output/csv.js';
-import { tableColumns } from '../../src/output/table-columns.js';
 import { TABLES } from '../../src/output/tables/index.js';
+import { tableText } from '../house/written.js';
 import { holdAgainstGolden } from './compare.js';
 
 /* Every table of every example, and what results.json holds beyond them; `npm run golden` writes them anew. */
@@ -57,10 +56,7 @@ describe.each(Object.keys(EXAMPLES))('%s', (name) => {
         faults.push((error as Error).message);
       }
     };
-    for (const table of TABLES) {
-      const rows = findings[table.name] as readonly never[];
-      hold(`${table.name}.csv`, [...csvPieces<never>(table.name, tableColumns(table, findings), rows)].join(''));
-    }
+    for (const table of TABLES) hold(`${table.name}.csv`, tableText(table, findings));
     hold('beyond-tables.json', beyondTables(findings));
     expect(faults.join('\n\n')).toBe('');
   });

@@ -1,9 +1,10 @@
 import { parse } from 'csv-parse/sync';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { csvCell, csvPieces, textCell } from '../../src/output/csv.js';
+import { csvCell, textCell, writeCsv } from '../../src/output/csv.js';
 import { numberText } from '../../src/output/number-text.js';
 import type { AnyShape } from '../../src/output/shape.js';
+import { textOf } from '../../src/output/text-out.js';
 
 const text: AnyShape = { type: 'text', description: '' };
 const number: AnyShape = { type: 'number', description: '' };
@@ -21,7 +22,7 @@ describe('texts in CSV', () => {
     fc.assert(
       fc.property(fc.array(fc.tuple(nasty, nasty), { minLength: 1, maxLength: 5 }), (rows) => {
         const columns = [0, 1].map((i) => ({ header: `c${i}`, shape: text, value: (row: string[]) => row[i] }));
-        const file = [...csvPieces('t.csv', columns, rows as unknown as string[][])].join('');
+        const file = textOf((out) => writeCsv(out, 't.csv', columns, rows as unknown as string[][]));
         const read = parse(file, { record_delimiter: '\n', bom: false }) as string[][];
         expect(read.slice(1).map((row) => row.map(unescaped))).toEqual(rows);
       }),
@@ -94,7 +95,9 @@ describe('numbers in CSV', () => {
   it('that are not finite are unknown where that is allowed, and a fault with its place elsewhere', () => {
     expect(csvCell({ ...number, nullable: true }, Number.NaN)).toBe('');
     const columns = [{ header: 'scatter', shape: number, value: (row: number) => row }];
-    expect(() => [...csvPieces('clocks.csv', columns, [1, Number.NaN])]).toThrow('clocks.csv, line 3, column scatter');
+    expect(() => textOf((out) => writeCsv(out, 'clocks.csv', columns, [1, Number.NaN]))).toThrow(
+      'clocks.csv, line 3, column scatter',
+    );
   });
 });
 

@@ -4,8 +4,8 @@ import { join } from 'node:path';
 import { afterEach, beforeEach, expect, it } from 'vitest';
 import packageJson from '../../package.json' with { type: 'json' };
 import { readResults } from '../../src/output/read-results.js';
-import { resultsPieces } from '../../src/output/results-json.js';
 import { VERSION } from '../../src/version.js';
+import { resultsText } from '../house/written.js';
 import { FINDINGS } from './fixture.js';
 
 let folder: string;
@@ -15,7 +15,7 @@ beforeEach(() => {
 afterEach(() => rmSync(folder, { recursive: true }));
 
 const put = (text: string) => writeFileSync(join(folder, 'results.json'), text);
-const written = [...resultsPieces(FINDINGS)].join('');
+const written = resultsText(FINDINGS);
 
 it('reads what was written, from the folder or the file', () => {
   put(written);

@@ -5,10 +5,9 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { Findings } from '../../src/model/index.js';
 import { resultsSchema } from '../../src/output/json-schema.js';
-import { resultsPieces } from '../../src/output/results-json.js';
+import { resultsText as written } from '../house/written.js';
 import { FINDINGS } from './fixture.js';
 
-const written = (findings: Findings) => [...resultsPieces(findings)].join('');
 const validate = new Ajv({ allErrors: true }).compile(resultsSchema());
 const SHIPPED = fileURLToPath(new URL('../../src/output/results.schema.json', import.meta.url));
 
