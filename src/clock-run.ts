@@ -7,28 +7,10 @@ import {
   staircaseRelations,
   withLaboratoryErrors,
 } from './coast/index.js';
-import type {
-  Clock,
-  ClockBed,
-  ClockData,
-  Host,
-  PublishedSummary,
-  RelationRecord,
-  RunOptions,
-  Shell,
-} from './model/index.js';
+import type { Clock, ClockData, PublishedSummary, RelationRecord, RunOptions, Shell } from './model/index.js';
 import type { PlacedBed } from './order/index.js';
-import {
-  keptRelations,
-  type OrderPosterior,
-  type Ranking,
-  type RelationGraph,
-  rankBeds,
-  relationGraph,
-  samplePosterior,
-  sectionRelations,
-} from './order/index.js';
-import { type Random, studentTCdf } from './statistics/index.js';
+import { sectionRelations } from './order/index.js';
+import type { Random } from './statistics/index.js';
 import { checkRelations, type RelationCheck } from './superposition/relation-checks.js';
 import { findZones, type ModelChoice, type Zoning } from './zones/index.js';
 
@@ -189,63 +171,4 @@ export function staircaseOf(context: RunContext, data: ClockData): Staircase | n
     .map(({ key, section }) => ({ key, section, elevation_m: context.elevations.get(key) ?? null }));
   const known = [...context.stacking, ...context.relations];
   return staircaseRelations(beds, known, { along: staircase, certain: staircase_certain });
-}
-
-/** The order of one clock's beds, and how it was sampled. Beds are those with a mean. */
-export interface ClockOrder {
-  readonly beds: readonly ClockBed[];
-  readonly graph: RelationGraph;
-  readonly posterior: OrderPosterior;
-  readonly ranking: Ranking;
-  readonly kept: number;
-  readonly leftOut: number;
-}
-
-/** Design 7.6 on the last pass of a clock. */
-export async function orderClock(pass: Pass, alpha: number, random: Random, host: Host): Promise<ClockOrder | null> {
-  const { data, zoning, relations, checks } = pass;
-  const beds = data.beds.filter((bed) => bed.n > 0);
-  if (beds.length === 0) return null;
-  const byKey = new Map(beds.map((bed) => [bed.key, bed]));
-  const df = testingDf(data.scatter);
-  const tau = zoning?.spread ?? 0;
-  const contradicts = (lower: string, upper: string): boolean => {
-    const [below, above] = [byKey.get(lower), byKey.get(upper)];
-    if (below === undefined || above === undefined) return false;
-    const between = below.section === above.section ? 0 : 2 * tau ** 2;
-    return studentTCdf((below.mean - above.mean) / Math.sqrt(below.se ** 2 + above.se ** 2 + between), df) <= alpha;
-  };
-  const reversed = checks.map((check) => check.verdict === 'reversed');
-  const kept = keptRelations(relations, reversed, contradicts);
-  const graph = relationGraph(
-    beds.map((bed) => bed.key),
-    kept,
-  );
-  const sections = [...new Set(beds.map((bed) => bed.section))];
-  const sectionNumber = new Map(sections.map((section, at) => [section, at]));
-  const posterior = await samplePosterior(
-    {
-      means: beds.map((bed) => bed.mean),
-      se: beds.map((bed) => bed.se),
-      section: beds.map((bed) => sectionNumber.get(bed.section)!),
-      sections: sections.length,
-      graph,
-      tau,
-      scatterDf: df,
-    },
-    {
-      seed: random.integer(2 ** 31),
-      map: host.map,
-      onProgress: (fraction) => host.progress(`order of ${data.clock.name}`, fraction),
-    },
-  );
-  const leftOut = relations.filter((relation, at) => relation.certainty === 'probable' || reversed[at]).length;
-  return {
-    beds,
-    graph,
-    posterior,
-    ranking: rankBeds(posterior, graph.node),
-    kept: relations.length - leftOut,
-    leftOut,
-  };
 }

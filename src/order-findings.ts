@@ -1,4 +1,4 @@
-import type { ClockOrder } from './clock-run.js';
+import type { ClockOrder } from './clock-order.js';
 import type { ClockBed, ClockData, Findings, OrderDiagnostics } from './model/index.js';
 import { MOST_BEDS_IN_PAIRS, orderRows, pairRows } from './order/index.js';
 import type { ZoneSupport } from './zone-support.js';

@@ -1,6 +1,7 @@
 import { averageAnalyses, bedKey, type ClockSet, chooseClocks } from './beds/index.js';
 import { type ClockResult, clockFindings } from './clock-findings.js';
-import { orderClock, type RunContext, runPass, staircaseOf } from './clock-run.js';
+import { beginOrder } from './clock-order.js';
+import { type RunContext, runPass, staircaseOf } from './clock-run.js';
 import {
   conversionRemarks,
   correctAnalyses,
@@ -17,9 +18,10 @@ import { type Settled, settlePasses } from './passes.js';
 import { planOfRun } from './planning/index.js';
 import { remarks } from './remarks.js';
 import { screenShells } from './screening/index.js';
+import { settleZones } from './settle-zones.js';
 import { createRandom, type Random } from './statistics/index.js';
 import { VERSION } from './version.js';
-import { supportZones } from './zone-support.js';
+import { beginSupport } from './zone-support.js';
 
 /**
  * The whole way of the data: average, screen, choose clocks; for each clock find zones, check relations and read odd shells
@@ -116,19 +118,19 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
   /** The order and all rows of a main clock, then each amino acid zoned by itself. */
   async function rowsOfClocks({ set, settled }: SettledClock, own: Random): Promise<ClockResult[]> {
     const name = set.main.name;
-    const { settled: last, support } = await supportZones(context, settled, own.fork(5), host);
-    host.progress(`order of ${name}`, 0);
-    const order = orderClock(last.last, options.alpha, own.fork(2), host);
-    // told of where it is waited for
-    order.catch(() => {});
+    const zones = await settleZones(context, settled, own.fork(5), host);
+    const { last, left } = zones.settled;
+    // first, so that other threads have what takes longest while this one does the rest
+    const order = beginOrder(last, options.alpha, own.fork(2), host);
+    const support = await beginSupport(context, zones, own.fork(5), host);
     const singles = set.singles.map((clock, k) => {
       host.progress(`each amino acid of ${name}`, k / set.singles.length);
-      return runPass(context, clock, set, settled.left, own.fork(100 + k));
+      return runPass(context, clock, set, left, own.fork(100 + k));
     });
     return clockFindings({
       context,
       set,
-      settled: last,
+      settled: zones.settled,
       support,
       order,
       singles,

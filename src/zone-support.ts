@@ -1,24 +1,24 @@
-import { type Pass, type RunContext, rezonePass } from './clock-run.js';
-import type { Host } from './model/index.js';
-import type { Settled } from './passes.js';
+import { beginTasks } from './begin-tasks.js';
+import type { Pass, RunContext } from './clock-run.js';
+import type { Host, Task } from './model/index.js';
+import type { SettledZones } from './settle-zones.js';
 import type { Random } from './statistics/index.js';
 import {
   type Assignment,
   assignerOverDraws,
-  assignZone,
   type BootstrapZones,
-  bedScatters,
   bestLabels,
   type CountCriteria,
   choiceSentence,
   findZones,
-  gapStatistic,
+  gapFromReferences,
+  gapTasks,
   groupsByGap,
   meanSilhouette,
-  settleChoice,
   stabilityOf,
   stabilityTasks,
   type Zoning,
+  zoneAssigner,
   zoneMeanErrors,
 } from './zones/index.js';
 
@@ -37,13 +37,6 @@ export interface ZoneSupport {
   readonly assign: (x: number, error: number) => Assignment;
 }
 
-/** The passes of a clock with their number of zones settled by bootstraps, and what stands behind it. */
-export interface SupportedClock {
-  readonly settled: Settled;
-  /** null where no bed has a mean. */
-  readonly support: ZoneSupport | null;
-}
-
 /** Beds above which zones are so well known that fewer bootstraps do, and beds and shells take the fit's own zones. */
 const MANY_BEDS = 400;
 
@@ -53,68 +46,78 @@ const FEWEST_BEDS_TO_DRAW = 3;
 const smallestZone = ({ fit, labels }: Zoning): number =>
   Math.min(...fit.means.map((_, zone) => labels.filter((label) => label === zone).length));
 
+/** Support that is being worked out. */
+export interface SupportUnderWay {
+  /** As in {@link ZoneSupport}, ahead of the rest. */
+  readonly assign: ZoneSupport['assign'];
+  /** Everything; called once. */
+  readonly whole: () => Promise<ZoneSupport>;
+}
+
 /**
- * Settles the number of zones where BIC is close (parametric bootstrap of the likelihood ratio), then measures what the zones
- * rest on: gap statistic, silhouette, stability under drawn beds and shells (design 7.3 to 7.5).
+ * Begins to measure what the zones of a clock rest on: gap statistic, silhouette, stability under drawn beds and shells
+ * (design 7.4 and 7.5); null where no bed has a mean.
  */
-export async function supportZones(
+export async function beginSupport(
   context: RunContext,
-  settled: Settled,
+  { settled: { last }, choice }: SettledZones,
   random: Random,
   host: Host,
-): Promise<SupportedClock> {
+): Promise<SupportUnderWay | null> {
+  const { zoning } = last;
+  if (zoning === null || choice === null) return null;
   const { options } = context;
-  const before = settled.last.zoning;
-  if (before === null) return { settled, support: null };
-  const { data } = settled.last;
-  const name = data.clock.name;
-  const errors = before.beds.map((bed) => data.beds[bed].se);
-  const values = before.beds.map((bed) => data.beds[bed].mean);
-  host.progress(`number of zones of ${name}`, 0);
-  const { choice, comparisons } = await settleChoice(before.choice, values, errors, {
-    alpha: options.alpha,
-    seed: seedFrom(random.fork(1)),
-    simulations: options.simulations,
-    map: host.map,
-    scatters: bedScatters(data, before.beds),
-  });
-  const changed = choice.bestZones !== before.choice.bestZones || choice.verdict !== before.choice.verdict;
-  const last = changed ? rezonePass(context, settled.last, settled.left, random.fork(2), choice) : settled.last;
-  const zoning = last.zoning!;
-  const criteria = countCriteria(values, errors, zoning, random.fork(3));
-  host.progress(`stability of ${name}`, 0);
-  const bootstraps = await drawZones(last, options.simulations, seedFrom(random.fork(4)), host);
-  const byGap = groupsByGap(zoning.choice.mixtures.map(({ k }) => gapOfCount(criteria, k)));
-  const widest = [...criteria].filter(([, { silhouette }]) => silhouette !== null);
-  const bySilhouette =
-    widest.length === 0
-      ? null
-      : widest.reduce((best, next) => (next[1].silhouette! > best[1].silhouette! ? next : best))[0];
-  const supported = unforced(last, zoning, context, random);
-  return {
-    settled: { ...settled, last },
-    support: {
+  const name = last.data.clock.name;
+  const beds: BedMeans = {
+    errors: zoning.beds.map((bed) => last.data.beds[bed].se),
+    values: zoning.beds.map((bed) => last.data.beds[bed].mean),
+  };
+  const counting = beginCounting(beds, zoning, random.fork(3).integer(2 ** 31), host);
+  const drawing = beginTasks(host, drawingTasks(last, options.simulations, random.fork(4).integer(2 ** 31)));
+  const fitsOwn = beds.values.length > MANY_BEDS || zoning.fit.k < 2 || smallestZone(zoning) < FEWEST_BEDS_TO_DRAW;
+  let drawn: BootstrapZones[] | null = null;
+  const bootstrapped = async () => {
+    host.progress(`stability of ${name}`, 0);
+    drawn ??= ((await drawing()) as BootstrapZones[][]).flat();
+    return drawn;
+  };
+  const draws = fitsOwn ? [] : await bootstrapped();
+  const assign: ZoneSupport['assign'] = draws.length === 0 ? zoneAssigner(zoning.priors) : assignerOverDraws(draws);
+  const whole = async (): Promise<ZoneSupport> => {
+    const criteria = await counting();
+    const bootstraps = await bootstrapped();
+    return {
       criteria,
       bootstraps,
       stability: stabilityOf(bootstraps),
       meanErrors: zoneMeanErrors(zoning.priors.se, bootstraps),
       sentence: choiceSentence({
         verdict: zoning.verdict,
-        zones: supported,
+        zones: unforced(last, zoning, context, random),
         forced: options.zones,
-        byBic: before.choice.bestZones,
-        continuumByBic: before.choice.continuumBic < before.choice.bics[before.choice.bestZones - 1],
-        beforeJoining: choice.verdict === 'zones' ? choice.bestZones : 1,
-        byGap,
-        bySilhouette,
-        comparisons,
+        ...beforeSettling(choice),
+        byGap: groupsByGap(zoning.choice.mixtures.map(({ k }) => gapOfCount(criteria, k))),
+        bySilhouette: groupsBySilhouette(criteria),
+        comparisons: choice.comparisons,
       }),
-      assign:
-        bootstraps.length === 0 || values.length > MANY_BEDS || smallestZone(zoning) < FEWEST_BEDS_TO_DRAW
-          ? (x, error) => assignZone(x, error, zoning.priors)
-          : assignerOverDraws(bootstraps),
-    },
+      assign,
+    };
   };
+  return { assign, whole };
+}
+
+const beforeSettling = ({ byBic, chosen }: NonNullable<SettledZones['choice']>) => ({
+  byBic: byBic.bestZones,
+  continuumByBic: byBic.continuumBic < byBic.bics[byBic.bestZones - 1],
+  beforeJoining: chosen.verdict === 'zones' ? chosen.bestZones : 1,
+});
+
+function groupsBySilhouette(criteria: ReadonlyMap<number, CountCriteria>): number | null {
+  let best: { readonly k: number; readonly silhouette: number } | null = null;
+  for (const [k, { silhouette }] of criteria) {
+    if (silhouette !== null && (best === null || silhouette > best.silhouette)) best = { k, silhouette };
+  }
+  return best?.k ?? null;
 }
 
 /** Zones that the data support, whatever number was forced. */
@@ -125,37 +128,36 @@ function unforced({ data }: Pass, zoning: Zoning, { options }: RunContext, rando
   return free?.fit.k ?? 1;
 }
 
-const seedFrom = (random: Random): number => random.integer(2 ** 31);
-
 const gapOfCount = (criteria: ReadonlyMap<number, CountCriteria>, k: number) => {
   const entry = criteria.get(k);
   return { gap: entry?.gap ?? null, se: entry?.gap_se ?? null };
 };
 
-function countCriteria(
-  values: readonly number[],
-  errors: readonly number[],
-  zoning: Zoning,
-  random: Random,
-): Map<number, CountCriteria> {
-  const { mixtures } = zoning.choice;
-  const weights = errors.map((se) => 1 / Math.max(se ** 2, 1e-12));
-  const gaps = gapStatistic(values, weights, {
-    random,
-    most: mixtures.length,
-    references: values.length > 1000 ? 20 : 100,
-  });
-  return new Map(
-    mixtures.map((fit, at) => {
-      const labels = bestLabels(fit, values.length);
-      const used = new Set(labels).size === fit.k;
-      const silhouette = fit.k > 1 && used ? meanSilhouette(values, labels) : null;
-      return [fit.k, { gap: gaps[at]?.gap ?? null, gap_se: gaps[at]?.se ?? null, silhouette }];
-    }),
-  );
+/** Means of the beds that were zoned and their standard errors. */
+interface BedMeans {
+  readonly values: readonly number[];
+  readonly errors: readonly number[];
 }
 
-async function drawZones({ data, zoning }: Pass, simulations: number, seed: number, host: Host) {
+function beginCounting({ values, errors }: BedMeans, zoning: Zoning, seed: number, host: Host) {
+  const { mixtures } = zoning.choice;
+  const weights = errors.map((se) => 1 / Math.max(se ** 2, 1e-12));
+  const options = { seed, most: mixtures.length, references: values.length > 1000 ? 20 : 100 };
+  const references = beginTasks(host, gapTasks(values, weights, options));
+  return async (): Promise<Map<number, CountCriteria>> => {
+    const gaps = gapFromReferences(values, weights, options, (await references()) as number[][][]);
+    return new Map(
+      mixtures.map((fit, at) => {
+        const labels = bestLabels(fit, values.length);
+        const used = new Set(labels).size === fit.k;
+        const silhouette = fit.k > 1 && used ? meanSilhouette(values, labels) : null;
+        return [fit.k, { gap: gaps[at]?.gap ?? null, gap_se: gaps[at]?.se ?? null, silhouette }];
+      }),
+    );
+  };
+}
+
+function drawingTasks({ data, zoning }: Pass, simulations: number, seed: number): Task[] {
   if (zoning === null || zoning.fit.k < 2) return [];
   const beds = zoning.beds.map((bed) => data.beds[bed]);
   const repeats = Math.min(simulations, beds.length > MANY_BEDS ? 20 : 200);
@@ -166,7 +168,7 @@ async function drawZones({ data, zoning }: Pass, simulations: number, seed: numb
     return kept.map((shell) => (shell.x - mean) * Math.sqrt(kept.length / (kept.length - 1)));
   });
   const { means, weights, tau } = zoning.fit;
-  const tasks = stabilityTasks(
+  return stabilityTasks(
     {
       values: beds.map((bed) => bed.mean),
       errors: beds.map((bed) => bed.se),
@@ -178,5 +180,4 @@ async function drawZones({ data, zoning }: Pass, simulations: number, seed: numb
     },
     repeats,
   );
-  return ((await host.map(tasks)) as BootstrapZones[][]).flat();
 }

@@ -7,10 +7,6 @@ export interface Averages {
   readonly summaries: readonly PublishedSummary[];
 }
 
-/** One name for a shell; the separator can't stand in a table cell, so no two shells share it. */
-const keyOf = ({ section, bed, taxon, fraction, shell }: Analysis): string =>
-  `${section}\u0001${bed}\u0001${taxon}\u0001${fraction}\u0001${shell}`;
-
 /**
  * Averages injections to preparations and preparations to shells: arithmetic means of D/L (design 7.1).
  * A shell is known by section, bed, taxon, fraction and shell together. Rows that name neither preparation nor injection
@@ -20,24 +16,46 @@ const keyOf = ({ section, bed, taxon, fraction, shell }: Analysis): string =>
  * averageAnalyses([]).shells.length // => 0
  */
 export function averageAnalyses(analyses: readonly Analysis[]): Averages {
+  // one list of shells a bed, taxon and fraction; rows of one mostly stand together in the table
+  const lots = new Map<string, Map<string, number>>();
+  let lot = new Map<string, number>();
+  let before: Analysis | null = null;
   // a list is made only for a shell that comes more than once, which in a large survey few do
-  const groups = new Map<string, Analysis | Analysis[]>();
+  const groups: (Analysis | Analysis[])[] = [];
   const summaries: PublishedSummary[] = [];
   for (const row of analyses) {
     if (row.summary !== null) {
       summaries.push(...summariesOf(row));
       continue;
     }
-    const key = keyOf(row);
-    const known = groups.get(key);
-    if (known === undefined) groups.set(key, row);
-    else if (Array.isArray(known)) known.push(row);
-    else groups.set(key, [known, row]);
+    if (before === null || !ofOneLot(before, row)) lot = lotOf(lots, row);
+    before = row;
+    const at = lot.get(row.shell);
+    if (at === undefined) {
+      lot.set(row.shell, groups.length);
+      groups.push(row);
+      continue;
+    }
+    const known = groups[at];
+    if (Array.isArray(known)) known.push(row);
+    else groups[at] = [known, row];
   }
-  const shells = Array.from(groups.values(), (rows) =>
-    Array.isArray(rows) ? averageShell(rows) : shellOfOneRow(rows),
-  );
+  const shells = groups.map((rows) => (Array.isArray(rows) ? averageShell(rows) : shellOfOneRow(rows)));
   return { shells, summaries };
+}
+
+const ofOneLot = (a: Analysis, b: Analysis): boolean =>
+  a.bed === b.bed && a.section === b.section && a.taxon === b.taxon && a.fraction === b.fraction;
+
+/** Shells of one bed, taxon and fraction; the separator can't stand in a table cell, so no two lots share a key. */
+function lotOf(lots: Map<string, Map<string, number>>, { section, bed, taxon, fraction }: Analysis) {
+  const key = `${section}\u0001${bed}\u0001${taxon}\u0001${fraction}`;
+  let lot = lots.get(key);
+  if (lot === undefined) {
+    lot = new Map();
+    lots.set(key, lot);
+  }
+  return lot;
 }
 
 function summariesOf(row: Analysis): PublishedSummary[] {

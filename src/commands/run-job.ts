@@ -61,9 +61,13 @@ async function work(): Promise<void> {
   tell({ news: 'written', told: await words(findings, read.request) });
 }
 
+/** Analyses from which other threads are sure to have work. */
+const LARGE_SURVEY = 5000;
+
 async function analysed(survey: Survey, request: RunRequest): Promise<Findings> {
   const { analyse } = await import('../pipeline.js');
   const host = createWorkerHost(progress);
+  if (survey.analyses.length > LARGE_SURVEY) host.warm();
   try {
     return await analyse(survey, request.options, host);
   } finally {

@@ -1,13 +1,18 @@
 import { parentPort } from 'node:worker_threads';
-import type { Task } from '../model/index.js';
 import { runTask } from '../tasks.js';
+import { type Answer, type SharedBatch, takeNext, takeRest } from './shared-batch.js';
 
-/* A worker thread: does one task after the other, and answers with the task's number. */
+/* A worker thread: takes tasks of one batch after the other, and answers each with its number. */
 
-parentPort?.on('message', ({ index, task }: { index: number; task: Task }) => {
-  try {
-    parentPort?.postMessage({ index, result: runTask(task) });
-  } catch (error) {
-    parentPort?.postMessage({ index, error: error instanceof Error ? error : new Error(String(error)) });
+const tell = (answer: Answer) => parentPort?.postMessage(answer);
+
+parentPort?.on('message', ({ batch, tasks, taken }: SharedBatch) => {
+  for (let index = takeNext(taken); index < tasks.length; index = takeNext(taken)) {
+    try {
+      tell({ batch, index, result: runTask(tasks[index]) });
+    } catch (error) {
+      takeRest(taken, tasks.length);
+      tell({ batch, index, error: error instanceof Error ? error : new Error(String(error)) });
+    }
   }
 });

@@ -1,4 +1,5 @@
 import { type Random, sampleTruncatedNormal } from '../statistics/index.js';
+import { depositMeans } from './deposit-means.js';
 import { flatLists, groupLists } from './flat-lists.js';
 import type { RelationGraph } from './relation-graph.js';
 import { sectionMovers } from './section-movers.js';
@@ -43,6 +44,7 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
   const older = flatLists(graph.older);
   const sequence = Int32Array.from(graph.sequence);
   const movers = sectionMovers(model, members, bedsOf);
+  const { weight: weightOf, mean: meanOf, section: sectionOf } = depositMeans(means, precision, section, members);
   const theta = new Float64Array(nodes);
   const shift = new Float64Array(sections);
   const df = Math.max(1, scatterDf);
@@ -52,16 +54,11 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
   /** Scattered about the bed means, then brought into the cone from the oldest on. */
   function start(): void {
     for (const deposit of sequence) {
-      let sum = 0;
-      let weight = 0;
       let widest = 0;
       for (let at = members.start[deposit]; at < members.start[deposit + 1]; at++) {
-        const bed = members.items[at];
-        sum += precision[bed] * means[bed];
-        weight += precision[bed];
-        widest = Math.max(widest, model.se[bed]);
+        widest = Math.max(widest, model.se[members.items[at]]);
       }
-      let value = sum / weight + 2 * widest * random.normal();
+      let value = meanOf[deposit] + 2 * widest * random.normal();
       for (let at = older.start[deposit]; at < older.start[deposit + 1]; at++) {
         value = Math.min(value, theta[older.items[at]] - 1e-6);
       }
@@ -83,13 +80,8 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
     const back = random.uniform() < 0.5;
     for (let step = 0; step < nodes; step++) {
       const deposit = sequence[back ? nodes - 1 - step : step];
-      let weight = 0;
-      let sum = 0;
-      for (let at = members.start[deposit]; at < members.start[deposit + 1]; at++) {
-        const bed = members.items[at];
-        weight += precision[bed];
-        sum += precision[bed] * (means[bed] - shift[section[bed]]);
-      }
+      const own = sectionOf[deposit];
+      const mean = own >= 0 ? meanOf[deposit] - shift[own] : meanOverSections(deposit);
       let low = Number.NEGATIVE_INFINITY;
       let high = Number.POSITIVE_INFINITY;
       for (let at = younger.start[deposit]; at < younger.start[deposit + 1]; at++) {
@@ -98,12 +90,22 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
       for (let at = older.start[deposit]; at < older.start[deposit + 1]; at++) {
         if (theta[older.items[at]] < high) high = theta[older.items[at]];
       }
-      const sd = 1 / Math.sqrt(weight * scale);
+      const sd = 1 / Math.sqrt(weightOf[deposit] * scale);
       theta[deposit] =
         low === Number.NEGATIVE_INFINITY && high === Number.POSITIVE_INFINITY
-          ? sum / weight + sd * random.normal()
-          : sampleTruncatedNormal(random, sum / weight, sd, low, high);
+          ? mean + sd * random.normal()
+          : sampleTruncatedNormal(random, mean, sd, low, high);
     }
+  }
+
+  /** Mean of a deposit's beds, each without the shift of its own section. */
+  function meanOverSections(deposit: number): number {
+    let sum = 0;
+    for (let at = members.start[deposit]; at < members.start[deposit + 1]; at++) {
+      const bed = members.items[at];
+      sum += precision[bed] * (means[bed] - shift[section[bed]]);
+    }
+    return sum / weightOf[deposit];
   }
 
   function drawShifts(scale: number): void {

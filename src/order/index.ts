@@ -4,7 +4,7 @@ export { gibbsChain } from './gibbs-chain.js';
 export { keptRelations } from './kept-relations.js';
 export { MOST_BEDS_IN_PAIRS, orderRows, pairRows } from './order-rows.js';
 export type { OrderPosterior, PosteriorOptions } from './posterior.js';
-export { samplePosterior } from './posterior.js';
+export { beginPosterior, samplePosterior } from './posterior.js';
 export type { Ranking } from './ranking.js';
 export { probabilityOlder, rankBeds } from './ranking.js';
 export type { RelationGraph } from './relation-graph.js';

@@ -1,4 +1,4 @@
-import type { TaskMapper } from '../model/index.js';
+import type { Host, TaskMapper } from '../model/index.js';
 import { effectiveSampleSize, splitRHat } from '../statistics/index.js';
 import type { ChainDraws } from './chain-draws.js';
 import type { OrderModel } from './gibbs-chain.js';
@@ -8,6 +8,8 @@ export interface PosteriorOptions {
   readonly seed: number;
   /** Runs the chains, which are tasks named `chainDraws`. */
   readonly map: TaskMapper;
+  /** Begins with them where others can; see {@link Host}. */
+  readonly begin?: Host['begin'];
   /** Default 4. */
   readonly chains?: number;
   /** Draws kept a chain. Default 1000, fewer where there are very many beds. */
@@ -40,15 +42,19 @@ const PLAIN = { rankNormalise: false };
 /** Deposits watched for convergence; more would cost time and add little. */
 const WATCHED = 200;
 
-/** Draws times beds of one chain that are worth a thread without trying. */
-const HEAVY = 3e6;
+/** Draws times beds of one chain that are worth a thread: a twentieth of a second. */
+const HEAVY = 1e5;
 
 /**
  * Samples the order of all beds under superposition (design 7.6) and reports how well the chains have settled: smallest
  * effective sample size and largest split R-hat over beds. While fewer than 400 effective draws or an R-hat of 1.01 or more
  * are seen, the chains run again with twice the sweeps between draws.
  */
-export async function samplePosterior(model: OrderModel, options: PosteriorOptions): Promise<OrderPosterior> {
+export const samplePosterior = (model: OrderModel, options: PosteriorOptions): Promise<OrderPosterior> =>
+  beginPosterior(model, options)();
+
+/** Begins with {@link samplePosterior} on other threads, where there are any; what is returned gives it, and is called once. */
+export function beginPosterior(model: OrderModel, options: PosteriorOptions): () => Promise<OrderPosterior> {
   const beds = model.means.length;
   const { nodes } = model.graph;
   const { seed, map, chains = 4, onProgress } = options;
@@ -56,19 +62,25 @@ export async function samplePosterior(model: OrderModel, options: PosteriorOptio
   const most = beds > 1000 ? 1 : (options.thinning ?? 16);
   const step = Math.max(1, Math.ceil(nodes / WATCHED));
   const watched = Array.from({ length: Math.ceil(nodes / step) }, (_, at) => at * step);
-  for (let thinning = 1; ; thinning *= 2) {
-    const heavy = beds * draws * thinning > HEAVY;
-    const tasks = Array.from({ length: chains }, (_, chain) => {
+  const tasks = (thinning: number) =>
+    Array.from({ length: chains }, (_, chain) => {
       const argument = { model, seed, chain, draws, thinning, watched };
-      return { name: 'chainDraws', argument, heavy };
+      return { name: 'chainDraws', argument, heavy: beds * draws * thinning > HEAVY };
     });
-    const drawn = (await map(tasks, (done) => onProgress?.(done / chains))) as ChainDraws[];
-    const judged = judge(drawn, watched.length);
-    const converged = judged.essMin >= ENOUGH_DRAWS && judged.rhatMax < SETTLED;
-    if (converged || thinning * 2 > most) {
-      return { beds, draws: draws * chains, ranks: joinRanks(drawn, beds, draws), chains, converged, ...judged };
+  const onDone = (done: number) => onProgress?.(done / chains);
+  const first = options.begin?.(tasks(1), onDone) ?? (() => map(tasks(1), onDone));
+  return async () => {
+    let drawn = await first();
+    for (let thinning = 1; ; thinning *= 2) {
+      if (thinning > 1) drawn = await map(tasks(thinning), onDone);
+      const judged = judge(drawn as ChainDraws[], watched.length);
+      const converged = judged.essMin >= ENOUGH_DRAWS && judged.rhatMax < SETTLED;
+      if (converged || thinning * 2 > most) {
+        const ranks = joinRanks(drawn as ChainDraws[], beds, draws);
+        return { beds, draws: draws * chains, ranks, chains, converged, ...judged };
+      }
     }
-  }
+  };
 }
 
 function judge(drawn: readonly ChainDraws[], watched: number): { essMin: number; rhatMax: number } {

@@ -17,7 +17,8 @@ const FEWEST_WITH_REPLICATES = 8;
  */
 export function replicatesDisagree(shells: readonly Shell[], limits: ScreeningLimits): ScreeningMark[] {
   const found = new Map<number, { readonly size: number; readonly evidence: string }>();
-  for (const members of groupsOfShells(shells)) {
+  for (const group of groupsOfShells(shells)) {
+    const members = group.filter((shell) => shells[shell].replicates.length > 1);
     const tested = AMINO_ACIDS.flatMap((code) => {
       const sets = replicateSets(shells, members, code);
       return sets.length < FEWEST_WITH_REPLICATES ? [] : [{ code, sets, ...usualVariance(sets) }];
@@ -47,9 +48,9 @@ interface ReplicateSet {
 function replicateSets(shells: readonly Shell[], members: readonly number[], code: AminoAcid): ReplicateSet[] {
   const sets: ReplicateSet[] = [];
   for (const shell of members) {
-    const { replicates } = shells[shell];
-    if (replicates.length < 2) continue;
-    const logs = replicates.flatMap((ratios) => (ratios[code] === undefined ? [] : [Math.log(ratios[code])]));
+    const logs = shells[shell].replicates.flatMap((ratios) =>
+      ratios[code] === undefined ? [] : [Math.log(ratios[code])],
+    );
     if (logs.length >= 2) sets.push({ shell, logs });
   }
   return sets;

@@ -9,5 +9,5 @@ import type { ShellMark } from '../model/index.js';
  * screenedOut(['discordant ratios', 'low yield']) // => true
  */
 export function screenedOut(marks: readonly ShellMark[]): boolean {
-  return marks.includes('high serine') || new Set(marks).size >= 2;
+  return marks.length > 0 && (marks.includes('high serine') || new Set(marks).size >= 2);
 }

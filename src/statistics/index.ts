@@ -14,7 +14,7 @@ export { studentTCdf, studentTQuantile } from './student-t.js';
 // Describing a sample
 
 export type { Numbers } from './check.js';
-export { median, quantile, quantileOfSorted } from './quantile.js';
+export { median, medianOfSorted, quantile, quantileOfSorted } from './quantile.js';
 export { midranks } from './ranks.js';
 export { medianAbsoluteDeviation, robustSd } from './robust-sd.js';
 export { type Summary, summarise } from './summary.js';

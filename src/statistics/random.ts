@@ -48,7 +48,7 @@ export function createRandom(seed: number): Random {
 
 function stream(key: Key): Random {
   // All four words 0 is the one state the generator never leaves.
-  const state = key.every((word) => word === 0) ? [1, 2, 3, 4] : [...key];
+  const state = key.every((word) => word === 0) ? [1, 2, 3, 4] : key.map((word) => word | 0);
   const bits = xoroshiro128plusFromState(state);
   const { edges, heights } = ziggurat();
 

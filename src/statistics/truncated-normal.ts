@@ -2,6 +2,7 @@ import { requireThat } from './check.js';
 import type { Random } from './random.js';
 
 const SQRT_TWO_PI = 2.5066282746310002;
+const SQRT_E = 1.6487212707001282;
 
 /**
  * One draw from a normal cut to [low, high], exact wherever the interval lies, also far in a tail or very narrow.
@@ -20,15 +21,9 @@ const SQRT_TWO_PI = 2.5066282746310002;
  * ```
  */
 export function sampleTruncatedNormal(random: Random, mean: number, sd: number, low: number, high: number): number {
-  requireThat(sd > 0 && sd < Infinity, 'sampleTruncatedNormal', 'sd above 0', sd);
-  requireThat(Number.isFinite(mean), 'sampleTruncatedNormal', 'a finite mean', mean);
-  requireThat(
-    low <= high && low < Infinity && high > -Infinity,
-    'sampleTruncatedNormal',
-    'low at most high, and something between them',
-    low,
-    high,
-  );
+  if (!(sd > 0 && sd < Infinity && Number.isFinite(mean) && low <= high && low < Infinity && high > -Infinity)) {
+    refuse(mean, sd, low, high);
+  }
   if (low === high) return low;
   const a = (low - mean) / sd;
   const b = (high - mean) / sd;
@@ -41,6 +36,13 @@ export function sampleTruncatedNormal(random: Random, mean: number, sd: number, 
   return Math.min(Math.max(value, low), high);
 }
 
+function refuse(mean: number, sd: number, low: number, high: number): never {
+  requireThat(sd > 0 && sd < Infinity, 'sampleTruncatedNormal', 'sd above 0', sd);
+  requireThat(Number.isFinite(mean), 'sampleTruncatedNormal', 'a finite mean', mean);
+  const wanted = 'low at most high, and something between them';
+  throw new RangeError(`sampleTruncatedNormal needs ${wanted}, got ${low}, ${high}`);
+}
+
 /** A standard normal cut to [a, b] with a < 0 < b. */
 function across(random: Random, a: number, b: number): number {
   if (b - a > SQRT_TWO_PI) {
@@ -51,7 +53,7 @@ function across(random: Random, a: number, b: number): number {
   }
   for (;;) {
     const z = a + (b - a) * random.uniform();
-    if (random.uniform() <= Math.exp(-0.5 * z * z)) return z;
+    if (atMostExp(random.uniform(), 0.5 * z * z)) return z;
   }
 }
 
@@ -65,17 +67,22 @@ function beyond(random: Random, start: number, width: number): number {
     }
   }
   const rate = 0.5 * (start + Math.sqrt(start * start + 4));
-  // Below this width a uniform is accepted more often than the exponential.
-  if (width < Math.exp(0.5 * start * (start - rate) + 0.5) / rate) {
+  const reach = rate * width;
+  // Below this reach a uniform is accepted more often than the exponential; the limit lies between 1 and √e.
+  if (reach < 1 || (reach < SQRT_E && reach < Math.exp(0.5 * start * (start - rate) + 0.5))) {
     for (;;) {
       const distance = width * random.uniform();
-      if (random.uniform() <= Math.exp(-distance * (start + 0.5 * distance))) return distance;
+      if (atMostExp(random.uniform(), distance * (start + 0.5 * distance))) return distance;
     }
   }
-  const share = -Math.expm1(-rate * width);
+  // above 40 the rest is lost in rounding
+  const share = reach > 40 ? 1 : -Math.expm1(-reach);
   for (;;) {
     const distance = -Math.log1p(-random.uniform() * share) / rate;
     const gap = start + distance - rate;
-    if (random.uniform() <= Math.exp(-0.5 * gap * gap)) return distance;
+    if (atMostExp(random.uniform(), 0.5 * gap * gap)) return distance;
   }
 }
+
+/** Whether u ≤ exp(−y), for y ≥ 0; mostly told without the exponential, which is never below 1 − y. */
+const atMostExp = (u: number, y: number): boolean => u <= 1 - y || u <= Math.exp(-y);

@@ -1,4 +1,4 @@
-import { median } from '../statistics/index.js';
+import { medianOfSorted } from '../statistics/index.js';
 
 /** Share of shells taken to be odd, and their standard deviation about their bed (log ratios, beyond s). */
 const ODD_SHARE = 0.05;
@@ -32,60 +32,81 @@ export interface RobustScatter {
  * robustScatter(beds).s // => 0.051003
  */
 export function robustScatter(beds: readonly (readonly number[])[]): RobustScatter {
-  let means = beds.map((values) => (values.length === 0 ? Number.NaN : median(values)));
-  const deviations = beds.flatMap((values, bed) =>
-    values.length < 2 ? [] : values.map((x) => Math.abs(x - means[bed])),
-  );
-  if (deviations.length === 0) return { s: Number.NaN, df: 0, means };
+  const { values, start } = endToEnd(beds);
+  const sizeOf = (bed: number) => start[bed + 1] - start[bed];
+  const means = new Float64Array(beds.length);
+  const deviations = new Float64Array(values.length);
+  let known = 0;
+  for (let bed = 0; bed < beds.length; bed++) {
+    means[bed] = sizeOf(bed) === 0 ? Number.NaN : medianOfSorted(values.slice(start[bed], start[bed + 1]).sort());
+    if (sizeOf(bed) < 2) continue;
+    for (let at = start[bed]; at < start[bed + 1]; at++) deviations[known++] = Math.abs(values[at] - means[bed]);
+  }
+  if (known === 0) return { s: Number.NaN, df: 0, means: [...means] };
   // Deviations from the median of a small bed run short; 1.2 makes up for most of it, the iteration for the rest.
-  let s = Math.max(SMALLEST, 1.2 * 1.4826 * median(deviations));
+  let s = Math.max(SMALLEST, 1.2 * 1.4826 * medianOfSorted(deviations.subarray(0, known).sort()));
   let df = 0;
   for (let turn = 0; turn < 200; turn++) {
     let squares = 0;
     df = 0;
-    const weightAt = soundnessAt(s);
-    means = beds.map((values, bed) => {
+    const { atZero, growth } = soundness(s);
+    for (let bed = 0; bed < beds.length; bed++) {
+      // about the last mean, so that no digits are lost
+      const about = means[bed];
       let total = 0;
       let sum = 0;
       let sumOfSquares = 0;
-      // about the last mean, so that no digits are lost
-      for (const x of values) {
-        const off = x - means[bed];
-        const weight = weightAt(off);
+      for (let at = start[bed]; at < start[bed + 1]; at++) {
+        const off = values[at] - about;
+        const weight = 1 / (1 + atZero * Math.exp(growth * off * off));
         total += weight;
         sum += weight * off;
         sumOfSquares += weight * off * off;
       }
-      if (values.length > 1) {
+      if (sizeOf(bed) > 1) {
         squares += Math.max(0, sumOfSquares - (sum * sum) / total);
         df += Math.max(0, total - 1);
       }
-      return values.length === 0 ? Number.NaN : means[bed] + sum / total;
-    });
+      means[bed] = about + sum / total;
+    }
     if (!(df > 0)) break;
     const now = Math.max(SMALLEST, Math.sqrt(squares / df / varianceLeft(s)));
     const settled = Math.abs(now - s) < 1e-9 * s;
     s = now;
     if (settled) break;
   }
-  return { s, df: Math.max(Math.min(df, 1), 0.93 * df - 2), means };
+  return { s, df: Math.max(Math.min(df, 1), 0.93 * df - 2), means: [...means] };
 }
 
-/** Probability that a shell this far off its bed is sound: 1/(1 + ratio of the densities, odd to sound). */
-function soundnessAt(s: number): (deviation: number) => number {
+/** The values of all beds in one list; those of bed b from start[b] to start[b + 1] − 1. */
+function endToEnd(beds: readonly (readonly number[])[]): { values: Float64Array; start: Int32Array } {
+  const start = new Int32Array(beds.length + 1);
+  for (let bed = 0; bed < beds.length; bed++) start[bed + 1] = start[bed] + beds[bed].length;
+  const values = new Float64Array(start[beds.length]);
+  for (let bed = 0; bed < beds.length; bed++) values.set(beds[bed], start[bed]);
+  return { values, start };
+}
+
+/**
+ * A shell a deviation d off its bed is sound with probability 1/(1 + r), r the ratio of the densities, odd to sound:
+ * atZero · exp(growth · d²).
+ */
+function soundness(s: number): { readonly atZero: number; readonly growth: number } {
   const wide = Math.hypot(s, ODD_SPREAD);
-  const atZero = ODD_SHARE / wide / ((1 - ODD_SHARE) / s);
-  const growth = 0.5 / (s * s) - 0.5 / (wide * wide);
-  return (deviation) => 1 / (1 + atZero * Math.exp(growth * deviation * deviation));
+  return {
+    atZero: ODD_SHARE / wide / ((1 - ODD_SHARE) / s),
+    growth: 0.5 / (s * s) - 0.5 / (wide * wide),
+  };
 }
 
 /** Share of the variance of sound shells that the weights leave: E[w z²] / E[w] for a standard normal z. */
 function varianceLeft(s: number): number {
-  const weightAt = soundnessAt(s);
+  const { atZero, growth } = soundness(s);
   let weights = 0;
   let squares = 0;
   for (let z = 0.05; z < 7; z += 0.1) {
-    const mass = weightAt(z * s) * Math.exp(-0.5 * z * z);
+    const off = z * s;
+    const mass = (1 / (1 + atZero * Math.exp(growth * off * off))) * Math.exp(-0.5 * z * z);
     weights += mass;
     squares += mass * z * z;
   }

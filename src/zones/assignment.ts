@@ -30,22 +30,45 @@ export interface Assignment {
  * @example
  * assignZone(-1.6, 0.05, { means: [-2, -1.6], se: [0, 0], weights: [0.5, 0.5], tau: 0 }).zone // => 1
  */
-export function assignZone(x: number, error: number, { means, se, weights, tau }: ZonePriors): Assignment {
-  const logs = means.map((mean, j) => {
-    const variance = Math.max(tau ** 2 + error ** 2 + se[j] ** 2, 1e-18);
-    return Math.log(Math.max(weights[j], 1e-300)) - 0.5 * Math.log(variance) - (0.5 * (x - mean) ** 2) / variance;
-  });
-  const largest = Math.max(...logs);
-  const raw = logs.map((value) => Math.exp(value - largest));
-  const sum = raw.reduce((total, value) => total + value, 0);
-  const probabilities = raw.map((value) => value / sum);
-  return assignmentOf(probabilities);
+export function assignZone(x: number, error: number, priors: ZonePriors): Assignment {
+  return zoneAssigner(priors)(x, error);
 }
 
-/** Most and second most probable zone from the probabilities of all. */
-export function assignmentOf(chances: readonly number[]): Assignment {
+/** {@link assignZone} for many values: what hangs on the error alone is kept from one to the next. */
+export function zoneAssigner({ means, se, weights, tau }: ZonePriors): (x: number, error: number) => Assignment {
+  const variances = new Float64Array(means.length);
+  const heights = new Float64Array(means.length);
+  const logs = new Float64Array(means.length);
+  let lastError = Number.NaN;
+  const prepare = (error: number) => {
+    for (let j = 0; j < means.length; j++) {
+      variances[j] = Math.max(tau ** 2 + error ** 2 + se[j] ** 2, 1e-18);
+      heights[j] = Math.log(Math.max(weights[j], 1e-300)) - 0.5 * Math.log(variances[j]);
+    }
+    lastError = error;
+  };
+  return (x, error) => {
+    if (error !== lastError) prepare(error);
+    let largest = Number.NEGATIVE_INFINITY;
+    for (let j = 0; j < means.length; j++) {
+      logs[j] = heights[j] - (0.5 * (x - means[j]) ** 2) / variances[j];
+      if (logs[j] > largest) largest = logs[j];
+    }
+    let sum = 0;
+    for (let j = 0; j < means.length; j++) {
+      logs[j] = Math.exp(logs[j] - largest);
+      sum += logs[j];
+    }
+    const probabilities: number[] = [];
+    for (let j = 0; j < means.length; j++) probabilities.push(logs[j] / sum);
+    return assignmentOf(probabilities);
+  };
+}
+
+/** Most and second most probable zone from the probabilities of all, a list that is kept. */
+export function assignmentOf(probabilities: number[]): Assignment {
   // sums of many rounded shares may end a hair above 1
-  const probabilities = chances.map((chance) => Math.min(1, chance));
+  for (let j = 0; j < probabilities.length; j++) if (probabilities[j] > 1) probabilities[j] = 1;
   let zone = 0;
   for (let j = 1; j < probabilities.length; j++) if (probabilities[j] > probabilities[zone]) zone = j;
   let second: number | null = null;

@@ -1,5 +1,5 @@
 import type { BedMark, BedPlace, BedRow, ClockBed, ClockData, PublishedSummary, Shell } from '../model/index.js';
-import { type Assignment, assignZone } from './assignment.js';
+import { type Assignment, zoneAssigner } from './assignment.js';
 import { zoneName } from './zone-rows.js';
 import type { Zoning } from './zoning.js';
 
@@ -31,10 +31,10 @@ export function bedRows(input: BedRowInput): BedRow[] {
     const key = `${summary.section}/${summary.bed}`;
     published.set(key, [...(published.get(key) ?? []), summary]);
   }
-  const assign = ({ priors }: Zoning) => input.assign ?? ((x: number, error: number) => assignZone(x, error, priors));
+  const zoneOf = input.assign ?? (zoning === null ? null : zoneAssigner(zoning.priors));
   return data.beds.map((bed) => {
     const { place, marks, reading } = notes(bed);
-    const assignment = zoning === null || bed.n === 0 ? null : assign(zoning)(bed.mean, bed.se);
+    const assignment = zoning === null || zoneOf === null || bed.n === 0 ? null : zoneOf(bed.mean, bed.se);
     return {
       clock: data.clock.name,
       section: bed.section,

@@ -1,4 +1,5 @@
-import type { Random } from '../statistics/index.js';
+import type { Task } from '../model/index.js';
+import { createRandom } from '../statistics/index.js';
 import { partitionCosts } from './partition.js';
 
 /** How much tighter the groups are than those of values spread evenly. */
@@ -11,7 +12,7 @@ export interface Gap {
 
 /** Options of {@link gapStatistic}. */
 export interface GapOptions {
-  readonly random: Random;
+  readonly seed: number;
   /** Most groups. Default 10, or one fewer than the number of distinct values. */
   readonly most?: number;
   /** Reference samples. Default 100. */
@@ -29,19 +30,78 @@ export interface GapOptions {
  * @returns one entry a number of groups, from 1 upwards
  */
 export function gapStatistic(values: readonly number[], weights: readonly number[], options: GapOptions): Gap[] {
-  const { random, references = 100 } = options;
-  const distinct = new Set(values).size;
-  const most = Math.max(1, Math.min(options.most ?? 10, distinct - 1));
-  if (distinct < 2) return [{ gap: null, se: null }];
-  const low = Math.min(...values);
-  const range = Math.max(...values) - low;
-  const drawn = Array.from({ length: references }, (_, label) => {
-    const own = random.fork(label);
-    const even = values.map(() => low + range * own.uniform());
+  const tasks = gapTasks(values, weights, options);
+  return gapFromReferences(
+    values,
+    weights,
+    options,
+    tasks.map(({ argument }) => gapReferences(argument as GapReferencesArgument)),
+  );
+}
+
+/** Argument of {@link gapReferences}: plain data, so that it can go to a worker. */
+export interface GapReferencesArgument {
+  readonly low: number;
+  readonly range: number;
+  readonly weights: readonly number[];
+  readonly most: number;
+  readonly seed: number;
+  /** References `first` … `first + references − 1`: each draws from a stream of its own, whoever makes it. */
+  readonly first: number;
+  readonly references: number;
+}
+
+/** Sums of squares within 1 … `most` groups of some reference samples. A task for the host. */
+export function gapReferences({
+  low,
+  range,
+  weights,
+  most,
+  seed,
+  first,
+  references,
+}: GapReferencesArgument): number[][] {
+  const random = createRandom(seed);
+  return Array.from({ length: references }, (_, at) => {
+    const own = random.fork(first + at);
+    const even = weights.map(() => low + range * own.uniform());
     return partitionCosts(even, weights, most);
   });
-  return gapOf(partitionCosts(values, weights, most), drawn);
 }
+
+/** References a task: a quarter of them, so that they can be shared out. */
+const TASKS = 4;
+
+/** Values drawn in a task that is worth a thread: a twentieth of a second. */
+const HEAVY = 5000;
+
+/** The tasks of a gap statistic, for the host to map; their results go to {@link gapFromReferences}. */
+export function gapTasks(values: readonly number[], weights: readonly number[], options: GapOptions): Task[] {
+  const { seed, references = 100 } = options;
+  if (new Set(values).size < 2) return [];
+  const low = Math.min(...values);
+  const common = { low, range: Math.max(...values) - low, weights, most: mostGroups(values, options), seed };
+  const size = Math.ceil(references / TASKS);
+  return Array.from({ length: Math.ceil(references / size) }, (_, at) => {
+    const first = at * size;
+    const argument: GapReferencesArgument = { ...common, first, references: Math.min(size, references - first) };
+    return { name: 'gapReferences', argument, heavy: size * values.length > HEAVY };
+  });
+}
+
+/** {@link gapStatistic} with the references that its tasks gave. */
+export function gapFromReferences(
+  values: readonly number[],
+  weights: readonly number[],
+  options: GapOptions,
+  references: readonly (readonly (readonly number[])[])[],
+): Gap[] {
+  if (references.length === 0) return [{ gap: null, se: null }];
+  return gapOf(partitionCosts(values, weights, mostGroups(values, options)), references.flat());
+}
+
+const mostGroups = (values: readonly number[], { most = 10 }: GapOptions): number =>
+  Math.max(1, Math.min(most, new Set(values).size - 1));
 
 /**
  * Gap and standard error from sums of squares within groups, of any grouping in any number of dimensions.

@@ -3,7 +3,7 @@ export { equalOverlap, smallestRankP, TOUCHING_OVERLAP, testNeighbours } from '.
 export type { VoteOptions, VotingClock } from './amino-acid-votes.js';
 export { aminoAcidVotes } from './amino-acid-votes.js';
 export type { Assignment, ZonePriors } from './assignment.js';
-export { assignZone, STRADDLE } from './assignment.js';
+export { assignZone, STRADDLE, zoneAssigner } from './assignment.js';
 export type { BedNotes, BedRowInput } from './bed-rows.js';
 export { bedRows } from './bed-rows.js';
 export { bootstrapP } from './bootstrap-rounds.js';
@@ -13,7 +13,7 @@ export type { Comparison } from './compare-models.js';
 export type { Continuum } from './continuum.js';
 export { fitContinuum } from './continuum.js';
 export type { Gap, GapOptions } from './gap-statistic.js';
-export { gapOf, gapStatistic, groupsByGap } from './gap-statistic.js';
+export { gapFromReferences, gapOf, gapReferences, gapStatistic, gapTasks, groupsByGap } from './gap-statistic.js';
 export { goldenSection } from './golden-section.js';
 export type { KMeansCheck, KMeansCheckInput } from './kmeans-check.js';
 export { kmeansCheck } from './kmeans-check.js';

@@ -1,5 +1,5 @@
 import type { ClockData, Confidence, Shell, ShellMark, ShellReading, ShellRow, ShellStatus } from '../model/index.js';
-import { type Assignment, assignZone } from './assignment.js';
+import { type Assignment, zoneAssigner } from './assignment.js';
 import { zoneName } from './zone-rows.js';
 import type { Zoning } from './zoning.js';
 
@@ -24,11 +24,11 @@ export function shellRows(
   notes: (at: number) => ShellNotes,
   assign?: (x: number, error: number) => Assignment,
 ): ShellRow[] {
+  const zoneOf = assign ?? (zoning === null ? null : zoneAssigner(zoning.priors));
   return data.shells.map((clockShell, at) => {
     const shell = shells[clockShell.shell];
     const x = clockShell.x - data.slope * data.beds[clockShell.bed].gradient;
-    const assignment =
-      zoning === null ? null : (assign?.(x, data.scatter.s) ?? assignZone(x, data.scatter.s, zoning.priors));
+    const assignment = zoning === null || zoneOf === null ? null : zoneOf(x, data.scatter.s);
     const { status, marks, reading, confidence } = notes(at);
     return {
       clock: data.clock.name,

@@ -1,6 +1,6 @@
 import type { Task } from '../model/index.js';
 import { createRandom, type Random } from '../statistics/index.js';
-import { type Assignment, assignmentOf, assignZone, type ZonePriors } from './assignment.js';
+import { type Assignment, assignmentOf, type ZonePriors, zoneAssigner } from './assignment.js';
 import { fitMixture, type Mixture } from './mixture.js';
 import { unbiasedSpread } from './zone-errors.js';
 import { bestLabels } from './zoning.js';
@@ -95,8 +95,12 @@ function priorsOf(fit: Mixture): ZonePriors {
   return { means, weights, tau, se: means.map(() => 0) };
 }
 
-/** Repeats a task. */
+/** Tasks at least, so that they can be shared out, and most repeats a task. */
+const TASKS = 4;
 const REPEATS_A_TASK = 50;
+
+/** Beds drawn in a task that is worth a thread: a twentieth of a second. */
+const HEAVY = 5000;
 
 /**
  * The tasks of a bootstrap of zones, for the host to map; their results, joined, go to {@link stabilityOf} and
@@ -105,10 +109,11 @@ const REPEATS_A_TASK = 50;
  * @param repeats in all. Default 200
  */
 export function stabilityTasks(argument: Omit<BootstrapZonesArgument, 'first' | 'repeats'>, repeats = 200): Task[] {
-  return Array.from({ length: Math.ceil(repeats / REPEATS_A_TASK) }, (_, at) => {
-    const first = at * REPEATS_A_TASK;
-    const own = { ...argument, first, repeats: Math.min(REPEATS_A_TASK, repeats - first) };
-    return { name: 'bootstrapZones', argument: own };
+  const size = Math.max(1, Math.min(REPEATS_A_TASK, Math.ceil(repeats / TASKS)));
+  return Array.from({ length: Math.ceil(repeats / size) }, (_, at) => {
+    const first = at * size;
+    const own = { ...argument, first, repeats: Math.min(size, repeats - first) };
+    return { name: 'bootstrapZones', argument: own, heavy: size * argument.values.length > HEAVY };
   });
 }
 
@@ -140,8 +145,9 @@ export function sameZone(
   for (const { priors } of bootstraps) {
     const k = priors.means.length;
     const chances = new Float64Array(n * k);
+    const assign = zoneAssigner(priors);
     values.forEach((value, bed) => {
-      chances.set(assignZone(value, errors[bed], priors).probabilities, bed * k);
+      chances.set(assign(value, errors[bed]).probabilities, bed * k);
     });
     for (let a = 0; a < n; a++) {
       for (let b = 0; b < a; b++) {

@@ -1,6 +1,6 @@
 import type { AdjacentZonesRow, ClockData, ZoneCountRow, ZoneRow } from '../model/index.js';
 import { studentTQuantile } from '../statistics/index.js';
-import { type Assignment, assignZone } from './assignment.js';
+import { type Assignment, zoneAssigner } from './assignment.js';
 import type { Zoning } from './zoning.js';
 
 /** Name of a zone in tables: Z1 is the youngest. */
@@ -19,7 +19,7 @@ export function zoneRows(data: ClockData, zoning: Zoning, support: ZoneRowSuppor
   const { fit, priors, df } = zoning;
   const shellSd = Math.hypot(data.scatter.s, fit.tau);
   // beds of mixed age found no zone, but stand in the one they fit best
-  const assign = support?.assign ?? ((x: number, error: number) => assignZone(x, error, priors));
+  const assign = support?.assign ?? zoneAssigner(priors);
   const zoneOfBed = data.beds.map((bed) => (bed.n > 0 ? assign(bed.mean, bed.se).zone : -1));
   return fit.means.map((mean, j) => {
     const members = data.beds.flatMap((_, bed) => (zoneOfBed[bed] === j ? [bed] : []));

@@ -2,7 +2,8 @@
 // step alone, and the most memory the process held, what the step needs before it included.
 import { readFileSync } from 'node:fs';
 import { averageAnalyses, bedKey, chooseClocks } from '../../dist/beds/index.js';
-import { NOTHING, orderClock, runPass } from '../../dist/clock-run.js';
+import { beginOrder } from '../../dist/clock-order.js';
+import { NOTHING, runPass } from '../../dist/clock-run.js';
 import { createWorkerHost } from '../../dist/commands/worker-host.js';
 import { drawFigures } from '../../dist/figures/index.js';
 import { analyse, DEFAULT_OPTIONS, surveyFromBytes } from '../../dist/index.js';
@@ -64,7 +65,7 @@ function cut({ data, relations }) {
 
 if (step === 'zoning' || step === 'order' || step === 'cut') {
   const pass = await timed('zoning', onePass);
-  if (step === 'order') await timed('order', () => orderClock(pass, 0.05, createRandom(2), host));
+  if (step === 'order') await timed('order', () => beginOrder(pass, 0.05, createRandom(2), host)());
   if (step === 'cut') await timed('cut', () => cut(pass));
 }
 if (step === 'analysis' || step === 'report') {

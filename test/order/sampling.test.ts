@@ -203,7 +203,7 @@ describe('samplePosterior', () => {
   it('calls tasks heavy that are worth a thread, and watches 200 deposits at most', async () => {
     const heavy = async (draws: number) => {
       const { map, asked } = host(settled);
-      const many = { ...model(0), means: new Array<number>(30_000).fill(-1) };
+      const many = { ...model(0), means: new Array<number>(1000).fill(-1) };
       await samplePosterior(many, { seed: 1, map, draws });
       return asked[0][0].heavy;
     };

@@ -365,7 +365,7 @@ describe('settleChoice', () => {
 describe('gap statistic', () => {
   it('has the numbers of the example, by either rule', () => {
     const weights = errors.map((error) => error ** -2);
-    const gaps = gapStatistic(values, weights, { random: createRandom(3), most: 5, references: 20 });
+    const gaps = gapStatistic(values, weights, { seed: 3, most: 5, references: 20 });
     expect(gaps.map(({ gap }) => gap)).toEqual(
       nears([-0.4679228227, -0.8178195775, 0.9374139396, 0.7259411612, 0.4218078013]),
     );
@@ -374,8 +374,8 @@ describe('gap statistic', () => {
     );
     expect(groupsByGap(gaps)).toBe(3);
     expect(groupsByGap(gaps, 'first')).toBe(1);
-    expect(gapStatistic(values, weights, { random: createRandom(3), references: 2 })).toHaveLength(10);
-    expect(gapStatistic([1, 2, 2, 3], [1, 1, 1, 1], { random: createRandom(3), references: 2 })).toHaveLength(2);
+    expect(gapStatistic(values, weights, { seed: 3, references: 2 })).toHaveLength(10);
+    expect(gapStatistic([1, 2, 2, 3], [1, 1, 1, 1], { seed: 3, references: 2 })).toHaveLength(2);
   });
 
   it('is the mean log cost of the references less that of the values', () => {
@@ -593,18 +593,21 @@ describe('stability', () => {
     }
   });
 
-  it('shares the repeats out by fifties', () => {
+  it('shares the repeats out in four parts or more, of fifty at most', () => {
     const { first: _, repeats: __, ...common } = argument;
     const tasks = (repeats?: number) =>
       stabilityTasks(common, repeats).map(({ argument: own }) => {
         const { first, repeats: count } = own as { first: number; repeats: number };
         return [first, count];
       });
-    expect(tasks(120)).toEqual([
-      [0, 50],
-      [50, 50],
-      [100, 20],
+    expect(tasks(18)).toEqual([
+      [0, 5],
+      [5, 5],
+      [10, 5],
+      [15, 3],
     ]);
+    expect(tasks(1)).toEqual([[0, 1]]);
+    expect(tasks(230).map(([first]) => first)).toEqual([0, 50, 100, 150, 200]);
     expect(tasks()).toEqual([0, 50, 100, 150].map((first) => [first, 50]));
   });
 
