@@ -75,15 +75,16 @@ export async function calibration(
   );
 }
 
-/** Share of zones whose true mean lies within the 95 % interval, on coasts with the right number of zones. */
+/** Share of zones whose true mean lies within the 95 % interval, on coasts with the right number of zones, or told it. */
 export async function coverage(
   seeds: number,
   coasts: readonly (CoastOptions & { zones: number })[],
+  given = false,
 ): Promise<{ zones: number; covered: number }> {
   let zones = 0;
   let hits = 0;
   for (const coast of coasts) {
-    for (const run of await zoneCoasts(seeds, coast)) {
+    for (const run of await zoneCoasts(seeds, coast, given ? { zones: coast.zones } : {})) {
       const { zoning, truth } = run;
       if (zoning.fit.k !== coast.zones) continue;
       const se = zoneMeanErrors(zoning.priors.se, bootstrapsOf(run));
