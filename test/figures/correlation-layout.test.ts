@@ -12,7 +12,7 @@ describe('the columns of the correlation panel', () => {
     {},
     { place: 'level' },
     { place: 'depth_m' },
-    { sections: 40, beds: 150, shells: 1200 },
+    { sections: 40, beds: 150, shells: 1200, planned: false },
   ] as FixtureOptions[])('stand in coast order, with beds in superposition (%o)', (options) => {
     const columns = layColumns(view(options));
     expect(columns.map((column) => column.section)).toEqual(view(options).sections);
@@ -58,7 +58,7 @@ describe('the columns of the correlation panel', () => {
   });
 
   it('finds where a missing zone would lie', () => {
-    const own = view({ sections: 40, beds: 150, shells: 1200, odd: false });
+    const own = view({ sections: 40, beds: 150, shells: 1200, planned: false, odd: false });
     let between = 0;
     for (const column of layColumns(own)) {
       const runs = runsOf(column);

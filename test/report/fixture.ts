@@ -27,6 +27,8 @@ export interface FixtureOptions {
   readonly hostile?: string;
   readonly odd?: boolean;
   readonly longNames?: boolean;
+  /** Whether there is a plan, which no figure shows and which takes seconds for hundreds of beds. Default true. */
+  readonly planned?: boolean;
 }
 
 const PLACES = [
@@ -83,8 +85,21 @@ function generator(seed: number): { uniform: () => number; normal: () => number 
   return { uniform, normal };
 }
 
-/** Findings of an invented survey, complete enough to draw; numbers are plausible, and only the plan is an engine's. */
+const made = new Map<string, Findings>();
+
+/**
+ * Findings of an invented survey, complete enough to draw; numbers are plausible, and only the plan is an engine's. Those of
+ * the same options are made once, as nothing may change them and a plan of many beds takes a second.
+ */
 export function fixture(options: FixtureOptions = {}): Findings {
+  const key = JSON.stringify(options);
+  const findings = made.get(key) ?? freshFixture(options);
+  made.set(key, findings);
+  return findings;
+}
+
+/** {@link fixture}, made anew. */
+export function freshFixture(options: FixtureOptions = {}): Findings {
   const sections = options.sections ?? 12;
   const bedCount = options.beds ?? 36;
   const shellCount = options.shells ?? 200;
@@ -488,7 +503,7 @@ export function fixture(options: FixtureOptions = {}): Findings {
     plan_criterion: '',
     plan_notes: [],
   };
-  return { ...findings, ...planOfRun(findings) };
+  return (options.planned ?? true) ? { ...findings, ...planOfRun(findings) } : findings;
 }
 
 const round = (value: number) => Math.round(value * 100) / 100;
