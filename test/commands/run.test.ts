@@ -37,6 +37,7 @@ beforeAll(async () => {
   home = mkdtempSync(join(tmpdir(), 'bedorder-'));
   cpSync(join(ROOT, 'examples/coast'), home, { recursive: true });
   writeFileSync(join(home, 'small.csv'), smallShells([0.6, 0.4, 0.2]));
+  writeFileSync(join(home, 'small-beds.csv'), 'section,bed,burial_m\nCove,A,2\nCove,B,2\nCove,C,2\n');
   writeFileSync(join(home, 'upside-down.csv'), smallShells([0.2, 0.4, 0.6]));
   first = await run(['--out', 'first']);
 });
@@ -101,10 +102,10 @@ describe('run', () => {
     mkdirSync(join(home, 'conf'), { recursive: true });
     writeFileSync(
       join(home, 'conf/s.yaml'),
-      'beds: ../beds.csv\nout: made\nzones: 3\nseed: 7\nscreening:\n  serine_ratio: 0.9\n',
+      'beds: ../small-beds.csv\nout: made\nzones: 3\nseed: 7\nscreening:\n  serine_ratio: 0.9\n',
     );
     const { status } = await bedorder(
-      ['run', 'shells.csv', '--settings', 'conf/s.yaml', '--seed', '9', '--simulations', '19', '--quiet'],
+      ['run', 'small.csv', '--settings', 'conf/s.yaml', '--seed', '9', '--simulations', '9', '--quiet'],
       { cwd: home },
     );
     expect(status).toBe(0);
@@ -131,7 +132,8 @@ describe('the world around a run', () => {
   it.each(['SIGINT', 'SIGTERM'] as const)('%s leaves the old results whole and nothing beside them', async (signal) => {
     const dist = await builtOnce();
     const old = ['--out', 'old', '--quiet'];
-    await small(old);
+    // of the other signal it is still there, whole
+    if (!existsSync(join(home, 'old'))) await small(old);
     const before = bytesOf(join(home, 'old'));
     // at the start, in the middle, and about where it writes
     for (const wait of [150, 300, 450]) {

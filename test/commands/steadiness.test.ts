@@ -20,7 +20,7 @@ import { cases } from '../house/effort.js';
 import { bedorder, builtOnce } from './program.js';
 
 /** Kills of each of two runs side by side: 50 in the long tests. */
-const KILLS = cases(10, 25);
+const KILLS = cases(6, 25);
 
 /* Whole runs of the program that are killed, starved of disk, or sent to places where they must not write. */
 

@@ -8,7 +8,7 @@ import { tryMany } from './try-many.js';
  */
 
 const first = Number(process.env.FUZZ_FIRST ?? 1);
-const count = Number(process.env.FUZZ_COUNT ?? cases(30, 300));
+const count = Number(process.env.FUZZ_COUNT ?? cases(24, 300));
 
 it(`tries ${first} to ${first + count - 1}: a result or a message, in time, within memory`, {
   timeout: 10_000 * count,
