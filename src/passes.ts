@@ -122,9 +122,9 @@ interface FixedParts {
 }
 
 function fixedParts({ shells }: RunContext, { data, relations }: Pass): FixedParts {
-  const aminoAcids = AMINO_ACIDS.filter((code) =>
-    data.shells.some(({ shell }) => shells[shell].ratios[code] !== undefined),
-  );
+  const measured = new Set<string>();
+  for (const { shell } of data.shells) for (const code in shells[shell].ratios) measured.add(code);
+  const aminoAcids = AMINO_ACIDS.filter((code) => measured.has(code));
   // one amino acid has nothing to agree with
   const logs =
     aminoAcids.length < 2

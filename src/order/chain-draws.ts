@@ -40,16 +40,14 @@ export function chainDraws({ model, seed, chain, draws, thinning, watched }: Cha
     let theta = running.next();
     for (let extra = 1; extra < thinning; extra++) theta = running.next();
     const now = theta;
-    watched.forEach((deposit, at) => {
-      traces[at][draw] = now[deposit];
-    });
+    for (let at = 0; at < watched.length; at++) traces[at][draw] = now[watched[at]];
     const order = sort(now);
     let rank = 1;
     for (let at = 0; at < order.length; at++) {
       rankOf[order[at]] = rank;
       rank += sizes[order[at]];
     }
-    for (let bed = 0; bed < beds; bed++) ranks[bed * draws + draw] = rankOf[node[bed]];
+    for (let bed = 0, at = draw; bed < beds; bed++, at += draws) ranks[at] = rankOf[node[bed]];
   }
   return { ranks, traces };
 }

@@ -40,8 +40,8 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
   const precision = Float64Array.from(model.se, (value) => 1 / Math.max(value * value, 1e-18));
   const members = groupLists(node, nodes);
   const bedsOf = groupLists(section, sections);
-  const younger = flatLists(graph.younger);
-  const older = flatLists(graph.older);
+  const { start: youngerFrom, items: younger } = flatLists(graph.younger);
+  const { start: olderFrom, items: older } = flatLists(graph.older);
   const sequence = Int32Array.from(graph.sequence);
   const movers = sectionMovers(model, members, bedsOf);
   const { weight: weightOf, mean: meanOf, section: sectionOf } = depositMeans(means, precision, section, members);
@@ -59,8 +59,8 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
         widest = Math.max(widest, model.se[members.items[at]]);
       }
       let value = meanOf[deposit] + 2 * widest * random.normal();
-      for (let at = older.start[deposit]; at < older.start[deposit + 1]; at++) {
-        value = Math.min(value, theta[older.items[at]] - 1e-6);
+      for (let at = olderFrom[deposit]; at < olderFrom[deposit + 1]; at++) {
+        value = Math.min(value, theta[older[at]] - 1e-6);
       }
       theta[deposit] = value;
     }
@@ -84,11 +84,13 @@ export function gibbsChain(model: OrderModel, random: Random): GibbsChain {
       const mean = own >= 0 ? meanOf[deposit] - shift[own] : meanOverSections(deposit);
       let low = Number.NEGATIVE_INFINITY;
       let high = Number.POSITIVE_INFINITY;
-      for (let at = younger.start[deposit]; at < younger.start[deposit + 1]; at++) {
-        if (theta[younger.items[at]] > low) low = theta[younger.items[at]];
+      for (let at = youngerFrom[deposit]; at < youngerFrom[deposit + 1]; at++) {
+        const bound = theta[younger[at]];
+        if (bound > low) low = bound;
       }
-      for (let at = older.start[deposit]; at < older.start[deposit + 1]; at++) {
-        if (theta[older.items[at]] < high) high = theta[older.items[at]];
+      for (let at = olderFrom[deposit]; at < olderFrom[deposit + 1]; at++) {
+        const bound = theta[older[at]];
+        if (bound < high) high = bound;
       }
       const sd = 1 / Math.sqrt(weightOf[deposit] * scale);
       theta[deposit] =

@@ -70,10 +70,16 @@ function stream(key: Key): Random {
     }
   };
 
+  let lastN = Number.NaN;
+  let limit = 0;
   const integer = (n: number): number => {
-    requireThat(Number.isInteger(n) && n >= 1 && n <= TWO_32, 'integer', 'a whole number from 1 to 2^32', n);
-    // Multiples of n above the last full one are thrown away, so that no value is favoured.
-    const limit = TWO_32 - (TWO_32 % n);
+    // the same n mostly comes again and again
+    if (n !== lastN) {
+      requireThat(Number.isInteger(n) && n >= 1 && n <= TWO_32, 'integer', 'a whole number from 1 to 2^32', n);
+      // Multiples of n above the last full one are thrown away, so that no value is favoured.
+      limit = TWO_32 - (TWO_32 % n);
+      lastN = n;
+    }
     for (;;) {
       const word = bits.next() >>> 0;
       if (word < limit) return Math.floor(word / (limit / n));

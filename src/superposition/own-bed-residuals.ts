@@ -1,4 +1,4 @@
-import { holm, studentTCdf } from '../statistics/index.js';
+import { holm, studentTCdf, studentTQuantile } from '../statistics/index.js';
 import { robustScatter } from './robust-scatter.js';
 
 /** A shell against the other sound shells of its own bed. */
@@ -21,9 +21,12 @@ export interface OwnBedResiduals {
   /** What is known of one shell, by its index; and of all, as a list that is made when it is asked for. */
   readonly of: (shell: number) => OwnBedResidual;
   readonly shells: readonly OwnBedResidual[];
-  /** Residual and p of every shell in plain lists, NaN where unknown: a survey may hold a million shells. */
+  /** Residual of every shell, NaN where unknown, in a plain list: a survey may hold a million shells. */
   readonly residual: Float64Array;
-  readonly p: Float64Array;
+  /** p of one shell, NaN where unknown. */
+  readonly p: (shell: number) => number;
+  /** Whether that p is at most alpha/5. */
+  readonly apart: (shell: number) => boolean;
   readonly s: number;
   readonly df: number;
   /** Whether s comes from the shells themselves, not from the scatter to fall back on. */
@@ -36,6 +39,9 @@ export interface OwnBedResiduals {
 
 /** Degrees of freedom of the robust scatter under which it is not used; about 4 of the classical one. */
 const FEWEST_ROBUST = 2;
+
+/** Shells over alpha from which most need no p: Holm's rule makes 1 of all that are not small. */
+const MANY_SHELLS = 100;
 
 /**
  * Leave-one-out residuals of every shell from the other shells of its bed (design 7.9), with variance s²(1 + 1/n), s
@@ -68,21 +74,30 @@ export function ownBedResiduals(
   const enough = robust.df >= FEWEST_ROBUST;
   const { s, df } = enough ? robust : (options.fallback ?? { s: Number.NaN, df: 0 });
   const table = blankResiduals(shells.length);
+  const many = shells.length >= MANY_SHELLS / alpha && s > 0 && df > 0;
+  // a hair less than where p is alpha/5
+  let near = many ? 0.999 * studentTQuantile(1 - alpha / 10, df) : 0;
   let changed = members;
   for (;;) {
-    for (const bed of changed) measureBed(bed, shells, sound, { s, df }, table);
-    const { adjusted, tested } = adjustTested(table.p);
+    for (const bed of changed) measureBed(bed, shells, sound, { s, df, near }, table);
+    if (near > 0 && !mostAreNear(table.t, near)) {
+      near = 0;
+      changed = members;
+      continue;
+    }
+    const { adjusted, tested } = adjustTested(table.tail);
     const isOdd = (i: number) => adjusted[i] <= alpha && table.others[i] >= 2;
     const fits = (i: number) => sound[i] === 1 && isOdd(i);
     const furthest = members.map((bed) => furthestOf(bed, fits, table.t));
     changed = members.filter((_, bed) => furthest[bed] >= 0);
     if (changed.length === 0) {
-      const { residual, t, p, others } = table;
+      const { residual, t, tail, others } = table;
+      const p = (i: number) => (Math.abs(t[i]) < near ? twoSided(t[i], df) : tail[i]);
       const of = (i: number): OwnBedResidual => ({
         residual: known(residual[i]),
         t: known(t[i]),
         others: others[i],
-        p: known(p[i]),
+        p: known(p(i)),
         adjusted: known(adjusted[i]),
         odd: isOdd(i),
       });
@@ -94,6 +109,7 @@ export function ownBedResiduals(
         },
         residual,
         p,
+        apart: (i) => tail[i] <= alpha / 5,
         s,
         df,
         robust: enough,
@@ -109,13 +125,14 @@ export function ownBedResiduals(
 interface ResidualTable {
   readonly residual: Float64Array;
   readonly t: Float64Array;
-  readonly p: Float64Array;
+  /** p, or 1 in place of one that can't matter. */
+  readonly tail: Float64Array;
   readonly others: Int32Array;
 }
 
 function blankResiduals(shells: number): ResidualTable {
   const unknown = () => new Float64Array(shells).fill(Number.NaN);
-  return { residual: unknown(), t: unknown(), p: unknown(), others: new Int32Array(shells) };
+  return { residual: unknown(), t: unknown(), tail: unknown(), others: new Int32Array(shells) };
 }
 
 /** Fills in the shells of one bed, each held against the sound others. */
@@ -123,8 +140,8 @@ function measureBed(
   bed: readonly number[],
   shells: readonly { readonly x: number }[],
   sound: Uint8Array,
-  { s, df }: { readonly s: number; readonly df: number },
-  { residual, t, p, others }: ResidualTable,
+  { s, df, near }: { readonly s: number; readonly df: number; readonly near: number },
+  { residual, t, tail, others }: ResidualTable,
 ): void {
   // taken from one of the bed, so that equal ratios differ by 0 and not by rounding
   const origin = bed.length === 0 ? 0 : shells[bed[0]].x;
@@ -140,14 +157,23 @@ function measureBed(
     const rest = count - sound[i];
     others[i] = rest;
     if (rest === 0) {
-      residual[i] = t[i] = p[i] = Number.NaN;
+      residual[i] = t[i] = tail[i] = Number.NaN;
       continue;
     }
     residual[i] = own - (sound[i] === 1 ? sum - own : sum) / rest;
     if (!(s > 0) || !(df > 0)) continue;
     t[i] = residual[i] / (s * Math.sqrt(1 + 1 / rest));
-    p[i] = 2 * studentTCdf(-Math.abs(t[i]), df);
+    tail[i] = Math.abs(t[i]) < near ? 1 : twoSided(t[i], df);
   }
+}
+
+const twoSided = (t: number, df: number): number => 2 * studentTCdf(-Math.abs(t), df);
+
+/** Whether at least half of the t that are known lie nearer to 0 than a limit. */
+function mostAreNear(t: Float64Array, limit: number): boolean {
+  let balance = 0;
+  for (const value of t) if (!Number.isNaN(value)) balance += Math.abs(value) < limit ? 1 : -1;
+  return balance >= 0;
 }
 
 /** The shell of a bed that stands furthest off among those that fit; -1 where none does. */

@@ -108,7 +108,7 @@ export function readShells(input: ReadingInput, before?: ShellReadings): ShellRe
 
   const shells = data.shells.map(({ bed }, i): ShellFinding => {
     const conflicting = conflicts.asLower[i] + conflicts.asUpper[i] > 0;
-    if (names[i].length === 0 && !conflicting && !(residuals.p[i] <= alpha / 5)) return PLAIN;
+    if (names[i].length === 0 && !conflicting && !residuals.apart(i)) return PLAIN;
     const own = residuals.of(i);
     const cut = inAll.has(i) ? 'all' : inSome.has(i) ? 'some' : 'none';
     const wholeBed = ofBed[bed].inCut * 2 >= ofBed[bed].sound || !alone[i];
@@ -185,7 +185,12 @@ function conflictsOf(
     data.beds.map(({ section }, b) => ({ section, above: above[b] })),
     { scatter: residuals.s, df: residuals.df, spread, alpha: alpha / 2 },
   );
-  const costs = Array.from(residuals.p, (p, i) => costOfShell(Number.isNaN(p) ? null : p, marks[i].length > 0));
+  // only shells in conflict are weighed
+  const costs = placed.map((_, i) => {
+    if (conflicts.asLower[i] + conflicts.asUpper[i] === 0) return 1;
+    const p = residuals.p(i);
+    return costOfShell(Number.isNaN(p) ? null : p, marks[i].length > 0);
+  });
   return { conflicts, toSetAside: shellsToSetAside(conflicts, costs) };
 }
 

@@ -86,12 +86,18 @@ export function checkSections(
   if (!(df > 0)) throw new RangeError(`checkSections: df must be above 0, got ${df}`);
   if (!(simulations >= 1)) throw new RangeError(`checkSections: simulations must be at least 1, got ${simulations}`);
 
-  // sections of equally weighted beds share the weights of the mixture, which alone are simulated
+  // Sections of equally weighted beds share the weights of the mixture, which alone are simulated. These hardly hang on how
+  // the beds are weighted: weights are taken to a twentieth, which moves them by far less than the simulation leaves open.
   const mixtures = new Map<string, readonly number[]>();
   const mixtureOf = (weights: readonly number[]): readonly number[] => {
-    const key = weights.map((weight) => (weight / weights[0]).toPrecision(6)).join(' ');
-    const known = mixtures.get(key) ?? simulateDistinct(weights, random.fork(mixtures.size), simulations);
-    mixtures.set(key, known);
+    const steps = weights.map((weight) => Math.round(20 * Math.log(weight / weights[0])));
+    const key = steps.join(' ');
+    let known = mixtures.get(key);
+    if (known === undefined) {
+      const rounded = steps.map((step) => Math.exp(step / 20));
+      known = simulateDistinct(rounded, random.fork(mixtures.size), simulations);
+      mixtures.set(key, known);
+    }
     return known;
   };
   const tests = sections.map((section) => testSection(section, mixtureOf, df));

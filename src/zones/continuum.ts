@@ -16,9 +16,9 @@ export interface Continuum {
  * p(m) = [Φ((high − m)/se) − Φ((low − m)/se)] / (high − low) (design 7.3). Two parameters.
  * @param values bed means of log ratios, at least one
  * @param errors their standard errors, 0 or more
- * @param tolerance of the two ends, relative
+ * @param tolerance of the two ends, relative; the square root of rounding is all that a peak can be told to
  */
-export function fitContinuum(values: readonly number[], errors: readonly number[], tolerance = 1e-10): Continuum {
+export function fitContinuum(values: readonly number[], errors: readonly number[], tolerance = 1e-8): Continuum {
   const least = Math.min(...values);
   const most = Math.max(...values);
   const range = most - least;
@@ -41,6 +41,9 @@ export function fitContinuum(values: readonly number[], errors: readonly number[
   return { low, high, logLikelihood: best };
 }
 
+/** The normal's mass below z; what lies far outside is lost beside any mass that it is taken from. */
+const below = (z: number): number => (z > INSIDE ? 1 : z < -38 ? 0 : normalCdf(z));
+
 function logLikelihood(values: readonly number[], errors: readonly number[], low: number, high: number): number {
   let total = -values.length * Math.log(high - low);
   for (let bed = 0; bed < values.length; bed++) {
@@ -49,7 +52,7 @@ function logLikelihood(values: readonly number[], errors: readonly number[], low
     // well inside, the whole mass: most beds
     if (a < -INSIDE && b > INSIDE) continue;
     // both ends on one side: take the difference in the lower tail, where it is not lost to rounding
-    const mass = a > 0 ? normalCdf(-a) - normalCdf(-b) : normalCdf(b) - normalCdf(a);
+    const mass = a > 0 ? below(-a) - below(-b) : below(b) - below(a);
     total += Math.log(Math.max(mass, 1e-300));
   }
   return total;

@@ -48,14 +48,14 @@ export function partitionCosts(values: readonly number[], weights: readonly numb
 function fillTable(values: readonly number[], weights: readonly number[], k: number) {
   const n = values.length;
   const order = values.map((_, index) => index).sort((a, b) => values[a] - values[b] || a - b);
-  const cost = segmentCosts(order, values, weights);
-  let previous = Float64Array.from({ length: n }, (_, last) => cost(0, last));
+  const sums = runningSums(order, values, weights);
+  let previous = Float64Array.from({ length: n }, (_, last) => costOf(sums, 0, last));
   const cuts: Int32Array[] = [new Int32Array(n)];
   const costs = [previous[n - 1]];
   for (let group = 1; group < k; group++) {
     const current = new Float64Array(n).fill(Number.POSITIVE_INFINITY);
     const cut = new Int32Array(n);
-    fillRow(previous, current, cut, cost, group, group, n - 1, group, n - 1);
+    fillRow(previous, current, cut, sums, group, group, n - 1, group, n - 1);
     cuts.push(cut);
     costs.push(current[n - 1]);
     previous = current;
@@ -63,8 +63,14 @@ function fillTable(values: readonly number[], weights: readonly number[], k: num
   return { order, cuts, costs };
 }
 
-/** Weighted sum of squares of the sorted values from `first` to `last`, by running sums about the mean of all. */
-function segmentCosts(order: readonly number[], values: readonly number[], weights: readonly number[]) {
+/** Sums over the sorted values before each place: of weights, of weighted values and of their squares, about the mean of all. */
+interface RunningSums {
+  readonly sumW: Float64Array;
+  readonly sumX: Float64Array;
+  readonly sumXX: Float64Array;
+}
+
+function runningSums(order: readonly number[], values: readonly number[], weights: readonly number[]): RunningSums {
   const n = order.length;
   const centre = values.reduce((sum, value) => sum + value, 0) / n;
   const sumW = new Float64Array(n + 1);
@@ -76,11 +82,13 @@ function segmentCosts(order: readonly number[], values: readonly number[], weigh
     sumX[at + 1] = sumX[at] + weights[index] * x;
     sumXX[at + 1] = sumXX[at] + weights[index] * x * x;
   });
-  return (first: number, last: number): number => {
-    const w = sumW[last + 1] - sumW[first];
-    const x = sumX[last + 1] - sumX[first];
-    return Math.max(0, sumXX[last + 1] - sumXX[first] - (x * x) / w);
-  };
+  return { sumW, sumX, sumXX };
+}
+
+/** Weighted sum of squares of the sorted values from `first` to `last` about their mean. */
+function costOf({ sumW, sumX, sumXX }: RunningSums, first: number, last: number): number {
+  const x = sumX[last + 1] - sumX[first];
+  return Math.max(0, sumXX[last + 1] - sumXX[first] - (x * x) / (sumW[last + 1] - sumW[first]));
 }
 
 /** Best start of the last group for every end in low..high; the best start never moves left as the end moves right. */
@@ -88,7 +96,7 @@ function fillRow(
   previous: Float64Array,
   current: Float64Array,
   cut: Int32Array,
-  cost: (first: number, last: number) => number,
+  sums: RunningSums,
   group: number,
   low: number,
   high: number,
@@ -97,13 +105,22 @@ function fillRow(
 ): void {
   if (low > high) return;
   const middle = (low + high) >> 1;
-  for (let start = Math.max(group, startLow); start <= Math.min(middle, startHigh); start++) {
-    const candidate = previous[start - 1] + cost(start, middle);
-    if (candidate < current[middle]) {
-      current[middle] = candidate;
-      cut[middle] = start;
+  const { sumW, sumX, sumXX } = sums;
+  // costOf for one end and every start: what hangs on the end is taken out of the loop
+  const [endW, endX, endXX] = [sumW[middle + 1], sumX[middle + 1], sumXX[middle + 1]];
+  const last = Math.min(middle, startHigh);
+  let least = Number.POSITIVE_INFINITY;
+  let best = 0;
+  for (let start = Math.max(group, startLow); start <= last; start++) {
+    const x = endX - sumX[start];
+    const candidate = previous[start - 1] + Math.max(0, endXX - sumXX[start] - (x * x) / (endW - sumW[start]));
+    if (candidate < least) {
+      least = candidate;
+      best = start;
     }
   }
-  fillRow(previous, current, cut, cost, group, low, middle - 1, startLow, cut[middle]);
-  fillRow(previous, current, cut, cost, group, middle + 1, high, cut[middle], startHigh);
+  current[middle] = least;
+  cut[middle] = best;
+  fillRow(previous, current, cut, sums, group, low, middle - 1, startLow, best);
+  fillRow(previous, current, cut, sums, group, middle + 1, high, best, startHigh);
 }
