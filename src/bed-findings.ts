@@ -44,11 +44,10 @@ export function bedEvidence(
     data.beds.map((bed) => ({ burial_m: sites.get(bed.key)?.burial_m ?? null, shells: bed.n })),
     options.screening,
   );
+  const screenedBy = data.beds.map((): string[] => []);
+  for (const { bed, evidence } of screened) screenedBy[bed].push(sentence(evidence));
   return data.beds.flatMap((bed, at) => {
-    const sentences = [
-      ...ages[at].sentences,
-      ...screened.filter((mark) => mark.bed === at).map((mark) => sentence(mark.evidence)),
-    ];
+    const sentences = [...ages[at].sentences, ...screenedBy[at]];
     if (marks.get(bed.key)?.includes('near equilibrium')) {
       sentences.push('Its ratio is near equilibrium, where older and younger beds come to look alike.');
     }

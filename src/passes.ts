@@ -3,6 +3,7 @@ import { type LeftOut, NOTHING, type Pass, type RunContext, runPass } from './cl
 import type { AminoAcid, ScreeningMark } from './model/index.js';
 import { AMINO_ACIDS } from './model/index.js';
 import { relationGraph } from './order/index.js';
+import { countRatios } from './screening/index.js';
 import type { Random } from './statistics/index.js';
 import {
   bedsAbove,
@@ -122,9 +123,8 @@ interface FixedParts {
 }
 
 function fixedParts({ shells }: RunContext, { data, relations }: Pass): FixedParts {
-  const measured = new Set<string>();
-  for (const { shell } of data.shells) for (const code in shells[shell].ratios) measured.add(code);
-  const aminoAcids = AMINO_ACIDS.filter((code) => measured.has(code));
+  const counts = countRatios(data.shells.map(({ shell }) => shells[shell]));
+  const aminoAcids = AMINO_ACIDS.filter((code) => counts.get(code)! > 0);
   // one amino acid has nothing to agree with
   const logs =
     aminoAcids.length < 2

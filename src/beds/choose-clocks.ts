@@ -1,5 +1,6 @@
 import type { AminoAcid, Clock, Fraction, PublishedSummary, RunOptions, Shell } from '../model/index.js';
 import { AMINO_ACIDS } from '../model/index.js';
+import { countRatios } from '../screening/index.js';
 import { bedKey } from './clock-data.js';
 import { type FisherIndex, fisherIndex } from './fisher-index.js';
 
@@ -64,7 +65,7 @@ function clocksOf(
   });
   const asked = chooseAminoAcids(measured, counts, counts.get('all')!, wanted);
   if (asked.length === 0) return null;
-  const chosen = bedsWithAll(asked, shells, summaries) > 0 ? asked : [mostMeasured(asked, counts)];
+  const chosen = anyBedHasAll(asked, shells, summaries) ? asked : [mostMeasured(asked, counts)];
   if (chosen.length === 1) {
     const singles = measured.filter((code) => code !== chosen[0]).map((code) => single(code, false));
     return { main: single(chosen[0], true), index: null, singles };
@@ -92,11 +93,8 @@ function clocksOf(
 
 /** Shells (published ones too) on which each amino acid was measured, and their number in all. */
 function countMeasured(shells: readonly Shell[], summaries: readonly PublishedSummary[]) {
-  const counts = new Map<AminoAcid | 'all', number>(AMINO_ACIDS.map((code) => [code, 0]));
+  const counts = new Map<AminoAcid | 'all', number>(countRatios(shells));
   const publishedBeds = new Map<string, number>();
-  for (const shell of shells) {
-    for (const code of AMINO_ACIDS) if (shell.ratios[code] !== undefined) counts.set(code, counts.get(code)! + 1);
-  }
   for (const summary of summaries) {
     counts.set(summary.amino_acid, counts.get(summary.amino_acid)! + summary.n);
     const key = bedKey(summary.section, summary.bed);
@@ -123,21 +121,17 @@ function mostMeasured(codes: readonly AminoAcid[], counts: ReadonlyMap<AminoAcid
   return codes.reduce((most, code) => (counts.get(code)! > counts.get(most)! ? code : most));
 }
 
-/** Beds in which all of these were measured on one shell, or published together: an index needs them so. */
-function bedsWithAll(
+/** Whether all of these were measured on one shell, or published together of one bed: an index needs them so. */
+function anyBedHasAll(
   codes: readonly AminoAcid[],
   shells: readonly Shell[],
   summaries: readonly PublishedSummary[],
-): number {
-  const beds = new Set<string>();
-  for (const { section, bed, ratios } of shells) {
-    if (codes.every((code) => ratios[code] !== undefined)) beds.add(bedKey(section, bed));
-  }
+): boolean {
+  if (shells.some(({ ratios }) => codes.every((code) => ratios[code] !== undefined))) return true;
   const published = new Map<string, Set<AminoAcid>>();
   for (const { section, bed, amino_acid } of summaries) {
     const key = bedKey(section, bed);
     published.set(key, (published.get(key) ?? new Set()).add(amino_acid));
   }
-  for (const [key, own] of published) if (codes.every((code) => own.has(code))) beds.add(key);
-  return beds.size;
+  return [...published.values()].some((own) => codes.every((code) => own.has(code)));
 }

@@ -8,12 +8,15 @@ import type { RunOptions, Survey } from '../model/index.js';
  */
 export function optionsAgainstSurvey(survey: Survey, options: RunOptions): string[] {
   const problems: string[] = [];
-  const taxa = new Set(survey.analyses.map(({ taxon }) => taxon));
-  const columns = new Set(survey.beds.flatMap((bed) => Object.keys(bed.columns)));
-  const fractions = new Set(survey.analyses.map(({ fraction }) => fraction));
-  const measured = new Set(survey.analyses.flatMap(({ ratios }) => Object.keys(ratios)));
-  const want = (option: string, name: string | null, there: ReadonlySet<string>, what: string) => {
-    if (name === null || there.has(name)) return;
+  // looked up only for what is asked for
+  const taxa = () => new Set(survey.analyses.map(({ taxon }) => taxon));
+  const columns = () => new Set(survey.beds.flatMap((bed) => Object.keys(bed.columns)));
+  const fractions = () => new Set(survey.analyses.map(({ fraction }) => fraction));
+  const measured = () => new Set(survey.analyses.flatMap(({ ratios }) => Object.keys(ratios)));
+  const want = (option: string, name: string | null, names: () => ReadonlySet<string>, what: string) => {
+    if (name === null) return;
+    const there = names();
+    if (there.has(name)) return;
     const near = nearestName(name, there);
     const known = there.size === 0 ? `The survey has no ${what}.` : `The survey has ${listed(there)}.`;
     problems.push(`${option} ${name}: the survey has no such ${what}. ${near ? `Did you mean ${near}?` : known}`);

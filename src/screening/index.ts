@@ -15,6 +15,7 @@ export { replicatesDisagree } from './replicates-disagree.js';
 
 // What the rules are made of
 
+export { countRatios } from './count-ratios.js';
 export { type PairCurve, type PairPoint, pairCurves } from './pair-curves.js';
 export { type RobustCurve, robustCurve } from './robust-curve.js';
 export type { ScreeningRule } from './rule.js';

@@ -1,4 +1,5 @@
 import { AMINO_ACIDS, type AminoAcid, type Shell } from '../model/index.js';
+import { countRatios } from './count-ratios.js';
 import { type RobustCurve, robustCurve } from './robust-curve.js';
 import { FEWEST_SHELLS, groupsOfShells } from './rule.js';
 
@@ -32,9 +33,8 @@ export interface PairPoint {
  * @param members Indices of the shells of one taxon and fraction.
  */
 export function pairCurves(shells: readonly Shell[], members: readonly number[]): PairCurve[] {
-  const measured = AMINO_ACIDS.filter(
-    (code) => members.filter((index) => shells[index].ratios[code] !== undefined).length >= FEWEST_SHELLS,
-  );
+  const counts = countRatios(members.map((index) => shells[index]));
+  const measured = AMINO_ACIDS.filter((code) => counts.get(code)! >= FEWEST_SHELLS);
   const curves: PairCurve[] = [];
   measured.forEach((first, place) => {
     for (const second of measured.slice(place + 1)) {

@@ -9,12 +9,12 @@ import type { ShellConflicts } from './shell-conflicts.js';
 export function conflictsOfItsOwn(
   { conflicts, sorted }: ShellConflicts,
   shells: readonly { readonly bed: number; readonly x: number }[],
-  { s, means, of }: OwnBedResiduals,
+  { s, means, residual, others: counts }: OwnBedResiduals,
 ): boolean[] {
   const alone = new Array<boolean>(shells.length).fill(false);
   const others = (shell: number) => {
-    const { residual, others: count } = of(shell);
-    return residual === null ? null : { mean: shells[shell].x - residual, variance: (s * s) / count };
+    const own = residual[shell];
+    return Number.isNaN(own) ? null : { mean: shells[shell].x - own, variance: (s * s) / counts[shell] };
   };
   const reversed = (lower: { mean: number; variance: number } | null, upper: typeof lower) =>
     lower !== null && upper !== null && upper.mean - lower.mean > 1.645 * Math.sqrt(lower.variance + upper.variance);

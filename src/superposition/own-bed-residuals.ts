@@ -21,12 +21,15 @@ export interface OwnBedResiduals {
   /** What is known of one shell, by its index; and of all, as a list that is made when it is asked for. */
   readonly of: (shell: number) => OwnBedResidual;
   readonly shells: readonly OwnBedResidual[];
-  /** Residual of every shell, NaN where unknown, in a plain list: a survey may hold a million shells. */
+  /** Residual of every shell, NaN where unknown, and the shells behind it, in plain lists: there may be a million. */
   readonly residual: Float64Array;
+  readonly others: Int32Array;
   /** p of one shell, NaN where unknown. */
   readonly p: (shell: number) => number;
   /** Whether that p is at most alpha/5. */
   readonly apart: (shell: number) => boolean;
+  /** As in {@link OwnBedResidual}. */
+  readonly odd: (shell: number) => boolean;
   readonly s: number;
   readonly df: number;
   /** Whether s comes from the shells themselves, not from the scatter to fall back on. */
@@ -108,7 +111,9 @@ export function ownBedResiduals(
           return shells.map((_, i) => of(i));
         },
         residual,
+        others,
         p,
+        odd: isOdd,
         apart: (i) => tail[i] <= alpha / 5,
         s,
         df,

@@ -244,7 +244,7 @@ function bedCounts(
   data.shells.forEach(({ bed }, i) => {
     if (excluded.has(i)) return;
     counts[bed].sound++;
-    if (residuals.of(i).odd) counts[bed].odd++;
+    if (residuals.odd(i)) counts[bed].odd++;
     if (proposed.has(i)) counts[bed].inCut++;
   });
   return counts;
