@@ -1,6 +1,7 @@
 import { pooledScatter } from './beds/index.js';
 import type { AminoAcid, BedRow, BedSite, Evidence, RelationRow, Shell } from './model/index.js';
 import type { Settled } from './passes.js';
+import { countRatios } from './screening/index.js';
 import { type AminoAcidDifference, type BedFacts, readReversedRelation } from './superposition/index.js';
 
 /** What the rows of relations.csv are made from. */
@@ -31,8 +32,8 @@ export function relationFindings(input: RelationFindingsInput): { rows: Relation
       const read = readReversedRelation({
         relation,
         check,
-        lower: facts.get(lower)!,
-        upper: facts.get(upper)!,
+        lower: facts(lower),
+        upper: facts(upper),
         differences: differencesOf(aminoAcids, bedAt.get(lower)!, bedAt.get(upper)!),
       });
       reading = read.reading;
@@ -45,7 +46,8 @@ export function relationFindings(input: RelationFindingsInput): { rows: Relation
   return { rows, evidence };
 }
 
-function factsOfBeds({ settled, shells, beds, sites }: RelationFindingsInput): Map<string, BedFacts> {
+/** What is known of a bed beside its ratios, looked up when it is asked for: reversed relations are few. */
+function factsOfBeds({ settled, shells, beds, sites }: RelationFindingsInput): (key: string) => BedFacts {
   const { data, relations, checks } = settled.last;
   const tally = new Map<string, { reversed: number; agrees: number }>(
     data.beds.map((bed) => [bed.key, { reversed: 0, agrees: 0 }]),
@@ -59,27 +61,25 @@ function factsOfBeds({ settled, shells, beds, sites }: RelationFindingsInput): M
     }
   });
   const rowOf = new Map(beds.map((bed) => [`${bed.section}/${bed.bed}`, bed]));
-  return new Map(
-    data.beds.map((bed) => {
-      const row = rowOf.get(bed.key)!;
-      const counts = tally.get(bed.key)!;
-      const serine = bed.shells.filter((at) => shells[data.shells[at].shell].serine_ratio !== null);
-      const facts: BedFacts = {
-        key: bed.key,
-        section: bed.section,
-        shells: bed.n,
-        zone: row.zone,
-        marks: row.marks,
-        // the relation that is being read is not one of the others
-        otherReversed: Math.max(0, counts.reversed - 1),
-        otherAgree: counts.agrees,
-        highSerine: bed.shells.filter((at) => settled.marks[at].some(({ mark }) => mark === 'high serine')).length,
-        serineMeasured: serine.length,
-        cmat_c: sites.get(bed.key)?.cmat_c ?? null,
-      };
-      return [bed.key, facts];
-    }),
-  );
+  const bedOf = new Map(data.beds.map((bed) => [bed.key, bed]));
+  return (key) => {
+    const bed = bedOf.get(key)!;
+    const row = rowOf.get(key)!;
+    const counts = tally.get(key)!;
+    return {
+      key,
+      section: bed.section,
+      shells: bed.n,
+      zone: row.zone,
+      marks: row.marks,
+      // the relation that is being read is not one of the others
+      otherReversed: Math.max(0, counts.reversed - 1),
+      otherAgree: counts.agrees,
+      highSerine: bed.shells.filter((at) => settled.marks[at].some(({ mark }) => mark === 'high serine')).length,
+      serineMeasured: bed.shells.filter((at) => shells[data.shells[at].shell].serine_ratio !== null).length,
+      cmat_c: sites.get(key)?.cmat_c ?? null,
+    };
+  };
 }
 
 /** Log ratios of the kept shells of each bed in one amino acid, and their pooled scatter. */
@@ -92,9 +92,10 @@ interface AminoAcidGroups {
 /** Nothing for a clock of one amino acid: the relation's own difference says it all. */
 function groupByAminoAcid({ settled, shells }: RelationFindingsInput): AminoAcidGroups[] {
   const { data } = settled.last;
-  const codes = new Set(data.shells.flatMap(({ shell }) => Object.keys(shells[shell].ratios) as AminoAcid[]));
-  if (codes.size < 2) return [];
-  return [...codes].map((amino_acid) => {
+  const counts = countRatios(data.shells.map(({ shell }) => shells[shell]));
+  const codes = [...counts].flatMap(([code, count]) => (count > 0 ? [code] : []));
+  if (codes.length < 2) return [];
+  return codes.map((amino_acid) => {
     const groups = data.beds.map((bed) =>
       // the slope of the clock stands in for that of each amino acid
       bed.shells.flatMap((at) => {

@@ -40,6 +40,9 @@ export interface ZoneSupport {
 /** Beds above which zones are so well known that fewer bootstraps do, and beds and shells take the fit's own zones. */
 const MANY_BEDS = 400;
 
+/** Beds above which one drawn sample is so like another that ten tell how they vary. */
+const VERY_MANY_BEDS = 1000;
+
 /** Beds a zone under which drawn samples miss it too often to say what is known of it. */
 const FEWEST_BEDS_TO_DRAW = 3;
 
@@ -142,7 +145,7 @@ interface BedMeans {
 function beginCounting({ values, errors }: BedMeans, zoning: Zoning, seed: number, host: Host) {
   const { mixtures } = zoning.choice;
   const weights = errors.map((se) => 1 / Math.max(se ** 2, 1e-12));
-  const options = { seed, most: mixtures.length, references: values.length > 1000 ? 20 : 100 };
+  const options = { seed, most: mixtures.length, references: values.length > VERY_MANY_BEDS ? 10 : 100 };
   const references = beginTasks(host, gapTasks(values, weights, options));
   return async (): Promise<Map<number, CountCriteria>> => {
     const gaps = gapFromReferences(values, weights, options, (await references()) as number[][][]);
@@ -160,7 +163,7 @@ function beginCounting({ values, errors }: BedMeans, zoning: Zoning, seed: numbe
 function drawingTasks({ data, zoning }: Pass, simulations: number, seed: number): Task[] {
   if (zoning === null || zoning.fit.k < 2) return [];
   const beds = zoning.beds.map((bed) => data.beds[bed]);
-  const repeats = Math.min(simulations, beds.length > MANY_BEDS ? 20 : 200);
+  const repeats = Math.min(simulations, beds.length > VERY_MANY_BEDS ? 10 : beds.length > MANY_BEDS ? 20 : 200);
   const residuals = beds.flatMap((bed) => {
     const kept = bed.shells.map((at) => data.shells[at]).filter((shell) => !shell.setAside);
     if (kept.length < 2) return [];

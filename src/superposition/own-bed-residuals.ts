@@ -177,7 +177,7 @@ const twoSided = (t: number, df: number): number => 2 * studentTCdf(-Math.abs(t)
 /** Whether at least half of the t that are known lie nearer to 0 than a limit. */
 function mostAreNear(t: Float64Array, limit: number): boolean {
   let balance = 0;
-  for (const value of t) if (!Number.isNaN(value)) balance += Math.abs(value) < limit ? 1 : -1;
+  for (let i = 0; i < t.length; i++) if (!Number.isNaN(t[i])) balance += Math.abs(t[i]) < limit ? 1 : -1;
   return balance >= 0;
 }
 

@@ -87,14 +87,14 @@ export function checkSections(
   if (!(simulations >= 1)) throw new RangeError(`checkSections: simulations must be at least 1, got ${simulations}`);
 
   // Sections of equally weighted beds share the weights of the mixture, which alone are simulated. These hardly hang on how
-  // the beds are weighted: weights are taken to a twentieth, which moves them by far less than the simulation leaves open.
+  // the beds are weighted: weights are taken to a tenth, which moves them by far less than the simulation leaves open.
   const mixtures = new Map<string, readonly number[]>();
   const mixtureOf = (weights: readonly number[]): readonly number[] => {
-    const steps = weights.map((weight) => Math.round(20 * Math.log(weight / weights[0])));
+    const steps = weights.map((weight) => Math.round(10 * Math.log(weight / weights[0])));
     const key = steps.join(' ');
     let known = mixtures.get(key);
     if (known === undefined) {
-      const rounded = steps.map((step) => Math.exp(step / 20));
+      const rounded = steps.map((step) => Math.exp(step / 10));
       known = simulateDistinct(rounded, random.fork(mixtures.size), simulations);
       mixtures.set(key, known);
     }

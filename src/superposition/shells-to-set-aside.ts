@@ -41,15 +41,16 @@ export interface ShellsToSetAside {
  */
 export function shellsToSetAside(conflicts: ShellConflicts, costs: readonly number[]): ShellsToSetAside {
   const { asLower, asUpper } = conflicts;
-  const involved = costs.map((_, index) => index).filter((index) => asLower[index] + asUpper[index] > 0);
+  const involved: number[] = [];
+  for (let index = 0; index < costs.length; index++) if (asLower[index] + asUpper[index] > 0) involved.push(index);
   if (involved.length === 0) return { shells: [], cost: 0, unique: true, inAll: [], inSome: [], alternative: null };
-  const thousandths = new Map<number, number>();
+  const thousandths = new Float64Array(costs.length);
   for (const index of involved) {
     const cost = costs[index];
     if (!(cost > 0 && cost < Number.POSITIVE_INFINITY)) {
       throw new RangeError(`shellsToSetAside: every cost must be above 0 and finite, got ${cost} for shell ${index}`);
     }
-    thousandths.set(index, Math.max(1, Math.round(1000 * cost)));
+    thousandths[index] = Math.max(1, Math.round(1000 * cost));
   }
   const network = buildNetwork(conflicts, involved, thousandths);
   const { flow } = maximumFlow(network.nodes, network.arcs, network.source, network.sink);
@@ -76,7 +77,7 @@ export function shellsToSetAside(conflicts: ShellConflicts, costs: readonly numb
     const half = keptIn(fromSource, place) ? upperHalf : lowerHalf;
     alternative = setAsideIn(residual.reachedFrom([network.source, half]));
   });
-  const cost = shells.reduce((sum, shell) => sum + (thousandths.get(shell) ?? 0), 0) / 1000;
+  const cost = shells.reduce((sum, shell) => sum + thousandths[shell], 0) / 1000;
   return { shells, cost, unique: inSome.length === 0, inAll, inSome, alternative };
 }
 
@@ -88,7 +89,7 @@ interface Network {
 }
 
 /** Nodes: lower half of the k-th shell 2k, its upper half 2k + 1, then the chains of the beds, source and sink. */
-function buildNetwork(conflicts: ShellConflicts, involved: readonly number[], cost: Map<number, number>): Network {
+function buildNetwork(conflicts: ShellConflicts, involved: readonly number[], cost: Float64Array): Network {
   const place = new Int32Array(conflicts.asLower.length);
   involved.forEach((shell, at) => {
     place[shell] = at;
@@ -125,7 +126,7 @@ function buildNetwork(conflicts: ShellConflicts, involved: readonly number[], co
   // Equal costs: the fewest shells. One unit a shell can never outweigh a thousandth of cost.
   const unit = involved.length + 1;
   involved.forEach((shell, at) => {
-    const limit = (cost.get(shell) ?? 0) * unit + 1;
+    const limit = cost[shell] * unit + 1;
     arc(source, 2 * at, limit);
     arc(2 * at + 1, sink, limit);
     arc(2 * at + 1, 2 * at, Number.POSITIVE_INFINITY);

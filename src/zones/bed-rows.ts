@@ -42,8 +42,7 @@ export function bedRows(input: BedRowInput): BedRow[] {
       place: place?.value ?? null,
       taxon: data.clock.taxon,
       shells: bed.n,
-      set_aside: bed.shells.filter((at) => data.shells[at].setAside).length,
-      ...ratioStatistics(bed, data, published.get(bed.key) ?? []),
+      ...ratioStatistics(bed, data, published.get(bed.key) ?? NONE),
       log_mean: bed.n > 0 ? bed.mean : null,
       log_se: bed.n > 0 ? bed.se : null,
       zone: assignment === null ? null : zoneName(assignment.zone),
@@ -57,20 +56,27 @@ export function bedRows(input: BedRowInput): BedRow[] {
   });
 }
 
-/** Mean, standard deviation between shells and standard error of D/L; a published summary joins with its own sd and n. */
+const NONE: readonly PublishedSummary[] = [];
+
+/**
+ * Shells set aside, and of the others mean, standard deviation between shells and standard error of D/L; a published summary
+ * joins with its own sd and n.
+ */
 function ratioStatistics(bed: ClockBed, data: ClockData, published: readonly PublishedSummary[]) {
-  const values = bed.shells.filter((at) => !data.shells[at].setAside).map((at) => Math.exp(data.shells[at].x));
+  const values: number[] = [];
+  for (const at of bed.shells) if (!data.shells[at].setAside) values.push(Math.exp(data.shells[at].x));
+  const set_aside = bed.shells.length - values.length;
   const single = data.clock.amino_acids.length === 1;
   const groups = single ? published.map(({ mean, sd, n }) => ({ mean, sd, n })) : [];
   // an index has no published mean of its own: its bed mean stands in
   if (!single && published.length > 0) groups.push({ mean: Math.exp(bed.mean), sd: null, n: bed.n - values.length });
   const n = values.length + groups.reduce((sum, group) => sum + group.n, 0);
-  if (n === 0) return { dl_mean: null, dl_sd: null, dl_se: null };
+  if (n === 0) return { set_aside, dl_mean: null, dl_sd: null, dl_se: null };
   const total = values.reduce((sum, value) => sum + value, 0) + groups.reduce((sum, g) => sum + g.n * g.mean, 0);
   const mean = total / n;
   let squares = values.reduce((sum, value) => sum + (value - mean) ** 2, 0);
   for (const group of groups) squares += group.n * (group.mean - mean) ** 2 + (group.n - 1) * (group.sd ?? 0) ** 2;
   const known = n > 1 && groups.every((group) => group.sd !== null || group.n === 1);
   const sd = known ? Math.sqrt(squares / (n - 1)) : null;
-  return { dl_mean: mean, dl_sd: sd, dl_se: sd === null ? null : sd / Math.sqrt(n) };
+  return { set_aside, dl_mean: mean, dl_sd: sd, dl_se: sd === null ? null : sd / Math.sqrt(n) };
 }
