@@ -1,6 +1,6 @@
 import { beginTasks } from './begin-tasks.js';
 import type { Pass, RunContext } from './clock-run.js';
-import type { Host, Task } from './model/index.js';
+import type { ClockBed, ClockData, Host, Task } from './model/index.js';
 import type { SettledZones } from './settle-zones.js';
 import type { Random } from './statistics/index.js';
 import {
@@ -164,23 +164,37 @@ function drawingTasks({ data, zoning }: Pass, simulations: number, seed: number)
   if (zoning === null || zoning.fit.k < 2) return [];
   const beds = zoning.beds.map((bed) => data.beds[bed]);
   const repeats = Math.min(simulations, beds.length > VERY_MANY_BEDS ? 10 : beds.length > MANY_BEDS ? 20 : 200);
-  const residuals = beds.flatMap((bed) => {
-    const kept = bed.shells.map((at) => data.shells[at]).filter((shell) => !shell.setAside);
-    if (kept.length < 2) return [];
-    const mean = kept.reduce((sum, shell) => sum + shell.x, 0) / kept.length;
-    return kept.map((shell) => (shell.x - mean) * Math.sqrt(kept.length / (kept.length - 1)));
-  });
   const { means, weights, tau } = zoning.fit;
   return stabilityTasks(
     {
       values: beds.map((bed) => bed.mean),
       errors: beds.map((bed) => bed.se),
       shells: beds.map((bed) => bed.n),
-      residuals,
+      residuals: scaledResiduals(data, beds),
       fit: { means, weights, tau },
       labels: zoning.labels,
       seed,
     },
     repeats,
   );
+}
+
+/** Residuals of the kept shells about their beds, scaled to the pooled scatter; a plain list, since threads are sent it. */
+function scaledResiduals({ shells }: ClockData, beds: readonly ClockBed[]): Float64Array {
+  const residuals = new Float64Array(shells.length);
+  let known = 0;
+  for (const bed of beds) {
+    let sum = 0;
+    let count = 0;
+    for (const at of bed.shells) {
+      if (shells[at].setAside) continue;
+      sum += shells[at].x;
+      count++;
+    }
+    if (count < 2) continue;
+    const mean = sum / count;
+    const scale = Math.sqrt(count / (count - 1));
+    for (const at of bed.shells) if (!shells[at].setAside) residuals[known++] = (shells[at].x - mean) * scale;
+  }
+  return residuals.subarray(0, known);
 }

@@ -24,7 +24,7 @@ export function writeCsv<Row>(
   columns: readonly CsvColumn<Row>[],
   rows: Iterable<Row>,
 ): void {
-  const cells = columns.map(({ shape }) => cellWriter(out, shape));
+  const cells = columns.map(({ shape }): LastCell => ({ shape, value: '', cell: '' }));
   out.text(`${columns.map((column) => textCell(column.header)).join(',')}\n`);
   let line = 1;
   for (const row of rows) {
@@ -33,7 +33,9 @@ export function writeCsv<Row>(
     try {
       for (; i < columns.length; i++) {
         if (i > 0) out.ascii(COMMA);
-        cells[i](columns[i].value(row));
+        const value = columns[i].value(row);
+        if (typeof value === 'string') writeText(out, cells[i], value);
+        else writeCell(out, cells[i].shape, value);
       }
     } catch (error) {
       throw new Error(`${name}, line ${line}, column ${columns[i].header}: ${(error as Error).message}`);
@@ -45,18 +47,19 @@ export function writeCsv<Row>(
 const COMMA = 44;
 const LINE_END = 10;
 
-/** Cells of one column; the same text often stands in row after row. */
-function cellWriter(out: TextOut, shape: AnyShape): (value: unknown) => void {
-  let last = '';
-  let cell = '';
-  return (value) => {
-    if (typeof value !== 'string') return writeCell(out, shape, value);
-    if (value !== last) {
-      last = value;
-      cell = textCell(value);
-    }
-    out.text(cell);
-  };
+/** The last text of a column and its cell: the same text often stands in row after row. */
+interface LastCell {
+  readonly shape: AnyShape;
+  value: string;
+  cell: string;
+}
+
+function writeText(out: TextOut, last: LastCell, value: string): void {
+  if (value !== last.value) {
+    last.value = value;
+    last.cell = textCell(value);
+  }
+  out.text(last.cell);
 }
 
 /** Columns that take each field of a row as it is. */

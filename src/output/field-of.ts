@@ -5,5 +5,12 @@
  * @param name A name from the descriptions of the tables, never from the input.
  */
 export function fieldOf(name: string): (row: object) => unknown {
-  return new Function('row', `return row[${JSON.stringify(name)}]`) as (row: object) => unknown;
+  let field = known.get(name);
+  if (field === undefined) {
+    field = new Function('row', `return row[${JSON.stringify(name)}]`) as (row: object) => unknown;
+    known.set(name, field);
+  }
+  return field;
 }
+
+const known = new Map<string, (row: object) => unknown>();

@@ -22,7 +22,7 @@ export function writeResultsJson(out: TextOut, findings: Findings): void {
     out.text(`${i === 0 ? '{' : ','}\n${JSON.stringify(name)}: `);
     try {
       if (shape.type === 'list') writeRows(out, name, shape.items, value as readonly unknown[]);
-      else writerOf(out, shape)(value);
+      else writeValue(out, patternOf(shape), value);
     } catch (error) {
       if (!(error instanceof Unwritable)) throw error;
       throw new Error(`results.json, ${name}${error.within.join('')}: ${error.message}`);
@@ -33,12 +33,12 @@ export function writeResultsJson(out: TextOut, findings: Findings): void {
 
 function writeRows(out: TextOut, name: string, shape: AnyShape, rows: readonly unknown[]): void {
   if (!Array.isArray(rows)) throw new Error(`results.json: a list of ${name} was wanted, ${rows} came`);
-  const write = writerOf(out, shape);
+  const pattern = patternOf(shape);
   let at = 0;
   try {
     for (; at < rows.length; at++) {
       out.text(at === 0 ? '[\n' : ',\n');
-      write(rows[at]);
+      writeValue(out, pattern, rows[at]);
     }
   } catch (error) {
     throw placed(error, `[${at}]`);
@@ -56,91 +56,121 @@ function placed(error: unknown, place: string): unknown {
   return error;
 }
 
-/** Writes a value of one shape. Made once a list, since a survey has a million rows. */
-type Writer = (value: unknown) => void;
-
-function writerOf(out: TextOut, shape: AnyShape): Writer {
-  const unknown: Writer = (value) => {
-    if (!shape.nullable) throw new Unwritable(`a ${shape.type} was wanted, ${value} came`);
-    out.text('null');
-  };
-  const known = knownWriter(out, shape, unknown);
-  return (value) => (value === null || value === undefined ? unknown(value) : known(value));
+/** A shape made ready for a million values. All patterns have the same fields, so that one function writes them fast. */
+interface Pattern {
+  readonly type: AnyShape['type'];
+  readonly nullable: boolean;
+  /** Most significant digits of a number. */
+  readonly digits: number;
+  /** Of a list or map. */
+  readonly items: Pattern | null;
+  /** Of an object. */
+  readonly fields: readonly FieldPattern[];
 }
 
-function knownWriter(out: TextOut, shape: AnyShape, unknown: Writer): Writer {
-  switch (shape.type) {
-    case 'number':
-    case 'integer': {
-      const digits = shape.type === 'integer' ? 15 : RESULTS_DIGITS;
-      return (value) => (Number.isFinite(value) ? writeNumber(out, value as number, digits) : unknown(value));
-    }
-    case 'list':
-      return listWriter(out, writerOf(out, shape.items));
-    case 'map':
-      return mapWriter(out, writerOf(out, shape.items));
-    case 'object':
-      return objectWriter(out, shape.fields);
-    case 'text':
-    case 'choice':
-      return (value) => (typeof value === 'string' ? out.json(value) : out.text(JSON.stringify(value)));
-    default:
-      return (value) => out.text(JSON.stringify(value));
-  }
+interface FieldPattern {
+  readonly name: string;
+  readonly field: (row: object) => unknown;
+  /** The key with what stands before it: as the first of its object, and further on. */
+  readonly first: Uint8Array;
+  readonly later: Uint8Array;
+  readonly optional: boolean;
+  readonly pattern: Pattern;
 }
 
-function listWriter(out: TextOut, write: Writer): Writer {
-  return (value) => {
-    const items = value as readonly unknown[];
-    out.text('[');
-    for (let at = 0; at < items.length; at++) {
-      if (at > 0) out.text(',');
-      write(items[at]);
-    }
-    out.text(']');
+function patternOf(shape: AnyShape): Pattern {
+  return {
+    type: shape.type,
+    nullable: shape.nullable === true,
+    digits: shape.type === 'integer' ? 15 : RESULTS_DIGITS,
+    items: shape.type === 'list' || shape.type === 'map' ? patternOf(shape.items) : null,
+    fields: shape.type === 'object' ? fieldPatterns(shape.fields) : [],
   };
 }
 
-function objectWriter(out: TextOut, fields: AnyFields): Writer {
-  const parts = Object.entries(fields).map(([name, shape]) => ({
+function fieldPatterns(fields: AnyFields): FieldPattern[] {
+  return Object.entries(fields).map(([name, shape]) => ({
     name,
     field: fieldOf(name),
     first: utf8(`{${JSON.stringify(name)}:`),
     later: utf8(`,${JSON.stringify(name)}:`),
     optional: shape.optional === true,
-    write: writerOf(out, shape),
+    pattern: patternOf(shape),
   }));
-  return (value) => {
-    let empty = true;
-    let at = 0;
-    try {
-      for (; at < parts.length; at++) {
-        const { field, first, later, optional, write } = parts[at];
-        const own = field(value as object);
-        if (optional && own === undefined) continue;
-        out.bytes(empty ? first : later);
-        empty = false;
-        write(own);
-      }
-    } catch (error) {
-      throw placed(error, `.${parts[at].name}`);
-    }
-    out.text(empty ? '{}' : '}');
-  };
 }
 
-function mapWriter(out: TextOut, write: Writer): Writer {
-  return (value) => {
-    let before = '{';
-    for (const [key, item] of Object.entries(value as Record<string, unknown>)) {
-      out.text(`${before}${JSON.stringify(key)}:`);
-      before = ',';
-      try {
-        write(item);
-      } catch (error) {
-        throw placed(error, `.${key}`);
-      }
+function writeValue(out: TextOut, pattern: Pattern, value: unknown): void {
+  if (value === null || value === undefined) {
+    writeUnknown(out, pattern, value);
+    return;
+  }
+  switch (pattern.type) {
+    case 'number':
+    case 'integer':
+      if (Number.isFinite(value)) writeNumber(out, value as number, pattern.digits);
+      else writeUnknown(out, pattern, value);
+      break;
+    case 'text':
+    case 'choice':
+      if (typeof value === 'string') out.json(value);
+      else out.text(JSON.stringify(value));
+      break;
+    case 'list':
+      writeList(out, pattern.items as Pattern, value as readonly unknown[]);
+      break;
+    case 'map':
+      writeMap(out, pattern.items as Pattern, value as Record<string, unknown>);
+      break;
+    case 'object':
+      writeObject(out, pattern.fields, value);
+      break;
+    default:
+      out.text(JSON.stringify(value));
+  }
+}
+
+function writeUnknown(out: TextOut, { type, nullable }: Pattern, value: unknown): void {
+  if (!nullable) throw new Unwritable(`a ${type} was wanted, ${value} came`);
+  out.text('null');
+}
+
+function writeList(out: TextOut, items: Pattern, values: readonly unknown[]): void {
+  out.text('[');
+  for (let at = 0; at < values.length; at++) {
+    if (at > 0) out.text(',');
+    writeValue(out, items, values[at]);
+  }
+  out.text(']');
+}
+
+function writeObject(out: TextOut, fields: readonly FieldPattern[], value: object): void {
+  let empty = true;
+  let at = 0;
+  try {
+    for (; at < fields.length; at++) {
+      const { field, first, later, optional, pattern } = fields[at];
+      const own = field(value);
+      if (optional && own === undefined) continue;
+      out.bytes(empty ? first : later);
+      empty = false;
+      writeValue(out, pattern, own);
     }
-    out.text(before === '{' ? '{}' : '}');
-  };
+  } catch (error) {
+    throw placed(error, `.${fields[at].name}`);
+  }
+  out.text(empty ? '{}' : '}');
+}
+
+function writeMap(out: TextOut, items: Pattern, value: Record<string, unknown>): void {
+  let before = '{';
+  for (const [key, item] of Object.entries(value)) {
+    out.text(`${before}${JSON.stringify(key)}:`);
+    before = ',';
+    try {
+      writeValue(out, items, item);
+    } catch (error) {
+      throw placed(error, `.${key}`);
+    }
+  }
+  out.text(before === '{' ? '{}' : '}');
 }

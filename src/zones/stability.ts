@@ -12,7 +12,7 @@ export interface BootstrapZonesArgument {
   readonly errors: readonly number[];
   readonly shells: readonly number[];
   /** Residuals of single shells about their beds, scaled to the pooled scatter; empty where only summaries are known. */
-  readonly residuals: readonly number[];
+  readonly residuals: ArrayLike<number>;
   /** The fit in use. */
   readonly fit: { readonly means: readonly number[]; readonly weights: readonly number[]; readonly tau: number };
   /** Most probable zone of each bed in that fit. */
@@ -80,7 +80,7 @@ function repeat({ values, errors, shells, residuals, fit, labels }: BootstrapZon
   return { jaccard, priors: priorsOf(fitMixture(asMeasured, drawnErrors, fit.means.length, quick)) };
 }
 
-function meanError(error: number, shells: number, residuals: readonly number[], random: Random): number {
+function meanError(error: number, shells: number, residuals: ArrayLike<number>, random: Random): number {
   if (residuals.length < 10) return error * random.normal();
   let sum = 0;
   for (let shell = 0; shell < shells; shell++) sum += residuals[random.integer(residuals.length)];
