@@ -74,6 +74,15 @@ export function runPass(
   random: Random,
   before?: Pass,
 ): Pass {
+  const pass = passMeans(context, clock, set, left, before);
+  return zonePass(context, pass, left, random, { before: before?.zoning?.choice });
+}
+
+/** A pass whose zones are still to be found. */
+export type PassToZone = Pick<Pass, 'data' | 'gradient' | 'relations'>;
+
+/** Bed means of one pass over one clock, and what is known of their order (design 7.1 and 7.2). */
+export function passMeans(context: RunContext, clock: Clock, set: ClockSet, left: LeftOut, before?: Pass): PassToZone {
   const { shells, summaries } = context;
   const imputation = clock.amino_acids.length > 1 ? set.index?.imputation : undefined;
   const input = {
@@ -85,35 +94,40 @@ export function runPass(
     imputation,
     before: before?.data,
   };
-  const plain = withLaboratoryErrors(clockData(input), shells, summaries, context.offsets);
-  return passOver(context, plain, left, random, before);
+  return withoutSlope(context, withLaboratoryErrors(clockData(input), shells, summaries, context.offsets), left);
 }
 
 /** Design 7.3 to 7.7 over bed means that still hold any slope along the gradient. */
-export function passOver(context: RunContext, plain: ClockData, left: LeftOut, random: Random, before?: Pass): Pass {
+export function passOver(context: RunContext, plain: ClockData, left: LeftOut, random: Random): Pass {
+  return zonePass(context, withoutSlope(context, plain, left), left, random);
+}
+
+function withoutSlope(context: RunContext, plain: ClockData, left: LeftOut): PassToZone {
   const gradient = context.gradient === null ? null : slopeOf(plain, context.gradient, left.mixed);
   const data = gradient === null ? plain : withSlope(plain, gradient);
-  const relations = relationsOf(context, data);
-  return zoneAndCheck(context, { data, gradient, relations }, left, random, { before: before?.zoning?.choice });
+  return { data, gradient, relations: relationsOf(context, data) };
 }
 
-/** The same pass with another choice of the number of zones, made on the same beds. */
-export function rezonePass(context: RunContext, pass: Pass, left: LeftOut, random: Random, choice: ModelChoice): Pass {
-  return zoneAndCheck(context, pass, left, random, { choice });
-}
+/** Parameters of the slope, counted beside those of every model. */
+export const slopeParameters = ({ gradient }: PassToZone): number => (gradient?.used ? 1 : 0);
 
-function zoneAndCheck(
+/**
+ * Zones of a pass, and its relations held against the ratios (design 7.3 to 7.7).
+ * @param known the choice among models where it was made on the same beds, or one on nearly the same
+ */
+export function zonePass(
   { options }: RunContext,
-  { data, gradient, relations }: Pick<Pass, 'data' | 'gradient' | 'relations'>,
+  pass: PassToZone,
   left: LeftOut,
   random: Random,
-  known: { readonly choice?: ModelChoice; readonly before?: ModelChoice },
+  known: { readonly choice?: ModelChoice; readonly before?: ModelChoice } = {},
 ): Pass {
+  const { data, gradient, relations } = pass;
   const zoning = findZones(data, {
     alpha: options.alpha,
     zones: data.clock.main ? options.zones : null,
     random: random.fork(1),
-    extraParameters: gradient?.used ? 1 : 0,
+    extraParameters: slopeParameters(pass),
     simulations: options.simulations,
     leaveOut: left.mixed,
     ...known,

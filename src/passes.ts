@@ -1,6 +1,17 @@
 import type { ClockSet } from './beds/index.js';
-import { type LeftOut, NOTHING, type Pass, type RunContext, runPass } from './clock-run.js';
-import type { AminoAcid, ScreeningMark } from './model/index.js';
+import { beginTasks } from './begin-tasks.js';
+import {
+  type LeftOut,
+  NOTHING,
+  type Pass,
+  type PassToZone,
+  passMeans,
+  type RunContext,
+  runPass,
+  slopeParameters,
+  zonePass,
+} from './clock-run.js';
+import type { AminoAcid, Host, ScreeningMark } from './model/index.js';
 import { AMINO_ACIDS } from './model/index.js';
 import { relationGraph } from './order/index.js';
 import { countRatios } from './screening/index.js';
@@ -9,11 +20,13 @@ import {
   bedsAbove,
   type MixedAge,
   mixedAgeBeds,
+  type ReadingsAhead,
+  readAhead,
   readShells,
   type ShellReadings,
   type ZoneToMatch,
 } from './superposition/index.js';
-import { zoneName } from './zones/index.js';
+import { choiceTask, type ModelChoice, zoneName } from './zones/index.js';
 
 /** Most passes before the tool says that it does not settle (design 7.9). */
 export const MOST_PASSES = 5;
@@ -27,6 +40,7 @@ export interface PassInput {
   readonly set: ClockSet;
   readonly screening: readonly ScreeningMark[];
   readonly random: Random;
+  readonly host: Host;
 }
 
 /** The passes over one clock once no shell's status changes any more. */
@@ -51,26 +65,30 @@ export interface Settled {
  * Repeats 7.1 to 7.9 until no shell's status changes, at most five times. The first pass uses all shells; each later one
  * leaves out those that the readings of the pass before set aside, so zones are found without them.
  */
-export function settlePasses({ context, set, screening, random }: PassInput): Settled {
+export async function settlePasses({ context, set, screening, random, host }: PassInput): Promise<Settled> {
   const byShell = new Map<number, ScreeningMark[]>();
   for (const mark of screening) {
     const own = byShell.get(mark.shell);
     if (own === undefined) byShell.set(mark.shell, [mark]);
     else own.push(mark);
   }
-  const first = runPass(context, set.main, set, NOTHING, random);
-  const marks = first.data.shells.map(({ shell }) => byShell.get(shell) ?? NO_MARKS);
-  const fixed = fixedParts(context, first);
+  const toZone = passMeans(context, set.main, set, NOTHING);
+  // another thread may choose among models while this one reads what does not hang on zones
+  const choosing = beginChoice(toZone, host);
+  const marks = toZone.data.shells.map(({ shell }) => byShell.get(shell) ?? NO_MARKS);
+  const fixed = fixedParts(context, toZone);
+  const reading = { ...fixed, marks, alpha: context.options.alpha };
+  let before: ReadingsAhead = readAhead({ data: toZone.data, zones: [], ...reading });
+  const first = zonePass(context, toZone, NOTHING, random, { choice: await choosing() });
   let last = first;
   let left = NOTHING;
-  let before: ShellReadings | undefined;
   let ages: MixedAge[] | null = null;
   let agesAssume: number | undefined;
   for (let passes = 1; ; passes++) {
     const zones = zonesToMatch(last);
     const { data } = last;
     const spread = last.zoning?.spread ?? 0;
-    const readings = readShells({ data, ...fixed, marks, zones, spread, alpha: context.options.alpha }, before);
+    const readings = readShells({ data, zones, spread, ...reading }, before);
     before = readings;
     const setAside = new Set(
       data.shells.flatMap(({ shell }, at) => (readings.shells[at].status === 'set aside' ? [shell] : [])),
@@ -92,6 +110,14 @@ export function settlePasses({ context, set, screening, random }: PassInput): Se
     left = next;
     last = runPass(context, set.main, set, left, random, last);
   }
+}
+
+/** Begins to choose among models for the beds of a pass; undefined where no bed has a mean. */
+function beginChoice(pass: PassToZone, host: Host): () => Promise<ModelChoice | undefined> {
+  const task = choiceTask(pass.data, slopeParameters(pass));
+  if (task === null) return async () => undefined;
+  const choosing = beginTasks(host, [task]);
+  return async () => ((await choosing()) as ModelChoice[])[0];
 }
 
 function sameSet<T>(a: ReadonlySet<T>, b: ReadonlySet<T>): boolean {
@@ -122,7 +148,7 @@ interface FixedParts {
   readonly above: readonly (readonly number[])[];
 }
 
-function fixedParts({ shells }: RunContext, { data, relations }: Pass): FixedParts {
+function fixedParts({ shells }: RunContext, { data, relations }: PassToZone): FixedParts {
   const counts = countRatios(data.shells.map(({ shell }) => shells[shell]));
   const aminoAcids = AMINO_ACIDS.filter((code) => counts.get(code)! > 0);
   // one amino acid has nothing to agree with

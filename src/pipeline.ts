@@ -59,7 +59,8 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
     options,
   };
   const random = createRandom(options.seed);
-  const runs = sets.map((set, at) => ({ set, settled: settleClock(set, random.fork(at)) }));
+  const runs: SettledClock[] = [];
+  for (const [at, set] of sets.entries()) runs.push({ set, settled: await settleClock(set, random.fork(at)) });
   const combined = combineAll(runs);
   const results: ClockResult[] = [];
   for (const [at, { run }] of combined.entries()) {
@@ -104,9 +105,9 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
   return { ...findings, remarks: remarks(findings), ...planOfRun(findings) };
 
   /** Passes over the main clock of one taxon and fraction. */
-  function settleClock(set: ClockSet, own: Random): Settled {
+  function settleClock(set: ClockSet, own: Random): Promise<Settled> {
     host.progress(`zones of ${set.main.name}`, 0);
-    return settlePasses({ context, set, screening, random: own.fork(1) });
+    return settlePasses({ context, set, screening, random: own.fork(1), host });
   }
 
   /** All taxa on the scale of the reference taxon, where one is asked for. */

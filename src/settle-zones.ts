@@ -1,4 +1,4 @@
-import { type RunContext, rezonePass } from './clock-run.js';
+import { type RunContext, zonePass } from './clock-run.js';
 import type { Host } from './model/index.js';
 import type { Settled } from './passes.js';
 import type { Random } from './statistics/index.js';
@@ -40,6 +40,6 @@ export async function settleZones(
   });
   const choice = { byBic, chosen, comparisons };
   if (chosen.bestZones === byBic.bestZones && chosen.verdict === byBic.verdict) return { settled, choice };
-  const last = rezonePass(context, settled.last, settled.left, random.fork(2), chosen);
+  const last = zonePass(context, settled.last, settled.left, random.fork(2), { choice: chosen });
   return { settled: { ...settled, last }, choice };
 }

@@ -1,6 +1,12 @@
 import type { Task } from './model/index.js';
 import { chainDraws } from './order/index.js';
-import { bootstrapLead, bootstrapLikelihoodRatio, bootstrapZones, gapReferences } from './zones/index.js';
+import {
+  bootstrapLead,
+  bootstrapLikelihoodRatio,
+  bootstrapZones,
+  chooseModelApart,
+  gapReferences,
+} from './zones/index.js';
 
 /** The pure functions that a host may run on workers, by name. */
 const TASKS: Readonly<Record<string, (argument: never) => unknown>> = {
@@ -8,6 +14,7 @@ const TASKS: Readonly<Record<string, (argument: never) => unknown>> = {
   bootstrapLikelihoodRatio,
   bootstrapZones,
   chainDraws,
+  chooseModelApart,
   gapReferences,
 };
 

@@ -9,8 +9,8 @@ export interface Batch {
   readonly answer: (index: number, result: unknown) => void;
   /** Ends the batch: no more tasks are taken, and `results` throws this. */
   readonly fail: (error: Error) => void;
-  /** Lets the threads of the pool take part; false where there are none. */
-  readonly share: () => boolean;
+  /** Lets the threads of the pool take part, so many as are wanted at least; false where there are none. */
+  readonly share: (wanted: number) => boolean;
   /** Tasks that nobody has taken. */
   readonly left: () => number;
   /** All results in order, once they are there. Throws what a task on a thread threw. */
@@ -65,8 +65,8 @@ export function createThreadPool(most: number): ThreadPool {
       },
       answer,
       fail,
-      share: () => {
-        start(Math.min(most, tasks.length - 1));
+      share: (wanted) => {
+        start(Math.min(most, wanted));
         if (threads.length === 0) return false;
         open.set(id, { hear, fail });
         const shared: SharedBatch = { batch: id, tasks, taken };

@@ -27,7 +27,7 @@ export function createWorkerHost(progress: Progress, workers = wantedWorkers()):
   const pool = createThreadPool(workers - 1);
   const begin = (tasks: readonly Task[], onDone: (done: number) => void = () => {}): TasksUnderWay => {
     const batch = pool.batch(tasks, onDone);
-    let shared = tasks.length > 1 && tasks[0].heavy === true && batch.share();
+    let shared = tasks[0]?.heavy === true && batch.share(tasks.length);
     return async () => {
       const { runTask } = await import('../tasks.js');
       const started = performance.now();
@@ -39,7 +39,7 @@ export function createWorkerHost(progress: Progress, workers = wantedWorkers()):
           batch.fail(error as Error);
         }
         const perTask = (performance.now() - started) / ++own;
-        if (!shared && batch.left() > 1 && batch.left() * perTask > WORTH_THREADS) shared = batch.share();
+        if (!shared && batch.left() > 1 && batch.left() * perTask > WORTH_THREADS) shared = batch.share(batch.left());
         // a signal, or the answer of a thread, is heard between tasks
         if (shared || perTask > 5) await new Promise(setImmediate);
       }

@@ -42,7 +42,14 @@ export { matchZone, type ZoneMatch, type ZoneToMatch } from './zone-match.js';
 export type { AminoAcidDifference, BedFacts, Explanation, ReversedRelation } from './explanations.js';
 export { type MixedAge, type MixedAgeOptions, mixedAgeBeds } from './mixed-age.js';
 export { readingOfShell } from './reading-of-shell.js';
-export { type ReadingInput, readShells, type ShellFinding, type ShellReadings } from './readings.js';
+export {
+  type ReadingInput,
+  type ReadingsAhead,
+  readAhead,
+  readShells,
+  type ShellFinding,
+  type ShellReadings,
+} from './readings.js';
 export { type RelationReading, readReversedRelation } from './relation-readings.js';
 export { confidenceOfReading, statusOfShell } from './shell-status.js';
 export { bestSplit, type Split } from './two-groups.js';

@@ -48,14 +48,18 @@ export interface ShellFinding {
 }
 
 /** Readings of all shells of one clock and what they rest on. */
-export interface ShellReadings {
+export interface ShellReadings extends ReadingsAhead {
   /** Same order as `data.shells`. */
   readonly shells: readonly ShellFinding[];
   readonly residuals: OwnBedResiduals;
-  readonly conflicts: ShellConflicts;
-  readonly toSetAside: ShellsToSetAside;
+}
+
+/** What readings rest on where no zone is known yet. */
+export interface ReadingsAhead {
   /** What does not hang on zones and relations. */
   readonly grounds: ShellGrounds;
+  readonly conflicts: ShellConflicts;
+  readonly toSetAside: ShellsToSetAside;
 }
 
 /** What readings rest on that zones and relations do not change: from one pass to the next it mostly stays. */
@@ -84,10 +88,10 @@ const DISAGREE = 0.01;
  * worked out anew from all shells; those that came in are not looked at, so the same beds, zones and relations give
  * the same answer.
  *
- * @param before Readings of the same shells from an earlier pass: what can't have changed is taken from them.
+ * @param before Readings of the same shells from an earlier pass, or ahead: what can't have changed is taken from them.
  * @throws RangeError when logs, marks or above do not match the clock's shells and beds.
  */
-export function readShells(input: ReadingInput, before?: ShellReadings): ShellReadings {
+export function readShells(input: ReadingInput, before?: ReadingsAhead): ShellReadings {
   const { data, logs, marks, above, zones, alpha = 0.05 } = input;
   if (logs.length !== data.shells.length || marks.length !== data.shells.length || above.length !== data.beds.length) {
     throw new RangeError(
@@ -168,11 +172,17 @@ export function readShells(input: ReadingInput, before?: ShellReadings): ShellRe
   return { shells, residuals, conflicts, toSetAside, grounds };
 }
 
+/** What {@link readShells} rests on, for it to go on from once zones are known. */
+export function readAhead(input: ReadingInput): ReadingsAhead {
+  const grounds = groundsOf(input);
+  return { grounds, ...conflictsOf(input, grounds) };
+}
+
 /** Conflicts with superposition and what would end them; those of an earlier pass where nothing else can come out. */
 function conflictsOf(
   { data, above, spread, alpha = 0.05 }: ReadingInput,
   grounds: ShellGrounds,
-  before?: ShellReadings,
+  before?: ReadingsAhead,
 ): Pick<ShellReadings, 'conflicts' | 'toSetAside'> {
   const { placed, excluded, residuals, marks } = grounds;
   // the spread counts between sections only

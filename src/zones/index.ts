@@ -9,6 +9,7 @@ export { bedRows } from './bed-rows.js';
 export { bootstrapP } from './bootstrap-rounds.js';
 export type { Criteria } from './choice-sentence.js';
 export { choiceSentence } from './choice-sentence.js';
+export { type ChoiceArgument, choiceTask, chooseModelApart } from './choice-task.js';
 export type { Comparison } from './compare-models.js';
 export type { Continuum } from './continuum.js';
 export { fitContinuum } from './continuum.js';
