@@ -14,23 +14,13 @@ export function notesOnShell({ readings, marks }: Settled, at: number): ShellNot
 
 const shellName = ({ section, bed, shell }: Shell): string => `${section}/${bed}/${shell}`;
 
-/** Shells above which nothing is said of those in a conflict that others are to blame for: tens of thousands of texts. */
-export const MOST_SHELLS_SPOKEN_OF = 20_000;
-
 /** What is held for or against each shell, in sentences. */
-export function shellEvidence({ last: { data }, readings, marks }: Settled, shells: readonly Shell[]): Evidence[] {
-  const evidence: Evidence[] = [];
-  const many = data.shells.length > MOST_SHELLS_SPOKEN_OF;
-  for (let at = 0; at < data.shells.length; at++) {
-    const finding = readings.shells[at];
-    const cleared = finding.status === 'kept' && finding.reading === 'none' && marks[at].length === 0;
-    if (many && cleared) continue;
-    const { sentences } = finding;
-    if (sentences.length === 0) continue;
-    const name = shellName(shells[data.shells[at].shell]);
-    evidence.push({ clock: data.clock.name, about: 'shell', name, sentences });
-  }
-  return evidence;
+export function shellEvidence({ last: { data }, readings }: Settled, shells: readonly Shell[]): Evidence[] {
+  return data.shells.flatMap(({ shell }, at) => {
+    const { sentences } = readings.shells[at];
+    if (sentences.length === 0) return [];
+    return [{ clock: data.clock.name, about: 'shell' as const, name: shellName(shells[shell]), sentences }];
+  });
 }
 
 /** The widest conflicts of single shells with superposition. */

@@ -43,6 +43,7 @@ export type { AminoAcidDifference, BedFacts, Explanation, ReversedRelation } fro
 export { type MixedAge, type MixedAgeOptions, mixedAgeBeds } from './mixed-age.js';
 export { readingOfShell } from './reading-of-shell.js';
 export {
+  MOST_SHELLS_SPOKEN_OF,
   type ReadingInput,
   type ReadingsAhead,
   readAhead,

@@ -43,8 +43,8 @@ export interface OwnBedResiduals {
 /** Degrees of freedom of the robust scatter under which it is not used; about 4 of the classical one. */
 const FEWEST_ROBUST = 2;
 
-/** Shells over alpha from which most need no p: Holm's rule makes 1 of all that are not small. */
-const MANY_SHELLS = 100;
+/** Shells tested over alpha from which most need no p: Holm's rule makes 1 of all that are not small. */
+const MANY_TESTED = 100;
 
 /**
  * Leave-one-out residuals of every shell from the other shells of its bed (design 7.9), with variance s²(1 + 1/n), s
@@ -77,13 +77,12 @@ export function ownBedResiduals(
   const enough = robust.df >= FEWEST_ROBUST;
   const { s, df } = enough ? robust : (options.fallback ?? { s: Number.NaN, df: 0 });
   const table = blankResiduals(shells.length);
-  const many = shells.length >= MANY_SHELLS / alpha && s > 0 && df > 0;
   // a hair less than where p is alpha/5
-  let near = many ? 0.999 * studentTQuantile(1 - alpha / 10, df) : 0;
+  let near = s > 0 && df > 0 && shells.length >= MANY_TESTED / alpha ? 0.999 * studentTQuantile(1 - alpha / 10, df) : 0;
   let changed = members;
   for (;;) {
     for (const bed of changed) measureBed(bed, shells, sound, { s, df, near }, table);
-    if (near > 0 && !mostAreNear(table.t, near)) {
+    if (near > 0 && !farAreFew(table.t, near, MANY_TESTED / alpha)) {
       near = 0;
       changed = members;
       continue;
@@ -174,11 +173,16 @@ function measureBed(
 
 const twoSided = (t: number, df: number): number => 2 * studentTCdf(-Math.abs(t), df);
 
-/** Whether at least half of the t that are known lie nearer to 0 than a limit. */
-function mostAreNear(t: Float64Array, limit: number): boolean {
-  let balance = 0;
-  for (let i = 0; i < t.length; i++) if (!Number.isNaN(t[i])) balance += Math.abs(t[i]) < limit ? 1 : -1;
-  return balance >= 0;
+/** Whether many shells were tested, at least half of which lie nearer to their beds than a limit. */
+function farAreFew(t: Float64Array, limit: number, many: number): boolean {
+  let tested = 0;
+  let far = 0;
+  for (let i = 0; i < t.length; i++) {
+    if (Number.isNaN(t[i])) continue;
+    tested++;
+    if (Math.abs(t[i]) >= limit) far++;
+  }
+  return tested >= many && 2 * far <= tested;
 }
 
 /** The shell of a bed that stands furthest off among those that fit; -1 where none does. */

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import type { ScreeningMark } from '../../src/model/index.js';
 import { createRandom } from '../../src/statistics/index.js';
-import { type ReadingInput, readShells } from '../../src/superposition/index.js';
+import { MOST_SHELLS_SPOKEN_OF, type ReadingInput, readShells } from '../../src/superposition/index.js';
 import { type OddShell, smallCoast } from './small-coast.js';
 
 const MARKS = ['high serine', 'low yield', 'discordant ratios', 'rate order'] as const;
@@ -119,5 +119,41 @@ describe('readShells on many small coasts', () => {
         if (status === 'doubtful' || status === 'set aside') expect(sentences.length).toBeGreaterThan(0);
       });
     }
+  });
+});
+
+describe('readShells of very many shells', () => {
+  /** The same coast in a survey of so many shells: those that are added are of a bed beside it, and nothing was measured on them. */
+  const among = (input: ReadingInput, count: number): ReadingInput => {
+    const { shells } = input.data;
+    const blank = Array.from({ length: count - shells.length }, (_, at) => shells.length + at);
+    return {
+      ...input,
+      data: {
+        ...input.data,
+        shells: [...shells, ...blank.map((shell) => ({ shell, bed: 5, x: Number.NaN, setAside: false }))],
+        beds: [...input.data.beds, { ...input.data.beds[4], key: 'C/1', section: 'C', bed: '1' }],
+      },
+      logs: [...input.logs, ...blank.map(() => [Number.NaN, Number.NaN, Number.NaN])],
+      marks: [...input.marks, ...blank.map(() => [])],
+      above: [...input.above, []],
+    };
+  };
+
+  it('speaks up to 20,000 of all that stand in a conflict, above that of those that are not cleared', () => {
+    let cleared = 0;
+    for (const seed of [1, 3, 9, 11, 27]) {
+      const input = drawCoast(seed);
+      const count = input.data.shells.length;
+      const few = readShells(input).shells;
+      expect(readShells(among(input, MOST_SHELLS_SPOKEN_OF)).shells.slice(0, count)).toEqual(few);
+      const many = readShells(among(input, MOST_SHELLS_SPOKEN_OF + 1)).shells;
+      few.forEach((shell, at) => {
+        const isCleared = shell.status === 'kept' && shell.reading === 'none' && input.marks[at].length === 0;
+        if (isCleared && shell.sentences.length > 0) cleared++;
+        expect(many[at]).toEqual(isCleared ? { ...shell, sentences: [] } : shell);
+      });
+    }
+    expect(cleared).toBeGreaterThan(5);
   });
 });
