@@ -1,5 +1,5 @@
 import type { RunContext } from './clock-run.js';
-import type { BedMark, BedSite, Evidence } from './model/index.js';
+import type { BedMark, BedSite, ClockBed, Evidence } from './model/index.js';
 import type { Settled } from './passes.js';
 import { screenBeds } from './screening/index.js';
 import { isNearEquilibrium, type Zoning } from './zones/index.js';
@@ -18,8 +18,7 @@ export function bedMarks(
       .flatMap(({ lower, upper }) => [lower, upper]),
   );
   const marks = new Map<string, BedMark[]>(beds.map((bed) => [bed.key, []]));
-  const toScreen = beds.map((bed) => ({ burial_m: sites.get(bed.key)?.burial_m ?? null, shells: bed.n }));
-  for (const { bed, mark } of screenBeds(toScreen, options.screening)) marks.get(beds[bed].key)!.push(mark);
+  for (const { bed, mark } of screenedBeds(beds, sites, options)) marks.get(beds[bed].key)!.push(mark);
   const inSection = new Map<string, number>();
   for (const bed of beds) inSection.set(bed.section, (inSection.get(bed.section) ?? 0) + 1);
   for (const bed of beds) {
@@ -40,20 +39,26 @@ export function bedEvidence(
   sites: ReadonlyMap<string, BedSite>,
   options: RunContext['options'],
 ): Evidence[] {
-  const screened = screenBeds(
-    data.beds.map((bed) => ({ burial_m: sites.get(bed.key)?.burial_m ?? null, shells: bed.n })),
-    options.screening,
-  );
-  const screenedBy = data.beds.map((): string[] => []);
-  for (const { bed, evidence } of screened) screenedBy[bed].push(sentence(evidence));
+  const screened = data.beds.map((): string[] => []);
+  for (const { bed, evidence } of screenedBeds(data.beds, sites, options)) screened[bed].push(sentence(evidence));
   return data.beds.flatMap((bed, at) => {
-    const sentences = [...ages[at].sentences, ...screenedBy[at]];
+    const sentences = [...ages[at].sentences, ...screened[at]];
     if (marks.get(bed.key)?.includes('near equilibrium')) {
       sentences.push('Its ratio is near equilibrium, where older and younger beds come to look alike.');
     }
     return sentences.length === 0 ? [] : [{ clock: data.clock.name, about: 'bed' as const, name: bed.key, sentences }];
   });
 }
+
+const screenedBeds = (
+  beds: readonly ClockBed[],
+  sites: ReadonlyMap<string, BedSite>,
+  { screening }: RunContext['options'],
+) =>
+  screenBeds(
+    beds.map((bed) => ({ burial_m: sites.get(bed.key)?.burial_m ?? null, shells: bed.n })),
+    screening,
+  );
 
 const sentence = (text: string): string =>
   `${text.charAt(0).toUpperCase()}${text.slice(1)}${text.endsWith('.') ? '' : '.'}`;

@@ -45,8 +45,7 @@ export interface ClockFindingsInput {
   readonly context: RunContext;
   readonly set: ClockSet;
   readonly settled: Settled;
-  /** Null where no bed has a mean. */
-  /** Under way on other threads, where there are any. */
+  /** Under way on other threads, where there are any; null where no bed has a mean. */
   readonly order: () => Promise<ClockOrder | null>;
   readonly singles: readonly Pass[];
   readonly sites: readonly BedSite[];

@@ -1,5 +1,4 @@
 import type { ClockSet } from './beds/index.js';
-import { beginTasks } from './begin-tasks.js';
 import {
   type LeftOut,
   NOTHING,
@@ -11,6 +10,7 @@ import {
   slopeParameters,
   zonePass,
 } from './clock-run.js';
+import { beginTasks } from './model/begin-tasks.js';
 import type { AminoAcid, Host, ScreeningMark } from './model/index.js';
 import { AMINO_ACIDS } from './model/index.js';
 import { relationGraph } from './order/index.js';
@@ -78,7 +78,7 @@ export async function settlePasses({ context, set, screening, random, host }: Pa
   const marks = toZone.data.shells.map(({ shell }) => byShell.get(shell) ?? NO_MARKS);
   const fixed = fixedParts(context, toZone);
   const reading = { ...fixed, marks, alpha: context.options.alpha };
-  let before: ReadingsAhead = readAhead({ data: toZone.data, zones: [], ...reading });
+  let before: ReadingsAhead | undefined = readAhead({ data: toZone.data, zones: [], ...reading });
   const first = zonePass(context, toZone, NOTHING, random, { choice: await choosing() });
   let last = first;
   let left = NOTHING;

@@ -1,5 +1,5 @@
-import { beginTasks } from './begin-tasks.js';
 import type { Pass, RunContext } from './clock-run.js';
+import { beginTasks } from './model/begin-tasks.js';
 import type { ClockBed, ClockData, Host, Task } from './model/index.js';
 import type { SettledZones } from './settle-zones.js';
 import type { Random } from './statistics/index.js';
@@ -78,17 +78,15 @@ export async function beginSupport(
   const counting = beginCounting(beds, zoning, random.fork(3).integer(2 ** 31), host);
   const drawing = beginTasks(host, drawingTasks(last, options.simulations, random.fork(4).integer(2 ** 31)));
   const fitsOwn = beds.values.length > MANY_BEDS || zoning.fit.k < 2 || smallestZone(zoning) < FEWEST_BEDS_TO_DRAW;
-  let drawn: BootstrapZones[] | null = null;
-  const bootstrapped = async () => {
+  const drawn = async () => {
     host.progress(`stability of ${name}`, 0);
-    drawn ??= ((await drawing()) as BootstrapZones[][]).flat();
-    return drawn;
+    return ((await drawing()) as BootstrapZones[][]).flat();
   };
-  const draws = fitsOwn ? [] : await bootstrapped();
-  const assign: ZoneSupport['assign'] = draws.length === 0 ? zoneAssigner(zoning.priors) : assignerOverDraws(draws);
+  const draws = fitsOwn ? null : await drawn();
+  const assign: ZoneSupport['assign'] = draws?.length ? assignerOverDraws(draws) : zoneAssigner(zoning.priors);
   const whole = async (): Promise<ZoneSupport> => {
     const criteria = await counting();
-    const bootstraps = await bootstrapped();
+    const bootstraps = draws ?? (await drawn());
     return {
       criteria,
       bootstraps,

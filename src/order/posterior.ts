@@ -1,3 +1,4 @@
+import { beginTasks } from '../model/begin-tasks.js';
 import type { Host, TaskMapper } from '../model/index.js';
 import { effectiveSampleSize, splitRHat } from '../statistics/index.js';
 import type { ChainDraws } from './chain-draws.js';
@@ -68,7 +69,7 @@ export function beginPosterior(model: OrderModel, options: PosteriorOptions): ()
       return { name: 'chainDraws', argument, heavy: beds * draws * thinning > HEAVY };
     });
   const onDone = (done: number) => onProgress?.(done / chains);
-  const first = options.begin?.(tasks(1), onDone) ?? (() => map(tasks(1), onDone));
+  const first = beginTasks(options, tasks(1), onDone);
   return async () => {
     let drawn = await first();
     for (let thinning = 1; ; thinning *= 2) {

@@ -24,7 +24,7 @@ export function writeCsv<Row>(
   columns: readonly CsvColumn<Row>[],
   rows: Iterable<Row>,
 ): void {
-  const cells = columns.map(({ shape }): LastCell => ({ shape, value: '', cell: '' }));
+  const last = columns.map((): LastCell => ({ value: '', cell: '' }));
   out.text(`${columns.map((column) => textCell(column.header)).join(',')}\n`);
   let line = 1;
   for (const row of rows) {
@@ -33,9 +33,10 @@ export function writeCsv<Row>(
     try {
       for (; i < columns.length; i++) {
         if (i > 0) out.ascii(COMMA);
-        const value = columns[i].value(row);
-        if (typeof value === 'string') writeText(out, cells[i], value);
-        else writeCell(out, cells[i].shape, value);
+        const { shape, value: take } = columns[i];
+        const value = take(row);
+        if (typeof value === 'string') writeText(out, last[i], value);
+        else writeCell(out, shape, value);
       }
     } catch (error) {
       throw new Error(`${name}, line ${line}, column ${columns[i].header}: ${(error as Error).message}`);
@@ -49,7 +50,6 @@ const LINE_END = 10;
 
 /** The last text of a column and its cell: the same text often stands in row after row. */
 interface LastCell {
-  readonly shape: AnyShape;
   value: string;
   cell: string;
 }

@@ -36,11 +36,11 @@ export function sampleTruncatedNormal(random: Random, mean: number, sd: number, 
   return Math.min(Math.max(value, low), high);
 }
 
-function refuse(mean: number, sd: number, low: number, high: number): never {
+/** Says which of them is wrong; apart, since draws are made by the million. */
+function refuse(mean: number, sd: number, low: number, high: number): void {
   requireThat(sd > 0 && sd < Infinity, 'sampleTruncatedNormal', 'sd above 0', sd);
   requireThat(Number.isFinite(mean), 'sampleTruncatedNormal', 'a finite mean', mean);
-  const wanted = 'low at most high, and something between them';
-  throw new RangeError(`sampleTruncatedNormal needs ${wanted}, got ${low}, ${high}`);
+  requireThat(false, 'sampleTruncatedNormal', 'low at most high, and something between them', low, high);
 }
 
 /** A standard normal cut to [a, b] with a < 0 < b. */

@@ -178,8 +178,9 @@ export function readShells(input: ReadingInput, before?: ReadingsAhead): ShellRe
   return { shells, residuals, conflicts, toSetAside, grounds };
 }
 
-/** What {@link readShells} rests on, for it to go on from once zones are known. */
-export function readAhead(input: ReadingInput): ReadingsAhead {
+/** What {@link readShells} rests on, for it to go on from once zones are known; undefined where it would not stay. */
+export function readAhead(input: ReadingInput): ReadingsAhead | undefined {
+  if (input.data.slope !== 0 || !withinSections(input)) return undefined;
   const grounds = groundsOf(input);
   return { grounds, ...conflictsOf(input, grounds) };
 }
@@ -191,10 +192,7 @@ function conflictsOf(
   before?: ReadingsAhead,
 ): Pick<ShellReadings, 'conflicts' | 'toSetAside'> {
   const { placed, excluded, residuals, marks } = grounds;
-  // the spread counts between sections only
-  const withinSections = () =>
-    data.beds.every(({ section }, bed) => above[bed].every((upper) => data.beds[upper].section === section));
-  if (before !== undefined && before.grounds === grounds && withinSections()) return before;
+  if (before !== undefined && before.grounds === grounds && withinSections({ data, above })) return before;
   const conflicts = findShellConflicts(
     // Shells that screening sets aside settle their conflicts by themselves.
     excluded.size === 0 ? placed : placed.map((shell, i) => (excluded.has(i) ? { ...shell, x: Number.NaN } : shell)),
@@ -209,6 +207,10 @@ function conflictsOf(
   });
   return { conflicts, toSetAside: shellsToSetAside(conflicts, costs) };
 }
+
+/** Whether no bed lies above one of another section: the spread counts between sections only. */
+const withinSections = ({ data: { beds }, above }: Pick<ReadingInput, 'data' | 'above'>): boolean =>
+  beds.every(({ section }, bed) => above[bed].every((upper) => beds[upper].section === section));
 
 /** The finding of a shell against which nothing speaks, as of most. */
 const PLAIN: ShellFinding = Object.freeze({ status: 'kept', reading: 'none', confidence: null, sentences: [] });

@@ -49,7 +49,7 @@ export function robustScatter(beds: readonly (readonly number[])[]): RobustScatt
   for (let turn = 0; turn < 200; turn++) {
     let squares = 0;
     df = 0;
-    const { atZero, growth } = soundness(s);
+    const odds = oddsOfOdd(s);
     for (let bed = 0; bed < beds.length; bed++) {
       // about the last mean, so that no digits are lost
       const about = means[bed];
@@ -58,7 +58,7 @@ export function robustScatter(beds: readonly (readonly number[])[]): RobustScatt
       let sumOfSquares = 0;
       for (let at = start[bed]; at < start[bed + 1]; at++) {
         const off = values[at] - about;
-        const weight = 1 / (1 + atZero * Math.exp(growth * off * off));
+        const weight = soundness(off, odds);
         total += weight;
         sum += weight * off;
         sumOfSquares += weight * off * off;
@@ -87,11 +87,17 @@ function endToEnd(beds: readonly (readonly number[])[]): { values: Float64Array;
   return { values, start };
 }
 
-/**
- * A shell a deviation d off its bed is sound with probability 1/(1 + r), r the ratio of the densities, odd to sound:
- * atZero · exp(growth · d²).
- */
-function soundness(s: number): { readonly atZero: number; readonly growth: number } {
+/** The ratio of the densities, odd to sound, a deviation d off the bed is atZero · exp(growth · d²). */
+interface Odds {
+  readonly atZero: number;
+  readonly growth: number;
+}
+
+/** Probability that a shell this far off its bed is sound: 1/(1 + ratio of the densities). */
+const soundness = (deviation: number, { atZero, growth }: Odds): number =>
+  1 / (1 + atZero * Math.exp(growth * deviation * deviation));
+
+function oddsOfOdd(s: number): Odds {
   const wide = Math.hypot(s, ODD_SPREAD);
   return {
     atZero: ODD_SHARE / wide / ((1 - ODD_SHARE) / s),
@@ -101,12 +107,11 @@ function soundness(s: number): { readonly atZero: number; readonly growth: numbe
 
 /** Share of the variance of sound shells that the weights leave: E[w z²] / E[w] for a standard normal z. */
 function varianceLeft(s: number): number {
-  const { atZero, growth } = soundness(s);
+  const odds = oddsOfOdd(s);
   let weights = 0;
   let squares = 0;
   for (let z = 0.05; z < 7; z += 0.1) {
-    const off = z * s;
-    const mass = (1 / (1 + atZero * Math.exp(growth * off * off))) * Math.exp(-0.5 * z * z);
+    const mass = soundness(z * s, odds) * Math.exp(-0.5 * z * z);
     weights += mass;
     squares += mass * z * z;
   }

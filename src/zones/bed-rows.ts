@@ -31,10 +31,10 @@ export function bedRows(input: BedRowInput): BedRow[] {
     const key = `${summary.section}/${summary.bed}`;
     published.set(key, [...(published.get(key) ?? []), summary]);
   }
-  const zoneOf = input.assign ?? (zoning === null ? null : zoneAssigner(zoning.priors));
+  const zoneOf = zoning === null ? null : (input.assign ?? zoneAssigner(zoning.priors));
   return data.beds.map((bed) => {
     const { place, marks, reading } = notes(bed);
-    const assignment = zoning === null || zoneOf === null || bed.n === 0 ? null : zoneOf(bed.mean, bed.se);
+    const assignment = zoneOf === null || bed.n === 0 ? null : zoneOf(bed.mean, bed.se);
     return {
       clock: data.clock.name,
       section: bed.section,

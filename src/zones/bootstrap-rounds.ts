@@ -1,4 +1,5 @@
 import type { Task, TaskMapper } from '../model/index.js';
+import { sharedOut } from './shared-out.js';
 
 /** A bootstrap p-value and the number of simulations behind it. */
 export interface BootstrapP {
@@ -34,10 +35,7 @@ export async function bootstrapInRounds({ observed, level, simulations, task, ma
   const drawn: number[] = [];
   while (drawn.length < simulations) {
     const round = Math.min(drawn.length === 0 ? FIRST_ROUND : LATER_ROUND, simulations - drawn.length);
-    const tasks: Task[] = [];
-    for (let at = 0; at < round; at += REPEATS_A_TASK) {
-      tasks.push(task(drawn.length + at, Math.min(REPEATS_A_TASK, round - at)));
-    }
+    const tasks = sharedOut(round, REPEATS_A_TASK).map(({ first, repeats }) => task(drawn.length + first, repeats));
     drawn.push(...((await map(tasks)) as number[][]).flat());
     const distance = Math.abs(bootstrapP(observed, drawn) - level);
     if (distance > 3 * Math.sqrt((level * (1 - level)) / drawn.length)) break;

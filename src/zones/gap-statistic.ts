@@ -1,6 +1,7 @@
 import type { Task } from '../model/index.js';
 import { createRandom } from '../statistics/index.js';
 import { partitionCosts } from './partition.js';
+import { sharedOut } from './shared-out.js';
 
 /** How much tighter the groups are than those of values spread evenly. */
 export interface Gap {
@@ -82,9 +83,8 @@ export function gapTasks(values: readonly number[], weights: readonly number[], 
   const low = Math.min(...values);
   const common = { low, range: Math.max(...values) - low, weights, most: mostGroups(values, options), seed };
   const size = Math.ceil(references / TASKS);
-  return Array.from({ length: Math.ceil(references / size) }, (_, at) => {
-    const first = at * size;
-    const argument: GapReferencesArgument = { ...common, first, references: Math.min(size, references - first) };
+  return sharedOut(references, size).map(({ first, repeats }) => {
+    const argument: GapReferencesArgument = { ...common, first, references: repeats };
     return { name: 'gapReferences', argument, heavy: size * values.length > HEAVY };
   });
 }

@@ -24,11 +24,11 @@ export function shellRows(
   notes: (at: number) => ShellNotes,
   assign?: (x: number, error: number) => Assignment,
 ): ShellRow[] {
-  const zoneOf = assign ?? (zoning === null ? null : zoneAssigner(zoning.priors));
+  const zoneOf = zoning === null ? null : (assign ?? zoneAssigner(zoning.priors));
   return data.shells.map((clockShell, at) => {
     const shell = shells[clockShell.shell];
     const x = clockShell.x - data.slope * data.beds[clockShell.bed].gradient;
-    const assignment = zoning === null || zoneOf === null ? null : zoneOf(x, data.scatter.s);
+    const assignment = zoneOf === null ? null : zoneOf(x, data.scatter.s);
     const { status, marks, reading, confidence } = notes(at);
     return {
       clock: data.clock.name,

@@ -2,6 +2,7 @@ import type { Task } from '../model/index.js';
 import { createRandom, type Random } from '../statistics/index.js';
 import { type Assignment, assignmentOf, type ZonePriors, zoneAssigner } from './assignment.js';
 import { fitMixture, type Mixture } from './mixture.js';
+import { sharedOut } from './shared-out.js';
 import { unbiasedSpread } from './zone-errors.js';
 import { bestLabels } from './zoning.js';
 
@@ -110,10 +111,9 @@ const HEAVY = 5000;
  */
 export function stabilityTasks(argument: Omit<BootstrapZonesArgument, 'first' | 'repeats'>, repeats = 200): Task[] {
   const size = Math.max(1, Math.min(REPEATS_A_TASK, Math.ceil(repeats / TASKS)));
-  return Array.from({ length: Math.ceil(repeats / size) }, (_, at) => {
-    const first = at * size;
-    const own = { ...argument, first, repeats: Math.min(size, repeats - first) };
-    return { name: 'bootstrapZones', argument: own, heavy: size * argument.values.length > HEAVY };
+  return sharedOut(repeats, size).map((part) => {
+    const heavy = size * argument.values.length > HEAVY;
+    return { name: 'bootstrapZones', argument: { ...argument, ...part }, heavy };
   });
 }
 
