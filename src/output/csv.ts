@@ -1,4 +1,3 @@
-import { fieldOf } from './field-of.js';
 import { writeNumber } from './number-text.js';
 import type { AnyFields, AnyShape } from './shape.js';
 import { type TextOut, textOf } from './text-out.js';
@@ -64,7 +63,7 @@ function writeText(out: TextOut, last: LastCell, value: string): void {
 
 /** Columns that take each field of a row as it is. */
 export function plainColumns(fields: AnyFields): CsvColumn<Readonly<Record<string, unknown>>>[] {
-  return Object.entries(fields).map(([header, shape]) => ({ header, shape, value: fieldOf(header) }));
+  return Object.entries(fields).map(([header, shape]) => ({ header, shape, value: (row) => row[header] }));
 }
 
 /**

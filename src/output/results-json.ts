@@ -1,5 +1,4 @@
 import type { Findings } from '../model/index.js';
-import { fieldOf } from './field-of.js';
 import { FINDINGS_FIELDS } from './findings-fields.js';
 import { writeNumber } from './number-text.js';
 import type { AnyFields, AnyShape } from './shape.js';
@@ -70,7 +69,6 @@ interface Pattern {
 
 interface FieldPattern {
   readonly name: string;
-  readonly field: (row: object) => unknown;
   /** The key with what stands before it: as the first of its object, and further on. */
   readonly first: Uint8Array;
   readonly later: Uint8Array;
@@ -91,7 +89,6 @@ function patternOf(shape: AnyShape): Pattern {
 function fieldPatterns(fields: AnyFields): FieldPattern[] {
   return Object.entries(fields).map(([name, shape]) => ({
     name,
-    field: fieldOf(name),
     first: utf8(`{${JSON.stringify(name)}:`),
     later: utf8(`,${JSON.stringify(name)}:`),
     optional: shape.optional === true,
@@ -148,8 +145,8 @@ function writeObject(out: TextOut, fields: readonly FieldPattern[], value: objec
   let at = 0;
   try {
     for (; at < fields.length; at++) {
-      const { field, first, later, optional, pattern } = fields[at];
-      const own = field(value);
+      const { name, first, later, optional, pattern } = fields[at];
+      const own = (value as Record<string, unknown>)[name];
       if (optional && own === undefined) continue;
       out.bytes(empty ? first : later);
       empty = false;
