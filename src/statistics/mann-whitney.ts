@@ -79,21 +79,34 @@ function exactTails(ranks: readonly number[], n1: number, n2: number, u: number)
   const own = n1 <= n2;
   const doubled = ranks.map((rank) => 2 * rank).sort((x, y) => x - y);
   const unit = doubled.every((rank) => rank % 2 === 0) ? 2 : 1;
-  const ways = waysToDeal(
-    doubled.map((rank) => rank / unit),
-    size,
-  );
-  const lowest = doubled.slice(0, size).reduce((sum, rank) => sum + rank, 0);
+  const sorted = doubled.map((rank) => rank / unit);
+  const lowest = sumOf(sorted.slice(0, size));
+  const span = sumOf(sorted.slice(-size)) - lowest;
   const uOfSize = own ? u : n1 * n2 - u;
-  const at = (2 * uOfSize + size * (size + 1) - lowest) / unit;
-  let below = 0;
-  let above = 0;
-  for (let t = 0; t < ways.length; t++) {
-    if (t <= at) below += ways[t];
-    if (t >= at) above += ways[t];
-  }
-  const all = below + above - ways[at];
-  return own ? { pLess: below / all, pGreater: above / all } : { pLess: above / all, pGreater: below / all };
+  const at = (2 * uOfSize + size * (size + 1)) / unit - lowest;
+  // The nearer tail is counted, from its own end, and the farther one is what is left: few deals lie beyond a large U.
+  const fromBelow = at <= span - at;
+  const top = sorted[sorted.length - 1] + sorted[0];
+  const ways = fromBelow
+    ? waysToDeal(sorted, size, at)
+    : waysToDeal(sorted.map((rank) => top - rank).reverse(), size, span - at);
+  const all = choices(n1 + n2, size);
+  const near = Math.min(1, sumOf(ways) / all);
+  const far = Math.min(1, 1 - near + ways[ways.length - 1] / all);
+  return fromBelow === own ? { pLess: near, pGreater: far } : { pLess: far, pGreater: near };
+}
+
+function sumOf(values: ArrayLike<number>): number {
+  let sum = 0;
+  for (let i = 0; i < values.length; i++) sum += values[i];
+  return sum;
+}
+
+/** Number of ways to choose `size` of n, rounded where it is above 2⁵³. */
+function choices(n: number, size: number): number {
+  let ways = 1;
+  for (let i = 1; i <= size; i++) ways = (ways * (n - size + i)) / i;
+  return ways;
 }
 
 /** U and its normal tails by a merge of the two sorted groups, since large groups would take long to rank together. */

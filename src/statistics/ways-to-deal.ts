@@ -5,16 +5,18 @@
  *
  * @param sorted whole numbers in increasing order
  * @param size how many to choose, 0 to all
+ * @param most entries above this are not wanted, and not worked out. Default: all are
  * @example
  * ```ts
  * [...waysToDeal([1, 2, 3, 4], 2)]; // => [1, 1, 2, 1, 1]
  * ```
  */
-export function waysToDeal(sorted: readonly number[], size: number): Float64Array {
+export function waysToDeal(sorted: readonly number[], size: number, most = Number.POSITIVE_INFINITY): Float64Array {
   const n = sorted.length;
   const widths: number[] = [0];
   for (let j = 1; j <= size; j++) widths.push(widths[j - 1] + sorted[n - j] - sorted[j - 1]);
-  const ways = widths.map((width) => new Float64Array(width + 1));
+  // sums only grow as values are added, so what lies above stays above
+  const ways = widths.map((width) => new Float64Array(Math.min(width, most) + 1));
   ways[0][0] = 1;
   // Largest sum above the smallest reached so far, for each number of values chosen.
   const reached = new Array<number>(size + 1).fill(-1);

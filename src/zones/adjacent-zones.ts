@@ -1,5 +1,5 @@
 import type { AdjacentVerdict } from '../model/index.js';
-import { mannWhitney, normalCdf, quantile, type Random, studentTCdf } from '../statistics/index.js';
+import { type MannWhitney, mannWhitney, normalCdf, quantile, type Random, studentTCdf } from '../statistics/index.js';
 
 /** Overlap of two equal normals whose ±1 standard deviation ranges just touch: 2Φ(−1). */
 export const TOUCHING_OVERLAP = 0.31731050786291415;
@@ -10,8 +10,6 @@ export interface ZoneForTest {
   readonly mean: number;
   readonly se: number;
   readonly df: number;
-  /** Log ratios of the single shells kept in the zone's beds; empty where only summaries are published. */
-  readonly shells: readonly number[];
   /** Number of shells behind the zone, published ones included. */
   readonly count: number;
 }
@@ -31,8 +29,6 @@ export interface NeighbourOptions {
 export interface NeighbourTest {
   readonly difference: number;
   readonly p_difference: number;
-  readonly mann_whitney_u: number | null;
-  readonly p_mann_whitney: number | null;
   readonly overlap: number;
   readonly overlap_low: number;
   readonly overlap_high: number;
@@ -58,7 +54,6 @@ export function testNeighbours(older: ZoneForTest, younger: ZoneForTest, options
   const se = Math.hypot(older.se, younger.se);
   const df = se ** 4 / (older.se ** 4 / older.df + younger.se ** 4 / younger.df);
   const p = se > 0 ? 2 * studentTCdf(-Math.abs(difference) / se, df) : difference === 0 ? 1 : 0;
-  const ranks = older.shells.length > 0 && younger.shells.length > 0 ? mannWhitney(older.shells, younger.shells) : null;
   const overlap = equalOverlap(difference, shellSd);
   const drawn = Array.from({ length: simulations }, () => {
     const scale = scatterDf > 0 ? Math.sqrt(scatterDf / (2 * random.gamma(scatterDf / 2))) : 1;
@@ -69,8 +64,6 @@ export function testNeighbours(older: ZoneForTest, younger: ZoneForTest, options
   return {
     difference,
     p_difference: p,
-    mann_whitney_u: ranks?.u ?? null,
-    p_mann_whitney: ranks?.p ?? null,
     overlap,
     overlap_low: low,
     overlap_high: high,
@@ -83,6 +76,15 @@ export function testNeighbours(older: ZoneForTest, younger: ZoneForTest, options
     if (lower > TOUCHING_OVERLAP || !differs) return 'not distinct';
     return value <= TOUCHING_OVERLAP ? 'distinct' : 'not resolved';
   }
+}
+
+/**
+ * Mann–Whitney U of the log ratios of the shells of two zones, the older one first. It decides nothing, and is worked out
+ * for zones that are reported.
+ * @returns null where only summaries are known of a zone
+ */
+export function rankTest(older: readonly number[], younger: readonly number[]): MannWhitney | null {
+  return older.length > 0 && younger.length > 0 ? mannWhitney(older, younger) : null;
 }
 
 /** Overlap coefficient of two normals of one standard deviation, `difference` apart. */

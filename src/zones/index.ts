@@ -1,5 +1,5 @@
 export type { NeighbourOptions, NeighbourTest, ZoneForTest } from './adjacent-zones.js';
-export { equalOverlap, smallestRankP, TOUCHING_OVERLAP, testNeighbours } from './adjacent-zones.js';
+export { equalOverlap, rankTest, smallestRankP, TOUCHING_OVERLAP, testNeighbours } from './adjacent-zones.js';
 export type { VoteOptions, VotingClock } from './amino-acid-votes.js';
 export { aminoAcidVotes } from './amino-acid-votes.js';
 export type { Assignment, ZonePriors } from './assignment.js';

@@ -1,5 +1,6 @@
 import type { AdjacentZonesRow, ClockData, ZoneCountRow, ZoneRow } from '../model/index.js';
 import { studentTQuantile } from '../statistics/index.js';
+import { rankTest } from './adjacent-zones.js';
 import { type Assignment, zoneAssigner } from './assignment.js';
 import type { Zoning } from './zoning.js';
 
@@ -79,7 +80,30 @@ export function zoneCountRows(
 
 /** Rows of adjacent_zones.csv for one clock, the oldest pair first. */
 export function adjacentZonesRows(data: ClockData, zoning: Zoning): AdjacentZonesRow[] {
+  const shells = shellsOfZones(data, zoning);
   return zoning.neighbours
-    .map((test, j) => ({ clock: data.clock.name, older: zoneName(j + 1), younger: zoneName(j), ...test }))
+    .map((test, j) => {
+      const ranks = rankTest(shells[j + 1], shells[j]);
+      return {
+        clock: data.clock.name,
+        older: zoneName(j + 1),
+        younger: zoneName(j),
+        ...test,
+        mann_whitney_u: ranks?.u ?? null,
+        p_mann_whitney: ranks?.p ?? null,
+      };
+    })
     .reverse();
+}
+
+/** Log ratios, at no gradient, of the shells kept in the beds of each zone. */
+function shellsOfZones({ beds, shells, slope }: ClockData, zoning: Zoning): number[][] {
+  const ratios: number[][] = zoning.fit.means.map(() => []);
+  zoning.beds.forEach((index, at) => {
+    const bed = beds[index];
+    for (const shell of bed.shells) {
+      if (!shells[shell].setAside) ratios[zoning.labels[at]].push(shells[shell].x - slope * bed.gradient);
+    }
+  });
+  return ratios;
 }

@@ -122,14 +122,9 @@ function testAll(data: ClockData, beds: readonly number[], fit: Mixture, options
   const { se, df } = zoneErrors(fit, errors, data.scatter.df, values);
   const labels = bestLabels(fit, beds.length);
   const zones = fit.means.map((mean, j): ZoneForTest => {
-    const members = beds.filter((_, at) => labels[at] === j).map((index) => data.beds[index]);
-    const shells = members.flatMap((bed) =>
-      bed.shells
-        .map((at) => data.shells[at])
-        .filter((shell) => !shell.setAside)
-        .map((shell) => shell.x - data.slope * data.beds[shell.bed].gradient),
-    );
-    return { mean, se: se[j], df: df[j], shells, count: members.reduce((sum, bed) => sum + bed.n, 0) };
+    let count = 0;
+    for (let at = 0; at < beds.length; at++) if (labels[at] === j) count += data.beds[beds[at]].n;
+    return { mean, se: se[j], df: df[j], count };
   });
   const shellSd = Math.hypot(data.scatter.s, fit.tau);
   return fit.means.slice(1).map((_, j) =>

@@ -126,6 +126,8 @@ describe('what it rests on', () => {
         const ways = waysToDeal(frozen(sorted), size);
         expect([...ways]).toEqual(Array.from(ways, (_, t) => sums.filter((sum) => sum - lowest === t).length));
         expect(ways.reduce((total, w) => total + w, 0)).toBe(sums.length);
+        const half = Math.floor((ways.length - 1) / 2);
+        expect([...waysToDeal(sorted, size, half)]).toEqual([...ways.slice(0, half + 1)]);
       }),
     );
   });

@@ -99,10 +99,13 @@ describe('zoneCountRows', () => {
 describe('adjacentZonesRows', () => {
   it('has each pair of neighbours, the oldest first', () => {
     const [only] = zoning.neighbours;
-    const rows = adjacentZonesRows(data, { ...zoning, neighbours: [only, { ...only, difference: 9 }] });
-    expect(rows).toEqual([
-      { clock, older: 'Z3', younger: 'Z2', ...only, difference: 9 },
-      { clock, older: 'Z2', younger: 'Z1', ...only },
+    const means = [...zoning.fit.means, 0];
+    const three = { ...zoning, fit: { ...zoning.fit, means }, neighbours: [only, { ...only, difference: 9 }] };
+    // the highest zone of the three has no shell, as where only summaries are known
+    const ranks = { mann_whitney_u: 400, p_mann_whitney: expect.closeTo(1.451e-11, 14) };
+    expect(adjacentZonesRows(data, three)).toEqual([
+      { clock, older: 'Z3', younger: 'Z2', ...only, difference: 9, mann_whitney_u: null, p_mann_whitney: null },
+      { clock, older: 'Z2', younger: 'Z1', ...only, ...ranks },
     ]);
   });
 });
