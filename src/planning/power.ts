@@ -43,6 +43,31 @@ export interface ResolvingRule {
  * ```
  */
 export function resolvingPower(design: PairDesign, rule: ResolvingRule = {}): number {
+  const { df, chance } = atFoundScatter(design, rule);
+  if (!(df >= 1)) return 0;
+  return df > 1e4 ? chance(1) : meanOverScatter(chance, df);
+}
+
+/** Chance that a scatter is found so small that {@link powerReaches} sets it aside: e to the power of minus this. */
+const SET_ASIDE = 7;
+
+/**
+ * Whether {@link resolvingPower} is `wanted` or more. Most designs that fall short are told at once: the smaller the scatter
+ * a survey finds, the more it resolves, so its power is at most what it has at a scatter that is very rarely undercut, and
+ * that rare chance beside it.
+ *
+ * Source: tail of χ², P(χ²/df ≤ 1 − 2√(x/df)) ≤ e⁻ˣ, Laurent and Massart 2000, Annals of Statistics 28, 1302–1338,
+ * 10.1214/aos/1015957395, lemma 1.
+ */
+export function powerReaches(design: PairDesign, wanted: number, rule: ResolvingRule = {}): boolean {
+  const { df, chance } = atFoundScatter(design, rule);
+  const rarelyBelow = Math.sqrt(Math.max(0, 1 - 2 * Math.sqrt(SET_ASIDE / df)));
+  if (df >= 1 && chance(rarelyBelow) + Math.exp(-SET_ASIDE) < wanted) return false;
+  return resolvingPower(design, rule) >= wanted;
+}
+
+/** Degrees of freedom of the scatter, and the chance to resolve the pair where it is found to be `share` of the true one. */
+function atFoundScatter(design: PairDesign, rule: ResolvingRule): { df: number; chance: (share: number) => number } {
   const { gap, scatter, shells, fixedVariance = 0, spreadVariance = 0 } = design;
   const alpha = rule.alpha ?? 0.05;
   if (!(scatter > 0)) throw new RangeError(`resolvingPower: scatter must be above 0, got ${scatter}`);
@@ -51,23 +76,33 @@ export function resolvingPower(design: PairDesign, rule: ResolvingRule = {}): nu
   }
   if (!(alpha > 0 && alpha < 1)) throw new RangeError(`resolvingPower: alpha must lie between 0 and 1, got ${alpha}`);
   const df = design.df === 'own' ? shells[0] + shells[1] - 2 : (design.df ?? Number.POSITIVE_INFINITY);
+  if (!(df >= 1)) return { df, chance: () => 0 };
   const p = 1 - alpha / (rule.sides ?? 1);
-  if (!(df >= 1)) return 0;
   const limit = resolvingLimit(p, df);
   const fromSpread = normalQuantile(p) ** 2 * spreadVariance;
   const sampling = scatter * scatter * (1 / shells[0] + 1 / shells[1]);
   const noise = Math.sqrt(sampling + fixedVariance);
-  /** Chance at a scatter found to be `share` of the true one. */
-  const atScatter = (share: number) =>
+  const chance = (share: number) =>
     normalCdf(
       (Math.abs(gap) - Math.sqrt(limit ** 2 * (sampling * share * share + fixedVariance) + fromSpread)) / noise,
     );
-  return df > 1e4 ? atScatter(1) : meanOverScatter(atScatter, df);
+  return { df, chance };
 }
+
+/** Limits found before. The same few degrees of freedom come up for pair after pair, and a quantile is slow to find. */
+const limits = new Map<string, number>();
 
 /** Standard errors by which two means must differ to be resolved at probability p: of Student's t, or the normal. */
 export function resolvingLimit(p: number, df: number): number {
-  return df < 1e4 ? studentTQuantile(p, df) : normalQuantile(p);
+  if (df >= 1e4) return normalQuantile(p);
+  const key = `${p} ${df}`;
+  let limit = limits.get(key);
+  if (limit === undefined) {
+    limit = studentTQuantile(p, df);
+    if (limits.size >= 1000) limits.clear();
+    limits.set(key, limit);
+  }
+  return limit;
 }
 
 /** Mean of a function of w, where w is a standard deviation found on df degrees of freedom over the true one. */

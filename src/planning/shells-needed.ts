@@ -1,5 +1,5 @@
 import { normalQuantile } from '../statistics/index.js';
-import { type PairDesign, type ResolvingRule, resolvingPower } from './power.js';
+import { type PairDesign, powerReaches, type ResolvingRule, resolvingPower } from './power.js';
 
 /** What {@link shellsNeeded} may assume and spend. */
 export interface ShellsNeededOptions extends ResolvingRule {
@@ -58,14 +58,17 @@ export function shellsNeeded(design: PairDesign, options: ShellsNeededOptions = 
   if (!(wanted > 0 && wanted < 1)) {
     throw new RangeError(`shellsNeeded: the power asked for must lie between 0 and 1, got ${wanted}`);
   }
+  const designWith = (more: readonly [number, number]): PairDesign => ({
+    ...design,
+    shells: [design.shells[0] + more[0], design.shells[1] + more[1]],
+    df: typeof design.df === 'number' ? design.df + more[0] + more[1] : design.df,
+    spreadVariance: options.spreadVarianceAfter?.(more) ?? design.spreadVariance,
+  });
   const powerWith = (total: number) => {
     const more = dealOut(design.shells, total);
-    const shells: [number, number] = [design.shells[0] + more[0], design.shells[1] + more[1]];
-    const df = typeof design.df === 'number' ? design.df + total : design.df;
-    const spreadVariance = options.spreadVarianceAfter?.(more) ?? design.spreadVariance;
-    return { more, power: resolvingPower({ ...design, shells, df, spreadVariance }, options) };
+    return { more, power: resolvingPower(designWith(more), options) };
   };
-  const enough = (total: number) => powerWith(total).power >= wanted;
+  const enough = (total: number) => powerReaches(designWith(dealOut(design.shells, total)), wanted, options);
   const top = Math.max(0, most - design.shells[0]) + Math.max(0, most - design.shells[1]);
   if (enough(0)) return powerWith(0);
   if (options.spreadVarianceAfter) {

@@ -1,6 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { chanceFromHere, resolvingPower } from '../../src/planning/power.js';
+import { chanceFromHere, powerReaches, resolvingPower } from '../../src/planning/power.js';
 import { shellsInEach, shellsNeeded } from '../../src/planning/shells-needed.js';
 import { createRandom, normalQuantile, studentTQuantile } from '../../src/statistics/index.js';
 
@@ -55,6 +55,38 @@ describe('resolvingPower', () => {
     expect(() => resolvingPower({ gap: 1, scatter: 0, shells: [3, 3] })).toThrow(/scatter must be above 0, got 0/);
     expect(() => resolvingPower({ gap: 1, scatter: 1, shells: [0, 3] })).toThrow(/needs a shell/);
     expect(() => resolvingPower({ gap: 1, scatter: 1, shells: [3, 3] }, { alpha: 2 })).toThrow(/alpha/);
+  });
+});
+
+describe('powerReaches', () => {
+  it('is what the power itself says, wherever it lies', () => {
+    let reached = 0;
+    let missed = 0;
+    fc.assert(
+      fc.property(
+        fc.double({ min: 0, max: 0.5, noNaN: true }),
+        fc.integer({ min: 1, max: 30 }),
+        fc.integer({ min: 1, max: 30 }),
+        fc.oneof(fc.integer({ min: 1, max: 400 }), fc.constant(Number.POSITIVE_INFINITY)),
+        fc.double({ min: 0, max: 0.01, noNaN: true }),
+        fc.double({ min: 0, max: 0.01, noNaN: true }),
+        fc.double({ min: -0.02, max: 0.02, noNaN: true }),
+        (gap, a, b, df, fixedVariance, spreadVariance, beside) => {
+          const design = { gap, scatter: 0.07, shells: [a, b] as const, df, fixedVariance, spreadVariance };
+          const power = resolvingPower(design);
+          // near the power, where it is hardest to tell, and at the usual one
+          for (const wanted of [power + beside, 0.8]) {
+            const found = powerReaches(design, wanted);
+            expect(found).toBe(power >= wanted);
+            if (found) reached++;
+            else missed++;
+          }
+        },
+      ),
+      { seed: 5, numRuns: 500 },
+    );
+    expect(Math.min(reached, missed)).toBeGreaterThan(100);
+    expect(powerReaches({ gap: 1, scatter: 1, shells: [1, 1], df: 'own' }, 0.01)).toBe(false);
   });
 });
 
