@@ -1,5 +1,6 @@
 import type { Findings } from '../model/index.js';
 import { FINDINGS_FIELDS } from './findings-fields.js';
+import { LikeLast } from './like-last.js';
 import { writeNumber } from './number-text.js';
 import type { AnyFields, AnyShape } from './shape.js';
 import { type TextOut, utf8 } from './text-out.js';
@@ -33,16 +34,38 @@ export function writeResultsJson(out: TextOut, findings: Findings): void {
 function writeRows(out: TextOut, name: string, shape: AnyShape, rows: readonly unknown[]): void {
   if (!Array.isArray(rows)) throw new Error(`results.json: a list of ${name} was wanted, ${rows} came`);
   const pattern = patternOf(shape);
+  // rows with all their fields are written like the one before them
+  const whole =
+    pattern.type === 'object' && pattern.fields.length > 0 && pattern.fields.every((field) => !field.optional);
+  const likeLast = whole ? new LikeLast(out, leadsOf(pattern.fields), utf8('}')) : null;
   let at = 0;
   try {
     for (; at < rows.length; at++) {
       out.text(at === 0 ? '[\n' : ',\n');
-      writeValue(out, pattern, rows[at]);
+      const row = rows[at];
+      if (likeLast && typeof row === 'object' && row !== null) writeRow(likeLast, out, pattern.fields, row);
+      else writeValue(out, pattern, row);
     }
   } catch (error) {
     throw placed(error, `[${at}]`);
   }
   out.text(rows.length === 0 ? '[]' : '\n]');
+}
+
+const leadsOf = (fields: readonly FieldPattern[]) => fields.map(({ first, later }, i) => (i === 0 ? first : later));
+
+function writeRow(likeLast: LikeLast, out: TextOut, fields: readonly FieldPattern[], row: object): void {
+  likeLast.begin();
+  let at = 0;
+  try {
+    for (; at < fields.length; at++) {
+      const value = (row as Record<string, unknown>)[fields[at].name];
+      if (!likeLast.same(at, value)) writeValue(out, fields[at].pattern, value);
+    }
+  } catch (error) {
+    throw placed(error, `.${fields[at].name}`);
+  }
+  likeLast.end();
 }
 
 /** A value that its shape does not allow, and the fields it stands in. */
@@ -65,6 +88,8 @@ interface Pattern {
   readonly items: Pattern | null;
   /** Of an object. */
   readonly fields: readonly FieldPattern[];
+  /** Of an object that may lack any of its fields. */
+  readonly sparse: boolean;
 }
 
 interface FieldPattern {
@@ -77,12 +102,14 @@ interface FieldPattern {
 }
 
 function patternOf(shape: AnyShape): Pattern {
+  const fields = shape.type === 'object' ? fieldPatterns(shape.fields) : [];
   return {
     type: shape.type,
     nullable: shape.nullable === true,
     digits: shape.type === 'integer' ? 15 : RESULTS_DIGITS,
     items: shape.type === 'list' || shape.type === 'map' ? patternOf(shape.items) : null,
-    fields: shape.type === 'object' ? fieldPatterns(shape.fields) : [],
+    fields,
+    sparse: fields.length > 0 && fields.every(({ optional }) => optional),
   };
 }
 
@@ -119,7 +146,7 @@ function writeValue(out: TextOut, pattern: Pattern, value: unknown): void {
       writeMap(out, pattern.items as Pattern, value as Record<string, unknown>);
       break;
     case 'object':
-      writeObject(out, pattern.fields, value);
+      writeObject(out, pattern, value);
       break;
     default:
       out.text(JSON.stringify(value));
@@ -140,14 +167,17 @@ function writeList(out: TextOut, items: Pattern, values: readonly unknown[]): vo
   out.text(']');
 }
 
-function writeObject(out: TextOut, fields: readonly FieldPattern[], value: object): void {
+function writeObject(out: TextOut, { fields, sparse }: Pattern, value: object): void {
   let empty = true;
   let at = 0;
+  // once all that a sparse object has is written, the rest is not looked for
+  let left = sparse ? Object.keys(value).length : fields.length;
   try {
-    for (; at < fields.length; at++) {
+    for (; at < fields.length && left > 0; at++) {
       const { name, first, later, optional, pattern } = fields[at];
       const own = (value as Record<string, unknown>)[name];
       if (optional && own === undefined) continue;
+      left--;
       out.bytes(empty ? first : later);
       empty = false;
       writeValue(out, pattern, own);
@@ -161,7 +191,9 @@ function writeObject(out: TextOut, fields: readonly FieldPattern[], value: objec
 function writeMap(out: TextOut, items: Pattern, value: Record<string, unknown>): void {
   let before = '{';
   for (const [key, item] of Object.entries(value)) {
-    out.text(`${before}${JSON.stringify(key)}:`);
+    out.text(before);
+    out.json(key);
+    out.text(':');
     before = ',';
     try {
       writeValue(out, items, item);

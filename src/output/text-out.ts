@@ -9,6 +9,9 @@ const ROOM = 128 * 1024;
 /** Characters up to which a text is copied here; longer ones are worth a call of the encoder. */
 const SHORT = 48;
 
+/** Bytes up to which a loop copies faster than a call. */
+const FEW = 32;
+
 /**
  * Text on its way to a file, gathered as UTF-8 bytes and given on in pieces of some hundred kilobytes. A survey has millions
  * of cells; as strings, each would be made, joined, copied and thrown away.
@@ -17,6 +20,8 @@ export class TextOut {
   /** What is gathered: bytes 0 to `at`. Writers of numbers put theirs here after asking for room. */
   room = new Uint8Array(ROOM);
   at = 0;
+  /** Number of the piece that is gathered: what is in `room` before `at` stays there until this changes. */
+  piece = 0;
 
   /** @param give Takes the bytes; they are good until it returns. */
   constructor(private readonly give: (bytes: Uint8Array) => void) {}
@@ -38,6 +43,15 @@ export class TextOut {
     const { room, at } = this;
     for (let i = 0; i < bytes.length; i++) room[at + i] = bytes[i];
     this.at = at + bytes.length;
+  }
+
+  /** Bytes that stand in this piece already, from one place in it to another; a row of a table at most. */
+  again(from: number, to: number): void {
+    this.need(to - from);
+    const { room, at } = this;
+    if (to - from > FEW) room.copyWithin(at, from, to);
+    else for (let i = from; i < to; i++) room[at + i - from] = room[i];
+    this.at = at + to - from;
   }
 
   text(text: string): void {
@@ -69,6 +83,7 @@ export class TextOut {
   flush(): void {
     if (this.at > 0) this.give(this.room.subarray(0, this.at));
     this.at = 0;
+    this.piece++;
   }
 
   /** Copies a short text of characters below U+0080; false, and nothing copied, where others are in it. */
