@@ -43,7 +43,7 @@ export interface OwnBedResiduals {
 /** Degrees of freedom of the robust scatter under which it is not used; about 4 of the classical one. */
 const FEWEST_ROBUST = 2;
 
-/** Shells tested over alpha from which most need no p: Holm's rule makes 1 of all that are not small. */
+/** Shells tested over alpha from which most need no p. */
 const MANY_TESTED = 100;
 
 /**
@@ -77,12 +77,16 @@ export function ownBedResiduals(
   const enough = robust.df >= FEWEST_ROBUST;
   const { s, df } = enough ? robust : (options.fallback ?? { s: Number.NaN, df: 0 });
   const table = blankResiduals(shells.length);
-  // a hair less than where p is alpha/5
-  let near = s > 0 && df > 0 && shells.length >= MANY_TESTED / alpha ? 0.999 * studentTQuantile(1 - alpha / 10, df) : 0;
+  const scattered = s > 0 && df > 0;
+  const far = scattered ? studentTQuantile(1 - alpha / 10, df) : Number.POSITIVE_INFINITY;
+  // A hair less than where p is 4 over the shells. Where half of them were tested, and half of those or more lie nearer,
+  // Holm's rule multiplies the p of any that does by a quarter of the shells at least, and makes 1 of it.
+  const many = Math.max(MANY_TESTED / alpha, shells.length / 2);
+  let near = scattered && shells.length >= many ? 0.999 * studentTQuantile(1 - 2 / shells.length, df) : 0;
   let changed = members;
   for (;;) {
     for (const bed of changed) measureBed(bed, shells, sound, { s, df, near }, table);
-    if (near > 0 && !farAreFew(table.t, near, MANY_TESTED / alpha)) {
+    if (near > 0 && !farAreFew(table.t, near, many)) {
       near = 0;
       changed = members;
       continue;
@@ -113,7 +117,7 @@ export function ownBedResiduals(
         others,
         p,
         odd: isOdd,
-        apart: (i) => tail[i] <= alpha / 5,
+        apart: (i) => Math.abs(t[i]) >= far,
         s,
         df,
         robust: enough,

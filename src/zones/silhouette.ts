@@ -13,9 +13,9 @@ export function meanSilhouette(values: readonly number[], labels: readonly numbe
   if (values.length !== labels.length) {
     throw new RangeError(`meanSilhouette wants a group for each of ${values.length} values, got ${labels.length}`);
   }
-  const groups = new Map<number, { sorted: number[]; sums: Float64Array }>();
+  const groups = new Map<number, { sorted: Float64Array; sums: Float64Array }>();
   for (const label of new Set(labels)) {
-    const sorted = values.filter((_, at) => labels[at] === label).sort((a, b) => a - b);
+    const sorted = Float64Array.from(values.filter((_, at) => labels[at] === label)).sort();
     const sums = new Float64Array(sorted.length + 1);
     sorted.forEach((value, at) => {
       sums[at + 1] = sums[at] + value;
@@ -39,9 +39,10 @@ export function meanSilhouette(values: readonly number[], labels: readonly numbe
 }
 
 /** Sum of distances from a value to all of a sorted list. */
-function distanceSum(value: number, sorted: readonly number[], sums: Float64Array): number {
-  let low = 0;
-  let high = sorted.length;
+function distanceSum(value: number, sorted: Float64Array, sums: Float64Array): number {
+  // most groups lie wholly on one side
+  let low = value >= sorted[sorted.length - 1] ? sorted.length : 0;
+  let high = value < sorted[0] ? 0 : sorted.length;
   while (low < high) {
     const middle = (low + high) >> 1;
     if (sorted[middle] <= value) low = middle + 1;

@@ -6,9 +6,11 @@ import {
   type Comparison,
   choiceSentence,
   chooseModel,
+  gapOf,
   gapStatistic,
   groupsByGap,
   meanSilhouette,
+  partitionCosts,
   settleChoice,
 } from '../../src/zones/index.js';
 import { beds, inPlace } from './drawn-beds.js';
@@ -103,6 +105,30 @@ describe('gapStatistic', () => {
   it('gives no gap where nothing scatters', () => {
     expect(gapStatistic([-1, -1], [1, 1], { seed: 1 })).toEqual([{ gap: null, se: null }]);
     expect(groupsByGap([{ gap: null, se: null }])).toBeNull();
+  });
+
+  it('takes very many values by lots, and is what every cut would give to a twentieth of its error', () => {
+    const random = createRandom(5);
+    const values = Array.from({ length: 2400 }, (_, i) => -2 + 0.3 * (i % 4) + 0.06 * random.normal());
+    const weights = values.map(() => 0.5 + random.uniform());
+    const low = Math.min(...values);
+    const range = Math.max(...values) - low;
+    const references = Array.from({ length: 6 }, (_, at) => {
+      const own = createRandom(9).fork(at);
+      return partitionCosts(
+        values.map(() => low + range * own.uniform()),
+        weights,
+        6,
+      );
+    });
+    const exact = gapOf(partitionCosts(values, weights, 6), references);
+    const lots = gapStatistic(values, weights, { seed: 9, most: 6, references: 6 });
+    expect(lots).not.toEqual(exact);
+    lots.forEach(({ gap, se }, at) => {
+      expect(Math.abs(gap! - exact[at].gap!)).toBeLessThan(0.05 * exact[at].se!);
+      expect(se! / exact[at].se!).toBeCloseTo(1, 2);
+    });
+    expect(groupsByGap(lots)).toBe(4);
   });
 
   it('is unmoved by a change of scale', () => {
