@@ -66,7 +66,7 @@ export function gapReferences({
   return Array.from({ length: references }, (_, at) => {
     const own = random.fork(first + at);
     const even = weights.map(() => low + range * own.uniform());
-    return costsWithin(even, weights, most);
+    return costsOfEven(even, weights, most);
   });
 }
 
@@ -74,10 +74,10 @@ export function gapReferences({
 const MOST_CUTS = 1000;
 
 /**
- * {@link partitionCosts}; of very many values, neighbours are taken together, a thousand lots at most, and cuts lie between
- * lots. A cut that is off by half a lot changes W by less than references differ by many times over.
+ * {@link partitionCosts} of values spread evenly. Of very many, neighbours are taken together, a thousand lots at most, and
+ * cuts lie between lots: where values leave no gap, a cut that is off by half a lot costs next to nothing.
  */
-function costsWithin(values: readonly number[], weights: readonly number[], most: number): number[] {
+function costsOfEven(values: readonly number[], weights: readonly number[], most: number): number[] {
   const n = values.length;
   const size = Math.ceil(n / MOST_CUTS);
   if (size === 1) return partitionCosts(values, weights, most);
@@ -130,7 +130,7 @@ export function gapFromReferences(
   references: readonly (readonly (readonly number[])[])[],
 ): Gap[] {
   if (references.length === 0) return [{ gap: null, se: null }];
-  return gapOf(costsWithin(values, weights, mostGroups(values, options)), references.flat());
+  return gapOf(partitionCosts(values, weights, mostGroups(values, options)), references.flat());
 }
 
 const mostGroups = (values: readonly number[], { most = 10 }: GapOptions): number =>
