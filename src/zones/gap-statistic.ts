@@ -78,29 +78,35 @@ const MOST_CUTS = 1000;
  * cuts lie between lots: where values leave no gap, a cut that is off by half a lot costs next to nothing.
  */
 function costsOfEven(values: readonly number[], weights: readonly number[], most: number): number[] {
-  const n = values.length;
-  const size = Math.ceil(n / MOST_CUTS);
+  const size = Math.ceil(values.length / MOST_CUTS);
   if (size === 1) return partitionCosts(values, weights, most);
   const order = Uint32Array.from(values.keys()).sort((a, b) => values[a] - values[b] || a - b);
   const means: number[] = [];
   const lots: number[] = [];
   let within = 0;
-  for (let start = 0; start < n; start += size) {
-    const lot = order.subarray(start, start + size);
-    let weight = 0;
-    let sum = 0;
-    let squares = 0;
-    for (const at of lot) {
-      const off = values[at] - values[lot[0]];
-      weight += weights[at];
-      sum += weights[at] * off;
-      squares += weights[at] * off * off;
-    }
-    means.push(values[lot[0]] + sum / weight);
-    lots.push(weight);
-    within += Math.max(0, squares - (sum * sum) / weight);
+  for (let start = 0; start < order.length; start += size) {
+    const lot = lotOf(values, weights, order.subarray(start, start + size));
+    means.push(lot.mean);
+    lots.push(lot.weight);
+    within += lot.squares;
   }
   return partitionCosts(means, lots, most).map((cost) => cost + within);
+}
+
+/** Weight, mean and weighted sum of squares about it of some of the values. */
+function lotOf(values: readonly number[], weights: readonly number[], members: Uint32Array) {
+  const origin = values[members[0]];
+  let weight = 0;
+  let sum = 0;
+  let squares = 0;
+  for (let i = 0; i < members.length; i++) {
+    const own = weights[members[i]];
+    const off = values[members[i]] - origin;
+    weight += own;
+    sum += own * off;
+    squares += own * off * off;
+  }
+  return { weight, mean: origin + sum / weight, squares: Math.max(0, squares - (sum * sum) / weight) };
 }
 
 /** References a task: a quarter of them, so that they can be shared out. */
