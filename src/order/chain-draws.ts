@@ -17,7 +17,7 @@ export interface ChainDrawsArgument {
 
 /** What one chain gives. */
 export interface ChainDraws {
-  /** Rank of bed b in draw d at `b * draws + d`; 1 is the oldest, beds of one deposit share a rank. */
+  /** Rank of bed b in draw d at `d * beds + b`, so that a draw is written in one go; 1 is the oldest, beds of one deposit share a rank. */
   readonly ranks: Uint32Array;
   /** Draws of each watched deposit. */
   readonly traces: readonly Float64Array[];
@@ -47,7 +47,7 @@ export function chainDraws({ model, seed, chain, draws, thinning, watched }: Cha
       rankOf[order[at]] = rank;
       rank += sizes[order[at]];
     }
-    for (let bed = 0, at = draw; bed < beds; bed++, at += draws) ranks[at] = rankOf[node[bed]];
+    for (let bed = 0, at = draw * beds; bed < beds; bed++, at++) ranks[at] = rankOf[node[bed]];
   }
   return { ranks, traces };
 }

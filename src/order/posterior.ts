@@ -99,10 +99,30 @@ function judge(drawn: readonly ChainDraws[], watched: number): { essMin: number;
 function joinRanks(drawn: readonly ChainDraws[], beds: number, draws: number): Uint32Array {
   const total = draws * drawn.length;
   const ranks = new Uint32Array(beds * total);
-  drawn.forEach((chain, c) => {
-    for (let bed = 0; bed < beds; bed++) {
-      ranks.set(chain.ranks.subarray(bed * draws, (bed + 1) * draws), bed * total + c * draws);
-    }
-  });
+  for (let chain = 0; chain < drawn.length; chain++)
+    turnOver(drawn[chain].ranks, beds, draws, ranks, chain * draws, total);
   return ranks;
+}
+
+/** Side of a square of ranks that fits into a processor's nearest memory with the square it goes to. */
+const SQUARE = 16;
+
+/** Ranks by draw into ranks by bed, those of a bed from `first` on and `stride` from bed to bed, a square at a time. */
+function turnOver(
+  from: Uint32Array,
+  beds: number,
+  draws: number,
+  to: Uint32Array,
+  first: number,
+  stride: number,
+): void {
+  for (let bed = 0; bed < beds; bed += SQUARE) {
+    const lastBed = Math.min(beds, bed + SQUARE);
+    for (let draw = 0; draw < draws; draw += SQUARE) {
+      const lastDraw = Math.min(draws, draw + SQUARE);
+      for (let b = bed; b < lastBed; b++) {
+        for (let d = draw; d < lastDraw; d++) to[b * stride + first + d] = from[d * beds + b];
+      }
+    }
+  }
 }

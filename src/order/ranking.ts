@@ -21,14 +21,22 @@ export function rankBeds(posterior: OrderPosterior, tied: readonly number[]): Ra
   const rankMean: number[] = [];
   const rankLow: number[] = [];
   const rankHigh: number[] = [];
-  const tail = Math.floor(0.025 * draws);
+  const lowest = new Float64Array(Math.floor(0.025 * draws) + 1);
+  const highest = new Float64Array(lowest.length);
   for (let bed = 0; bed < beds; bed++) {
     const own = ranks.subarray(bed * draws, (bed + 1) * draws);
+    lowest.fill(Number.POSITIVE_INFINITY);
+    highest.fill(Number.POSITIVE_INFINITY);
     let sum = 0;
-    for (let draw = 0; draw < draws; draw++) sum += own[draw];
+    for (let draw = 0; draw < draws; draw++) {
+      const rank = own[draw];
+      sum += rank;
+      takeIn(lowest, rank);
+      takeIn(highest, -rank);
+    }
     rankMean.push(sum / draws);
-    rankLow.push(fromTheEnd(own, tail, 1));
-    rankHigh.push(fromTheEnd(own, tail, -1));
+    rankLow.push(lowest[lowest.length - 1]);
+    rankHigh.push(-highest[highest.length - 1]);
   }
   const sequence = rankMean
     .map((_, bed) => bed)
@@ -41,23 +49,15 @@ export function rankBeds(posterior: OrderPosterior, tied: readonly number[]): Ra
   return { sequence, rank, rankMean, rankLow, rankHigh };
 }
 
-/**
- * The number that `tail` others lie below (sign 1) or above (sign −1): the outermost are kept in order while the list is gone
- * through, which is far less work than sorting it.
- */
-function fromTheEnd(values: Uint32Array, tail: number, sign: 1 | -1): number {
-  const outermost = new Float64Array(tail + 1).fill(Number.POSITIVE_INFINITY);
-  for (let i = 0; i < values.length; i++) {
-    const value = sign * values[i];
-    if (!(value < outermost[tail])) continue;
-    let to = tail;
-    while (to > 0 && outermost[to - 1] > value) {
-      outermost[to] = outermost[to - 1];
-      to--;
-    }
-    outermost[to] = value;
+/** Keeps the smallest of all values in order, which is far less work than sorting them: most are larger than the last. */
+function takeIn(smallest: Float64Array, value: number): void {
+  let to = smallest.length - 1;
+  if (!(value < smallest[to])) return;
+  while (to > 0 && smallest[to - 1] > value) {
+    smallest[to] = smallest[to - 1];
+    to--;
   }
-  return sign * outermost[tail];
+  smallest[to] = value;
 }
 
 /** Probability that bed a is older than bed b: the share of draws in which its rank is smaller. */
