@@ -25,6 +25,8 @@ export async function run(shells: string, commandLine: RawOptions): Promise<Exit
     hold?.release();
   };
   const forget = onSignal(cleanUp);
+  // the figures want one: what it needs is read for all threads, and this one has nothing else to do
+  setImmediate(() => new Intl.NumberFormat('en-US'));
   const bar = await progressBar(commandLine.quiet !== true);
   try {
     const asked = await job.next(bar.show);

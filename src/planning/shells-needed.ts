@@ -58,17 +58,27 @@ export function shellsNeeded(design: PairDesign, options: ShellsNeededOptions = 
   if (!(wanted > 0 && wanted < 1)) {
     throw new RangeError(`shellsNeeded: the power asked for must lie between 0 and 1, got ${wanted}`);
   }
-  const designWith = (more: readonly [number, number]): PairDesign => ({
+  const sampledWith = (more: readonly [number, number]): PairDesign => ({
     ...design,
     shells: [design.shells[0] + more[0], design.shells[1] + more[1]],
     df: typeof design.df === 'number' ? design.df + more[0] + more[1] : design.df,
-    spreadVariance: options.spreadVarianceAfter?.(more) ?? design.spreadVariance,
   });
+  const designWith = (more: readonly [number, number]): PairDesign => {
+    const spreadVariance = options.spreadVarianceAfter?.(more) ?? design.spreadVariance;
+    return { ...sampledWith(more), spreadVariance };
+  };
   const powerWith = (total: number) => {
     const more = dealOut(design.shells, total);
     return { more, power: resolvingPower(designWith(more), options) };
   };
-  const enough = (total: number) => powerReaches(designWith(dealOut(design.shells, total)), wanted, options);
+  const enough = (total: number) => {
+    const more = dealOut(design.shells, total);
+    // most that fall short do so without any spread, which takes longest to work out
+    return (
+      powerReaches({ ...sampledWith(more), spreadVariance: 0 }, wanted, options) &&
+      powerReaches(designWith(more), wanted, options)
+    );
+  };
   const top = Math.max(0, most - design.shells[0]) + Math.max(0, most - design.shells[1]);
   if (enough(0)) return powerWith(0);
   if (options.spreadVarianceAfter) {
