@@ -1,21 +1,27 @@
 /**
- * SHA-256 of bytes (FIPS 180-4), 32 bytes. No statistic, but every room needs it: figures and report use no module of
- * Node, and a page that was not sent over a secure line has no Web Crypto.
+ * SHA-256 of bytes (FIPS 180-4), 32 bytes. No statistic, but every room needs it: figures and report import no module of
+ * Node, and a page that was not sent over a secure line has no Web Crypto. Node's own is taken where it is at hand.
  * @example
  * ```ts
  * [...sha256Bytes(new TextEncoder().encode('abc'))].slice(0, 4) // => [186, 120, 22, 191]
  * ```
  */
 export function sha256Bytes(bytes: Uint8Array): Uint8Array {
+  const node = globalThis.process?.getBuiltinModule?.('node:crypto');
+  return node ? new Uint8Array(node.createHash('sha256').update(bytes).digest()) : sha256Here(bytes);
+}
+
+/** {@link sha256Bytes} without help. */
+export function sha256Here(bytes: Uint8Array): Uint8Array {
+  constants ??= { start: rootsOf(8, 2n), round: rootsOf(64, 3n) };
+  const { start, round } = constants;
   const blocks = Math.ceil((bytes.length + 9) / 64);
   const view = new DataView(new ArrayBuffer(blocks * 64));
-  bytes.forEach((byte, i) => {
-    view.setUint8(i, byte);
-  });
+  new Uint8Array(view.buffer).set(bytes);
   view.setUint8(bytes.length, 0x80);
   view.setUint32(blocks * 64 - 8, Math.floor((bytes.length * 8) / 2 ** 32));
   view.setUint32(blocks * 64 - 4, (bytes.length * 8) >>> 0);
-  const hash = Uint32Array.from(START);
+  const hash = Uint32Array.from(start);
   const w = new Uint32Array(64);
   for (let block = 0; block < blocks; block++) {
     for (let t = 0; t < 16; t++) w[t] = view.getUint32(block * 64 + t * 4);
@@ -26,7 +32,7 @@ export function sha256Bytes(bytes: Uint8Array): Uint8Array {
     }
     let [a, b, c, d, e, f, g, h] = hash;
     for (let t = 0; t < 64; t++) {
-      const one = (h + (turn(e, 6) ^ turn(e, 11) ^ turn(e, 25)) + ((e & f) ^ (~e & g)) + ROUND[t] + w[t]) | 0;
+      const one = (h + (turn(e, 6) ^ turn(e, 11) ^ turn(e, 25)) + ((e & f) ^ (~e & g)) + round[t] + w[t]) | 0;
       const two = ((turn(a, 2) ^ turn(a, 13) ^ turn(a, 22)) + ((a & b) ^ (a & c) ^ (b & c))) | 0;
       h = g;
       g = f;
@@ -50,10 +56,6 @@ export function sha256Bytes(bytes: Uint8Array): Uint8Array {
 
 const turn = (word: number, by: number) => (word >>> by) | (word << (32 - by));
 
-const PRIMES = Array.from({ length: 312 }, (_, i) => i).filter(
-  (n) => n > 1 && !Array.from({ length: Math.floor(Math.sqrt(n)) - 1 }, (_, k) => k + 2).some((d) => n % d === 0),
-);
-
 /** The first 32 bits of the fraction of a root, exact by whole numbers: floor(root(n) * 2^32) mod 2^32. */
 function fractionOfRoot(prime: number, degree: 2n | 3n): number {
   const target = BigInt(prime) << (32n * degree);
@@ -67,5 +69,11 @@ function fractionOfRoot(prime: number, degree: 2n | 3n): number {
   return Number(low & 0xffffffffn);
 }
 
-const START = PRIMES.slice(0, 8).map((prime) => fractionOfRoot(prime, 2n));
-const ROUND = PRIMES.slice(0, 64).map((prime) => fractionOfRoot(prime, 3n));
+let constants: { readonly start: readonly number[]; readonly round: readonly number[] } | undefined;
+
+/** {@link fractionOfRoot} of the first primes. */
+function rootsOf(count: number, degree: 2n | 3n): number[] {
+  const primes: number[] = [];
+  for (let n = 2; primes.length < count; n++) if (primes.every((prime) => n % prime !== 0)) primes.push(n);
+  return primes.map((prime) => fractionOfRoot(prime, degree));
+}
