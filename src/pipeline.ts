@@ -5,6 +5,7 @@ import { type RunContext, runPass, staircaseOf } from './clock-run.js';
 import {
   conversionRemarks,
   correctAnalyses,
+  type LaboratoryOffset,
   laboratoryOffsets,
   laboratoryRemarks,
   sectionOrder,
@@ -12,7 +13,17 @@ import {
   temperatureRemarks,
 } from './coast/index.js';
 import { type CombinedOutcome, combineClocks, combinedRows, type SettledClock } from './combined-run.js';
-import type { BedRecord, BedSite, Findings, Host, Remark, RunOptions, Survey } from './model/index.js';
+import type {
+  BedRecord,
+  BedSite,
+  Findings,
+  Host,
+  PublishedSummary,
+  Remark,
+  RunOptions,
+  Shell,
+  Survey,
+} from './model/index.js';
 import { heightOf, sectionRelations } from './order/index.js';
 import { type Settled, settlePasses } from './passes.js';
 import { planOfRun } from './planning/index.js';
@@ -32,10 +43,31 @@ import { beginSupport } from './zone-support.js';
  * @throws Error when no clock can be made (no shell of the taxon, fraction or amino acid asked for)
  */
 export async function analyse(survey: Survey, options: RunOptions, host: Host): Promise<Findings> {
-  const offsets = laboratoryOffsets(survey.standards, survey.analyses);
-  const { shells, summaries } = averageAnalyses(correctAnalyses(survey.analyses, offsets));
-  const screening = screenShells(shells, options.screening);
+  // nothing here holds the analyses from then on: of a million shells they would fill a quarter of a gigabyte
+  return analyseShells(averaged(survey, options), options, host);
+}
+
+/** What is left of a survey once its analyses are averaged. */
+interface AveragedSurvey extends Pick<Survey, 'beds' | 'relations' | 'inputs' | 'problems'> {
+  readonly offsets: readonly LaboratoryOffset[];
+  readonly shells: readonly Shell[];
+  readonly summaries: readonly PublishedSummary[];
+  readonly sets: readonly ClockSet[];
+  /** What is to be said of the laboratories. */
+  readonly laboratories: readonly Remark[];
+}
+
+function averaged({ analyses, standards, ...kept }: Survey, options: RunOptions): AveragedSurvey {
+  const offsets = laboratoryOffsets(standards, analyses);
+  const { shells, summaries } = averageAnalyses(correctAnalyses(analyses, offsets));
   const sets = chooseClocks(shells, summaries, options);
+  const asked = sets.map(({ main }) => ({ clock: main.name, taxon: main.taxon, fraction: main.fraction }));
+  return { ...kept, offsets, shells, summaries, sets, laboratories: laboratoryRemarks(analyses, offsets, asked) };
+}
+
+async function analyseShells(survey: AveragedSurvey, options: RunOptions, host: Host): Promise<Findings> {
+  const { offsets, shells, summaries, sets } = survey;
+  const screening = screenShells(shells, options.screening);
   if (sets.length === 0) throw new Error('no shell has a ratio of the taxon, fraction and amino acid asked for');
   const sections = sectionOrder(survey.beds);
   const sites = bedSites(survey.beds, sections, options.gradient);
@@ -144,7 +176,6 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
   /** What is to be said of the coast, the laboratories and the taxa, beside what each clock says of itself. */
   function surveyRemarks(): Remark[] {
     const measured = new Set(runs.flatMap(({ settled }) => settled.last.data.beds.map((bed) => bed.key)));
-    const asked = runs.map(({ set }) => ({ clock: set.main.name, taxon: set.main.taxon, fraction: set.main.fraction }));
     return [
       ...temperatureRemarks(
         sites.filter((site) => measured.has(bedKey(site.section, site.bed))),
@@ -154,7 +185,7 @@ export async function analyse(survey: Survey, options: RunOptions, host: Host): 
         combined.flatMap((outcome) => outcome.findings),
         options.reference_taxon,
       ),
-      ...laboratoryRemarks(survey.analyses, offsets, asked),
+      ...survey.laboratories,
       ...runs.flatMap(({ set, settled }) =>
         staircaseRemarks(set.main.name, staircaseOf(context, settled.last.data), context.elevations.size),
       ),

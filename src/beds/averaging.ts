@@ -77,6 +77,7 @@ function summariesOf(row: Analysis): PublishedSummary[] {
 }
 
 const NONE: readonly string[] = [];
+const NO_REPLICATES: Shell['replicates'] = [];
 
 /** Shells analysed once are most of a large survey, and there is nothing to average in them. */
 function shellOfOneRow(row: Analysis): Shell {
@@ -91,7 +92,7 @@ function shellOfOneRow(row: Analysis): Shell {
     methods: row.method ? [row.method] : NONE,
     preparations: 1,
     ratios: row.ratios,
-    replicates: [row.ratios],
+    replicates: NO_REPLICATES,
     concentrations: row.concentrations,
     serine_ratio: row.serine_ratio ?? serineOfConcentrations(row.ratios, row.concentrations),
     file: row.file,

@@ -53,12 +53,17 @@ async function work(): Promise<void> {
   if (!('survey' in read)) return tell({ news: 'refused', refusal: read });
   const folder = new Promise<string>((resolve) => parentPort?.once('message', resolve));
   tell({ news: 'read' });
-  const findings = await analysed(read.survey, read.request);
+  return written(analysed(read.survey, read.request), read.request, folder);
+}
+
+/** The rest of the work, from where the survey is no longer held. */
+async function written(analysing: Promise<Findings>, request: RunRequest, folder: Promise<string>): Promise<void> {
+  const findings = await analysing;
   const drawings = await drawn(findings);
   progress('writing', 1);
   const { writeResults } = await import('../output/write-results.js');
   await writeResults(findings, drawings, await folder);
-  tell({ news: 'written', told: await words(findings, read.request) });
+  tell({ news: 'written', told: await words(findings, request) });
 }
 
 /** Analyses from which other threads are sure to have work. */
@@ -68,11 +73,7 @@ async function analysed(survey: Survey, request: RunRequest): Promise<Findings> 
   const { analyse } = await import('../pipeline.js');
   const host = createWorkerHost(progress);
   if (survey.analyses.length > LARGE_SURVEY) host.warm();
-  try {
-    return await analyse(survey, request.options, host);
-  } finally {
-    await host.close();
-  }
+  return analyse(survey, request.options, host).finally(host.close);
 }
 
 async function drawn(findings: Findings) {

@@ -14,7 +14,7 @@ export interface Shell {
   readonly preparations: number;
   /** Arithmetic mean D/L an amino acid. */
   readonly ratios: ByAminoAcid;
-  /** D/L of each preparation an amino acid (means of its injections), for the rule on replicates. */
+  /** D/L of each preparation an amino acid (means of its injections), for the rule on replicates; empty where one row is all there is. */
   readonly replicates: readonly ByAminoAcid[];
   /** Mean concentrations an amino acid; empty when not measured. */
   readonly concentrations: ByAminoAcid;
