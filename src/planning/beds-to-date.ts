@@ -112,9 +112,39 @@ function searcher(known: OlderAndYounger, patience: number) {
     const chosen: number[] = [];
     const levels = Array.from({ length: picks + 1 }, () => [emptySet(size), emptySet(size), emptySet(size)]);
 
+    /** The last date: what each bed would make of what is chosen. */
+    const complete = (from: number): void => {
+      const [below, above, dated] = levels[picks - 1];
+      for (let bed = from; bed < size; bed++) {
+        const [down, up] = [younger[bed], older[bed]];
+        let bracketed = 0;
+        let bounded = 0;
+        for (let i = 0; i < words; i++) {
+          const free = ~dated[i];
+          const [d, u] = [below[i] | down[i], above[i] | up[i]];
+          bracketed += onesIn(d & u & free);
+          bounded += onesIn((d | u) & free);
+        }
+        // dated itself, it counts for neither
+        const [word, bit] = [bed >>> 5, 1 << (bed & 31)];
+        if (below[word] & above[word] & bit) bracketed--;
+        if ((below[word] | above[word]) & bit) bounded--;
+        const total = bracketed * (size + 1) + bounded;
+        if (total > best) {
+          best = total;
+          beds = [...chosen, bed];
+        }
+      }
+    };
+
     const descend = (depth: number, from: number): boolean => {
       const [below, above, dated] = levels[depth];
       const rest = picks - depth;
+      left -= (size - from) * words;
+      if (rest === 1) {
+        complete(from);
+        return true;
+      }
       // per bed that may still be chosen: what it would newly bracket, put on one side, and bound
       const brackets: number[] = [];
       const downs: number[] = [];
@@ -131,8 +161,6 @@ function searcher(known: OlderAndYounger, patience: number) {
         let down = 0;
         let up = 0;
         let bound = 0;
-        let lostBracket = 0;
-        let lostBound = 0;
         for (let i = 0; i < words; i++) {
           const free = ~dated[i];
           const d = younger[bed][i] & free;
@@ -143,22 +171,11 @@ function searcher(known: OlderAndYounger, patience: number) {
           up += onesIn(u & none);
           bound += onesIn((d | u) & none);
         }
-        if ((below[bed >>> 5] | above[bed >>> 5]) & (1 << (bed & 31))) lostBound = 1;
-        if (below[bed >>> 5] & above[bed >>> 5] & (1 << (bed & 31))) lostBracket = 1;
-        if (rest === 1) {
-          const total = (nowBracketed + bracket - lostBracket) * (size + 1) + nowBounded + bound - lostBound;
-          if (total > best) {
-            best = total;
-            beds = [...chosen, bed];
-          }
-        }
         brackets.push(bracket);
         downs.push(down);
         ups.push(up);
         bounds.push(bound);
       }
-      left -= (size - from) * words;
-      if (rest === 1) return true;
       const bracketedAtMost = Math.min(
         bracketable,
         nowBracketed + sumOfLargest(brackets, rest) + Math.min(sumOfLargest(downs, rest), sumOfLargest(ups, rest)),

@@ -141,28 +141,41 @@ export function sameZone(
   bootstraps: readonly BootstrapZones[],
 ): Float64Array {
   const n = values.length;
-  const same = new Float64Array(n * n);
+  // the chances of a bed over all bootstraps side by side: then one long sum a pair is all there is to do
+  const width = bootstraps.reduce((sum, { priors }) => sum + priors.means.length, 0);
+  const chances = new Float64Array(n * width);
+  let from = 0;
   for (const { priors } of bootstraps) {
-    const k = priors.means.length;
-    const chances = new Float64Array(n * k);
     const assign = zoneAssigner(priors);
-    values.forEach((value, bed) => {
-      chances.set(assign(value, errors[bed]).probabilities, bed * k);
-    });
-    for (let a = 0; a < n; a++) {
-      for (let b = 0; b < a; b++) {
-        let sum = 0;
-        for (let j = 0; j < k; j++) sum += chances[a * k + j] * chances[b * k + j];
-        same[a * n + b] += sum / bootstraps.length;
-      }
-    }
+    for (let bed = 0; bed < n; bed++) chances.set(assign(values[bed], errors[bed]).probabilities, bed * width + from);
+    from += priors.means.length;
   }
+  const same = new Float64Array(n * n);
   for (let a = 0; a < n; a++) {
+    const own = chances.subarray(a * width, (a + 1) * width);
+    for (let b = 0; b < a; b++) {
+      const shared = sumOfProducts(own, chances.subarray(b * width, (b + 1) * width)) / bootstraps.length;
+      // many small shares may add up to a hair above 1
+      same[a * n + b] = same[b * n + a] = Math.min(1, shared);
+    }
     same[a * n + a] = 1;
-    // many small shares may add up to a hair above 1
-    for (let b = 0; b < a; b++) same[b * n + a] = same[a * n + b] = Math.min(1, same[a * n + b]);
   }
   return same;
+}
+
+function sumOfProducts(a: Float64Array, b: Float64Array): number {
+  // several sums side by side need not wait for each other
+  let [first, second, third, fourth] = [0, 0, 0, 0];
+  const whole = a.length - (a.length % 4);
+  for (let i = 0; i < whole; i += 4) {
+    first += a[i] * b[i];
+    second += a[i + 1] * b[i + 1];
+    third += a[i + 2] * b[i + 2];
+    fourth += a[i + 3] * b[i + 3];
+  }
+  let sum = first + second + (third + fourth);
+  for (let i = whole; i < a.length; i++) sum += a[i] * b[i];
+  return sum;
 }
 
 /**
