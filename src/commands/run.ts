@@ -9,6 +9,7 @@ import { complain, print } from './print.js';
 import { problemText } from './problem-text.js';
 import { progressBar } from './progress.js';
 import { tellRefusal } from './read-request.js';
+import { setRoomForYoung } from './room-for-young.js';
 import type { Job, JobNews, Told } from './run-job.js';
 import type { RawOptions, RunRequest } from './run-request.js';
 import { counted, styleFor, wantsColours } from './terminal.js';
@@ -83,7 +84,7 @@ function startJob(job: Job): RunningJob {
     // far from full, the heap of a large survey need not be swept at all
     setFlagsFromString(veryLarge ? '--heap-growing-percent=20' : `--initial-heap-size=${ROOM_AT_FIRST}`);
     const young = veryLarge ? ROOM_FOR_YOUNG / 2 : ROOM_FOR_YOUNG;
-    for (const end of ['min', 'max']) setFlagsFromString(`--${end}-semi-space-size=${young}`);
+    setRoomForYoung(young, young);
   }
   const worker = new Worker(new URL('./run-job.js', import.meta.url), { workerData: job });
   const waiting: JobNews[] = [];

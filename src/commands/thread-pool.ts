@@ -1,6 +1,6 @@
-import { setFlagsFromString } from 'node:v8';
 import { Worker } from 'node:worker_threads';
 import type { Task } from '../model/index.js';
+import { setRoomForYoung } from './room-for-young.js';
 import { type Answer, type SharedBatch, takeNext, takeRest } from './shared-batch.js';
 
 /** Tasks that this thread and others take from, each the next that nobody has. */
@@ -25,21 +25,14 @@ export interface ThreadPool {
   readonly close: () => Promise<void>;
 }
 
-/** Megabytes of room for young objects on a thread of the pool: what Node gives by itself. */
-const YOUNG = [
-  ['min', 1],
-  ['max', 16],
-] as const;
-
 /** Threads are started when they are first wanted, `most` at most, and do the batches in the order in which they came. */
 export function createThreadPool(most: number): ThreadPool {
   const threads: Worker[] = [];
   const open = new Map<number, { readonly hear: (answer: Answer) => void; readonly fail: (error: Error) => void }>();
   let batches = 0;
   const start = (wanted: number) => {
-    // the room for young objects that a large survey asks of its own thread (run.ts) is more than tasks need
-    if (threads.length < wanted)
-      for (const [end, size] of YOUNG) setFlagsFromString(`--${end}-semi-space-size=${size}`);
+    // what Node gives by itself: the room that a large survey asks of its own thread (run.ts) is more than tasks need
+    if (threads.length < wanted) setRoomForYoung(1, 16);
     while (threads.length < wanted) {
       const thread = new Worker(new URL('./worker.js', import.meta.url));
       thread.unref();

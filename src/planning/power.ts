@@ -43,9 +43,7 @@ export interface ResolvingRule {
  * ```
  */
 export function resolvingPower(design: PairDesign, rule: ResolvingRule = {}): number {
-  const { df, chance } = atFoundScatter(design, rule);
-  if (!(df >= 1)) return 0;
-  return df > 1e4 ? chance(1) : meanOverScatter(chance, df);
+  return powerOf(atFoundScatter(design, rule));
 }
 
 /** Chance that a scatter is found so small that {@link powerReaches} sets it aside: e to the power of minus this. */
@@ -60,14 +58,26 @@ const SET_ASIDE = 7;
  * 10.1214/aos/1015957395, lemma 1.
  */
 export function powerReaches(design: PairDesign, wanted: number, rule: ResolvingRule = {}): boolean {
-  const { df, chance } = atFoundScatter(design, rule);
-  const rarelyBelow = Math.sqrt(Math.max(0, 1 - 2 * Math.sqrt(SET_ASIDE / df)));
-  if (df >= 1 && chance(rarelyBelow) + Math.exp(-SET_ASIDE) < wanted) return false;
-  return resolvingPower(design, rule) >= wanted;
+  const found = atFoundScatter(design, rule);
+  const rarelyBelow = Math.sqrt(Math.max(0, 1 - 2 * Math.sqrt(SET_ASIDE / found.df)));
+  if (found.df >= 1 && found.chance(rarelyBelow) + Math.exp(-SET_ASIDE) < wanted) return false;
+  return powerOf(found) >= wanted;
 }
 
-/** Degrees of freedom of the scatter, and the chance to resolve the pair where it is found to be `share` of the true one. */
-function atFoundScatter(design: PairDesign, rule: ResolvingRule): { df: number; chance: (share: number) => number } {
+/** A pair, and the scatter that a survey finds. */
+interface FoundScatter {
+  /** Degrees of freedom of the scatter; under 1 nothing is resolved. */
+  readonly df: number;
+  /** Chance to resolve the pair where the scatter is found to be `share` of the true one. */
+  readonly chance: (share: number) => number;
+}
+
+function powerOf({ df, chance }: FoundScatter): number {
+  if (!(df >= 1)) return 0;
+  return df > 1e4 ? chance(1) : meanOverScatter(chance, df);
+}
+
+function atFoundScatter(design: PairDesign, rule: ResolvingRule): FoundScatter {
   const { gap, scatter, shells, fixedVariance = 0, spreadVariance = 0 } = design;
   const alpha = rule.alpha ?? 0.05;
   if (!(scatter > 0)) throw new RangeError(`resolvingPower: scatter must be above 0, got ${scatter}`);

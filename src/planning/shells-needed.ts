@@ -58,30 +58,26 @@ export function shellsNeeded(design: PairDesign, options: ShellsNeededOptions = 
   if (!(wanted > 0 && wanted < 1)) {
     throw new RangeError(`shellsNeeded: the power asked for must lie between 0 and 1, got ${wanted}`);
   }
-  const sampledWith = (more: readonly [number, number]): PairDesign => ({
+  const { spreadVarianceAfter } = options;
+  const designWith = (more: readonly [number, number], spreadVariance = design.spreadVariance): PairDesign => ({
     ...design,
     shells: [design.shells[0] + more[0], design.shells[1] + more[1]],
     df: typeof design.df === 'number' ? design.df + more[0] + more[1] : design.df,
+    spreadVariance,
   });
-  const designWith = (more: readonly [number, number]): PairDesign => {
-    const spreadVariance = options.spreadVarianceAfter?.(more) ?? design.spreadVariance;
-    return { ...sampledWith(more), spreadVariance };
-  };
   const powerWith = (total: number) => {
     const more = dealOut(design.shells, total);
-    return { more, power: resolvingPower(designWith(more), options) };
+    return { more, power: resolvingPower(designWith(more, spreadVarianceAfter?.(more)), options) };
   };
   const enough = (total: number) => {
     const more = dealOut(design.shells, total);
     // most that fall short do so without any spread, which takes longest to work out
-    return (
-      powerReaches({ ...sampledWith(more), spreadVariance: 0 }, wanted, options) &&
-      powerReaches(designWith(more), wanted, options)
-    );
+    if (spreadVarianceAfter && !powerReaches(designWith(more, 0), wanted, options)) return false;
+    return powerReaches(designWith(more, spreadVarianceAfter?.(more)), wanted, options);
   };
   const top = Math.max(0, most - design.shells[0]) + Math.max(0, most - design.shells[1]);
   if (enough(0)) return powerWith(0);
-  if (options.spreadVarianceAfter) {
+  if (spreadVarianceAfter) {
     // a spread that grows with the shells can make the power fall again, so every number is tried
     for (let total = 1; total <= top; total++) if (enough(total)) return powerWith(total);
     return null;

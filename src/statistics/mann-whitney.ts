@@ -68,9 +68,7 @@ function exactTest(a: Numbers, b: Numbers): Tails {
 export function smallestMannWhitneyP(n1: number, n2: number): number {
   const whole = Number.isInteger(n1) && Number.isInteger(n2) && n1 > 0 && n2 > 0;
   requireThat(whole, 'smallestMannWhitneyP', 'two whole sizes above 0', n1, n2);
-  let p = 2;
-  for (let i = 1; i <= Math.min(n1, n2); i++) p *= i / (Math.max(n1, n2) + i);
-  return Math.min(1, p);
+  return Math.min(1, 2 / choices(n1 + n2, Math.min(n1, n2)));
 }
 
 function exactTails(ranks: readonly number[], n1: number, n2: number, u: number): { pLess: number; pGreater: number } {
